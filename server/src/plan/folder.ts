@@ -7,6 +7,8 @@ import type { Note } from "./note.ts";
  * language server and the command line both stand on.
  */
 export interface Folder {
+  /** The day the notes are read on, `2026-03-01`. */
+  readonly today: string;
   /** Adds a file or replaces its text. */
   open(uri: string, text: string, flavour: Flavour): Note;
   remove(uri: string): void;

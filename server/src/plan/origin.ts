@@ -1,5 +1,9 @@
-import type { Block } from "../notation/block.ts";
 import type { Span } from "../notation/span.ts";
+
+/** Something that knows on which line of its file it starts now: a block, or the place that successive versions of a block hold. */
+export interface Anchor {
+  readonly start: number;
+}
 
 /**
  * Where something was written. It holds the block, never a line number: lines above come and go,
@@ -7,7 +11,7 @@ import type { Span } from "../notation/span.ts";
  */
 export interface Origin {
   readonly uri: string;
-  readonly block: Block;
+  readonly block: Anchor;
   /** Counted from the block's first line. */
   readonly line: number;
   readonly span: Span;
@@ -16,4 +20,15 @@ export interface Origin {
 /** The line of the file, from 0, at this moment. */
 export function lineOf(origin: Origin): number {
   return origin.block.start + origin.line;
+}
+
+export function sameOrigin(a: Origin, b: Origin): boolean {
+  return (
+    a === b ||
+    (a.block === b.block &&
+      a.line === b.line &&
+      a.span.start === b.span.start &&
+      a.span.end === b.span.end &&
+      a.uri === b.uri)
+  );
 }

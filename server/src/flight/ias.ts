@@ -1,0 +1,46 @@
+import { interpolate, type Table } from "./table.ts";
+
+/*
+ * An airspeed calibration table holds at 1 g and the reference mass. The position error follows the
+ * angle of attack, so elsewhere the table is entered at V / sqrt(n m / m_ref).
+ */
+
+/** sqrt(n m / m_ref). */
+function scale(load: number, mass: number, referenceMass: number): number {
+  return Math.sqrt((load * mass) / referenceMass);
+}
+
+/**
+ * Calibrated airspeed of an indicated one, m/s.
+ *
+ * @param table indicated to calibrated, m/s, both rising
+ * @param ias m/s
+ * @param load n, above 0
+ * @returns null outside the table, or without load
+ */
+export function calibratedFromIndicated(
+  table: Table,
+  ias: number,
+  load: number,
+  mass: number,
+  referenceMass: number,
+): number | null {
+  if (!(0 < load)) return null;
+  const factor = scale(load, mass, referenceMass);
+  const calibrated = interpolate(table, ias / factor);
+  return calibrated === null ? null : calibrated * factor;
+}
+
+/** The inverse of {@link calibratedFromIndicated}. */
+export function indicatedFromCalibrated(
+  table: Table,
+  cas: number,
+  load: number,
+  mass: number,
+  referenceMass: number,
+): number | null {
+  if (!(0 < load)) return null;
+  const factor = scale(load, mass, referenceMass);
+  const indicated = interpolate({ arguments: table.values, values: table.arguments }, cas / factor);
+  return indicated === null ? null : indicated * factor;
+}

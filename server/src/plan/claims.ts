@@ -1,0 +1,57 @@
+import type { ResultName } from "../notation/vocabulary.ts";
+import type { Evaluated } from "./describe.ts";
+import type { Point } from "./evaluatePoint.ts";
+import type { Finding } from "./finding.ts";
+import { formatClaim, shownClaim } from "./format.ts";
+import type { ClaimResult } from "./point.ts";
+import { measureResult } from "./quantity.ts";
+import { resultEntry } from "./results.ts";
+import { ALLOWANCE } from "./rules.ts";
+import { findingAt } from "./site.ts";
+
+export type ClaimOutcome = ClaimResult;
+
+/** Holds every figure that the author wrote down against the one that is computed. */
+export function checkClaims(point: Point, evaluated: Evaluated | null, findings: Finding[]): readonly ClaimOutcome[] {
+  return point.clauses.claims.map(({ placed, body }): ClaimOutcome => {
+    const claimed = measureResult(body.value, body.result);
+    const spread = evaluated?.results[body.result] ?? null;
+    if (!evaluated || !spread) {
+      findings.push(
+        findingAt(
+          "claim-unchecked",
+          placed,
+          `The ${body.result} that is claimed cannot be checked, for it is not known here. ${whyUnknown(evaluated, body.result)}`,
+        ),
+      );
+      return { clause: placed, name: body.result, claimed, computed: null, holds: null };
+    }
+    const computed = worstOf(body.result, spread);
+    const shown = shownClaim(body.result, spread, body.value);
+    const holds = body.within
+      ? Math.abs(computed - claimed) <= measureResult(body.within, body.result) * (1 + ALLOWANCE)
+      : shown === body.value.value;
+    if (!holds) {
+      const unsafe = resultEntry(body.result).unsafeWhenClaimed === (claimed < computed ? "lower" : "higher");
+      const now = formatClaim(body.result, spread, body.value);
+      findings.push(
+        findingAt(
+          "claim-stale",
+          placed,
+          `The note claims ${body.result} ${formatClaim(body.result, null, body.value)} and it is ${now} now: check the point and write the new figure.`,
+          { severity: unsafe ? "error" : "warning" },
+        ),
+      );
+    }
+    return { clause: placed, name: body.result, claimed, computed, holds };
+  });
+}
+
+/** The worst corner, which is what is shown. */
+function worstOf(name: ResultName, spread: { readonly nominal: number; readonly low: number; readonly high: number }): number {
+  return spread[resultEntry(name).worst];
+}
+
+function whyUnknown(evaluated: Evaluated | null, name: ResultName): string {
+  return evaluated ? (evaluated.absent(name) ?? "") : "This point has no figures.";
+}

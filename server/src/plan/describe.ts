@@ -1,0 +1,210 @@
+import type { Keyword, ResultName } from "../notation/vocabulary.ts";
+import { whyAbsent } from "./absent.ts";
+import { absentChecks } from "./absentChecks.ts";
+import type { Held } from "./checks.ts";
+import type { Corners } from "./corners.ts";
+import type { Point, Ready } from "./evaluatePoint.ts";
+import { type References, type Results, referenceSpeeds, referencesOf, resultsOf } from "./figures.ts";
+import type { Finding } from "./finding.ts";
+import type { Origin } from "./origin.ts";
+import type { Assumption, Conditions, PointResult, Withheld } from "./point.ts";
+import { originOf } from "./site.ts";
+import { type CarriedKey, keywordOf } from "./state.ts";
+
+/** A point whose figures could be computed. */
+export interface Evaluated {
+  readonly ready: Ready;
+  readonly corners: Corners;
+  readonly conditions: Conditions;
+  readonly results: Results;
+  readonly references: () => References;
+  /** Why a result is not known, as a sentence; null where it is. */
+  absent(name: ResultName | "ias"): string | null;
+}
+
+export function evaluated(ready: Ready, corners: Corners, conditions: Conditions): Evaluated {
+  let known: References | null = null;
+  const references = () => {
+    known ??= referencesOf(ready);
+    return known;
+  };
+  const results = resultsOf(corners, references);
+  const one: Evaluated = {
+    ready,
+    corners,
+    conditions,
+    results,
+    references,
+    absent: (name) => whyAbsent(one, name),
+  };
+  return one;
+}
+
+/** Puts a point's result together. What only a hover or a table asks for is worked out when it is asked for. */
+export function describePoint(
+  point: Point,
+  evaluated: Evaluated | null,
+  held: Held,
+  withheld: Withheld | null,
+  findings: readonly Finding[],
+): PointResult {
+  return new DescribedPoint(point, evaluated, held, withheld, findings);
+}
+
+const noReferences = { v2min: null, vfto: null, vref: null };
+
+class DescribedPoint implements PointResult {
+  readonly #point: Point;
+  readonly #evaluated: Evaluated | null;
+  readonly #held: Held;
+  readonly withheld: Withheld | null;
+  readonly findings: readonly Finding[];
+
+  constructor(
+    point: Point,
+    evaluated: Evaluated | null,
+    held: Held,
+    withheld: Withheld | null,
+    findings: readonly Finding[],
+  ) {
+    this.#point = point;
+    this.#evaluated = evaluated;
+    this.#held = held;
+    this.withheld = withheld;
+    this.findings = findings;
+  }
+
+  get block() {
+    return this.#point.site.block;
+  }
+  get phase() {
+    return this.#point.phase;
+  }
+  get title() {
+    return this.#point.clauses.phase?.body.title?.text ?? null;
+  }
+  get aside() {
+    return this.#point.clauses.aside;
+  }
+  get emergency() {
+    return this.#point.clauses.emergency !== null;
+  }
+  get aircraft() {
+    return this.#point.applied.carried.aircraft?.value?.name ?? null;
+  }
+  get card() {
+    return this.#point.applied.carried.aircraft?.value?.card ?? null;
+  }
+  get configuration() {
+    return this.#evaluated?.ready.configuration ?? null;
+  }
+  get limitsName() {
+    return this.#point.limits.name;
+  }
+  get limits() {
+    return this.#point.limits.limits;
+  }
+  get rules() {
+    return this.#point.applied.carried.rules?.value ?? null;
+  }
+  get conditions() {
+    return this.#evaluated?.conditions ?? null;
+  }
+  get results() {
+    return this.#evaluated?.results ?? null;
+  }
+  get reference() {
+    return this.#evaluated ? referenceSpeeds(this.#evaluated.references()) : noReferences;
+  }
+  get absent() {
+    const reasons: Partial<Record<ResultName | "ias", string>> = {};
+    if (!this.#evaluated) return reasons;
+    for (const name of everyResult) {
+      const why = this.#evaluated.absent(name);
+      if (why !== null) reasons[name] = why;
+    }
+    return reasons;
+  }
+  get rows() {
+    return this.#held.rows;
+  }
+  get bankLimit() {
+    return this.#bankRow("must");
+  }
+  get bankAdvice() {
+    return this.#bankRow("should");
+  }
+  get claims() {
+    return this.#held.claims;
+  }
+  get notEvaluated() {
+    if (!this.#evaluated) return this.#held.notEvaluated;
+    const { card, configuration } = this.#evaluated.ready;
+    return [...this.#held.notEvaluated, ...absentChecks(card, configuration)];
+  }
+  get assumed() {
+    return assumptions(this.#point, this.#evaluated);
+  }
+  get inputs() {
+    return inputOrigins(this.#point);
+  }
+
+  #bankRow(verb: "must" | "should") {
+    return this.#held.rows.find((one) => one.row.subject === "bank" && one.row.verb === verb) ?? null;
+  }
+}
+
+const everyResult: readonly (ResultName | "ias")[] = [
+  "vs1g",
+  "overshoot",
+  "stall",
+  "warning",
+  "ratio",
+  "margin",
+  "load",
+  "stall-load",
+  "stall-bank",
+  "warning-bank",
+  "buffet-bank",
+  "buffet-load",
+  "radius",
+  "rate",
+  "rate-one-bank",
+  "v2min",
+  "vfto",
+  "vref",
+  "va",
+  "ias",
+];
+
+/** What was taken without being stated, in the order it is read out. */
+function assumptions(point: Point, evaluated: Evaluated | null): readonly Assumption[] {
+  const { clauses, applied } = point;
+  const { carried } = applied;
+  const assumed: Assumption[] = [];
+  if (!clauses.bank) assumed.push("wings level");
+  if (!clauses.path) assumed.push("level flight");
+  if (!carried.deviation) assumed.push("ISA");
+  if (!carried.contamination) assumed.push("no contamination");
+  if (!carried.cg && carried.aircraft?.value?.card?.cgEffect) assumed.push("worst cg");
+  assumed.push("power off");
+  if (!carried.engineOut) assumed.push("all engines");
+  const altitude = carried.altitude?.value;
+  if (evaluated && altitude && !altitude.flightLevel && !carried.qnh) assumed.push("pressure altitude");
+  return assumed;
+}
+
+/** Where each input in force was written. */
+function inputOrigins(point: Point): ReadonlyMap<Keyword, Origin> {
+  const { applied, clauses, site } = point;
+  const origins = new Map<Keyword, Origin>();
+  for (const key of Object.keys(keywordOf) as CarriedKey[]) {
+    const carried = applied.carried[key];
+    if (carried) origins.set(keywordOf[key], carried.origin);
+  }
+  for (const keyword of ["speed", "bank", "path", "load"] as const) {
+    const read = clauses[keyword];
+    if (read) origins.set(keyword, originOf(site, read.placed));
+  }
+  return origins;
+}

@@ -1,0 +1,66 @@
+import type { Block } from "../notation/block.ts";
+import { type Clauses, sortClauses } from "./clauses.ts";
+import type { Definitions } from "./definitions.ts";
+import { evaluatePoint } from "./evaluatePoint.ts";
+import { evaluateSetting } from "./evaluateSetting.ts";
+import type { Finding } from "./finding.ts";
+import { catalogue } from "./findings.ts";
+import type { BlockResult } from "./note.ts";
+import { findingAt, type Site } from "./site.ts";
+import type { State } from "./state.ts";
+
+const sorted = new WeakMap<Block, Clauses>();
+
+/** A block's clauses by what they state, worked out once for each version of the block. */
+export function clausesOf(block: Block): Clauses {
+  let clauses = sorted.get(block);
+  if (!clauses) {
+    clauses = sortClauses(block);
+    sorted.set(block, clauses);
+  }
+  return clauses;
+}
+
+/** Evaluates a point or a setting from the state that reaches it. */
+export function evaluateBlock(
+  site: Site,
+  definitions: Definitions,
+  before: State,
+): Extract<BlockResult, { kind: "point" | "setting" }> {
+  const { block } = site;
+  const clauses = clausesOf(block);
+  const written = [...textFindings(block), ...laterFindings(clauses)];
+  if (block.kind === "setting") {
+    const { after, findings } = evaluateSetting(site, clauses, definitions, before);
+    return { kind: "setting", block, after, findings: written.length > 0 ? [...written, ...findings] : findings };
+  }
+  const { point, after } = evaluatePoint(site, clauses, definitions, before);
+  const findings = written.length > 0 ? [...written, ...point.findings] : point.findings;
+  return { kind: "point", block, point, after, findings };
+}
+
+const noFindings: readonly Finding[] = [];
+
+/** The findings of the text, with the catalogue's severity. */
+export function textFindings(block: Block): readonly Finding[] {
+  if (block.findings.length === 0) return noFindings;
+  return block.findings.map((one) => ({
+    code: one.code,
+    severity: catalogue[one.code].severity,
+    line: one.line,
+    span: one.span,
+    message: one.message,
+    related: [],
+    fixes: one.fixes,
+  }));
+}
+
+function laterFindings(clauses: Clauses): readonly Finding[] {
+  return clauses.later.map((placed) =>
+    findingAt(
+      "not-in-this-version",
+      placed,
+      `This version reads \`${placed.clause.keyword}\` so, but does not compute it yet: the figures here do without it, or wait for a stated value.`,
+    ),
+  );
+}

@@ -1,0 +1,198 @@
+import { calibratedFromIndicated } from "../flight/ias.ts";
+import type { CardSpeed, Stated } from "./card.ts";
+import { byTolerance, type Checking, carriedFrom, clauseFor, sentence, tell } from "./checks.ts";
+import type { Corner } from "./corner.ts";
+import type { FindingCode } from "./findings.ts";
+import { formatAltitude, formatDistinct, formatLoad, formatMach, formatMass, formatSpeed } from "./format.ts";
+import { ALLOWANCE } from "./rules.ts";
+import { oneStepLower } from "./site.ts";
+import { catalogue } from "./findings.ts";
+
+/** The card's own limits: masses, speeds, ceiling, load factors. */
+export function checkAirframeLimits(checking: Checking): void {
+  checkMass(checking);
+  checkSpeeds(checking);
+  checkMinimumControl(checking);
+  checkMach(checking);
+  checkCeiling(checking);
+  checkLoad(checking);
+}
+
+function above(value: number, limit: number): boolean {
+  return limit + Math.abs(limit) * ALLOWANCE < value;
+}
+
+function checkMass(checking: Checking): void {
+  const { point, evaluated } = checking;
+  const { card, mass } = evaluated.ready;
+  const at = clauseFor(point, "weight");
+  const related = carriedFrom(point, ["mass"]);
+  const emergency = point.clauses.emergency !== null;
+  const severity = emergency ? oneStepLower(catalogue.overweight.severity) : catalogue.overweight.severity;
+  const over = (limit: number, what: string, origin: { readonly origin: Stated<unknown>["origin"] }) => {
+    if (!above(mass.high, limit)) return false;
+    const [weight, most] = formatDistinct(mass.high, limit, (kg, more) => formatMass(kg, limit, more));
+    const lead = byTolerance(!above(mass.nominal, limit));
+    tell(checking, "overweight", at, sentence(lead, `The weight ${weight} exceeds the ${most} ${what} of ${card.name}: burn or unload, or check the figure.`), {
+      severity,
+      related: [...related, { origin: origin.origin, message: `The masses of ${card.name}.` }],
+    });
+    return true;
+  };
+  const masses = card.mass;
+  const landing = card.landingMass;
+  const told =
+    point.phase === "landing" && landing?.value ? over(landing.value, "greatest landing mass", landing) : false;
+  if (!told && masses?.value) over(masses.value.high, "greatest mass", masses);
+  if (masses?.value && above(masses.value.low, mass.low)) {
+    const least = masses.value.low;
+    const [weight, limit] = formatDistinct(mass.low, least, (kg, more) => formatMass(kg, least, more));
+    const lead = byTolerance(!above(least, mass.nominal));
+    tell(checking, "underweight", at, sentence(lead, `The weight ${weight} is below the ${limit} least mass of ${card.name}: check the figure.`), {
+      related: [...related, { origin: masses.origin, message: `The masses of ${card.name}.` }],
+    });
+  }
+}
+
+function checkSpeeds(checking: Checking): void {
+  const { card, configuration } = checking.evaluated.ready;
+  maximumSpeed(checking, "over-vfe", "vfe", configuration.vfe, ` of ${configuration.name}`);
+  maximumSpeed(checking, "over-vmo", "vmo", card.vmo, "");
+  maximumSpeed(checking, "over-vne", "vne", card.vne, "");
+  maximumSpeed(checking, "over-vno", "vno", card.vno, "");
+}
+
+/** The CAS of a limit at a corner: an indicated one goes through the configuration's table there. */
+function limitCas(checking: Checking, limit: CardSpeed, corner: Corner): number | null {
+  if (!limit.ias) return limit.speed;
+  const { frame } = checking.evaluated.ready;
+  if (!frame.ias || !(0 < corner.load)) return null;
+  return calibratedFromIndicated(frame.ias, limit.speed, corner.load, corner.input.mass, frame.lift.referenceMass);
+}
+
+function maximumSpeed(
+  checking: Checking,
+  code: FindingCode,
+  name: string,
+  stated: Stated<CardSpeed> | null,
+  of: string,
+): void {
+  const limit = stated?.value;
+  if (!stated || !limit) return;
+  const { corners } = checking.evaluated;
+  const worst = worstExcess(checking, limit, corners.all);
+  if (!worst || !above(worst.corner.cas, worst.cas)) return;
+  const nominalLimit = limitCas(checking, limit, corners.nominal);
+  const nominalPasses = nominalLimit !== null && !above(corners.nominal.cas, nominalLimit);
+  const [flown, most] = formatDistinct(worst.corner.cas, worst.cas, (mps, more) => formatSpeed(mps, more));
+  tell(
+    checking,
+    code,
+    clauseFor(checking.point, "speed"),
+    sentence(byTolerance(nominalPasses), `The speed ${flown} exceeds the ${name}${of}, ${most}: slow down${code === "over-vfe" ? " or change the configuration" : ""}.`),
+    {
+      related: [
+        ...carriedFrom(checking.point, code === "over-vfe" ? ["speed", "config"] : ["speed"]),
+        { origin: stated.origin, message: `The card states ${name} here.` },
+      ],
+    },
+  );
+}
+
+function worstExcess(checking: Checking, limit: CardSpeed, corners: readonly Corner[]) {
+  let worst: { corner: Corner; cas: number } | null = null;
+  for (const corner of corners) {
+    const cas = limitCas(checking, limit, corner);
+    if (cas === null) continue;
+    if (!worst || worst.corner.cas - worst.cas < corner.cas - cas) worst = { corner, cas };
+  }
+  return worst;
+}
+
+/** An error with an engine out; a warning where an engine may fail next: takeoff, departure and missed. */
+function checkMinimumControl(checking: Checking): void {
+  const { point, evaluated } = checking;
+  const { card } = evaluated.ready;
+  const limit = card.vmca?.value;
+  if (!card.vmca || !limit) return;
+  const engineOut = evaluated.conditions.engineOut !== null;
+  const exposed = point.phase === "takeoff" || point.phase === "departure" || point.phase === "missed";
+  if (!engineOut && !exposed) return;
+  for (const corner of evaluated.corners.all) {
+    const least = limitCas(checking, limit, corner);
+    if (least === null || !above(least, corner.cas)) continue;
+    const [flown, minimum] = formatDistinct(corner.cas, least, (mps, more) => formatSpeed(mps, more));
+    tell(
+      checking,
+      "below-vmca",
+      clauseFor(point, "speed"),
+      `The speed ${flown} is below the minimum control speed in the air, ${minimum}${engineOut ? ", with an engine out" : ", should an engine fail"}: fly faster.`,
+      {
+        severity: engineOut ? "error" : "warning",
+        related: [...carriedFrom(point, ["speed"]), { origin: card.vmca.origin, message: "The card states vmca here." }],
+      },
+    );
+    return;
+  }
+}
+
+function checkMach(checking: Checking): void {
+  const { card } = checking.evaluated.ready;
+  const limit = card.mmo?.value;
+  const { mach } = checking.evaluated.conditions;
+  if (!card.mmo || !limit || !above(mach.high, limit)) return;
+  const [flown, most] = formatDistinct(mach.high, limit, formatMach);
+  tell(
+    checking,
+    "over-mmo",
+    clauseFor(checking.point, "speed"),
+    sentence(byTolerance(!above(mach.nominal, limit)), `The Mach number ${flown} exceeds the mmo, ${most}: slow down or fly lower.`),
+    {
+      related: [
+        ...carriedFrom(checking.point, ["speed", "altitude"]),
+        { origin: card.mmo.origin, message: "The card states mmo here." },
+      ],
+    },
+  );
+}
+
+function checkCeiling(checking: Checking): void {
+  const { card } = checking.evaluated.ready;
+  const limit = card.ceiling?.value;
+  const { pressureAltitude } = checking.evaluated.conditions;
+  if (!card.ceiling || !limit || !above(pressureAltitude.high, limit)) return;
+  const [flown, most] = formatDistinct(pressureAltitude.high, limit, formatAltitude);
+  tell(
+    checking,
+    "over-ceiling",
+    clauseFor(checking.point, "altitude"),
+    sentence(
+      byTolerance(!above(pressureAltitude.nominal, limit)),
+      `The pressure altitude ${flown} is above the ceiling of ${card.name}, ${most}: fly lower.`,
+    ),
+    {
+      related: [
+        ...carriedFrom(checking.point, ["altitude"]),
+        { origin: card.ceiling.origin, message: "The card states the ceiling here." },
+      ],
+    },
+  );
+}
+
+function checkLoad(checking: Checking): void {
+  const { configuration } = checking.evaluated.ready;
+  const limit = configuration.load?.value;
+  const { load } = checking.evaluated.conditions;
+  if (!configuration.load || !limit) return;
+  const related = [{ origin: configuration.load.origin, message: "The card states the load factors here." }];
+  const at = clauseFor(checking.point, "load");
+  if (above(load.high, limit.high)) {
+    const [flown, most] = formatDistinct(load.high, limit.high, formatLoad);
+    const lead = byTolerance(!above(load.nominal, limit.high));
+    tell(checking, "over-load-limit", at, sentence(lead, `The load factor ${flown} exceeds the limit of ${configuration.name}, ${most}: bank or pull less.`), { related });
+  } else if (above(limit.low, load.low)) {
+    const [flown, least] = formatDistinct(load.low, limit.low, formatLoad);
+    const lead = byTolerance(!above(limit.low, load.nominal));
+    tell(checking, "over-load-limit", at, sentence(lead, `The load factor ${flown} is below the limit of ${configuration.name}, ${least}: unload less.`), { related });
+  }
+}

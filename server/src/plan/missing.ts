@@ -1,0 +1,61 @@
+import type { Keyword } from "../notation/vocabulary.ts";
+import type { Point } from "./evaluatePoint.ts";
+import type { Finding } from "./finding.ts";
+import type { Origin } from "./origin.ts";
+import type { Withheld } from "./point.ts";
+import { findingAt, listed, originOf, stateFix } from "./site.ts";
+import { type CarriedKey, keywordOf, type State } from "./state.ts";
+
+/** What is never assumed, in the order a note states it. */
+const required = ["aircraft", "mass", "config", "altitude", "speed"] as const;
+
+const spoken: Readonly<Record<(typeof required)[number], string>> = {
+  aircraft: "an aeroplane (`fly`)",
+  mass: "a weight",
+  config: "a configuration",
+  altitude: "an altitude",
+  speed: "a speed",
+};
+
+/**
+ * Tells what the point needs and nobody stated, once: later points that wait for the same value
+ * give no figures and name the line where it was told.
+ */
+export function findMissing(
+  point: Point,
+  before: State,
+  findings: Finding[],
+): { readonly withheld: Withheld | null; readonly told: State["told"] } {
+  const { applied, clauses, site, phaseClause } = point;
+  const told: { [K in CarriedKey]?: Origin } = {};
+  const missing: (typeof required)[number][] = [];
+  let withheld: Withheld | null = null;
+  for (const key of required) {
+    if (applied.carried[key] || (key === "speed" && clauses.speed)) continue;
+    const origin = applied.afresh ? undefined : before.told[key];
+    if (origin) {
+      told[key] = origin;
+      withheld ??= { origin, code: "missing-value" };
+    } else if (!spoilt(point, keywordOf[key])) missing.push(key);
+  }
+  if (missing.length === 0) return { withheld, told };
+  const origin = originOf(site, phaseClause);
+  for (const key of missing) told[key] = origin;
+  const names = listed(missing.map((key) => spoken[key]));
+  const where = applied.newSector
+    ? "and a new sector begins here, so that nothing is carried into it"
+    : `and no line up to here states ${missing.length === 1 ? "it" : "them"}`;
+  findings.push(
+    findingAt("missing-value", phaseClause, `This point needs ${names}, ${where}.`, {
+      fixes: missing.map((key) => stateFix(site.block, keywordOf[key], `Write ${keywordOf[key]}`)),
+    }),
+  );
+  return { withheld: withheld ?? { origin, code: "missing-value" }, told };
+}
+
+/** True where a clause of the block was to state it but is in error, which has been told. */
+function spoilt(point: Point, keyword: Keyword): boolean {
+  return point.clauses.spoiled.some(
+    ({ clause }) => clause.keyword === keyword || clause.meant === keyword || clause.keyword === null,
+  );
+}

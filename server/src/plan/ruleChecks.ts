@@ -1,0 +1,196 @@
+import type { ResultName, Subject } from "../notation/vocabulary.ts";
+import { type Checking, carriedFrom, clauseFor, tell } from "./checks.ts";
+import type { FindingCode } from "./findings.ts";
+import { formatBank, formatDistinct, formatRadius, formatResultValue, formatSpeed } from "./format.ts";
+import type { Row } from "./limits.ts";
+import type { HeldRow } from "./point.ts";
+import { holdRow, strictest } from "./rules.ts";
+import { ratioFix } from "./ratioFix.ts";
+import { rowsInForce } from "./selectRows.ts";
+import { oneStepLower } from "./site.ts";
+
+export interface RuleOutcome {
+  /** The strictest row of each verb and subject in force. */
+  readonly rows: readonly HeldRow[];
+  /** Rows that `none` switched off. */
+  readonly off: readonly Row[];
+  readonly notEvaluated: readonly { readonly rule: string; readonly why: string }[];
+}
+
+/** Holds the point against the rows of its limits that apply here. */
+export function checkRules(checking: Checking): RuleOutcome {
+  const { point, evaluated } = checking;
+  const { limits, name } = point.limits;
+  if (!limits) {
+    return { rows: [], off: [], notEvaluated: [{ rule: `limits ${name}`, why: "They cannot be used, so no row is held." }] };
+  }
+  if (!point.phase) return { rows: [], off: [], notEvaluated: [] };
+  const { conditions, ready, corners } = evaluated;
+  const selected = rowsInForce(limits, {
+    phase: point.phase,
+    emergency: point.clauses.emergency !== null,
+    rules: point.applied.carried.rules?.value ?? null,
+    engineOut: conditions.engineOut !== null,
+    shear: false,
+    altitude: conditions.altitude,
+    pressureAltitude: conditions.pressureAltitude,
+  });
+  const basis = ready.card.basis?.value;
+  const situation = { corners, vsFactor: basis?.kind === "vs" ? basis.factor : null };
+  const rows: HeldRow[] = [];
+  const notEvaluated: { rule: string; why: string }[] = [];
+  for (const group of selected.groups) {
+    if (notApplicable(group.subject, checking)) continue;
+    const held = strictest(group.rows.map((row) => holdRow(row, situation)));
+    if (!held) continue;
+    rows.push(held);
+    if (held.holds === false) tellBroken(checking, held);
+    else if (held.holds === null) {
+      const why = evaluated.absent(resultOf[held.row.subject]) ?? "It is not known here.";
+      notEvaluated.push({ rule: held.row.text, why });
+      tellNotEvaluated(checking, held, why);
+    }
+  }
+  return { rows, off: selected.off, notEvaluated };
+}
+
+const resultOf: Readonly<Record<Subject, ResultName>> = {
+  bank: "load",
+  load: "load",
+  radius: "radius",
+  ratio: "ratio",
+  margin: "margin",
+  overshoot: "overshoot",
+  buffet: "buffet-load",
+};
+
+/** Wings level there is no turn to be wide; without a load there is no stall to keep a margin to. */
+function notApplicable(subject: Subject, { evaluated }: Checking): boolean {
+  const { nominal, all } = evaluated.corners;
+  if (subject === "radius") return all.every((one) => one.bank === 0);
+  if (subject === "margin") return nominal.stall === 0;
+  return subject === "overshoot" && told(evaluated.corners.nominal);
+}
+
+/** Where the warning has come already, there is no bank left to count: that has been told. */
+function told(nominal: Checking["evaluated"]["corners"]["nominal"]): boolean {
+  return nominal.cas <= nominal.warning && Number.isNaN(nominal.warningBank);
+}
+
+const codes: Readonly<Record<Subject, FindingCode>> = {
+  bank: "bank-over-limit",
+  load: "load-over-rule",
+  radius: "radius-over-rule",
+  ratio: "ratio-short",
+  margin: "margin-short",
+  overshoot: "overshoot-short",
+  buffet: "buffet-short",
+};
+
+function severityOf(checking: Checking, row: Row) {
+  const severity = row.verb === "must" ? "error" : "warning";
+  return checking.point.clauses.emergency && row.verb === "should" ? oneStepLower(severity) : severity;
+}
+
+function tellBroken(checking: Checking, held: HeldRow): void {
+  const { point } = checking;
+  const { row } = held;
+  const code = row.subject === "bank" && row.verb === "should" ? "bank-over-advice" : codes[row.subject];
+  const keyword = row.subject === "bank" || row.subject === "radius" || row.subject === "overshoot" ? "bank" : row.subject === "load" ? "load" : "speed";
+  const fix = row.subject === "ratio" ? ratioFix(checking, held) : null;
+  tell(checking, code, clauseFor(point, keyword), message(checking, held), {
+    severity: severityOf(checking, row),
+    related: [
+      ...carriedFrom(point, keyword === "speed" ? ["speed", "mass", "config"] : ["mass"]),
+      { origin: row.origin, message: `The row: ${row.text}${row.remark ? ` (${row.remark})` : ""}` },
+    ],
+    fixes: fix ? [fix] : [],
+  });
+}
+
+function message(checking: Checking, held: HeldRow): string {
+  const { point } = checking;
+  const { row, bound } = held;
+  const figure = held.figure ?? Number.NaN;
+  const rule = `${point.limits.name} ${row.verb === "must" ? "allows" : "advises"} in ${point.phase}`;
+  const asks = `${point.limits.name} ${row.verb === "must" ? "requires" : "advises"} in ${point.phase}`;
+  const lead = byTolerances(checking, held);
+  switch (row.subject) {
+    case "bank": {
+      const [flown, most] = formatDistinct(figure, bound, formatBank);
+      const why = held.byRateOne ? ", the bank for rate one" : "";
+      return `${lead}Bank ${flown} exceeds the ${most} that ${rule}${why}; ${warningAt(checking)}.`;
+    }
+    case "load": {
+      const [flown, most] = formatDistinct(figure, bound, (value, more) => formatResultValue("load", value, more));
+      return `${lead}The load factor ${flown} exceeds the ${most} that ${rule}: bank or pull less.`;
+    }
+    case "radius": {
+      const [flown, most] = formatDistinct(figure, bound, formatRadius);
+      return `${lead}The turn's radius ${flown} exceeds the ${most} that ${rule}: fly slower or bank more.`;
+    }
+    case "ratio": {
+      const of = checking.evaluated.ready.card.basis?.value?.kind === "vs" && row.vs !== null ? "vs" : "vs1g";
+      const [flown, least] = formatDistinct(figure, bound, (value, more) => formatResultValue("ratio", value, more));
+      return `${lead}The speed is ${flown} times ${of} and ${asks} ${least}: fly ${knotsMissing(checking, held)} faster, or lighter.`;
+    }
+    case "margin": {
+      const [flown, least] = formatDistinct(figure, bound, (value, more) => formatResultValue("margin", value, more));
+      return `${lead}The margin over the stall is ${flown} and ${asks} ${least}: fly faster or bank less.`;
+    }
+    case "overshoot": {
+      const [left, least] = formatDistinct(figure, bound, (value, more) => formatResultValue("overshoot", value, more));
+      return `${lead}Only ${left} of bank are left to the warning and ${asks} ${least}: bank less or fly faster.`;
+    }
+    case "buffet": {
+      const [onset, least] = formatDistinct(figure, bound, (value, more) => formatResultValue("buffet-load", value, more));
+      return `${lead}Buffet begins at a load factor of ${onset} and ${asks} ${least}: fly lower or lighter.`;
+    }
+  }
+}
+
+/** "With the tolerances: " where the nominal figure alone would keep the row. */
+function byTolerances(checking: Checking, held: HeldRow): string {
+  const { corners, ready } = checking.evaluated;
+  if (corners.all.length === 1) return "";
+  const basis = ready.card.basis?.value;
+  const alone = holdRow(held.row, {
+    corners: { nominal: corners.nominal, all: [corners.nominal] },
+    vsFactor: basis?.kind === "vs" ? basis.factor : null,
+  });
+  return alone.holds ? "With the tolerances: " : "";
+}
+
+function warningAt({ evaluated }: Checking): string {
+  const { nominal } = evaluated.corners;
+  const at = evaluated.results["warning-bank"];
+  const stall = evaluated.results["stall-bank"];
+  const speed = formatSpeed(nominal.cas);
+  if (at) return `at ${speed} the warning would come at ${formatResultValue("warning-bank", at.low)}`;
+  if (stall) return `at ${speed} the stall would come at ${formatResultValue("stall-bank", stall.low)}`;
+  return "bank less";
+}
+
+/** The knots that the ratio lacks, rounded up. */
+function knotsMissing(checking: Checking, held: HeldRow): string {
+  const { ready, corners } = checking.evaluated;
+  const basis = ready.card.basis?.value;
+  const factor = basis?.kind === "vs" && held.row.vs !== null ? basis.factor : 1;
+  let missing = 0;
+  for (const one of corners.all) missing = Math.max(missing, held.bound * one.vs1g * factor - one.cas);
+  return formatResultValue("warning", missing);
+}
+
+function tellNotEvaluated(checking: Checking, held: HeldRow, why: string): void {
+  const { point } = checking;
+  tell(
+    checking,
+    "not-evaluated",
+    point.phaseClause,
+    `The row \`${held.row.text}\` of ${point.limits.name} could not be held against this point. ${why}`,
+    {
+      severity: severityOf(checking, held.row),
+      related: [{ origin: held.row.origin, message: `The row: ${held.row.text}` }],
+    },
+  );
+}

@@ -1,0 +1,159 @@
+import { type Checking, carriedFrom, clauseFor, exerciseSeverity, leastAt, tell } from "./checks.ts";
+import type { Corner } from "./corner.ts";
+import { formatBank, formatDistinct, formatLoad, formatPercent, formatResultValue, formatSpeed } from "./format.ts";
+import { loadFactor } from "../flight/turn.ts";
+import { ALLOWANCE } from "./rules.ts";
+import { findingAt } from "./site.ts";
+
+/** The wing's own limits: stall, warning and buffet, at the worst corner. */
+export function checkSafety(checking: Checking): void {
+  if (!checkLift(checking)) return;
+  const stalled = checkStalled(checking);
+  if (!stalled) checkWarning(checking);
+  checkStallBeforeWarning(checking);
+  checkBuffet(checking);
+  checkUnloading(checking);
+}
+
+/** False where the wing's lift is not known here, or carries the load at no speed. */
+function checkLift(checking: Checking): boolean {
+  const { point, evaluated } = checking;
+  const { corners, ready } = evaluated;
+  const related = carriedFrom(point, ["mass", "altitude"]);
+  const never = corners.all.find((one) => one.stallKind === "no-level-flight" || one.vs1gKind === "no-level-flight");
+  if (never) {
+    const turning = never.vs1gKind !== "no-level-flight";
+    checking.findings.push(
+      findingAt(
+        "no-level-flight",
+        turning ? clauseFor(point, "bank") : clauseFor(point, "altitude"),
+        turning
+          ? `At this weight and altitude the wing carries the load factor ${formatLoad(never.load)} at no speed: bank less, fly lower or lighter.`
+          : "At this weight and altitude the wing carries the aeroplane at no speed: fly lower or lighter.",
+        { related },
+      ),
+    );
+    return !Number.isNaN(never.stallLoad);
+  }
+  const outside = corners.all.some(
+    (one) => one.stallKind === "outside-table" || one.vs1gKind === "outside-table" || Number.isNaN(one.stallLoad),
+  );
+  if (outside) {
+    const table = ready.configuration.liftMach;
+    checking.findings.push(
+      findingAt(
+        "outside-table",
+        clauseFor(point, "speed"),
+        `Here the lift-mach table of ${ready.configuration.name} ends before the Mach number that is needed, and it is never extrapolated, so what depends on it is not known: check speed and altitude, or extend the table.`,
+        {
+          related: [
+            ...carriedFrom(point, ["speed", "altitude"]),
+            ...(table ? [{ origin: table.origin, message: "The card's lift-mach table." }] : []),
+          ],
+        },
+      ),
+    );
+  }
+  return corners.all.every((one) => !Number.isNaN(one.stallLoad));
+}
+
+function isStalled(corner: Corner): boolean {
+  return corner.stallLoad < corner.load * (1 - ALLOWANCE);
+}
+
+function checkStalled(checking: Checking): boolean {
+  const { point, evaluated } = checking;
+  const { corners } = evaluated;
+  const worst = leastAt(corners.all, (one) => one.stallLoad - one.load);
+  if (!isStalled(worst)) return false;
+  const lead = isStalled(corners.nominal) ? "Stalled: " : "Stalled at the worst of the tolerances: ";
+  const [has, needs] = formatDistinct(worst.stallLoad, worst.load, formatLoad);
+  const speed = Number.isNaN(worst.stall) || worst.stall === 0 ? "" : `; the stall comes at ${formatResultValue("stall", worst.stall)}`;
+  tell(
+    checking,
+    "stalled",
+    clauseFor(point, "speed"),
+    `${lead}at ${formatSpeed(worst.cas)} the wing carries ${has} g and the point needs ${needs} g${speed}. Fly faster, bank less or fly lighter.`,
+    { severity: exerciseSeverity(point, "stalled"), related: carriedFrom(point, ["speed", "mass", "config"]) },
+  );
+  return true;
+}
+
+function isWarned(corner: Corner): boolean {
+  return corner.cas <= corner.warning * (1 + ALLOWANCE);
+}
+
+function checkWarning(checking: Checking): void {
+  const { point, evaluated } = checking;
+  const { corners, ready } = evaluated;
+  if (ready.frame.warning === null || Number.isNaN(corners.nominal.warning)) return;
+  const worst = leastAt(corners.all, (one) => one.cas - one.warning);
+  if (!isWarned(worst)) return;
+  const lead = isWarned(corners.nominal) ? "" : "With the tolerances, ";
+  const flown = formatSpeed(worst.cas);
+  const warning = formatResultValue("warning", worst.warning);
+  const text =
+    flown === warning
+      ? `The warning comes at the ${flown} that are flown`
+      : `The warning comes at ${warning} and ${flown} is flown`;
+  tell(
+    checking,
+    "warning-in-turn",
+    clauseFor(point, "speed"),
+    `${lead ? lead + text.charAt(0).toLowerCase() + text.slice(1) : text}, at a load factor of ${formatLoad(worst.load)}: fly faster or bank less.`,
+    { severity: exerciseSeverity(point, "warning-in-turn"), related: carriedFrom(point, ["speed", "mass", "config"]) },
+  );
+}
+
+/** A sensor does not know that the wing is dirty: the stall may come first, or with no warning at all. */
+function checkStallBeforeWarning(checking: Checking): void {
+  const { point, evaluated } = checking;
+  const { corners } = evaluated;
+  const worst = leastAt(corners.all, (one) => one.warning - one.stall);
+  if (!(worst.warning <= worst.stall * (1 + ALLOWANCE)) || worst.stall === 0) return;
+  const [stall, warning] = formatDistinct(worst.stall, worst.warning, (mps, more) => formatSpeed(mps, more));
+  tell(
+    checking,
+    "stall-before-warning",
+    clauseFor(point, "contamination"),
+    `With ${formatPercent(worst.input.liftLoss)} of the maximum lift lost, the stall comes at ${stall} and the warning at ${warning}, too late: do not rely on the warning, and fly faster.`,
+    { related: carriedFrom(point, ["contamination"]) },
+  );
+}
+
+function checkBuffet(checking: Checking): void {
+  const { point, evaluated } = checking;
+  const { corners } = evaluated;
+  if (Number.isNaN(corners.nominal.buffetLoad)) return;
+  const worst = leastAt(corners.all, (one) => one.buffetLoad - one.load);
+  if (!(worst.buffetLoad < worst.load * (1 - ALLOWANCE))) return;
+  const [onset, load] = formatDistinct(worst.buffetLoad, worst.load, formatLoad);
+  tell(
+    checking,
+    "buffet-in-turn",
+    clauseFor(point, "bank"),
+    `Buffet begins at a load factor of ${onset} and ${load} is flown: bank less, fly lower or lighter.`,
+    {
+      severity: exerciseSeverity(point, "buffet-in-turn"),
+      related: carriedFrom(point, ["altitude", "mass"]),
+    },
+  );
+}
+
+/** A stated load below what the bank needs in steady flight is a push-over; outside an exercise that is seldom meant. */
+function checkUnloading(checking: Checking): void {
+  const { point, evaluated } = checking;
+  const { load } = point.clauses;
+  const { nominal } = evaluated.corners;
+  if (!load || !evaluated.conditions.loadStated || !(nominal.bank < Math.PI / 2)) return;
+  const steady = loadFactor(nominal.bank, nominal.path);
+  if (steady === null || !(nominal.load < steady * (1 - ALLOWANCE))) return;
+  const [flown, needed] = formatDistinct(nominal.load, steady, formatLoad);
+  tell(
+    checking,
+    "load-below-bank",
+    load.placed,
+    `The load factor ${flown} is less than the ${needed} that a steady turn at ${formatBank(nominal.bank)} of bank needs, so the path curves down: check the load.`,
+    point.phase === "manoeuvre" ? { severity: "information" } : {},
+  );
+}

@@ -1,0 +1,27 @@
+import type { Note } from "../plan/note.ts";
+
+/** One finding as scripts read it: lines and columns count from 1, columns in UTF-16 code units. */
+export interface FindingJson {
+  readonly [key: string]: string | number | null;
+  readonly code: string;
+  readonly severity: string;
+  readonly line: number;
+  readonly column: number;
+  readonly endLine: number;
+  readonly endColumn: number;
+  readonly message: string;
+  readonly accepted: null;
+}
+
+export function findingsJson(note: Note): readonly FindingJson[] {
+  return note.findings().map(({ line, finding }) => ({
+    code: finding.code,
+    severity: finding.severity,
+    line: line + 1,
+    column: finding.span.start + 1,
+    endLine: line + 1,
+    endColumn: finding.span.end + 1,
+    message: finding.message,
+    accepted: null,
+  }));
+}

@@ -1,0 +1,199 @@
+import { fromSI } from "../flight/units.ts";
+import type { Note } from "../plan/note.ts";
+import { lineOf } from "../plan/origin.ts";
+import type { Conditions, PointResult } from "../plan/point.ts";
+import type { Spread } from "../plan/spread.ts";
+import { type FindingJson, findingsJson } from "./findingsJson.ts";
+
+export type JsonValue = string | number | boolean | null | readonly JsonValue[] | { readonly [key: string]: JsonValue };
+
+export type PointJson = { readonly [key: string]: JsonValue };
+
+/** What `points --format json` and the server's `plumbline/points` say of one file. */
+export interface FileJson {
+  readonly path: string;
+  readonly points: readonly PointJson[];
+  readonly findings: readonly FindingJson[];
+}
+
+/** Full double precision; a value that cannot be known is null; lines count from 1. */
+export function fileJson(note: Note, path: string): FileJson {
+  const points: PointJson[] = [];
+  for (const result of note.results()) if (result.kind === "point") points.push(pointJson(result.point));
+  return { path, points, findings: findingsJson(note) };
+}
+
+export function pointJson(point: PointResult): PointJson {
+  const { block, conditions } = point;
+  const spread = (name: keyof NonNullable<PointResult["results"]>) => point.results?.[name] ?? null;
+  const vs1g = spread("vs1g");
+  const stall = spread("stall");
+  const warning = spread("warning");
+  const ratio = spread("ratio");
+  const margin = spread("margin");
+  return {
+    line: block.start + 1,
+    endLine: block.start + block.lines.length,
+    phase: point.phase,
+    title: point.title,
+    aside: point.aside,
+    emergency: point.emergency,
+    aircraft: point.aircraft,
+    limits: point.limitsName,
+    rules: point.rules,
+    config: point.configuration?.name ?? null,
+    ...conditionsJson(conditions),
+    vs1g_kt: knots(vs1g?.nominal),
+    vs1g_high_kt: knots(vs1g?.high),
+    stall_kt: knots(stall?.nominal),
+    stall_high_kt: knots(stall?.high),
+    warning_kt: knots(warning?.nominal),
+    warning_high_kt: knots(warning?.high),
+    ratio: known(ratio?.nominal),
+    margin: known(margin?.nominal),
+    margin_low: known(margin?.low),
+    margin_high: known(margin?.high),
+    ratio_low: known(ratio?.low),
+    ratio_high: known(ratio?.high),
+    stall_load: known(spread("stall-load")?.nominal),
+    stall_load_low: known(spread("stall-load")?.low),
+    stall_bank_deg: degrees(spread("stall-bank")?.nominal),
+    stall_bank_low_deg: degrees(spread("stall-bank")?.low),
+    warning_bank_deg: degrees(spread("warning-bank")?.nominal),
+    warning_bank_low_deg: degrees(spread("warning-bank")?.low),
+    overshoot_deg: degrees(spread("overshoot")?.nominal),
+    overshoot_low_deg: degrees(spread("overshoot")?.low),
+    buffet_load: known(spread("buffet-load")?.nominal),
+    buffet_load_low: known(spread("buffet-load")?.low),
+    buffet_bank_deg: degrees(spread("buffet-bank")?.nominal),
+    buffet_bank_low_deg: degrees(spread("buffet-bank")?.low),
+    low_buffet_mach: null,
+    high_buffet_mach: null,
+    buffet_altitude_ft: null,
+    gust_load: null,
+    gust_load_down: null,
+    margin_after_shear: null,
+    ratio_after_shear: null,
+    va_kt: knots(spread("va")?.nominal),
+    ...referenceJson(point),
+    power_on_stall_kt: null,
+    radius_nm: inUnit(spread("radius")?.nominal, "nm"),
+    radius_high_nm: inUnit(spread("radius")?.high, "nm"),
+    rate_deg_s: degrees(spread("rate")?.nominal),
+    rate_one_bank_deg: degrees(spread("rate-one-bank")?.nominal),
+    bank_limit_deg: degrees(point.bankLimit?.bound),
+    bank_advice_deg: degrees(point.bankAdvice?.bound),
+    seconds_to_warning: null,
+    seconds_to_stall: null,
+    approach_category: null,
+    solved: null,
+    sweep: null,
+    claims: point.claims.map((claim) => ({
+      name: claim.name,
+      claimed: resultInUnit(claim.name, claim.claimed),
+      computed: claim.computed === null ? null : resultInUnit(claim.name, claim.computed),
+      holds: claim.holds,
+    })),
+    expected: [],
+    accepted: [],
+    not_evaluated: point.notEvaluated.map(({ rule, why }) => ({ rule, why })),
+    assumed: [...point.assumed],
+    inherited: inheritedJson(point),
+    withheld: point.withheld
+      ? { line: lineOf(point.withheld.origin) + 1, code: point.withheld.code }
+      : null,
+  };
+}
+
+function conditionsJson(conditions: Conditions | null): PointJson {
+  return {
+    mass_kg: known(conditions?.mass.nominal),
+    altitude_ft: inUnit(conditions?.altitude.nominal, "ft"),
+    pressure_altitude_ft: inUnit(conditions?.pressureAltitude.nominal, "ft"),
+    isa_deviation_c: known(conditions?.deviation.nominal),
+    cg_percent: percent(conditions?.cg),
+    lift_loss_percent: percent(conditions?.liftLoss),
+    bank_deg: degrees(conditions?.bank.nominal),
+    bank_side: conditions?.bankSide ?? null,
+    path_deg: degrees(conditions?.path.nominal),
+    load: known(conditions?.load.nominal),
+    engine_out: conditions?.engineOut ?? null,
+    speed: conditions
+      ? {
+          cas_kt: knots(conditions.cas.nominal),
+          eas_kt: knots(conditions.eas.nominal),
+          tas_kt: knots(conditions.tas.nominal),
+          mach: known(conditions.mach.nominal),
+          ias_kt: knots(conditions.ias?.nominal),
+        }
+      : null,
+  };
+}
+
+function referenceJson({ reference }: PointResult): PointJson {
+  return {
+    v2min_kt: knots(reference.v2min?.cas),
+    vfto_kt: knots(reference.vfto?.cas),
+    vref_kt: knots(reference.vref?.cas),
+  };
+}
+
+/** Clause keyword to line, for every carried clause that this point does not state. */
+function inheritedJson(point: PointResult): PointJson {
+  const inherited: { [key: string]: number } = {};
+  const first = point.block.start;
+  const last = first + point.block.lines.length - 1;
+  for (const [keyword, origin] of point.inputs) {
+    const line = lineOf(origin);
+    if (line < first || last < line) inherited[inheritedName[keyword] ?? keyword] = line + 1;
+  }
+  return inherited;
+}
+
+const inheritedName: Readonly<Record<string, string>> = { fly: "aircraft", under: "limits" };
+
+/** A figure that is not a number is not known. */
+function known(value: number | null | undefined): number | null {
+  return value !== undefined && value !== null && Number.isFinite(value) ? value : null;
+}
+
+function inUnit(value: number | null | undefined, unit: "kt" | "ft" | "nm" | "deg"): number | null {
+  const si = known(value);
+  return si === null ? null : fromSI(si, unit);
+}
+
+function knots(value: number | null | undefined): number | null {
+  return inUnit(value, "kt");
+}
+
+function degrees(value: number | null | undefined): number | null {
+  return inUnit(value, "deg");
+}
+
+function percent(fraction: Spread | null | undefined): number | null {
+  const si = known(fraction?.nominal);
+  return si === null ? null : si * 100;
+}
+
+/** A result in the unit it is shown in. */
+function resultInUnit(name: keyof NonNullable<PointResult["results"]>, si: number): number {
+  switch (name) {
+    case "ratio":
+    case "margin":
+    case "load":
+    case "stall-load":
+    case "buffet-load":
+      return si;
+    case "overshoot":
+    case "stall-bank":
+    case "warning-bank":
+    case "buffet-bank":
+    case "rate":
+    case "rate-one-bank":
+      return fromSI(si, "deg");
+    case "radius":
+      return fromSI(si, "nm");
+    default:
+      return fromSI(si, "kt");
+  }
+}
