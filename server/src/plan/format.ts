@@ -1,0 +1,193 @@
+import { fromSI, type UnitName } from "../flight/units.ts";
+import type { Quantity } from "../notation/tree.ts";
+import type { ResultName } from "../notation/vocabulary.ts";
+import { inShownUnit, type Rounding, results } from "./results.ts";
+import { MOST_DECIMALS, roundShown } from "./roundShown.ts";
+import type { Spread } from "./spread.ts";
+
+/**
+ * The one formatter: every number that is shown anywhere is written here. A text can be copied back
+ * into the notation: no digit groups, `-` for minus, a blank before a unit, none before the degree
+ * sign. `more` asks for decimals beyond the usual ones. A figure that is not finite is "unknown".
+ */
+
+/** What stands for a figure that is none. */
+const UNKNOWN = "unknown";
+
+/** A result at its worst corner with its unit: "134 kt", "62°", "1.45". With `spread`, "134 kt (132 to 134)" where the ends read differently. */
+export function formatResult(
+  name: ResultName,
+  spread: Spread,
+  { decimals, spread: withSpread }: { readonly decimals?: number; readonly spread?: boolean } = {},
+): string {
+  const { decimals: usual, worst } = results[name];
+  const more = (decimals ?? usual) - usual;
+  const shown = formatResultValue(name, spread[worst], more);
+  if (!withSpread) return shown;
+  const low = resultFigure(name, spread.low, usual + more);
+  const high = resultFigure(name, spread.high, usual + more);
+  return low === high ? shown : `${shown} (${low} to ${high})`;
+}
+
+/** The figure of {@link formatResult} alone, in the unit it is shown in; NaN where it is none. */
+export function shownResult(name: ResultName, spread: Spread, decimals = results[name].decimals): number {
+  const { worst, rounding } = results[name];
+  return roundShown(inShownUnit(name, spread[worst]), clipped(decimals), rounding);
+}
+
+/** One value of a result, SI, with its unit. */
+export function formatResultValue(name: ResultName, si: number, more = 0): string {
+  const { decimals, unit } = results[name];
+  return withUnit(resultFigure(name, si, decimals + more), unit);
+}
+
+/** The computed figure in a claim's own unit and decimals, to be compared with the figure that is claimed. */
+export function shownClaim(name: ResultName, spread: Spread, claimed: Quantity): number {
+  const { worst, rounding, unit } = results[name];
+  const si = spread[worst];
+  return roundShown(inShownUnit(name, si, claimed.unit ?? unit), clipped(claimed.decimals), rounding);
+}
+
+/** The computed figure as the claim would be written now; without a spread, the claim's own figure. */
+export function formatClaim(name: ResultName, spread: Spread | null, claimed: Quantity, more = 0): string {
+  const decimals = spread ? claimed.decimals + more : claimed.decimals;
+  const value = spread ? shownClaim(name, spread, { ...claimed, decimals }) : claimed.value;
+  return withUnit(fixed(value, decimals), claimed.unit ?? results[name].unit);
+}
+
+type Formatter = (value: number, more: number) => string;
+
+/**
+ * Two figures of one message. Where they would read alike, both get one decimal more, until they
+ * differ or have six. `formatOther` is for a second figure that is another kind of thing.
+ */
+export function formatDistinct(
+  one: number,
+  other: number,
+  format: Formatter,
+  formatOther: Formatter = format,
+): readonly [string, string] {
+  let more = 0;
+  while (more < MOST_DECIMALS && format(one, more) === formatOther(other, more)) more++;
+  return [format(one, more), formatOther(other, more)];
+}
+
+/** A speed in knots: "195 kt", "203 kt tas". A least speed is rounded up, a greatest one down. */
+export function formatSpeed(
+  mps: number,
+  more = 0,
+  {
+    type = "cas",
+    rounding = "nearest",
+  }: { readonly type?: "cas" | "eas" | "tas" | "ias"; readonly rounding?: Rounding } = {},
+): string {
+  const text = inUnit(mps, "kt", more, rounding);
+  return type === "cas" || text === UNKNOWN ? text : `${text} ${type}`;
+}
+
+/** "M 0.740". */
+export function formatMach(mach: number, more = 0): string {
+  const text = rounded(mach, 3 + more, "nearest");
+  return text === UNKNOWN ? text : `M ${text}`;
+}
+
+/**
+ * A bank that is flown or allowed: "25°". It is cut, so that who flies the figure shown banks no more
+ * than was checked.
+ */
+export function formatBank(rad: number, more = 0): string {
+  return inUnit(rad, "deg", more, "down");
+}
+
+/** An angle of the path: "-3.0°". */
+export function formatAngle(rad: number, more = 0): string {
+  return inUnit(rad, "deg", 1 + more, "nearest");
+}
+
+/** A load factor that is flown or needed: "1.11". What is left of it is a result, and is cut. */
+export function formatLoad(load: number, more = 0): string {
+  return formatResultValue("load", load, more);
+}
+
+/** "1.30 nm". */
+export function formatRadius(metres: number, more = 0): string {
+  return formatResultValue("radius", metres, more);
+}
+
+/** "56.02 t"; "712 kg" where the card's reference mass is below 5,700 kg. */
+export function formatMass(kg: number, referenceMass: number, more = 0): string {
+  return referenceMass < 5700 ? inUnit(kg, "kg", more, "nearest") : inUnit(kg, "t", 2 + more, "nearest");
+}
+
+/** "3200 ft". Cut, so that an altitude that can be reached is never read as more. */
+export function formatAltitude(metres: number, more = 0): string {
+  return inUnit(metres, "ft", more, "down");
+}
+
+/** "FL032", cut to the level that is reached; below the zero level, where none has a name, in feet. */
+export function formatFlightLevel(pressureAltitude: number): string {
+  const level = roundShown(fromSI(pressureAltitude, "FL"), 0, "down");
+  if (!Number.isFinite(level)) return UNKNOWN;
+  if (level < 0) return `pressure altitude ${formatAltitude(pressureAltitude)}`;
+  return `FL${fixed(level, 0).padStart(3, "0")}`;
+}
+
+/** A deviation from the standard atmosphere, which has its sign where it is not 0: "+8", "-6". */
+export function formatDeviation(kelvin: number, more = 0): string {
+  const text = trimmed(kelvin, 1 + more);
+  return Number(text) > 0 ? `+${text}` : text;
+}
+
+/** An absolute temperature: "-42 °C". */
+export function formatTemperature(kelvin: number, more = 0): string {
+  return withUnit(rounded(kelvin - 273.15, more, "nearest"), "C");
+}
+
+/** A share: "8 %", "7.5 %". */
+export function formatPercent(fraction: number, more = 0): string {
+  return withUnit(trimmed(fromSI(fraction, "%"), 1 + more), "%");
+}
+
+/** "1013 hPa". */
+export function formatQnh(pascal: number, more = 0): string {
+  return inUnit(pascal, "hPa", more, "nearest");
+}
+
+/** "12 s": time that is left, cut. */
+export function formatSeconds(seconds: number, more = 0): string {
+  return inUnit(seconds, "s", more, "down");
+}
+
+function resultFigure(name: ResultName, si: number, decimals: number): string {
+  return rounded(inShownUnit(name, si), decimals, results[name].rounding);
+}
+
+function inUnit(si: number, unit: UnitName, decimals: number, rounding: Rounding): string {
+  return withUnit(rounded(fromSI(si, unit), decimals, rounding), unit);
+}
+
+function rounded(value: number, decimals: number, rounding: Rounding): string {
+  return fixed(roundShown(value, clipped(decimals), rounding), clipped(decimals));
+}
+
+/** To the nearest, without zeros at the end. */
+function trimmed(value: number, decimals: number): string {
+  const figure = roundShown(value, clipped(decimals), "nearest");
+  return Number.isFinite(figure) ? String(figure) : UNKNOWN;
+}
+
+function fixed(value: number, decimals: number): string {
+  return Number.isFinite(value) ? value.toFixed(clipped(decimals)) : UNKNOWN;
+}
+
+function clipped(decimals: number): number {
+  return Math.min(Math.max(decimals, 0), MOST_DECIMALS);
+}
+
+/** The degree sign touches its figure; every other unit stands behind a blank. */
+function withUnit(figure: string, unit: UnitName | null): string {
+  if (unit === null || figure === UNKNOWN) return figure;
+  if (unit === "deg") return `${figure}°`;
+  if (unit === "deg/s") return `${figure}°/s`;
+  return `${figure} ${unit === "C" ? "°C" : unit}`;
+}
