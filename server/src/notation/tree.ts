@@ -76,6 +76,7 @@ export interface Sweep {
 }
 
 export interface Range {
+  readonly kind: "range";
   readonly from: Quantity;
   readonly to: Quantity;
   readonly span: Span;

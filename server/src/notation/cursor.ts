@@ -1,0 +1,142 @@
+import { isBlank, isInvisible, isNameCharacter } from "./characters.ts";
+import type { Fix, TextCode, TextFinding } from "./finding.ts";
+import type { Span } from "./span.ts";
+import type { Token, TokenKind } from "./token.ts";
+import { keywordOf } from "./vocabulary.ts";
+
+/** Findings that cost only their report: the clause they stand in reads one way all the same. */
+const harmless = new Set<TextCode>(["separator", "unclosed-remark", "unclosed-title"]);
+
+/**
+ * A place in one bar line that moves on as the line is read. It takes blanks and remarks between any
+ * tokens, gathers findings, and, where asked to, the tokens themselves.
+ */
+export class Cursor {
+  readonly text: string;
+  readonly findings: TextFinding[] = [];
+  /** Null where nobody asked for tokens, which is the usual case: they cost more than the tree. */
+  readonly tokens: Token[] | null;
+  at = 0;
+  /** True where a finding of the clause being read keeps it from giving a value. */
+  faulty = false;
+  /** End of the last token that was neither blank nor remark. */
+  lastEnd = 0;
+
+  constructor(text: string, recordTokens: boolean) {
+    this.text = text;
+    this.tokens = recordTokens ? [] : null;
+  }
+
+  code(offset = 0): number {
+    const index = this.at + offset;
+    return index < this.text.length ? this.text.charCodeAt(index) : -1;
+  }
+
+  /** Takes the text up to `end` as one token. */
+  take(end: number, kind: TokenKind): Span {
+    const start = this.at;
+    if (start < end) {
+      this.tokens?.push({ start, end, kind });
+      this.at = end;
+      if (kind !== "blank" && kind !== "remark") this.lastEnd = end;
+    }
+    return { start, end };
+  }
+
+  report(code: TextCode, span: Span, message: string, fixes: readonly Fix[] = []): void {
+    this.findings.push({ code, line: 0, span, message, fixes });
+    if (!harmless.has(code)) this.faulty = true;
+  }
+
+  /** Passes blanks and remarks. */
+  skip(): void {
+    for (;;) {
+      const code = this.code();
+      if (code === 32 || code === 9 || (code > 32 && code < 0x7f)) {
+        if (code === 40) this.#remark();
+        else if (code > 32) return;
+        else this.#blank();
+      } else if (code === -1) return;
+      else if (isBlank(code)) this.#blank();
+      else if (isInvisible(code)) this.#invisible();
+      else return;
+    }
+  }
+
+  #blank(): void {
+    let end = this.at + 1;
+    while (end < this.text.length && isBlank(this.text.charCodeAt(end))) end++;
+    this.take(end, "blank");
+  }
+
+  #invisible(): void {
+    const span = this.take(this.at + 1, "unread");
+    const code = this.text.charCodeAt(span.start).toString(16).toUpperCase().padStart(4, "0");
+    this.report("unexpected-text", span, `An invisible character (U+${code}) stands here and may change what is read: remove it.`, [
+      { title: "Remove the invisible character", preferred: true, edits: [{ line: 0, ...span, newText: "" }] },
+    ]);
+  }
+
+  /** `( … )`, nested; one left open ends at the next `;` or the line's end. */
+  #remark(): void {
+    const start = this.at;
+    let depth = 0;
+    for (let i = start; i < this.text.length; i++) {
+      const code = this.text.charCodeAt(i);
+      if (code === 40) depth++;
+      else if (code === 41 && --depth === 0) {
+        const span = this.take(i + 1, "remark");
+        this.#speedKindInRemark(span);
+        return;
+      }
+    }
+    const semicolon = this.text.indexOf(";", start);
+    const end = semicolon < 0 ? this.text.length : semicolon;
+    const span = this.take(end, "remark");
+    const close = this.text.slice(0, end).trimEnd().length;
+    this.report("unclosed-remark", span, "This remark is not closed, so it ends here: write `)`.", [
+      { title: "Close the remark", preferred: true, edits: [{ line: 0, start: close, end: close, newText: ")" }] },
+    ]);
+  }
+
+  /** `200 kt (TAS)` means what a remark never says, so it is told instead of passed over. */
+  #speedKindInRemark(span: Span): void {
+    const length = span.end - span.start;
+    if (length < 5 || 9 < length) return;
+    const content = this.text.slice(span.start + 1, span.end - 1).trim().toLowerCase();
+    const kind = /^k?([cetiCETI]as)$/.exec(content)?.[1];
+    if (!kind) return;
+    this.report("remark-not-read", span, `A remark is never read, so the speed would stay calibrated: write ${kind} without the brackets, or leave it out.`, [
+      { title: `Write ${kind}`, preferred: kind !== "cas", edits: [{ line: 0, ...span, newText: kind }] },
+    ]);
+  }
+
+  /** The end of the run of name characters that begins here. */
+  nameEnd(from = this.at): number {
+    let end = from;
+    while (end < this.text.length && isNameCharacter(this.text.charCodeAt(end))) end++;
+    return end;
+  }
+
+  /** The word that begins here, in lower case; empty where none does. */
+  word(): string {
+    return this.text.slice(this.at, this.nameEnd()).toLowerCase();
+  }
+
+  /** Takes the word if it is this one. */
+  takeWord(word: string): Span | null {
+    return this.word() === word ? this.take(this.at + word.length, "word") : null;
+  }
+
+  /** True at `;`, at the line's end, and where a keyword begins that the argument due cannot be. */
+  atClauseEnd(): boolean {
+    const code = this.code();
+    return code === -1 || code === 59;
+  }
+
+  /** The keyword that begins here, if one does. */
+  keywordHere(): string | null {
+    const end = this.nameEnd();
+    return end === this.at ? null : keywordOf(this.text.slice(this.at, end));
+  }
+}

@@ -1,0 +1,264 @@
+import { isBlank, isDigit, isMinus } from "./characters.ts";
+import { cardClauses } from "./cardClauses.ts";
+import { Cursor } from "./cursor.ts";
+import type { Fix, TextFinding } from "./finding.ts";
+import { limitsClauses } from "./limitsClauses.ts";
+import { type ClauseReader, planClauses } from "./planClauses.ts";
+import { nearestWord } from "./spelling.ts";
+import type { Token } from "./token.ts";
+import type { BarLine, Clause, ClauseBody } from "./tree.ts";
+import { type Keyword, keywordEntry, keywordOf, keywords, strangers } from "./vocabulary.ts";
+
+/*
+ * bar-line  = { B } "|" [ clause ] { ";" [ clause ] } ;
+ * clause    = keyword { argument } ;                        (the arguments: planClauses, cardClauses, limitsClauses)
+ * B         = Unicode white space except line ends | U+FEFF ;   (B and remarks stand between any tokens)
+ * remark    = "(" { remark | other than ( ) } ")" ;             (left open: to ";" or the line's end)
+ * title     = '"' text '"' | ("“"|"„") text ("”"|"“") | "«" text "»" ;
+ * name      = (letter|digit) { letter|mark|digit|"-" } ;
+ * number    = digits [ "." digits ] | "." digits ;
+ * signed    = [ "+" | minus ] number ;
+ * qty       = signed [ unit ] | "FL" digit digit digit ;
+ * tol       = ( "+-" | "±" | "+/-" ) number [ unit ] ;
+ * scalar    = qty [ tol ] ;   sweep = qty "to" qty "by" qty ;   range = qty "to" qty ;
+ * unknown   = "?" [ unit ] [ tol ] ;
+ *
+ * The argument that is due decides how the next characters are read, for `isa-3`, `vref-5`, `60t` and
+ * `2027-03-31` all look like names.
+ */
+
+const readers = new Map<string, ClauseReader>([
+  ...Object.entries(planClauses),
+  ...Object.entries(cardClauses),
+  ...Object.entries(limitsClauses),
+]);
+// A card's contamination and configuration take both shapes.
+readers.set("contamination", planClauses.contamination as ClauseReader);
+
+/** More findings than this on one line are told as a number. */
+const MOST_FINDINGS = 20;
+
+/** Parses one bar line. It never fails: what is not understood is told, and disturbs no neighbour. */
+export function parseLine(text: string): BarLine {
+  const { clauses, findings } = read(text, false);
+  return new ParsedLine(text, clauses, findings);
+}
+
+class ParsedLine implements BarLine {
+  readonly text: string;
+  readonly clauses: readonly Clause[];
+  readonly findings: readonly TextFinding[];
+  #tokens: readonly Token[] | null = null;
+
+  constructor(text: string, clauses: readonly Clause[], findings: readonly TextFinding[]) {
+    this.text = text;
+    this.clauses = clauses;
+    this.findings = findings;
+  }
+
+  /** The line is read once more for its tokens when somebody asks: most lines are never asked. */
+  get tokens(): readonly Token[] {
+    this.#tokens ??= read(this.text, true).cursor.tokens ?? [];
+    return this.#tokens;
+  }
+}
+
+const noFindings: readonly TextFinding[] = [];
+
+function read(text: string, recordTokens: boolean) {
+  const cursor = new Cursor(text, recordTokens);
+  let bar = 0;
+  while (isBlank(text.charCodeAt(bar))) bar++;
+  cursor.take(bar, "indent");
+  cursor.take(bar + 1, "bar");
+  const clauses: Clause[] = [];
+  for (;;) {
+    cursor.faulty = false;
+    cursor.skip();
+    const code = cursor.code();
+    if (code === -1) break;
+    if (code === 59) cursor.take(cursor.at + 1, "separator");
+    else clauses.push(readClause(cursor, text));
+  }
+  return { cursor, clauses, findings: cap(cursor.findings, text) };
+}
+
+function cap(findings: readonly TextFinding[], text: string): readonly TextFinding[] {
+  if (findings.length === 0) return noFindings;
+  if (findings.length <= MOST_FINDINGS) return findings;
+  const rest = findings.length - MOST_FINDINGS + 1;
+  const first = findings.slice(0, MOST_FINDINGS - 1);
+  const span = { start: 0, end: text.length };
+  return [...first, { code: "unexpected-text", line: 0, span, message: `And ${rest} more findings on this line: mend the first ones.`, fixes: [] }];
+}
+
+function readClause(cursor: Cursor, text: string): Clause {
+  const start = cursor.at;
+  const before = cursor.findings.length;
+  const word = keywordAt(cursor);
+  if (!word) return unreadable(cursor, start);
+  if (!word.keyword) return unknownKeyword(cursor, start, word.end);
+  const keywordSpan = cursor.take(word.end, "keyword");
+  slipAfterKeyword(cursor);
+  const reader = readers.get(word.keyword) as ClauseReader;
+  const body = reader(cursor);
+  if (!body && !cursor.faulty) missingArgument(cursor, word.keyword, keywordSpan, before);
+  finish(cursor, text);
+  const end = Math.max(cursor.lastEnd, keywordSpan.end);
+  const keyword = canonical(word.keyword, body);
+  return { span: { start, end }, keywordSpan, keyword, meant: null, faulty: cursor.faulty, body };
+}
+
+/** `mass 56 t` is a weight; only with a range it is a card's. */
+function canonical(keyword: Keyword, body: ClauseBody | null): Keyword {
+  return keyword === "mass" && body?.kind === "weight" ? "weight" : keyword;
+}
+
+/** The keyword that begins here, also where its argument touches it: `isa-3`, `weight61.4t`. */
+function keywordAt(cursor: Cursor): { readonly end: number; readonly keyword: Keyword | null } | null {
+  const { text, at } = cursor;
+  const end = cursor.nameEnd();
+  if (end === at || text.charCodeAt(at) === 45) return null;
+  const run = text.slice(at, end);
+  const whole = keywordOf(run);
+  if (whole) return { end, keyword: whole };
+  for (let i = at + 1; i < end; i++) {
+    const code = text.charCodeAt(i);
+    const touches = isDigit(code) || (isMinus(code) && (isDigit(text.charCodeAt(i + 1)) || text.charCodeAt(i + 1) === 46));
+    if (!touches) continue;
+    const part = keywordOf(text.slice(at, i));
+    if (part) return { end: i, keyword: part };
+  }
+  return { end, keyword: null };
+}
+
+/** Text that no clause begins with. */
+function unreadable(cursor: Cursor, start: number): Clause {
+  const span = takeRest(cursor);
+  const bar = cursor.text.charCodeAt(start) === 124;
+  cursor.report(
+    "unexpected-text",
+    span,
+    bar
+      ? "A `|` begins a line and means nothing inside it; if this is a Markdown table, leave a blank line above it and make its second line `| --- | --- |`."
+      : "A clause begins with a keyword: write one, or `;` and the next clause.",
+  );
+  return { span, keywordSpan: { start, end: start }, keyword: null, meant: null, faulty: true, body: null };
+}
+
+function unknownKeyword(cursor: Cursor, start: number, end: number): Clause {
+  const typed = cursor.text.slice(start, end);
+  const keywordSpan = cursor.take(end, "unread");
+  const stranger = strangers[typed.toLowerCase()] ?? null;
+  const guess = stranger ?? guessKeyword(typed);
+  const span = takeRest(cursor);
+  cursor.report("unknown-keyword", keywordSpan, unknownMessage(typed, stranger, guess), guess ? keywordFixes(typed, keywordSpan, guess) : []);
+  return { span: { start, end: Math.max(span.end, end) }, keywordSpan, keyword: null, meant: guess, faulty: true, body: null };
+}
+
+function guessKeyword(typed: string): Keyword | null {
+  const letters = /^[\p{L}-]+/u.exec(typed)?.[0] ?? typed;
+  if (letters.length >= 3) return nearestWord(letters, keywords) as Keyword | null;
+  const begun = keywords.filter((one) => one.startsWith(typed.toLowerCase()));
+  return begun.length > 0 ? (begun[0] as Keyword) : null;
+}
+
+function unknownMessage(typed: string, stranger: Keyword | null, guess: Keyword | null): string {
+  if (stranger === "config") return `\`${typed}\` is not a keyword; a configuration is \`config flaps-5\`.`;
+  if (guess) return `\`${typed}\` is not a keyword; did you mean \`${guess}\`, as in \`${keywordEntry(guess).example}\`?`;
+  return `\`${typed}\` is not a keyword: write one, or begin the line with \`\\|\` if it is prose.`;
+}
+
+function keywordFixes(typed: string, span: { start: number; end: number }, guess: Keyword): Fix[] {
+  const short = typed.length < 3 ? keywords.filter((one) => one.startsWith(typed.toLowerCase())) : [guess];
+  return (short.length > 0 ? short : [guess]).map((keyword, i) => ({
+    title: `Write ${keyword}`,
+    preferred: i === 0 && short.length <= 1,
+    edits: [{ line: 0, ...span, newText: keyword }],
+  }));
+}
+
+/** `weight: 56 t` and `weight = 56 t` read one way only. */
+function slipAfterKeyword(cursor: Cursor): void {
+  cursor.skip();
+  const code = cursor.code();
+  if (code !== 58 && code !== 61) return;
+  const mark = cursor.text.charAt(cursor.at);
+  const span = cursor.take(cursor.at + 1, "slip");
+  cursor.report("separator", span, `No \`${mark}\` stands after a keyword: leave it out.`, [
+    { title: `Remove ${mark}`, preferred: true, edits: [{ line: 0, ...span, newText: "" }] },
+  ]);
+}
+
+function missingArgument(cursor: Cursor, keyword: Keyword, span: { start: number; end: number }, before: number): void {
+  if (cursor.findings.length > before && cursor.faulty) return;
+  const { pattern, example } = keywordEntry(keyword);
+  const due = pattern || "nothing";
+  const end = cursor.atClauseEnd() ? span.end : span.end;
+  cursor.report("missing-argument", { start: span.start, end }, `After \`${keyword}\` comes ${due}: write it, as in \`${example}\`.`);
+}
+
+/** Brings the cursor to the clause's end; what stands before it is told, or read as a missing `;`. */
+function finish(cursor: Cursor, text: string): void {
+  cursor.skip();
+  if (cursor.atClauseEnd()) return;
+  if (cursor.code() === 44) {
+    let next = cursor.at + 1;
+    while (isBlank(text.charCodeAt(next))) next++;
+    if (startsKeyword(cursor, next)) {
+      const word = text.slice(next, cursor.nameEnd(next));
+      const span = cursor.take(cursor.at + 1, "slip");
+      cursor.report("separator", span, `Clauses are separated by \`;\`: put one here instead of the comma, before ${word}.`, [
+        { title: "Write ;", preferred: true, edits: [{ line: 0, ...span, newText: ";" }] },
+      ]);
+      return;
+    }
+  } else if (startsKeyword(cursor, cursor.at)) {
+    const word = text.slice(cursor.at, cursor.nameEnd());
+    const at = cursor.lastEnd;
+    cursor.report("separator", { start: cursor.at, end: cursor.at + word.length }, `Clauses are separated by \`;\`: put one here, before ${word}.`, [
+      { title: "Write ;", preferred: true, edits: [{ line: 0, start: at, end: at, newText: ";" }] },
+    ]);
+    return;
+  }
+  const start = cursor.at;
+  const already = cursor.faulty;
+  const bar = cursor.code() === 124;
+  const span = takeRest(cursor);
+  if (already) return;
+  cursor.report(
+    "unexpected-text",
+    span,
+    bar
+      ? "A `|` begins a line and means nothing inside it; if this is a Markdown table, leave a blank line above it and make its second line `| --- | --- |`."
+      : `This is not understood after ${text.slice(0, start).trimEnd().split(/[;|]/).pop()?.trim().split(/\s+/)[0] ?? "the clause"}: write \`;\` before a new clause, or leave it out.`,
+  );
+}
+
+function startsKeyword(cursor: Cursor, at: number): boolean {
+  const end = cursor.nameEnd(at);
+  if (end === at) return false;
+  return keywordOf(cursor.text.slice(at, end)) !== null;
+}
+
+/** Takes everything up to the next `;` that no remark or title holds. */
+function takeRest(cursor: Cursor): { start: number; end: number } {
+  const start = cursor.at;
+  let end = start;
+  for (;;) {
+    cursor.skip();
+    const code = cursor.code();
+    if (code === -1 || code === 59) return { start, end: Math.max(end, start) };
+    const { text } = cursor;
+    let next = cursor.at + 1;
+    if (code === 34) {
+      const close = text.indexOf('"', next);
+      const semicolon = text.indexOf(";", next);
+      next = close >= 0 ? close + 1 : semicolon >= 0 ? semicolon : text.length;
+    } else {
+      while (next < text.length && !isBlank(text.charCodeAt(next)) && text.charCodeAt(next) !== 59 && text.charCodeAt(next) !== 40 && text.charCodeAt(next) !== 34) next++;
+    }
+    cursor.take(next, "unread");
+    end = cursor.at;
+  }
+}
