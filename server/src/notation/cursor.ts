@@ -4,6 +4,8 @@ import type { Span } from "./span.ts";
 import type { Token, TokenKind } from "./token.ts";
 import { keywordOf } from "./vocabulary.ts";
 
+const noFindings: readonly TextFinding[] = [];
+
 /** Findings that cost only their report: the clause they stand in reads one way all the same. */
 const harmless = new Set<TextCode>(["separator", "unclosed-remark", "unclosed-title"]);
 
@@ -13,7 +15,7 @@ const harmless = new Set<TextCode>(["separator", "unclosed-remark", "unclosed-ti
  */
 export class Cursor {
   readonly text: string;
-  readonly findings: TextFinding[] = [];
+  #findings: TextFinding[] | null = null;
   /** Null where nobody asked for tokens, which is the usual case: they cost more than the tree. */
   readonly tokens: Token[] | null;
   at = 0;
@@ -27,24 +29,34 @@ export class Cursor {
     this.tokens = recordTokens ? [] : null;
   }
 
+  get findings(): readonly TextFinding[] {
+    return this.#findings ?? noFindings;
+  }
+
   code(offset = 0): number {
     const index = this.at + offset;
     return index < this.text.length ? this.text.charCodeAt(index) : -1;
   }
 
-  /** Takes the text up to `end` as one token. */
-  take(end: number, kind: TokenKind): Span {
-    const start = this.at;
-    if (start < end) {
-      this.tokens?.push({ start, end, kind });
+  /** Passes the text up to `end` as one token. */
+  pass(end: number, kind: TokenKind): void {
+    if (this.at < end) {
+      this.tokens?.push({ start: this.at, end, kind });
       this.at = end;
       if (kind !== "blank" && kind !== "remark") this.lastEnd = end;
     }
+  }
+
+  /** Takes the text up to `end` as one token. */
+  take(end: number, kind: TokenKind): Span {
+    const start = this.at;
+    this.pass(end, kind);
     return { start, end };
   }
 
   report(code: TextCode, span: Span, message: string, fixes: readonly Fix[] = []): void {
-    this.findings.push({ code, line: 0, span, message, fixes });
+    this.#findings ??= [];
+    this.#findings.push({ code, line: 0, span, message, fixes });
     if (!harmless.has(code)) this.faulty = true;
   }
 
@@ -66,7 +78,7 @@ export class Cursor {
   #blank(): void {
     let end = this.at + 1;
     while (end < this.text.length && isBlank(this.text.charCodeAt(end))) end++;
-    this.take(end, "blank");
+    this.pass(end, "blank");
   }
 
   #invisible(): void {
@@ -123,9 +135,23 @@ export class Cursor {
     return this.text.slice(this.at, this.nameEnd()).toLowerCase();
   }
 
+  /** True where this word, in lower case ASCII, begins here, whatever its case. */
+  isWord(word: string): boolean {
+    const { text, at } = this;
+    const { length } = word;
+    for (let i = 0; i < length; i++) {
+      const code = text.charCodeAt(at + i);
+      const wanted = word.charCodeAt(i);
+      // Only a letter has another case: 32 apart in ASCII.
+      if (code !== wanted && !(97 <= wanted && wanted <= 122 && code === wanted - 32)) return false;
+    }
+    const next = at + length;
+    return next >= text.length || !isNameCharacter(text.charCodeAt(next));
+  }
+
   /** Takes the word if it is this one. */
   takeWord(word: string): Span | null {
-    return this.word() === word ? this.take(this.at + word.length, "word") : null;
+    return this.isWord(word) ? this.take(this.at + word.length, "word") : null;
   }
 
   /** True at `;`, at the line's end, and where a keyword begins that the argument due cannot be. */

@@ -158,6 +158,7 @@ function identity(kind: BlockKind, clause: Clause): string | null {
 
 /** A clause given twice is an error, and neither counts. */
 function checkTwice(kind: BlockKind, placed: { line: number; clause: Clause; counts: boolean }[], findings: TextFinding[]): void {
+  if (!anyTwice(placed)) return;
   const seen = new Map<string, (typeof placed)[number]>();
   const known = blockKeywords[kind];
   for (const one of placed) {
@@ -178,6 +179,20 @@ function checkTwice(kind: BlockKind, placed: { line: number; clause: Clause; cou
       fixes: one.clause.keyword === "phase" && startsLine(placed, one) ? [blankLineBefore(one.line)] : [],
     });
   }
+}
+
+/** Almost no block says anything twice, which a look at the keywords alone can tell. */
+function anyTwice(placed: readonly PlacedClause[]): boolean {
+  for (let i = 1; i < placed.length; i++) {
+    const keyword = alike((placed[i] as PlacedClause).clause.keyword);
+    if (keyword === null) continue;
+    for (let j = 0; j < i; j++) if (alike((placed[j] as PlacedClause).clause.keyword) === keyword) return true;
+  }
+  return false;
+}
+
+function alike(keyword: Keyword | null): Keyword | null {
+  return keyword === "burn" ? "weight" : keyword === "oat" ? "isa" : keyword;
 }
 
 const blockKeywords: Readonly<Record<BlockKind, { has(keyword: Keyword): boolean }>> = {
@@ -218,6 +233,9 @@ function isSweep(body: ClauseBody | null): boolean {
 
 /** One unknown and one sweep to a point. */
 function checkOpen(placed: { line: number; clause: Clause; counts: boolean }[], findings: TextFinding[]): void {
+  let open = 0;
+  for (const { clause } of placed) if (isUnknown(clause.body) || isSweep(clause.body)) open++;
+  if (open < 2) return;
   const tell = (code: "two-unknowns" | "two-sweeps", found: typeof placed, what: string) => {
     if (found.length < 2) return;
     for (const one of found) one.counts = false;

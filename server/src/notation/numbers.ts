@@ -48,7 +48,7 @@ export function readNumber(cursor: Cursor): ReadNumber | null {
   const negative = isMinus(sign);
   const signed = negative || sign === 43;
   if (signed) {
-    cursor.take(start + 1, "sign");
+    cursor.pass(start + 1, "sign");
     cursor.skip();
   }
   const first = cursor.at;
@@ -64,13 +64,23 @@ export function readNumber(cursor: Cursor): ReadNumber | null {
     // `25.` is read as 25: the point is the number's own.
     end++;
   }
-  const written = text.slice(first, end);
-  cursor.take(end, "number");
-  const value = Number(written) * (negative ? -1 : 1);
+  cursor.pass(end, "number");
+  const size = decimals === 0 && end - first < 10 ? integer(text, first, end) : Number(text.slice(first, end));
+  const value = negative ? -size : size;
   const span = { start, end };
-  if (text.charCodeAt(end) === 44 && isDigit(text.charCodeAt(end + 1))) commaNumber(cursor, first, written);
-  else if (text.charCodeAt(end) === 39 && isDigit(text.charCodeAt(end + 1))) groupedNumber(cursor, first, written, end + 1);
+  if (text.charCodeAt(end) === 44 && isDigit(text.charCodeAt(end + 1))) commaNumber(cursor, first, text.slice(first, end));
+  else if (text.charCodeAt(end) === 39 && isDigit(text.charCodeAt(end + 1))) groupedNumber(cursor, first, text.slice(first, end), end + 1);
   return { value: value === 0 ? 0 : value, decimals, signed, span };
+}
+
+/** The value of a run of digits, which needs no slice of the text; a point at its end is passed over. */
+function integer(text: string, first: number, end: number): number {
+  let value = 0;
+  for (let i = first; i < end; i++) {
+    const code = text.charCodeAt(i);
+    if (code !== 46) value = value * 10 + code - 48;
+  }
+  return value;
 }
 
 /** A comma between digits is asked back, never guessed. */
@@ -185,7 +195,7 @@ export function readQuantity(cursor: Cursor, kind: QuantityKind, options: Quanti
   const { end, word, unit } = unitHere(cursor);
   const rule = unitRule(kind);
   if (unit && rule.units.includes(unit) && unit !== "FL") {
-    cursor.take(end, "unit");
+    cursor.pass(end, "unit");
     threeDecimals(cursor, number, unit);
     return quantity(cursor, number, unit);
   }
@@ -210,7 +220,7 @@ function quantity(cursor: Cursor, number: ReadNumber, unit: Unit | null): Quanti
     unit,
     decimals: number.decimals,
     signed: number.signed,
-    span: { start: number.span.start, end: unit ? cursor.lastEnd : number.span.end },
+    span: unit ? { start: number.span.start, end: cursor.lastEnd } : number.span,
     numberSpan: number.span,
   };
 }
@@ -353,11 +363,11 @@ export function readValue(cursor: Cursor, kind: QuantityKind): Value | Range | n
   const first = readQuantity(cursor, kind, { unitLater: true });
   if (!first) return null;
   cursor.skip();
-  if (cursor.word() === "to") return readSweep(cursor, kind, first);
+  if (cursor.isWord("to")) return readSweep(cursor, kind, first);
   const tolerance = atTolerance(cursor) ? readTolerance(cursor, kind) : null;
-  const own = needUnit(cursor, kind, first, tolerance ? [tolerance.unit] : []);
-  const end = tolerance?.span.end ?? own.span.end;
-  return { kind: "scalar", quantity: own, tolerance, span: { start: own.span.start, end } };
+  const own = first.unit ? first : needUnit(cursor, kind, first, tolerance ? [tolerance.unit] : []);
+  const span = tolerance ? { start: own.span.start, end: tolerance.span.end } : own.span;
+  return { kind: "scalar", quantity: own, tolerance, span };
 }
 
 /** The quantity with its unit, which another part of the value may have stated; told where none did. */
@@ -379,7 +389,7 @@ function readSweep(cursor: Cursor, kind: QuantityKind, from: Quantity): Sweep | 
   }
   cursor.skip();
   let by: Quantity | null = null;
-  if (cursor.word() === "by") {
+  if (cursor.isWord("by")) {
     cursor.takeWord("by");
     cursor.skip();
     by = readQuantity(cursor, kind, { unitLater: true });

@@ -69,15 +69,15 @@ function read(text: string, recordTokens: boolean) {
   const cursor = new Cursor(text, recordTokens);
   let bar = 0;
   while (isBlank(text.charCodeAt(bar))) bar++;
-  cursor.take(bar, "indent");
-  cursor.take(bar + 1, "bar");
+  cursor.pass(bar, "indent");
+  cursor.pass(bar + 1, "bar");
   const clauses: Clause[] = [];
   for (;;) {
     cursor.faulty = false;
     cursor.skip();
     const code = cursor.code();
     if (code === -1) break;
-    if (code === 59) cursor.take(cursor.at + 1, "separator");
+    if (code === 59) cursor.pass(cursor.at + 1, "separator");
     else clauses.push(readClause(cursor, text));
   }
   return { cursor, clauses, findings: cap(cursor.findings, text) };

@@ -40,9 +40,7 @@ function valued(kind: "path" | "load" | "gust" | "cg" | "power" | "decel", quant
 
 function readBurn(cursor: Cursor): ClauseBody | null {
   cursor.skip();
-  const { text } = cursor;
-  const rest = text.slice(cursor.at);
-  if (/^[\d.]+\s*[a-z]+\s*\/|^[^;]*\bfor\b/i.test(rest)) {
+  if (flowAhead(cursor)) {
     const rate = readQuantity(cursor, "flow");
     if (!rate) return null;
     cursor.skip();
@@ -59,6 +57,14 @@ function readBurn(cursor: Cursor): ClauseBody | null {
   if (amount.kind === "scalar") return { kind: "burn", amount };
   cursor.report("bad-quantity", amount.span, "A burn is one figure and cannot be swept: sweep the weight instead.");
   return null;
+}
+
+/** True where the burn is a flow and its time: `2.4 t/h for 35 min`. */
+function flowAhead({ text, at }: Cursor): boolean {
+  const slash = text.indexOf("/", at);
+  const word = text.indexOf("for", at);
+  if (slash < 0 && word < 0) return false;
+  return /^[\d.]+\s*[a-z]+\s*\/|^[^;]*\bfor\b/i.test(text.slice(at));
 }
 
 function readIsa(cursor: Cursor): ClauseBody | null {

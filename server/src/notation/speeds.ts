@@ -25,8 +25,8 @@ function readExpression(cursor: Cursor, start: number): Speed | null {
 /** `M 0.76`, `M.76`, `M0.76`, `mach 0.76`, `M ?`. */
 function atMach(cursor: Cursor): boolean {
   const { text, at } = cursor;
-  const word = /^(m|mach)(?=[\s.\d?]|$)/i.exec(text.slice(at, at + 6));
-  return word !== null;
+  if ((cursor.code() | 32) !== 109) return false;
+  return /^(m|mach)(?=[\s.\d?]|$)/i.test(text.slice(at, at + 6));
 }
 
 function readMach(cursor: Cursor, start: number): Speed | null {

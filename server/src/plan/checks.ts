@@ -74,7 +74,7 @@ export function carriedFrom(point: Point, keys: readonly CarriedKey[]): Related[
 
 /** A finding of the plan at the clause that states the quantity. */
 export function tell(
-  { point, findings }: Pick<Checking, "point" | "findings">,
+  { findings }: Pick<Checking, "findings">,
   code: FindingCode,
   at: PlacedClause,
   message: string,

@@ -1,11 +1,11 @@
+import type { Quantity } from "../notation/tree.ts";
 import type { ResultName } from "../notation/vocabulary.ts";
 import type { Evaluated } from "./describe.ts";
 import type { Point } from "./evaluatePoint.ts";
 import type { Finding } from "./finding.ts";
 import { formatClaim, shownClaim } from "./format.ts";
 import type { ClaimResult } from "./point.ts";
-import { measureResult } from "./quantity.ts";
-import { resultEntry } from "./results.ts";
+import { fromShownUnit, resultEntry, results } from "./results.ts";
 import { ALLOWANCE } from "./rules.ts";
 import { findingAt } from "./site.ts";
 
@@ -14,7 +14,7 @@ export type ClaimOutcome = ClaimResult;
 /** Holds every figure that the author wrote down against the one that is computed. */
 export function checkClaims(point: Point, evaluated: Evaluated | null, findings: Finding[]): readonly ClaimOutcome[] {
   return point.clauses.claims.map(({ placed, body }): ClaimOutcome => {
-    const claimed = measureResult(body.value, body.result);
+    const claimed = inSI(body.result, body.value);
     const spread = evaluated?.results[body.result] ?? null;
     if (!evaluated || !spread) {
       findings.push(
@@ -29,7 +29,7 @@ export function checkClaims(point: Point, evaluated: Evaluated | null, findings:
     const computed = worstOf(body.result, spread);
     const shown = shownClaim(body.result, spread, body.value);
     const holds = body.within
-      ? Math.abs(computed - claimed) <= measureResult(body.within, body.result) * (1 + ALLOWANCE)
+      ? Math.abs(computed - claimed) <= inSI(body.result, body.within) * (1 + ALLOWANCE)
       : shown === body.value.value;
     if (!holds) {
       const unsafe = resultEntry(body.result).unsafeWhenClaimed === (claimed < computed ? "lower" : "higher");
@@ -45,6 +45,10 @@ export function checkClaims(point: Point, evaluated: Evaluated | null, findings:
     }
     return { clause: placed, name: body.result, claimed, computed, holds };
   });
+}
+
+function inSI(name: ResultName, { value, unit }: Quantity): number {
+  return fromShownUnit(name, value, unit ?? results[name].unit);
 }
 
 /** The worst corner, which is what is shown. */

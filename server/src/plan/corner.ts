@@ -113,7 +113,7 @@ export function corner(frame: Airframe, input: CornerInput): Corner | CornerProb
   const bankAtWarning =
     frame.warning === null
       ? Number.NaN
-      : (warningBank(lift, { mass, liftLoss: 0, cgFactor }, cas, frame.warning, path, air) ?? Number.NaN);
+      : (warningBank(lift, { mass, cgFactor }, cas, frame.warning, path, air) ?? Number.NaN);
   // The warning cannot come after the stall: what the wing does counts, not what the sensor would say.
   const warned = bankAtWarning > bankAtStall ? bankAtStall : bankAtWarning;
   const onset =

@@ -94,7 +94,7 @@ class OpenFolder implements Folder, Surroundings {
     this.#definitions = this.#collected.definitions;
     this.#findings = new Map(this.#collected.findings);
     if (notes.some((note) => note.hasPoints)) this.#findUnused(notes, [...cards, ...this.#resolved.values()]);
-    return this.#definitions;
+    return this.#collected.definitions;
   }
 
   #findUnused(notes: readonly FolderNote[], defined: readonly (FolderDefinition | Limits)[]): void {

@@ -178,7 +178,7 @@ function knotsMissing(checking: Checking, held: HeldRow): string {
   const factor = basis?.kind === "vs" && held.row.vs !== null ? basis.factor : 1;
   let missing = 0;
   for (const one of corners.all) missing = Math.max(missing, held.bound * one.vs1g * factor - one.cas);
-  return formatResultValue("warning", missing);
+  return formatSpeed(missing, 0, { rounding: "up" });
 }
 
 function tellNotEvaluated(checking: Checking, held: HeldRow, why: string): void {

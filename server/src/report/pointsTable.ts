@@ -1,0 +1,79 @@
+import type { ResultName } from "../notation/vocabulary.ts";
+import { formatAltitude, formatBank, formatFlightLevel, formatMass, formatResult, formatSpeed } from "../plan/format.ts";
+import type { Note } from "../plan/note.ts";
+import { lineOf } from "../plan/origin.ts";
+import type { PointResult } from "../plan/point.ts";
+
+/** One row of the points table, ready to be laid out. */
+export type TableRow = readonly string[];
+
+export const tableHead: TableRow = [
+  "line",
+  "phase",
+  "weight",
+  "config",
+  "altitude",
+  "speed",
+  "bank",
+  "vs1g",
+  "stall",
+  "warning",
+  "ratio",
+  "margin",
+  "load",
+  "warning at",
+  "stall at",
+];
+
+/** The points of a note with the figures a briefing needs, each as the one formatter writes it. */
+export function tableRows(note: Note): readonly TableRow[] {
+  return note.results().flatMap((result) => (result.kind === "point" ? [row(result.point)] : []));
+}
+
+function row(point: PointResult): TableRow {
+  const line = String(point.block.start + 1);
+  const phase = `${point.phase ?? "?"}${point.title ? ` "${point.title}"` : ""}${point.aside ? " (aside)" : ""}`;
+  const { conditions } = point;
+  if (!conditions) {
+    const why = point.withheld ? `no figures: ${point.withheld.code}, line ${lineOf(point.withheld.origin) + 1}` : "no figures";
+    return [line, phase, why, ...tableHead.slice(3).map(() => "")];
+  }
+  const result = (name: ResultName) => {
+    const spread = point.results?.[name];
+    return spread ? formatResult(name, spread) : "-";
+  };
+  const reference = point.card?.referenceMass?.value ?? conditions.mass.nominal;
+  return [
+    line,
+    phase,
+    formatMass(conditions.mass.nominal, reference),
+    point.configuration?.name ?? "",
+    conditions.flightLevel ? formatFlightLevel(conditions.altitude.nominal) : formatAltitude(conditions.altitude.nominal),
+    formatSpeed(conditions.cas.nominal),
+    `${formatBank(conditions.bank.nominal)}${conditions.bankSide ? ` ${conditions.bankSide}` : ""}`,
+    result("vs1g"),
+    result("stall"),
+    result("warning"),
+    result("ratio"),
+    result("margin"),
+    result("load"),
+    result("warning-bank"),
+    result("stall-bank"),
+  ];
+}
+
+/** Columns padded to their widest cell, two blanks between them. */
+export function plainTable(rows: readonly TableRow[]): string {
+  const all = [tableHead, ...rows];
+  const widths = tableHead.map((_, column) => Math.max(...all.map((one) => one[column]?.length ?? 0)));
+  return all
+    .map((one) => one.map((text, column) => text.padEnd(widths[column] ?? 0)).join("  ").trimEnd())
+    .map((text) => `${text}\n`)
+    .join("");
+}
+
+/** The same rows as a Markdown table. */
+export function markdownTable(rows: readonly TableRow[]): string {
+  const line = (cells: readonly string[]) => `| ${cells.map((text) => text.replaceAll("|", "\\|")).join(" | ")} |\n`;
+  return line(tableHead) + line(tableHead.map(() => "---")) + rows.map(line).join("");
+}
