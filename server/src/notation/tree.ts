@@ -248,3 +248,6 @@ export type ClauseBody =
       readonly rateOne: boolean;
       readonly conditions: readonly RowCondition[];
     };
+
+/** The body of a clause that states one kind of thing; several kinds may share a shape. */
+export type BodyOf<K extends ClauseBody["kind"], B = ClauseBody> = B extends { kind: infer X } ? (K extends X ? B : never) : never;

@@ -1,8 +1,6 @@
 import type { Block, PlacedClause } from "../notation/block.ts";
-import type { ClauseBody } from "../notation/tree.ts";
+import type { BodyOf, ClauseBody } from "../notation/tree.ts";
 import type { Keyword } from "../notation/vocabulary.ts";
-
-type BodyOf<K extends ClauseBody["kind"]> = Extract<ClauseBody, { kind: K }>;
 
 /** A clause that counts, with its body at hand. */
 export interface Read<K extends ClauseBody["kind"]> {

@@ -2,6 +2,7 @@ import type { Block } from "../notation/block.ts";
 import type { Flavour } from "../notation/document.ts";
 import type { Card } from "./card.ts";
 import { collectDefinitions } from "./collectDefinitions.ts";
+import { commonPracticeDraft } from "./commonPractice.ts";
 import type { Definitions } from "./definitions.ts";
 import type { Finding } from "./finding.ts";
 import { catalogue } from "./findings.ts";
@@ -87,7 +88,7 @@ class OpenFolder implements Folder, Surroundings {
     if (!this.#collected || !same(cards, this.#cards) || !same(drafts, this.#drafts)) {
       this.#cards = cards;
       this.#drafts = drafts;
-      this.#resolved = new Map(drafts.map((draft) => [draft, resolveLimits(draft, drafts)]));
+      this.#resolved = new Map(drafts.map((draft) => [draft, resolveLimits(draft, [commonPracticeDraft(), ...drafts])]));
       this.#collected = collectDefinitions(cards, [...this.#resolved.values()]);
       this.#version++;
     }

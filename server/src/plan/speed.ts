@@ -77,7 +77,7 @@ function offsetSpeed(
   let unit = speed.tolerance?.unit ?? null;
   if (speed.offset) {
     const size = { ...speed.offset, value: Math.abs(speed.offset.value) };
-    const added = measured({ findings }, placed, size, "shear");
+    const added = measured({ findings }, placed, size, "speedOffset");
     if (added === null) return null;
     cas += speed.offset.value < 0 ? -added : added;
     unit = speed.offset.unit;

@@ -1,0 +1,68 @@
+import type { Block, PlacedClause } from "../notation/block.ts";
+import { nearestWord } from "../notation/spelling.ts";
+import { BUILT_IN_NAME } from "./builtIn.ts";
+import type { Card } from "./card.ts";
+import { commonPractice } from "./commonPractice.ts";
+import type { Definitions, Lookup } from "./definitions.ts";
+import type { Finding } from "./finding.ts";
+import type { Limits } from "./limits.ts";
+import { findingAt } from "./site.ts";
+
+/** The definitions of a folder, and what is told where a name is given twice. */
+export function collectDefinitions(
+  cards: readonly Card[],
+  limits: readonly Limits[],
+): { readonly definitions: Definitions; readonly findings: ReadonlyMap<Block, Finding[]> } {
+  const findings = new Map<Block, Finding[]>();
+  const cardsByName = byName(cards);
+  // A user's limits of the reserved name are told at their own place and never found.
+  const limitsByName = byName([commonPractice(), ...limits.filter((one) => one.name.toLowerCase() !== BUILT_IN_NAME)]);
+  tellTwice(cardsByName, "card", findings);
+  tellTwice(limitsByName, "set of limits", findings);
+  const definitions: Definitions = {
+    cards,
+    limits,
+    card: (name) => lookUp(cardsByName, name),
+    limitsNamed: (name) => lookUp(limitsByName, name),
+  };
+  return { definitions, findings };
+}
+
+type Named = Card | Limits;
+
+function byName<T extends Named>(definitions: readonly T[]): ReadonlyMap<string, readonly T[]> {
+  const found = new Map<string, T[]>();
+  for (const one of definitions) {
+    if (one.name === "") continue;
+    const name = one.name.toLowerCase();
+    const same = found.get(name);
+    if (same) same.push(one);
+    else found.set(name, [one]);
+  }
+  return found;
+}
+
+function lookUp<T extends Named>(definitions: ReadonlyMap<string, readonly T[]>, name: string): Lookup<T> {
+  const found = definitions.get(name.toLowerCase()) ?? [];
+  const [first] = found;
+  if (first) {
+    return found.length === 1 ? { kind: "found", definition: first } : { kind: "twice", places: found.map((one) => one.origin) };
+  }
+  const nearest = nearestWord(name, [...definitions.keys()]);
+  return { kind: "missing", nearest: nearest ? (definitions.get(nearest)?.[0] ?? null) : null };
+}
+
+function tellTwice<T extends Named>(definitions: ReadonlyMap<string, readonly T[]>, what: string, findings: Map<Block, Finding[]>): void {
+  for (const same of definitions.values()) {
+    if (same.length < 2) continue;
+    for (const one of same) {
+      const others = same.filter((other) => other !== one);
+      const head = one.block.clauses[0] as PlacedClause;
+      const finding = findingAt("duplicate-name", head, `${one.name} is the name of another ${what} too, so none of them is used: rename one.`, {
+        span: one.origin.span,
+        related: others.map((other) => ({ origin: other.origin, message: `${other.name} is also defined here.` })),
+      });
+      findings.set(one.block, [...(findings.get(one.block) ?? []), finding]);
+    }
+  }
+}
