@@ -1,0 +1,49 @@
+import { rename, stat, writeFile } from "node:fs/promises";
+import { resolve } from "node:path";
+import type { Document } from "../notation/document.ts";
+import { layout } from "../notation/layout.ts";
+import { load } from "./load.ts";
+import { emit } from "./output.ts";
+import type { Common } from "./run.ts";
+
+export interface FormatOptions extends Common {
+  readonly check: boolean;
+}
+
+/** `plumbline format`: lays out the bar lines of the files in place, or only tells which would change. */
+export async function format(paths: readonly string[], options: FormatOptions): Promise<number> {
+  const notes = await load(paths, options);
+  let changed = 0;
+  for (const { path, note } of notes) {
+    const edits = layout(note.document);
+    const fromInput = paths.includes("-") && resolve(path) === resolve(options.stdinPath);
+    if (fromInput && !options.check) {
+      await emit(applied(note.document, edits), options);
+      continue;
+    }
+    if (edits.length === 0) continue;
+    changed++;
+    if (options.check) await emit(`${path}\n`, {});
+    else await replaceFile(path, applied(note.document, edits));
+  }
+  if (!options.quiet && !paths.includes("-")) {
+    const files = `${changed} of ${notes.length} ${notes.length === 1 ? "file" : "files"}`;
+    process.stderr.write(options.check ? `${files} would change.\n` : `${files} changed.\n`);
+  }
+  return options.check && changed > 0 ? 1 : 0;
+}
+
+function applied(document: Document, edits: ReturnType<typeof layout>): string {
+  for (const { line, newText } of edits) {
+    document.edit({ line, character: 0 }, { line, character: document.lineText(line).length }, newText);
+  }
+  return document.text();
+}
+
+/** Written beside the file and moved over it, so that a stop in between loses nothing. */
+async function replaceFile(path: string, text: string): Promise<void> {
+  const { mode } = await stat(path);
+  const beside = `${path}.plumbline-${process.pid}`;
+  await writeFile(beside, text, { mode });
+  await rename(beside, path);
+}

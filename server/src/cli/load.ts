@@ -1,0 +1,84 @@
+import { relative, resolve, sep } from "node:path";
+import { pathToFileURL } from "node:url";
+import { discover, readNote } from "../disk/discover.ts";
+import type { Flavour } from "../notation/document.ts";
+import { createFolder } from "../plan/createFolder.ts";
+import type { Note } from "../plan/note.ts";
+import { UsageError } from "./usageError.ts";
+
+/** A note that was asked for, with the path it is spoken of by. */
+export interface LoadedNote {
+  readonly path: string;
+  readonly note: Note;
+}
+
+export interface LoadOptions {
+  /** Where cards and limits are looked for besides. */
+  readonly root: string;
+  readonly today: string;
+  readonly stdinPath: string;
+}
+
+/**
+ * Reads the notes of the paths, and the cards and limits under the root. Every file that cannot be
+ * read is told before anything is shown: a plan is never checked in part without saying so.
+ */
+export async function load(paths: readonly string[], options: LoadOptions): Promise<readonly LoadedNote[]> {
+  const cwd = process.cwd();
+  const named = paths.length === 0 ? ["."] : paths;
+  const onDisk = named.filter((path) => path !== "-");
+  const wanted = await discover(onDisk, cwd);
+  const besides = await discover([options.root], cwd);
+  const problems = [...wanted.problems, ...besides.problems];
+  const texts = new Map<string, string>();
+  await Promise.all(
+    [...new Set([...wanted.files, ...besides.files])].map(async (file) => {
+      const read = await readNote(file);
+      if ("text" in read) texts.set(file, read.text);
+      else problems.push(read.problem);
+    }),
+  );
+  if (problems.length > 0) throw new UsageError(problems.join("\n"));
+  const folder = createFolder({ today: options.today });
+  const files = [...texts.keys()].sort();
+  for (const file of files) folder.open(uriOf(file), texts.get(file) as string, flavourOf(file));
+  const loaded = wanted.files.filter((file) => isNote(folder.note(uriOf(file)), file)).map((file) => ({ path: shortPath(file, cwd), note: folder.note(uriOf(file)) as Note }));
+  if (!named.includes("-")) {
+    if (loaded.length === 0) throw new UsageError(`There is no note in ${named.join(", ")}: a note is a .plumb file, or a Markdown file with a \`plumb\` fence.`);
+    return loaded;
+  }
+  const path = resolve(cwd, options.stdinPath);
+  const note = folder.open(uriOf(path), await readStdin(), flavourOf(path));
+  return [...loaded, { path: shortPath(path, cwd), note }];
+}
+
+/** A Markdown file without a plumb fence is nobody's note; one that is named itself has its say. */
+function isNote(note: Note | null, file: string): boolean {
+  if (!note) return false;
+  if (/\.plumb$/i.test(file)) return true;
+  if (note.document.findings.length > 0) return true;
+  for (let line = 0; line < note.document.lineCount; line++) if (note.document.lineKind(line) === "plumb-fence") return true;
+  return false;
+}
+
+export function uriOf(path: string): string {
+  return pathToFileURL(path).href;
+}
+
+export function flavourOf(path: string): Flavour {
+  return /\.(md|markdown)$/i.test(path) ? "markdown" : "plumb";
+}
+
+function shortPath(file: string, cwd: string): string {
+  return relative(cwd, file).split(sep).join("/") || file;
+}
+
+async function readStdin(): Promise<string> {
+  const chunks: Buffer[] = [];
+  for await (const chunk of process.stdin) chunks.push(chunk as Buffer);
+  try {
+    return new TextDecoder("utf-8", { fatal: true, ignoreBOM: true }).decode(Buffer.concat(chunks));
+  } catch {
+    throw new UsageError("Standard input is not UTF-8, so it is not read.");
+  }
+}

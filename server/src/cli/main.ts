@@ -1,0 +1,16 @@
+import { run } from "./run.ts";
+
+// A reader that closes the pipe early (`| head`) has seen enough: that is no failure.
+process.stdout.on("error", (error: NodeJS.ErrnoException) => {
+  process.exit(error.code === "EPIPE" ? 0 : 2);
+});
+
+run(process.argv).then(
+  (code) => {
+    process.exitCode = code;
+  },
+  (error: unknown) => {
+    process.stderr.write(`plumbline: ${error instanceof Error ? error.message : String(error)}\n`);
+    process.exitCode = 2;
+  },
+);

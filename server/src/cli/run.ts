@@ -1,0 +1,98 @@
+import { Command, CommanderError, InvalidArgumentError, Option } from "commander";
+import { check } from "./check.ts";
+import { explain } from "./explain.ts";
+import { format } from "./formatNotes.ts";
+import { points } from "./points.ts";
+import { tour } from "./tour.ts";
+import { VERSION } from "./version.ts";
+
+/** Options that every command over notes has. */
+export interface Common {
+  readonly root: string;
+  readonly stdinPath: string;
+  readonly output?: string;
+  readonly color: "auto" | "always" | "never";
+  readonly quiet?: boolean;
+  readonly today: string;
+}
+
+/**
+ * Runs one command line. Gives the exit code: 0 where nothing at or above `--fail-on` was found, 1
+ * where something was, 2 for usage, unreadable input or a crash.
+ */
+export async function run(argv: readonly string[]): Promise<number> {
+  let code = 0;
+  const program = new Command("plumbline")
+    .description("Checks the stall margins and bank limits of flight notes. A planning aid, not approved data.")
+    .version(VERSION)
+    .exitOverride()
+    .configureOutput({ outputError: (text, write) => write(text.replace(/^error: /, "plumbline: ")) })
+    .showHelpAfterError("(plumbline --help lists the commands)");
+  const settle = (result: Promise<number>) => result.then((value) => void (code = value));
+
+  overNotes(program.command("check", { isDefault: true }).argument("[path...]", "files, folders or globs; - for standard input"))
+    .description("show findings (the default command)")
+    .addOption(new Option("--format <format>", "how they are written").choices(["text", "json", "sarif"]).default("text"))
+    .addOption(new Option("--fail-on <severity>", "what makes the exit code 1").choices(["error", "warning", "never"]).default("error"))
+    .action((paths: string[], options) => settle(check(paths, options)));
+  overNotes(program.command("points").argument("[path...]", "files, folders or globs; - for standard input"))
+    .description("show every point with its computed values")
+    .addOption(new Option("--format <format>", "how they are written").choices(["table", "json", "csv", "markdown"]).default("table"))
+    .action((paths: string[], options) => settle(points(paths, options)));
+  overNotes(program.command("format").argument("[path...]", "files, folders or globs; - for standard input"))
+    .description("lay out bar lines: blanks only, never a word or a figure")
+    .option("--check", "only tell which files would change", false)
+    .action((paths: string[], options) => settle(format(paths, options)));
+  program
+    .command("explain")
+    .argument("<code>", "the code of a finding")
+    .description("what a finding means, with an example that breaks the rule and one that keeps it")
+    .action((finding: string) => settle(explain(finding)));
+  program
+    .command("serve")
+    .option("--stdio", "speak over standard input and output", true)
+    .description("the language server, for any editor")
+    .action(() => settle(serve()));
+  overNotes(program.command("tour", { hidden: true }).argument("[folder]", "a folder of notes", "demo"))
+    .description("show notes with their hints beside the lines")
+    .action((folder: string, options) => settle(tour(folder, options)));
+  try {
+    await program.parseAsync(argv);
+  } catch (error) {
+    if (!(error instanceof CommanderError)) throw error;
+    // Help and version were asked for; everything else commander threw was told by it.
+    return error.exitCode === 0 ? 0 : 2;
+  }
+  return code;
+}
+
+function overNotes(command: Command): Command {
+  return command
+    .option("--root <dir>", "where cards and limits are looked for besides", ".")
+    .option("--stdin-path <name>", "where standard input pretends to be", "standard-input.plumb")
+    .option("-o, --output <file>", "write there instead of to standard output")
+    .addOption(new Option("--color <when>", "colours on the terminal").choices(["auto", "always", "never"]).default("auto"))
+    .option("--quiet", "no summary and no caution on standard error")
+    .addOption(new Option("--today <date>", "the day the notes are read on").argParser(day).default(localDay(), "today"));
+}
+
+function day(text: string): string {
+  const real = /^\d{4}-\d{2}-\d{2}$/.test(text) && new Date(`${text}T00:00:00Z`).toISOString().slice(0, 10) === text;
+  if (!real) throw new InvalidArgumentError("It is a day such as 2026-03-01.");
+  return text;
+}
+
+function localDay(): string {
+  const now = new Date();
+  const two = (value: number) => String(value).padStart(2, "0");
+  return `${now.getFullYear()}-${two(now.getMonth() + 1)}-${two(now.getDate())}`;
+}
+
+async function serve(): Promise<number> {
+  // The server is a bundle of its own, so that no other command pays for loading it.
+  process.argv.push("--stdio");
+  const path = "./main.node.cjs";
+  await import(path);
+  return new Promise<number>((resolve) => process.once("exit", () => resolve(0)));
+}
+

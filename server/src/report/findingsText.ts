@@ -1,0 +1,41 @@
+import type { Severity } from "../plan/finding.ts";
+import type { CheckedFile } from "./sarif.ts";
+
+/** How many findings there are of each severity. */
+export type Summary = Readonly<Record<Severity, number>>;
+
+export function summarize(files: readonly CheckedFile[]): Summary {
+  const summary = { error: 0, warning: 0, information: 0, hint: 0 };
+  for (const { findings } of files) for (const { severity } of findings) summary[severity as Severity]++;
+  return summary;
+}
+
+/** What a severity looks like on a terminal. */
+export type Paint = (severity: Severity, text: string) => string;
+
+/** Findings for a reader: the place, the severity in words, the sentence, the code. */
+export function findingsText(files: readonly CheckedFile[], paint: Paint): string {
+  let text = "";
+  for (const { path, findings } of files) {
+    for (const one of findings) {
+      const severity = one.severity as Severity;
+      text += `${path}:${one.line}:${one.column}  ${paint(severity, severity)}  ${one.message}  [${one.code}]\n`;
+    }
+  }
+  return text;
+}
+
+/** "3 errors, 1 warning in 4 notes." */
+export function summaryText(files: readonly CheckedFile[]): string {
+  const summary = summarize(files);
+  const parts = (["error", "warning", "information", "hint"] as const)
+    .filter((severity) => summary[severity] > 0)
+    .map((severity) => counted(summary[severity], severity === "information" ? "piece of information" : severity));
+  const where = counted(files.length, "note");
+  return parts.length === 0 ? `Nothing found in ${where}.\n` : `${parts.join(", ")} in ${where}.\n`;
+}
+
+function counted(count: number, noun: string): string {
+  if (count === 1) return `1 ${noun}`;
+  return `${count} ${noun.startsWith("piece") ? noun.replace("piece", "pieces") : `${noun}s`}`;
+}
