@@ -4,7 +4,8 @@ import type { IGrammar, IRawGrammar } from "vscode-textmate";
 
 const require = createRequire(import.meta.url);
 // Both are CommonJS whose exports Node cannot name in an import.
-const { loadWASM, OnigScanner, OnigString } = require("vscode-oniguruma") as typeof import("vscode-oniguruma");
+const { loadWASM, OnigScanner, OnigString } =
+  require("vscode-oniguruma") as typeof import("vscode-oniguruma");
 const { INITIAL, parseRawGrammar, Registry } = require("vscode-textmate") as typeof import("vscode-textmate");
 
 const files: Readonly<Record<string, URL>> = {
@@ -14,10 +15,12 @@ const files: Readonly<Record<string, URL>> = {
   "text.html.markdown": new URL(`file://${require.resolve("tm-grammars/grammars/markdown.json")}`),
 };
 
-const onigLib = loadWASM(readFileSync(require.resolve("vscode-oniguruma/release/onig.wasm")).buffer).then(() => ({
-  createOnigScanner: (patterns: string[]) => new OnigScanner(patterns),
-  createOnigString: (text: string) => new OnigString(text),
-}));
+const onigLib = loadWASM(readFileSync(require.resolve("vscode-oniguruma/release/onig.wasm")).buffer).then(
+  () => ({
+    createOnigScanner: (patterns: string[]) => new OnigScanner(patterns),
+    createOnigString: (text: string) => new OnigString(text),
+  }),
+);
 
 const registry = new Registry({
   onigLib,
