@@ -3,6 +3,13 @@ import type { TextFinding } from "./finding.ts";
 
 export type Flavour = "plumb" | "markdown";
 
+/** Which blocks an edit replaced: `removed` of them from index `from` on, by `added` new ones. */
+export interface BlockChange {
+  readonly from: number;
+  readonly removed: number;
+  readonly added: number;
+}
+
 export interface Position {
   readonly line: number;
   readonly character: number;
@@ -25,7 +32,7 @@ export interface Document {
   /** `missing-bar`, `no-bar-lines`, `unclosed-fence`: their lines count from the document's start. */
   readonly findings: readonly TextFinding[];
   /** Replaces the text between two positions (UTF-16); positions beyond the text are brought to its edge. */
-  edit(start: Position, end: Position, newText: string): void;
+  edit(start: Position, end: Position, newText: string): BlockChange;
   /** The whole text, with its line ends as they are. */
   text(): string;
 }

@@ -1,10 +1,10 @@
 import type { Block } from "./block.ts";
 import { classify, hasSecondBar, isDelimiterRow, type LineKind, type LineState, sameState } from "./classify.ts";
-import type { Document, Flavour, Position } from "./document.ts";
+import type { BlockChange, Document, Flavour, Position } from "./document.ts";
 import type { TextFinding } from "./finding.ts";
 import { makeBlock } from "./makeBlock.ts";
 import { parseLine } from "./parseLine.ts";
-import { type Line, proseFindings } from "./proseFindings.ts";
+import { isSuspect, type Line, proseFindings } from "./proseFindings.ts";
 import type { BarLine } from "./tree.ts";
 
 /** Opens a text as a document that can be edited in place. */
@@ -12,12 +12,15 @@ export function openDocument(text: string, flavour: Flavour): Document {
   return new OpenDocument(text, flavour);
 }
 
+const noFindings: readonly TextFinding[] = [];
+
 class OpenDocument implements Document {
   readonly flavour: Flavour;
   readonly #everywhere: boolean;
   #lines: Line[] = [];
   #blocks: Block[] = [];
   #findings: readonly TextFinding[] | null = null;
+  #suspects = 0;
 
   constructor(text: string, flavour: Flavour) {
     this.flavour = flavour;
@@ -48,7 +51,7 @@ class OpenDocument implements Document {
   }
 
   get findings(): readonly TextFinding[] {
-    this.#findings ??= proseFindings(this.#lines, this.#everywhere);
+    this.#findings ??= this.#suspects === 0 ? noFindings : proseFindings(this.#lines, this.#everywhere);
     return this.#findings;
   }
 
@@ -58,7 +61,7 @@ class OpenDocument implements Document {
     return text;
   }
 
-  edit(start: Position, end: Position, newText: string): void {
+  edit(start: Position, end: Position, newText: string): BlockChange {
     const [from, to] = this.#ordered(start, end);
     const first = this.#lines[from.line] as Line;
     const last = this.#lines[to.line] as Line;
@@ -66,15 +69,30 @@ class OpenDocument implements Document {
     (fresh[fresh.length - 1] as Line).end = last.end;
     if (this.#joinsLineEnds(fresh, from.line)) {
       splice(this.#lines, from.line, to.line - from.line + 1, fresh);
+      const removed = this.#blocks.length;
       this.#reset(this.text());
-      return;
+      return { from: 0, removed, added: this.#blocks.length };
     }
     const removed = to.line - from.line + 1;
+    this.#watch(from.line, to.line, -1);
     splice(this.#lines, from.line, removed, fresh);
     const delta = fresh.length - removed;
     const changedTo = this.#classifyFrom(from.line, from.line + fresh.length - 1);
-    this.#rebuildBlocks(from.line, changedTo, delta);
+    // Lines beyond the edit that are something else now were counted as what they were.
+    this.#watch(from.line, from.line + fresh.length - 1, 1);
+    if (from.line + fresh.length - 1 < changedTo) this.#count();
     this.#findings = null;
+    return this.#rebuildBlocks(from.line, changedTo, delta);
+  }
+
+  /** Counts the lines that slips at the bar may come from: where there are none, nothing is looked for. */
+  #watch(from: number, to: number, sign: 1 | -1): void {
+    for (let i = from; i <= to; i++) if (isSuspect(this.#lines[i] as Line)) this.#suspects += sign;
+  }
+
+  #count(): void {
+    this.#suspects = 0;
+    this.#watch(0, this.#lines.length - 1, 1);
   }
 
   /** True where a CR now stands before a LF: the two are one line end, and the text is split anew. */
@@ -91,6 +109,7 @@ class OpenDocument implements Document {
     this.#lines = splitLines(text);
     this.#classifyFrom(0, this.#lines.length - 1);
     this.#blocks = this.#makeBlocks(0, this.#lines.length - 1, []);
+    this.#count();
     this.#findings = null;
   }
 
@@ -127,7 +146,7 @@ class OpenDocument implements Document {
     return lines.length - 1;
   }
 
-  #rebuildBlocks(from: number, to: number, delta: number): void {
+  #rebuildBlocks(from: number, to: number, delta: number): BlockChange {
     // A run of bar lines is one block or one table: what touches the change is read again with it.
     let first = from;
     while (first > 0 && (this.#lines[first - 1] as Line).raw === "bar") first--;
@@ -141,6 +160,7 @@ class OpenDocument implements Document {
     if (delta !== 0) for (let i = tail; i < this.#blocks.length; i++) (this.#blocks[i] as Block).start += delta;
     const come = this.#makeBlocks(first, last, gone);
     splice(this.#blocks, head, gone.length, come);
+    return { from: head, removed: gone.length, added: come.length };
   }
 
   /** Index of the first block that starts at or after the line. */

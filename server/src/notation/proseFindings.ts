@@ -54,6 +54,12 @@ export function proseFindings(lines: readonly Line[], everywhere: boolean): read
   return findings.length > 0 ? findings : noFindings;
 }
 
+/** True for a line that may have a finding here: a fence, or prose that reads as notation. */
+export function isSuspect(line: Line): boolean {
+  if (line.opens) return true;
+  return line.raw === "prose" && line.text.length > 3 && likeness(line) > 0;
+}
+
 function likeness(line: Line): number {
   if (line.likeness < 0) line.likeness = computeLikeness(line.text);
   return line.likeness;

@@ -91,8 +91,9 @@ export interface Corner {
 /** Why a corner gives no figures at all. */
 export type CornerProblem = "atmosphere" | "speed" | "ias" | "path" | "bank";
 
-export function corner(frame: Airframe, input: CornerInput): Corner | CornerProblem {
-  const air = atmosphere(input.pressureAltitude, input.deviation);
+export function corner(frame: Airframe, input: CornerInput, near?: Atmosphere): Corner | CornerProblem {
+  const same = near && near.pressureAltitude === input.pressureAltitude && near.deviation === input.deviation;
+  const air = same ? near : atmosphere(input.pressureAltitude, input.deviation);
   if (!air) return "atmosphere";
   const flown = flownSpeed(frame, input, air);
   if (typeof flown === "string") return flown;

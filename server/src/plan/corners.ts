@@ -1,5 +1,5 @@
 import { casFromMach, easFromMach, impactPressureOfCas, tasFromMach } from "../flight/airspeed.ts";
-import { altitudeOfPressure, atmosphere } from "../flight/atmosphere.ts";
+import { type Atmosphere, altitudeOfPressure, atmosphere } from "../flight/atmosphere.ts";
 import { A0, P0 } from "../flight/constants.ts";
 import { type Airframe, type Corner, type CornerInput, type CornerProblem, corner } from "./corner.ts";
 import type { PathInput, SpeedInput } from "./corner.ts";
@@ -10,6 +10,8 @@ export interface PointInputs {
   readonly mass: Spread;
   readonly pressureAltitude: Spread;
   readonly deviation: Spread;
+  /** At the nominal altitude and deviation, which most corners share. */
+  readonly air: Atmosphere;
   readonly speed: { readonly kind: SpeedInput["kind"]; readonly value: Spread };
   readonly bank: Spread | "rate-one";
   readonly path: { readonly kind: PathInput["kind"]; readonly value: Spread };
@@ -30,13 +32,13 @@ export interface Corners {
  * factor at the stall and at buffet onset need not be monotonic there.
  */
 export function evaluateCorners(frame: Airframe, inputs: PointInputs): Corners | CornerProblem {
-  const nominal = corner(frame, nominalInput(inputs));
+  const nominal = corner(frame, nominalInput(inputs), inputs.air);
   if (typeof nominal === "string") return nominal;
   const varied = cornerInputs(inputs);
   if (varied.length === 0) return { nominal, all: [nominal] };
   const all: Corner[] = [nominal];
   for (const input of varied) {
-    const one = corner(frame, input);
+    const one = corner(frame, input, inputs.air);
     if (typeof one === "string") return one;
     all.push(one);
   }

@@ -2,6 +2,7 @@ import type { Keyword, ResultName } from "../notation/vocabulary.ts";
 import { whyAbsent } from "./absent.ts";
 import { absentChecks } from "./absentChecks.ts";
 import type { Held } from "./checks.ts";
+import { conditionsOf } from "./conditions.ts";
 import type { Corners } from "./corners.ts";
 import type { Point, Ready } from "./evaluatePoint.ts";
 import { type References, type Results, referenceSpeeds, referencesOf, resultsOf } from "./figures.ts";
@@ -17,61 +18,91 @@ export interface Evaluated {
   readonly corners: Corners;
   readonly conditions: Conditions;
   readonly results: Results;
-  readonly references: () => References;
+  references(): References;
   /** Why a result is not known, as a sentence; null where it is. */
   absent(name: ResultName | "ias"): string | null;
 }
 
-export function evaluated(ready: Ready, corners: Corners, conditions: Conditions): Evaluated {
-  let known: References | null = null;
-  const references = () => {
-    known ??= referencesOf(ready);
-    return known;
-  };
-  const results = resultsOf(corners, references);
-  const one: Evaluated = {
-    ready,
-    corners,
-    conditions,
-    results,
-    references,
-    absent: (name) => whyAbsent(one, name),
-  };
-  return one;
+export function evaluated(point: Point, ready: Ready, corners: Corners): Evaluated {
+  return new EvaluatedPoint(point, ready, corners);
+}
+
+class EvaluatedPoint implements Evaluated {
+  readonly #point: Point;
+  readonly ready: Ready;
+  readonly corners: Corners;
+  #conditions: Conditions | null = null;
+  #results: Results | null = null;
+  #references: References | null = null;
+
+  constructor(point: Point, ready: Ready, corners: Corners) {
+    this.#point = point;
+    this.ready = ready;
+    this.corners = corners;
+  }
+
+  get conditions(): Conditions {
+    this.#conditions ??= conditionsOf(this.#point, this.ready, this.corners);
+    return this.#conditions;
+  }
+
+  get results(): Results {
+    this.#results ??= resultsOf(this.corners, () => this.references());
+    return this.#results;
+  }
+
+  references(): References {
+    this.#references ??= referencesOf(this.ready);
+    return this.#references;
+  }
+
+  absent(name: ResultName | "ias"): string | null {
+    return whyAbsent(this, name);
+  }
 }
 
 /** Puts a point's result together. What only a hover or a table asks for is worked out when it is asked for. */
 export function describePoint(
   point: Point,
-  evaluated: Evaluated | null,
+  again: (() => Evaluated) | null,
   held: Held,
   withheld: Withheld | null,
   findings: readonly Finding[],
 ): PointResult {
-  return new DescribedPoint(point, evaluated, held, withheld, findings);
+  return new DescribedPoint(point, again, held, withheld, findings);
 }
 
 const noReferences = { v2min: null, vfto: null, vref: null };
 
 class DescribedPoint implements PointResult {
   readonly #point: Point;
-  readonly #evaluated: Evaluated | null;
+  readonly #again: (() => Evaluated) | null;
+  #figures: Evaluated | null = null;
   readonly #held: Held;
   readonly withheld: Withheld | null;
   readonly findings: readonly Finding[];
 
   constructor(
     point: Point,
-    evaluated: Evaluated | null,
+    again: (() => Evaluated) | null,
     held: Held,
     withheld: Withheld | null,
     findings: readonly Finding[],
   ) {
     this.#point = point;
-    this.#evaluated = evaluated;
+    this.#again = again;
     this.#held = held;
     this.withheld = withheld;
     this.findings = findings;
+  }
+
+  /**
+   * The figures, worked out again when somebody first looks at the point: kept for every point of a
+   * long note they would cost more memory and time than they take to compute.
+   */
+  get #evaluated(): Evaluated | null {
+    this.#figures ??= this.#again?.() ?? null;
+    return this.#figures;
   }
 
   get block() {

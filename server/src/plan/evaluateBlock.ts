@@ -1,5 +1,5 @@
 import type { Block } from "../notation/block.ts";
-import { type Clauses, sortClauses } from "./clauses.ts";
+import type { Clauses } from "./clauses.ts";
 import type { Definitions } from "./definitions.ts";
 import { evaluatePoint } from "./evaluatePoint.ts";
 import { evaluateSetting } from "./evaluateSetting.ts";
@@ -9,27 +9,15 @@ import type { BlockResult } from "./note.ts";
 import { findingAt, type Site } from "./site.ts";
 import type { State } from "./state.ts";
 
-const sorted = new WeakMap<Block, Clauses>();
-
-/** A block's clauses by what they state, worked out once for each version of the block. */
-export function clausesOf(block: Block): Clauses {
-  let clauses = sorted.get(block);
-  if (!clauses) {
-    clauses = sortClauses(block);
-    sorted.set(block, clauses);
-  }
-  return clauses;
-}
-
 /** Evaluates a point or a setting from the state that reaches it. */
 export function evaluateBlock(
   site: Site,
+  clauses: Clauses,
   definitions: Definitions,
   before: State,
 ): Extract<BlockResult, { kind: "point" | "setting" }> {
   const { block } = site;
-  const clauses = clausesOf(block);
-  const written = [...textFindings(block), ...laterFindings(clauses)];
+  const written = clauses.later.length > 0 ? [...textFindings(block), ...laterFindings(clauses)] : textFindings(block);
   if (block.kind === "setting") {
     const { after, findings } = evaluateSetting(site, clauses, definitions, before);
     return { kind: "setting", block, after, findings: written.length > 0 ? [...written, ...findings] : findings };

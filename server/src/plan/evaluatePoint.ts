@@ -6,9 +6,8 @@ import { applyClauses, type Applied, textCode } from "./carry.ts";
 import { checkPoint } from "./checks.ts";
 import { type Clauses, intendedKeyword } from "./clauses.ts";
 import { commonPractice } from "./commonPractice.ts";
-import { conditionsOf } from "./conditions.ts";
 import type { Airframe, CornerProblem } from "./corner.ts";
-import { type Corners, evaluateCorners } from "./corners.ts";
+import { type Corners, evaluateCorners, type PointInputs } from "./corners.ts";
 import type { Definitions } from "./definitions.ts";
 import { describePoint, type Evaluated, evaluated as evaluate } from "./describe.ts";
 import type { Finding } from "./finding.ts";
@@ -69,16 +68,18 @@ export function evaluatePoint(
   const ready = prepare(point, turn, findings);
   const withheld = ownError(point) ?? missing.withheld ?? ("withheld" in ready ? ready.withheld : null);
   const corners = !withheld && !("withheld" in ready) ? cornersOf(point, ready, findings) : null;
-  const evaluated: Evaluated | null =
-    corners && !("withheld" in ready)
-      ? evaluate(ready, corners, conditionsOf(point, ready, corners))
-      : null;
+  const evaluated = corners && !("withheld" in ready) ? evaluate(point, ready, corners) : null;
   const stopped = evaluated ? null : (withheld ?? blame(site, phaseClause, findings));
   const held = checkPoint(point, evaluated, findings);
   return {
-    point: describePoint(point, evaluated, held, stopped, findings),
+    point: describePoint(point, evaluated && (() => again(point, evaluated.ready)), held, stopped, findings),
     after: clauses.aside ? before : stateAfter(point, before, missing.told, evaluated, ready),
   };
+}
+
+/** The same figures, from the same inputs. */
+function again(point: Point, ready: Ready): Evaluated {
+  return evaluate(point, ready, evaluateCorners(ready.frame, cornerInputs(ready)) as Corners);
 }
 
 /** A point whose phase is not understood is still one; its block has the clause. */
@@ -220,20 +221,25 @@ function outsideCg(point: Point, card: Card, findings: Finding[]): Withheld {
 }
 
 function cornersOf(point: Point, ready: Ready, findings: Finding[]): Corners | null {
-  const corners = evaluateCorners(ready.frame, {
+  const corners = evaluateCorners(ready.frame, cornerInputs(ready));
+  if (typeof corners !== "string") return corners;
+  findings.push(cornerFinding(point, ready, corners));
+  return null;
+}
+
+function cornerInputs(ready: Ready): PointInputs {
+  return {
     mass: ready.mass,
     pressureAltitude: ready.air.pressureAltitude,
     deviation: ready.air.deviation,
+    air: ready.air.nominal,
     speed: ready.speed,
     bank: ready.turn.bank,
     path: ready.turn.path,
     load: ready.turn.load,
     liftLoss: ready.liftLoss,
     cgFactor: ready.cgFactor,
-  });
-  if (typeof corners !== "string") return corners;
-  findings.push(cornerFinding(point, ready, corners));
-  return null;
+  };
 }
 
 function cornerFinding(point: Point, ready: Ready, problem: CornerProblem): Finding {

@@ -1,8 +1,9 @@
 import type { Block } from "../notation/block.ts";
-import { type Flavour, type Position } from "../notation/document.ts";
+import type { BlockChange, Flavour, Position } from "../notation/document.ts";
 import { openDocument } from "../notation/openDocument.ts";
 import type { Definitions } from "./definitions.ts";
-import { clausesOf, evaluateBlock, textFindings } from "./evaluateBlock.ts";
+import { type Clauses, sortClauses } from "./clauses.ts";
+import { evaluateBlock, textFindings } from "./evaluateBlock.ts";
 import type { Finding } from "./finding.ts";
 import { catalogue } from "./findings.ts";
 import { lowerCard } from "./lowerCard.ts";
@@ -26,17 +27,15 @@ export interface Surroundings {
   changed(): void;
 }
 
-/** Where successive versions of one block stand. It outlives them, so that what was carried on from it stays the same. */
-interface Place extends Anchor {
-  block: Block;
-}
-
 /** A block with what it came to, and from what. */
 interface Entry {
   readonly block: Block;
   readonly place: Place;
+  readonly clauses: Clauses | null;
   readonly card: Card | null;
   readonly draft: LimitsDraft | null;
+  /** The names the block uses, in lower case. */
+  readonly uses: readonly string[];
   before: State | null;
   definitions: Definitions | null;
   result: BlockResult | null;
@@ -64,24 +63,25 @@ class OpenNote implements FolderNote {
   readonly document;
   readonly #around: Surroundings;
   #entries: Entry[] = [];
+  #results: BlockResult[] = [];
   /** Everything before this entry is up to date. */
   #dirtyFrom = 0;
   /** From here on the entries are as they were, if the state that reaches them is. */
   #dirtyTo = 0;
   #evaluatedWith: Definitions | null = null;
-  #results: BlockResult[] = [];
+  /** Entries whose findings are told, so that a note of 10,000 points is not looked through for 20 findings. */
+  #telling: Entry[] | null = null;
 
   constructor(uri: string, text: string, flavour: Flavour, around: Surroundings) {
     this.uri = uri;
     this.flavour = flavour;
     this.document = openDocument(text, flavour);
     this.#around = around;
-    this.#align();
+    this.#replace({ from: 0, removed: 0, added: this.document.blocks.length });
   }
 
   edit(start: Position, end: Position, newText: string): void {
-    this.document.edit(start, end, newText);
-    if (this.#align()) this.#around.changed();
+    if (this.#replace(this.document.edit(start, end, newText))) this.#around.changed();
   }
 
   get definitions(): Definitions {
@@ -102,7 +102,7 @@ class OpenNote implements FolderNote {
 
   get usedNames(): ReadonlySet<string> {
     const names = new Set<string>();
-    for (const { block } of this.#entries) for (const name of namesUsed(block)) names.add(name);
+    for (const { uses } of this.#entries) for (const name of uses) names.add(name);
     return names;
   }
 
@@ -113,75 +113,71 @@ class OpenNote implements FolderNote {
 
   resultOf(block: Block): BlockResult {
     const results = this.results();
-    const index = indexOfBlock(results, block.start);
-    return results[index] as BlockResult;
+    return results[indexOfBlock(results, block.start)] as BlockResult;
   }
 
   findings(): readonly PlacedFinding[] {
+    this.#evaluate();
     const placed: PlacedFinding[] = [];
     for (const finding of this.document.findings) {
       const severity = catalogue[finding.code].severity;
       placed.push({ line: finding.line, finding: { ...finding, severity, related: [] } });
     }
     let builtIn = false;
-    for (const result of this.results()) {
-      const { block, findings } = result;
-      for (const finding of findings) placed.push({ line: block.start + finding.line, finding });
+    for (const { block, result } of this.#tellingEntries()) {
+      if (!result) continue;
+      for (const finding of result.findings) placed.push({ line: block.start + finding.line, finding });
       if (result.kind === "card" || result.kind === "limits") {
         for (const finding of this.#around.findingsAt(block)) {
           placed.push({ line: block.start + finding.line, finding });
         }
-      } else if (!builtIn && result.kind === "point" && result.point.limits?.builtIn) {
+      } else if (!builtIn && usesBuiltIn(result)) {
         builtIn = true;
-        placed.push({ line: block.start, finding: builtInFinding(block) });
+        const finding = builtInFinding(block);
+        placed.push({ line: block.start + finding.line, finding });
       }
     }
     return placed.sort((a, b) => a.line - b.line || a.finding.span.start - b.finding.span.start);
   }
 
+  /** Found anew only when an entry that told something, or does now, was evaluated again. */
+  #tellingEntries(): readonly Entry[] {
+    this.#telling ??= this.#entries.filter(tells);
+    return this.#telling;
+  }
+
   /**
-   * Brings the entries in step with the document's blocks: those that are the same objects are kept,
-   * and a block that took another's place takes over its `Place`. True where a definition, or the use
-   * of one, came, went or changed.
+   * Brings the entries in step with the document's blocks. A block that took another's place takes
+   * over its `Place`. True where a definition, or the use of one, came, went or changed.
    */
-  #align(): boolean {
-    const blocks = this.document.blocks;
-    const old = this.#entries;
-    let head = 0;
-    const shorter = Math.min(blocks.length, old.length);
-    while (head < shorter && (old[head] as Entry).block === blocks[head]) head++;
-    let tail = 0;
-    while (
-      tail < shorter - head &&
-      (old[old.length - 1 - tail] as Entry).block === blocks[blocks.length - 1 - tail]
-    ) {
-      tail++;
-    }
-    const gone = old.slice(head, old.length - tail);
+  #replace({ from, removed, added }: BlockChange): boolean {
+    if (removed === 0 && added === 0) return false;
+    const { blocks } = this.document;
+    const gone = this.#entries.slice(from, from + removed);
     const come: Entry[] = [];
-    for (let i = head; i < blocks.length - tail; i++) {
-      const block = blocks[i] as Block;
-      come.push(this.#entry(block, placeFor(block, gone[i - head])));
+    for (let i = 0; i < added; i++) {
+      const block = blocks[from + i] as Block;
+      const old = gone[i];
+      come.push(old?.block === block ? old : this.#entry(block, placeFor(block, old)));
     }
-    if (gone.length === 0 && come.length === 0) return false;
-    if (gone.length === come.length) {
-      for (let i = 0; i < come.length; i++) old[head + i] = come[i] as Entry;
-    } else {
-      old.splice(head, gone.length, ...come);
-      this.#results.splice(head, gone.length, ...(come.map(() => null) as unknown as BlockResult[]));
-    }
-    this.#dirtyFrom = Math.min(this.#dirtyFrom, head);
-    const after = head + come.length;
-    this.#dirtyTo = Math.max(after, this.#dirtyTo + (come.length - gone.length));
+    spliceAll(this.#entries, from, removed, come);
+    spliceAll(this.#results, from, removed, come.map((entry) => entry.result as BlockResult));
+    this.#dirtyFrom = Math.min(this.#dirtyFrom, from);
+    this.#dirtyTo = Math.max(from + added, this.#dirtyTo + added - removed);
+    if (gone.some(tells)) this.#telling = null;
     return gone.some(defines) || come.some(defines);
   }
 
   #entry(block: Block, place: Place): Entry {
+    const planned = block.kind === "point" || block.kind === "setting";
+    const clauses = planned ? sortClauses(block) : null;
     return {
       block,
       place,
+      clauses,
       card: block.kind === "card" ? lowerCard(block, this.uri) : null,
       draft: block.kind === "limits" ? lowerLimits(block, this.uri) : null,
+      uses: namesUsed(block, clauses),
       before: null,
       definitions: null,
       result: null,
@@ -190,8 +186,10 @@ class OpenNote implements FolderNote {
 
   #evaluate(): void {
     const definitions = this.#around.definitions();
-    const from = definitions === this.#evaluatedWith ? this.#dirtyFrom : 0;
-    if (definitions !== this.#evaluatedWith) this.#dirtyTo = this.#entries.length;
+    const anew = definitions !== this.#evaluatedWith;
+    const from = anew ? 0 : this.#dirtyFrom;
+    if (anew) this.#dirtyTo = this.#entries.length;
+    if (this.#entries.length <= from) return;
     let state = this.#stateBefore(from);
     for (let i = from; i < this.#entries.length; i++) {
       const entry = this.#entries[i] as Entry;
@@ -199,8 +197,9 @@ class OpenNote implements FolderNote {
       // Beyond the blocks that changed, the first that starts from the state it knew ends the work.
       if (current && this.#dirtyTo <= i) break;
       if (!current) this.#evaluateEntry(entry, definitions, state);
-      this.#results[i] = entry.result as BlockResult;
-      state = stateAfter(entry.result as BlockResult, state);
+      const result = entry.result as BlockResult;
+      this.#results[i] = result;
+      state = stateAfter(result, state);
     }
     this.#dirtyFrom = this.#entries.length;
     this.#dirtyTo = 0;
@@ -216,42 +215,72 @@ class OpenNote implements FolderNote {
   }
 
   #evaluateEntry(entry: Entry, definitions: Definitions, before: State): void {
-    const { block, card, draft, place } = entry;
+    const told = tells(entry);
     entry.before = before;
     entry.definitions = definitions;
-    if (card) {
-      entry.result = { kind: "card", block, card, findings: [...textFindings(block), ...card.findings] };
-    } else if (draft) {
+    entry.result = this.#resultOf(entry, definitions, before);
+    if (told || tells(entry)) this.#telling = null;
+  }
+
+  #resultOf({ block, card, draft, place, clauses }: Entry, definitions: Definitions, before: State): BlockResult {
+    if (card) return { kind: "card", block, card, findings: [...textFindings(block), ...card.findings] };
+    if (draft) {
       const limits = this.#around.resolved(draft);
-      entry.result = { kind: "limits", block, limits, findings: [...textFindings(block), ...limits.findings] };
-    } else {
-      const site: Site = { uri: this.uri, block, anchor: place };
-      const known = place.after;
-      const result = evaluateBlock(site, definitions, before);
-      // The same state as this place left before: what follows need not be evaluated again.
-      entry.result = known && sameState(known, result.after) ? { ...result, after: known } : result;
-      place.after = entry.result.kind === "point" || entry.result.kind === "setting" ? entry.result.after : null;
+      return { kind: "limits", block, limits, findings: [...textFindings(block), ...limits.findings] };
     }
+    const site: Site = { uri: this.uri, block, anchor: place };
+    const known = place.after;
+    const result = evaluateBlock(site, clauses as Clauses, definitions, before);
+    // The same state as this place left before: what follows need not be evaluated again.
+    if (known && sameState(known, result.after)) return { ...result, after: known };
+    place.after = result.after;
+    return result;
   }
 }
 
-interface Place {
+/** True where the entry has findings, or may have some that the folder or the whole note cause. */
+function tells({ block, result }: Entry): boolean {
+  if (block.kind === "card" || block.kind === "limits") return true;
+  return result !== null && (result.findings.length > 0 || usesBuiltIn(result));
+}
+
+function usesBuiltIn(result: BlockResult): boolean {
+  return result.kind === "point" && result.point.limits?.builtIn === true;
+}
+
+/** `splice` that does not spread many items over the stack. */
+function spliceAll<T>(array: T[], at: number, remove: number, items: readonly T[]): void {
+  if (remove === items.length) {
+    items.forEach((item, i) => {
+      array[at + i] = item;
+    });
+  } else if (items.length < 1000) array.splice(at, remove, ...items);
+  else {
+    const tail = array.splice(at).slice(remove);
+    for (const item of items) array.push(item);
+    for (const item of tail) array.push(item);
+  }
+}
+
+/** Where successive versions of one block stand. It outlives them, so that what was carried on from it stays the same. */
+class Place implements Anchor {
+  block: Block;
   /** The state that the last version of the block left. */
-  after: State | null;
+  after: State | null = null;
+
+  constructor(block: Block) {
+    this.block = block;
+  }
+
+  get start(): number {
+    return this.block.start;
+  }
 }
 
 function placeFor(block: Block, gone: Entry | undefined): Place {
-  if (gone) {
-    gone.place.block = block;
-    return gone.place;
-  }
-  return {
-    block,
-    after: null,
-    get start() {
-      return this.block.start;
-    },
-  };
+  if (!gone) return new Place(block);
+  gone.place.block = block;
+  return gone.place;
 }
 
 function stateAfter(result: BlockResult, before: State): State {
@@ -259,22 +288,19 @@ function stateAfter(result: BlockResult, before: State): State {
 }
 
 function defines(entry: Entry): boolean {
-  return entry.card !== null || entry.draft !== null || namesUsed(entry.block).length > 0;
+  return entry.card !== null || entry.draft !== null || entry.uses.length > 0;
 }
 
 const nothing: readonly string[] = [];
 
-/** The names a block uses, in lower case. */
-function namesUsed(block: Block): readonly string[] {
-  if (block.kind === "card") return nothing;
+function namesUsed(block: Block, clauses: Clauses | null): readonly string[] {
   if (block.kind === "limits") {
     return block.clauses.flatMap(({ clause }) =>
       clause.body?.kind === "limits" && clause.body.from ? [clause.body.from.text.toLowerCase()] : [],
     );
   }
-  const { fly, under } = clausesOf(block);
-  if (!fly && !under) return nothing;
-  return [fly, under].flatMap((read) => (read ? [read.body.name.text.toLowerCase()] : []));
+  if (!clauses?.fly && !clauses?.under) return nothing;
+  return [clauses.fly, clauses.under].flatMap((read) => (read ? [read.body.name.text.toLowerCase()] : []));
 }
 
 function indexOfBlock(results: readonly BlockResult[], start: number): number {
