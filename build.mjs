@@ -1,25 +1,56 @@
-// Bundles the extension and the server, and writes the files that ship beside them.
+// Bundles the extension, the server and the command line, and writes the pages that ship beside them.
+//   node build.mjs           what ships and what the tests run
+//   node build.mjs --debug   readable, with source maps, for a debugger
+import { mkdir, rm, writeFile } from "node:fs/promises";
 import { build } from "esbuild";
 
-const production = process.argv.includes("--production");
+const debug = process.argv.includes("--debug");
 const shared = {
   bundle: true,
   platform: "node",
   target: "node20",
   format: "cjs",
-  minify: true,
-  keepNames: false,
-  sourcemap: production ? false : "linked",
+  minify: !debug,
+  sourcemap: debug && "linked",
   legalComments: "none",
   logLevel: "warning",
 };
 
-await build({ ...shared, entryPoints: ["client/src/extension.ts"], outfile: "dist/client/extension.cjs", external: ["vscode"] });
-await build({ ...shared, entryPoints: ["server/src/main.node.ts"], outfile: "dist/server/main.node.cjs" });
-await build({
-  ...shared,
-  entryPoints: ["server/src/cli/main.ts"],
-  outfile: "dist/server/cli.cjs",
-  banner: { js: "#!/usr/bin/env node" },
-  external: ["./main.node.cjs"],
-});
+/** A file of its own for each finding, and the built-in limits as a note: links in the editor open them. */
+async function writePages() {
+  const { outputFiles } = await build({
+    ...shared,
+    format: "esm",
+    sourcemap: false,
+    entryPoints: ["server/src/report/pages.ts"],
+    write: false,
+  });
+  const { pages } = await import(
+    `data:text/javascript;base64,${Buffer.from(outputFiles[0].contents).toString("base64")}`
+  );
+  // Pages of findings that are no more must not ship.
+  await rm("dist/pages", { recursive: true, force: true });
+  await mkdir("dist/pages", { recursive: true });
+  await Promise.all(pages().map(({ name, text }) => writeFile(`dist/pages/${name}`, text)));
+}
+
+if (!debug) {
+  const maps = ["client/extension", "server/main.node", "server/cli"].map((name) => `dist/${name}.cjs.map`);
+  await Promise.all(maps.map((map) => rm(map, { force: true })));
+}
+await Promise.all([
+  build({
+    ...shared,
+    entryPoints: ["client/src/extension.ts"],
+    outfile: "dist/client/extension.cjs",
+    external: ["vscode"],
+  }),
+  build({ ...shared, entryPoints: ["server/src/main.node.ts"], outfile: "dist/server/main.node.cjs" }),
+  build({
+    ...shared,
+    entryPoints: ["server/src/cli/main.ts"],
+    outfile: "dist/server/cli.cjs",
+    banner: { js: "#!/usr/bin/env node" },
+  }),
+  writePages(),
+]);
