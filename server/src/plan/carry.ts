@@ -26,7 +26,7 @@ export interface Applied {
   readonly findings: readonly Finding[];
 }
 
-type Draft = { -readonly [K in CarriedKey]?: Carried<CarriedValues[K]> };
+type Draft = { -readonly [K in CarriedKey]: CarriedState[K] };
 
 /** Everything the steps below share while one block is applied. */
 export interface Applying {
@@ -45,7 +45,7 @@ export function applyClauses(site: Site, clauses: Clauses, definitions: Definiti
   const applying: Applying = { site, clauses, definitions, phase, draft, findings: [] };
   const newSector = before.landed && phase === "takeoff";
   if (newSector) {
-    for (const key of ["mass", "config", "altitude", "speed", "contamination", "engineOut"] as const) delete draft[key];
+    for (const key of ["mass", "config", "altitude", "speed", "contamination", "engineOut"] as const) draft[key] = undefined;
   }
   const another = applyAircraft(applying);
   if (clauses.under) set(applying, "limits", clauses.under.placed, underLimits(applying, clauses.under));
@@ -71,7 +71,7 @@ function set<K extends CarriedKey>(
 ): void {
   const origin = originOf(site, placed);
   const unknown = value === null ? codeAt(findings, placed) : null;
-  (draft as Record<CarriedKey, Carried<unknown>>)[key] = { value, origin, unknown, phase };
+  (draft as Record<CarriedKey, Carried<unknown> | undefined>)[key] = { value, origin, unknown, phase };
 }
 
 /** The code of the finding that keeps a clause from giving a value. */
@@ -89,7 +89,7 @@ function applyAircraft(applying: Applying): boolean {
   const another = draft.aircraft !== undefined && !sameName(current?.name ?? "", fly.body.name.text);
   if (another) {
     for (const key of Object.keys(keywordOf) as CarriedKey[]) {
-      if (key !== "limits" && key !== "rules") delete draft[key];
+      if (key !== "limits" && key !== "rules") draft[key] = undefined;
     }
   }
   const flown = flyCard(applying, fly);
@@ -234,7 +234,7 @@ function spoil(applying: Applying): void {
     if (!key) continue;
     const code = textCode(site, placed) ?? codeAt(findings, placed);
     const origin: Origin = originOf(site, placed);
-    (draft as Record<CarriedKey, Carried<unknown>>)[key] = { value: null, origin, unknown: code, phase };
+    (draft as Record<CarriedKey, Carried<unknown> | undefined>)[key] = { value: null, origin, unknown: code, phase };
   }
 }
 

@@ -10,7 +10,7 @@ import {
 import { type Atmosphere, atmosphere } from "../flight/atmosphere.ts";
 import { buffetBank, buffetLoad } from "../flight/buffet.ts";
 import { calibratedFromIndicated, indicatedFromCalibrated } from "../flight/ias.ts";
-import { type Lift, loadAtStall, type StallSpeed, stallBank, stallSpeed, warningBank } from "../flight/stall.ts";
+import { type Lift, type LiftState, loadAtStall, type StallSpeed, stallBank, stallSpeed, warningBank } from "../flight/stall.ts";
 import type { Table } from "../flight/table.ts";
 import {
   loadFactor,
@@ -55,39 +55,6 @@ export interface Airframe {
   readonly buffet: { readonly table: Table; readonly wingArea: number } | null;
 }
 
-/**
- * The figures of one corner, SI. A figure that cannot be known is NaN, here and nowhere else:
- * it becomes null when the corners are gathered.
- */
-export interface Corner {
-  readonly input: CornerInput;
-  readonly air: Atmosphere;
-  readonly cas: number;
-  readonly eas: number;
-  readonly tas: number;
-  readonly mach: number;
-  readonly ias: number;
-  readonly bank: number;
-  readonly path: number;
-  readonly load: number;
-  readonly vs1gKind: StallSpeed["kind"];
-  readonly stallKind: StallSpeed["kind"];
-  readonly vs1g: number;
-  readonly stall: number;
-  readonly warning: number;
-  readonly ratio: number;
-  readonly margin: number;
-  readonly stallLoad: number;
-  readonly stallBank: number;
-  readonly warningBank: number;
-  readonly overshoot: number;
-  readonly buffetLoad: number;
-  readonly buffetBank: number;
-  readonly radius: number;
-  readonly rate: number;
-  readonly rateOneBank: number;
-}
-
 /** Why a corner gives no figures at all. */
 export type CornerProblem = "atmosphere" | "speed" | "ias" | "path" | "bank";
 
@@ -96,63 +63,152 @@ export function corner(frame: Airframe, input: CornerInput, near?: Atmosphere): 
   const air = same ? near : atmosphere(input.pressureAltitude, input.deviation);
   if (!air) return "atmosphere";
   const flown = flownSpeed(frame, input, air);
-  if (typeof flown === "string") return flown;
-  const { cas, mach, bank, path, load } = flown;
-  const eas = easFromMach(mach, air) ?? Number.NaN;
-  const tas = tasFromMach(mach, air) ?? Number.NaN;
+  return typeof flown === "string" ? flown : new Corner(frame, input, air, flown);
+}
 
-  const { lift } = frame;
-  const { mass, liftLoss, cgFactor } = input;
-  const oneG = stallSpeed(lift, { mass, load: 1, liftLoss, cgFactor }, air);
-  const turning = load === 1 ? oneG : stallSpeed(lift, { mass, load, liftLoss, cgFactor }, air);
-  const clean = liftLoss === 0 ? turning : stallSpeed(lift, { mass, load, liftLoss: 0, cgFactor }, air);
-  const vs1g = casOf(oneG);
-  const stall = casOf(turning);
-  const warning = frame.warning === null ? Number.NaN : casOf(clean) * frame.warning;
-  const stallLoad = loadAtStall(lift, { mass, liftLoss, cgFactor }, eas, air) ?? Number.NaN;
-  const bankAtStall = stallBank(stallLoad, path) ?? Number.NaN;
-  const bankAtWarning =
-    frame.warning === null
-      ? Number.NaN
-      : (warningBank(lift, { mass, cgFactor }, cas, frame.warning, path, air) ?? Number.NaN);
-  // The warning cannot come after the stall: what the wing does counts, not what the sensor would say.
-  const warned = bankAtWarning > bankAtStall ? bankAtStall : bankAtWarning;
-  const onset =
-    frame.buffet && liftLoss === 0
-      ? (buffetLoad(frame.buffet.table, mass, frame.buffet.wingArea, mach, air) ?? Number.NaN)
-      : Number.NaN;
-  const ias = frame.ias
-    ? (indicatedFromCalibrated(frame.ias, cas, load, mass, lift.referenceMass) ?? Number.NaN)
-    : Number.NaN;
+/**
+ * The figures of one corner, SI. A figure that cannot be known is NaN, here and nowhere else: it
+ * becomes null when the corners are gathered. Each is worked out when it is first asked for, since a
+ * check asks for half of them.
+ */
+export class Corner {
+  readonly input: CornerInput;
+  readonly air: Atmosphere;
+  readonly cas: number;
+  readonly mach: number;
+  readonly bank: number;
+  readonly path: number;
+  readonly load: number;
+  readonly #frame: Airframe;
+  #oneG: StallSpeed | null = null;
+  #turning: StallSpeed | null = null;
+  #stallLoad: number | null = null;
+  #warningBank: number | null = null;
+  #warning: number | null = null;
 
-  return {
-    input,
-    air,
-    cas,
-    eas,
-    tas,
-    mach,
-    ias,
-    bank,
-    path,
-    load,
-    vs1gKind: oneG.kind,
-    stallKind: turning.kind,
-    vs1g,
-    stall,
-    warning,
-    ratio: cas / vs1g,
-    margin: stall === 0 ? Number.NaN : cas / stall,
-    stallLoad,
-    stallBank: bankAtStall,
-    warningBank: warned,
-    overshoot: warned - bank,
-    buffetLoad: onset,
-    buffetBank: buffetBank(onset, path) ?? Number.NaN,
-    radius: turnRadius(tas, bank, path, input.load) ?? Number.NaN,
-    rate: turnRate(tas, bank, path, input.load) ?? Number.NaN,
-    rateOneBank: rateOneBank(tas),
-  };
+  constructor(frame: Airframe, input: CornerInput, air: Atmosphere, flown: Flown) {
+    this.#frame = frame;
+    this.input = input;
+    this.air = air;
+    this.cas = flown.cas;
+    this.mach = flown.mach;
+    this.bank = flown.bank;
+    this.path = flown.path;
+    this.load = flown.load;
+  }
+
+  get eas(): number {
+    return easFromMach(this.mach, this.air) ?? Number.NaN;
+  }
+
+  get tas(): number {
+    return tasFromMach(this.mach, this.air) ?? Number.NaN;
+  }
+
+  get ias(): number {
+    const { ias, lift } = this.#frame;
+    if (!ias) return Number.NaN;
+    return indicatedFromCalibrated(ias, this.cas, this.load, this.input.mass, lift.referenceMass) ?? Number.NaN;
+  }
+
+  get #oneGStall(): StallSpeed {
+    this.#oneG ??= this.load === 1 ? this.#turningStall : stallSpeed(this.#frame.lift, { ...this.#lift, load: 1 }, this.air);
+    return this.#oneG;
+  }
+
+  get #turningStall(): StallSpeed {
+    this.#turning ??= stallSpeed(this.#frame.lift, { ...this.#lift, load: this.load }, this.air);
+    return this.#turning;
+  }
+
+  get #lift(): LiftState {
+    const { mass, liftLoss, cgFactor } = this.input;
+    return { mass, liftLoss, cgFactor };
+  }
+
+  get vs1gKind(): StallSpeed["kind"] {
+    return this.#oneGStall.kind;
+  }
+
+  get stallKind(): StallSpeed["kind"] {
+    return this.#turningStall.kind;
+  }
+
+  get vs1g(): number {
+    return casOf(this.#oneGStall);
+  }
+
+  get stall(): number {
+    return casOf(this.#turningStall);
+  }
+
+  /** The stall with a clean wing, since the sensor does not know that it is dirty, times the card's factor. */
+  get warning(): number {
+    this.#warning ??= this.#cleanStall() * (this.#frame.warning ?? Number.NaN);
+    return this.#warning;
+  }
+
+  #cleanStall(): number {
+    if (this.input.liftLoss === 0) return this.stall;
+    return casOf(stallSpeed(this.#frame.lift, { ...this.#lift, liftLoss: 0, load: this.load }, this.air));
+  }
+
+  get ratio(): number {
+    return this.cas / this.vs1g;
+  }
+
+  get margin(): number {
+    return this.stall === 0 ? Number.NaN : this.cas / this.stall;
+  }
+
+  get stallLoad(): number {
+    this.#stallLoad ??= loadAtStall(this.#frame.lift, this.#lift, this.eas, this.air) ?? Number.NaN;
+    return this.#stallLoad;
+  }
+
+  get stallBank(): number {
+    return stallBank(this.stallLoad, this.path) ?? Number.NaN;
+  }
+
+  /** The warning cannot come after the stall: what the wing does counts, not what the sensor would say. */
+  get warningBank(): number {
+    this.#warningBank ??= this.#sensedBank();
+    return this.#warningBank;
+  }
+
+  #sensedBank(): number {
+    const { lift, warning } = this.#frame;
+    if (warning === null) return Number.NaN;
+    const sensed = warningBank(lift, this.input, this.cas, warning, this.path, this.air) ?? Number.NaN;
+    const stalled = this.stallBank;
+    return stalled < sensed ? stalled : sensed;
+  }
+
+  get overshoot(): number {
+    return this.warningBank - this.bank;
+  }
+
+  get buffetLoad(): number {
+    const { buffet } = this.#frame;
+    if (!buffet || this.input.liftLoss !== 0) return Number.NaN;
+    return buffetLoad(buffet.table, this.input.mass, buffet.wingArea, this.mach, this.air) ?? Number.NaN;
+  }
+
+  get buffetBank(): number {
+    return buffetBank(this.buffetLoad, this.path) ?? Number.NaN;
+  }
+
+  get radius(): number {
+    return turnRadius(this.tas, this.bank, this.path, this.input.load) ?? Number.NaN;
+  }
+
+  get rate(): number {
+    return turnRate(this.tas, this.bank, this.path, this.input.load) ?? Number.NaN;
+  }
+
+  get rateOneBank(): number {
+    return rateOneBank(this.tas);
+  }
 }
 
 function casOf(stall: StallSpeed): number {

@@ -4,7 +4,7 @@ import { airframeOf, cgFactorAt } from "./airframe.ts";
 import type { Card, Configuration } from "./card.ts";
 import { applyClauses, type Applied, textCode } from "./carry.ts";
 import { checkPoint } from "./checks.ts";
-import { type Clauses, intendedKeyword } from "./clauses.ts";
+import { type Clauses, intendedKeyword, isOpen } from "./clauses.ts";
 import { commonPractice } from "./commonPractice.ts";
 import type { Airframe, CornerProblem } from "./corner.ts";
 import { type Corners, evaluateCorners, type PointInputs } from "./corners.ts";
@@ -99,7 +99,8 @@ function ownError(point: Point): Withheld | null {
       return { origin: originOf(site, placed), code: textCode(site, placed) ?? "unexpected-text" };
     }
   }
-  return null;
+  const open = clauses.later.find((placed) => placed.clause.body && isOpen(placed.clause.body));
+  return open ? { origin: originOf(site, open), code: "not-in-this-version" } : null;
 }
 
 /** Where no other reason is known, the point's own first error is it. */

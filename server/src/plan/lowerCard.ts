@@ -190,7 +190,36 @@ function lowerContaminants(lowering: Lowering): readonly Contaminant[] {
 
 function lowerConfigurations(lowering: Lowering, basis: Basis | null, referenceMass: number | null): readonly Configuration[] {
   const { site } = lowering;
-  return all(site.block, "config").map(({ placed, body }): Configuration => {
+  return [...all(site.block, "config").map(({ placed, body }) => lowerConfiguration(lowering, placed, body, basis, referenceMass)), ...spoiltConfigurations(lowering)];
+}
+
+/** A configuration in error keeps its name, so that a plan that flies it waits for it, and gives no figure. */
+function spoiltConfigurations({ site }: Lowering): readonly Configuration[] {
+  const spoilt = new Map<string, Configuration>();
+  for (const placed of site.block.clauses) {
+    const body = placed.clause.body;
+    if (placed.counts || body?.kind !== "config") continue;
+    const origin: Origin = { ...originOf(site, placed), span: body.name.span };
+    spoilt.set(body.name.text.toLowerCase(), {
+      name: body.name.text,
+      origin,
+      statedStall: null,
+      stallSpeed: null,
+      load: null,
+      vfe: null,
+      takeoff: false,
+      landing: false,
+      liftMach: null,
+      buffet: null,
+      ias: null,
+      published: { vref: null, v2min: null, vfto: null },
+    });
+  }
+  return [...spoilt.values()];
+}
+
+function lowerConfiguration(lowering: Lowering, placed: PlacedClause, body: Of<"config">, basis: Basis | null, referenceMass: number | null): Configuration {
+    const { site } = lowering;
     const named = { lowering, name: body.name.text };
     const ias = configTable(named, "ias", { argument: "speed", value: "speed", unit: "rising" });
     const stall = attribute(body, "stall");
@@ -219,7 +248,6 @@ function lowerConfigurations(lowering: Lowering, basis: Basis | null, referenceM
       ias,
       published: { vref: published(named, "vref"), v2min: published(named, "v2min"), vfto: published(named, "vfto") },
     };
-  });
 }
 
 function attribute<K extends ConfigAttribute["kind"]>(body: Of<"config">, kind: K) {

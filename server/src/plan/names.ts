@@ -4,6 +4,8 @@ import type { Card } from "./card.ts";
 import type { Applying } from "./carry.ts";
 import type { Read } from "./clauses.ts";
 import type { Finding, Related } from "./finding.ts";
+import { catalogue } from "./findings.ts";
+import type { Limits } from "./limits.ts";
 import { lineOf, type Origin } from "./origin.ts";
 import { findingAt, listed } from "./site.ts";
 import { nearestWord } from "../notation/spelling.ts";
@@ -19,7 +21,7 @@ export function flyCard(
   const found = definitions.card(name.text);
   if (found.kind === "found") {
     const card = found.definition;
-    const broken = brokenDefinition(fly.placed, name, "card", card.origin, card.findings, card.withheld !== null);
+    const broken = brokenDefinition(fly.placed, name, "card", card);
     if (broken) findings.push(broken);
     return { value: { name: card.name, card }, code: card.withheld ? "broken-definition" : null };
   }
@@ -60,7 +62,7 @@ export function underLimits(
   const found = definitions.limitsNamed(name.text);
   if (found.kind === "found") {
     const limits = found.definition;
-    const broken = brokenDefinition(under.placed, name, "limits", limits.origin, limits.findings, limits.withheld !== null);
+    const broken = brokenDefinition(under.placed, name, "limits", limits);
     if (broken) findings.push(broken);
     return { name: limits.name, limits: limits.withheld ? null : limits };
   }
@@ -96,11 +98,11 @@ function brokenDefinition(
   placed: PlacedClause,
   name: Name,
   what: "card" | "limits",
-  origin: Origin,
-  findings: readonly Finding[],
-  withheld: boolean,
+  definition: Card | Limits,
 ): Finding | null {
-  const first = findings.find((one) => one.severity === "error");
+  const { origin } = definition;
+  const withheld = definition.withheld !== null;
+  const first = firstError(definition);
   if (!first && !withheld) return null;
   const line = origin.block.start + (first?.line ?? 0) + 1;
   const cost =
@@ -120,6 +122,16 @@ function brokenDefinition(
     `The ${what} ${name.text} ${what === "card" ? "has" : "have"} an error on line ${line}, and ${cost}: mend it there.`,
     { span: name.span, related },
   );
+}
+
+/** Slips that read one way only leave a definition whole. */
+const harmless = new Set(["separator", "unclosed-remark", "unclosed-title"]);
+
+/** The first finding that costs a definition something. */
+function firstError({ block, findings }: Card | Limits): Pick<Finding, "line" | "span" | "message"> | null {
+  const text = block.findings.filter((one) => catalogue[one.code].severity === "error" && !harmless.has(one.code));
+  const errors = [...text, ...findings.filter((one) => one.severity === "error")];
+  return errors.sort((a, b) => a.line - b.line || a.span.start - b.span.start)[0] ?? null;
 }
 
 function givenTwice(placed: PlacedClause, name: Name, what: "card" | "limits", places: readonly Origin[]): Finding {

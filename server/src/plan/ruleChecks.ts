@@ -69,12 +69,8 @@ function notApplicable(subject: Subject, { evaluated }: Checking): boolean {
   const { nominal, all } = evaluated.corners;
   if (subject === "radius") return all.every((one) => one.bank === 0);
   if (subject === "margin") return nominal.stall === 0;
-  return subject === "overshoot" && told(evaluated.corners.nominal);
-}
-
-/** Where the warning has come already, there is no bank left to count: that has been told. */
-function told(nominal: Checking["evaluated"]["corners"]["nominal"]): boolean {
-  return nominal.cas <= nominal.warning && Number.isNaN(nominal.warningBank);
+  // Where the warning has come already there is no bank left to count: that is told as an error of its own.
+  return subject === "overshoot" && all.some((one) => one.cas <= one.warning && Number.isNaN(one.warningBank));
 }
 
 const codes: Readonly<Record<Subject, FindingCode>> = {

@@ -61,7 +61,8 @@ export interface CarriedValues {
 
 export type CarriedKey = keyof CarriedValues;
 
-export type CarriedState = { readonly [K in CarriedKey]?: Carried<CarriedValues[K]> };
+/** Every key is there, undefined where nothing was stated: objects of one shape are copied and compared fast. */
+export type CarriedState = { readonly [K in CarriedKey]: Carried<CarriedValues[K]> | undefined };
 
 /** What later points start from. It holds no line number, so that lines may come and go above it. */
 export interface State {
@@ -72,7 +73,22 @@ export interface State {
   readonly told: { readonly [K in CarriedKey]?: Origin };
 }
 
-export const startState: State = { carried: {}, landed: false, told: {} };
+const nothingStated: CarriedState = {
+  aircraft: undefined,
+  limits: undefined,
+  rules: undefined,
+  qnh: undefined,
+  mass: undefined,
+  config: undefined,
+  altitude: undefined,
+  deviation: undefined,
+  cg: undefined,
+  contamination: undefined,
+  engineOut: undefined,
+  speed: undefined,
+};
+
+export const startState: State = { carried: nothingStated, landed: false, told: {} };
 
 /** The keyword that a reader knows each carried value by. */
 export const keywordOf: Readonly<Record<CarriedKey, Keyword>> = {
