@@ -1,0 +1,41 @@
+import { inlayHints } from "../features/inlayHints.ts";
+import { caution } from "../plan/caution.ts";
+import { findingsJson } from "../report/findingsJson.ts";
+import { findingsText, summaryText } from "../report/findingsText.ts";
+import { load } from "./load.ts";
+import { emit, painter } from "./output.ts";
+import type { Common } from "./run.ts";
+
+/** The notes with their hints beside the lines, as an editor shows them; then the findings, and what to do next. */
+export async function tour(folder: string, options: Common): Promise<number> {
+  const notes = await load([folder], { ...options, root: folder });
+  const paint = painter(options);
+  const dim = (text: string) => paint("hint", text);
+  let text = "";
+  for (const { path, note } of notes) {
+    const { document } = note;
+    text += `\n${path}\n${"-".repeat(path.length)}\n`;
+    const hints = inlayHints(note, 0, document.lineCount - 1, "full");
+    for (let line = 0; line < document.lineCount; line++) {
+      let shown = document.lineText(line);
+      // From the right, so that the columns of those on the left stay.
+      for (const hint of hints.filter((one) => one.line === line).reverse()) {
+        const label = dim(` ${hint.parts.map((part) => part.text).join("")}`);
+        shown = shown.slice(0, hint.character) + label + shown.slice(hint.character);
+      }
+      text += `${String(line + 1).padStart(4)}  ${shown}\n`;
+    }
+  }
+  const files = notes.map(({ path, note }) => ({ path, findings: findingsJson(note) }));
+  text += `\nWhat the notes above are told\n-----------------------------\n${findingsText(files, paint)}${summaryText(files)}`;
+  text += `\n${next}\n${caution}\n`;
+  await emit(text, options);
+  return 0;
+}
+
+const next = `What to do next
+---------------
+  See it in the editor    npm run package, then install dist/plumbline.vsix in VS Code and open the folder demo
+  Check your own notes    node dist/server/cli.cjs check FOLDER
+  Every computed value    node dist/server/cli.cjs points demo
+  What a finding means    node dist/server/cli.cjs explain bank-over-limit`;
