@@ -66,7 +66,7 @@ describe("the grammar and the vocabulary", () => {
     ).toEqual([]);
     expect(
       misses(
-        "support.type.property-name.subject",
+        "support.type.subject",
         subjects.map((one) => [`| must any ${one}`, one]),
       ),
     ).toEqual([]);
