@@ -30,6 +30,7 @@ class OpenFolder implements Folder, Surroundings {
   #resolved = new Map<LimitsDraft, Limits>();
   #findings = new Map<Block, Finding[]>();
   #version = 0;
+  #unused = "";
   #cards: readonly Card[] = [];
   #drafts: readonly LimitsDraft[] = [];
   #collected: ReturnType<typeof collectDefinitions> | null = null;
@@ -100,6 +101,10 @@ class OpenFolder implements Folder, Surroundings {
 
   #findUnused(notes: readonly FolderNote[], defined: readonly (FolderDefinition | Limits)[]): void {
     const used = new Set(notes.flatMap((note) => [...note.usedNames]));
+    const unused = defined.filter(({ name }) => !used.has(name.toLowerCase())).map(({ name }) => name);
+    // A card that nobody uses any more is told in another note than the one that was edited.
+    if (unused.join(" ") !== this.#unused) this.#version++;
+    this.#unused = unused.join(" ");
     for (const { name, block, origin } of defined) {
       if (used.has(name.toLowerCase())) continue;
       const finding: Finding = {

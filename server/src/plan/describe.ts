@@ -3,7 +3,7 @@ import { whyAbsent } from "./absent.ts";
 import { absentChecks } from "./absentChecks.ts";
 import type { Held } from "./checks.ts";
 import { conditionsOf } from "./conditions.ts";
-import type { Corners } from "./corners.ts";
+import { type Corners, evaluateCorners, type PointInputs } from "./corners.ts";
 import type { Point, Ready } from "./evaluatePoint.ts";
 import { type References, type Results, referenceSpeeds, referencesOf, resultsOf } from "./figures.ts";
 import type { Finding } from "./finding.ts";
@@ -61,22 +61,38 @@ class EvaluatedPoint implements Evaluated {
   }
 }
 
+/** The inputs of a point's corners. */
+export function pointInputs(ready: Ready): PointInputs {
+  return {
+    mass: ready.mass,
+    pressureAltitude: ready.air.pressureAltitude,
+    deviation: ready.air.deviation,
+    air: ready.air.nominal,
+    speed: ready.speed,
+    bank: ready.turn.bank,
+    path: ready.turn.path,
+    load: ready.turn.load,
+    liftLoss: ready.liftLoss,
+    cgFactor: ready.cgFactor,
+  };
+}
+
 /** Puts a point's result together. What only a hover or a table asks for is worked out when it is asked for. */
 export function describePoint(
   point: Point,
-  again: (() => Evaluated) | null,
+  ready: Ready | null,
   held: Held,
   withheld: Withheld | null,
   findings: readonly Finding[],
 ): PointResult {
-  return new DescribedPoint(point, again, held, withheld, findings);
+  return new DescribedPoint(point, ready, held, withheld, findings);
 }
 
 const noReferences = { v2min: null, vfto: null, vref: null };
 
 class DescribedPoint implements PointResult {
   readonly #point: Point;
-  readonly #again: (() => Evaluated) | null;
+  readonly #ready: Ready | null;
   #figures: Evaluated | null = null;
   readonly #held: Held;
   readonly withheld: Withheld | null;
@@ -84,13 +100,13 @@ class DescribedPoint implements PointResult {
 
   constructor(
     point: Point,
-    again: (() => Evaluated) | null,
+    ready: Ready | null,
     held: Held,
     withheld: Withheld | null,
     findings: readonly Finding[],
   ) {
     this.#point = point;
-    this.#again = again;
+    this.#ready = ready;
     this.#held = held;
     this.withheld = withheld;
     this.findings = findings;
@@ -101,7 +117,11 @@ class DescribedPoint implements PointResult {
    * long note they would cost more memory and time than they take to compute.
    */
   get #evaluated(): Evaluated | null {
-    this.#figures ??= this.#again?.() ?? null;
+    if (!this.#figures && this.#ready) {
+      const corners = evaluateCorners(this.#ready.frame, pointInputs(this.#ready));
+      // The same inputs gave corners before, so they do again.
+      if (typeof corners !== "string") this.#figures = evaluated(this.#point, this.#ready, corners);
+    }
     return this.#figures;
   }
 

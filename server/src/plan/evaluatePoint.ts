@@ -7,9 +7,9 @@ import { checkPoint } from "./checks.ts";
 import { type Clauses, intendedKeyword, isOpen } from "./clauses.ts";
 import { commonPractice } from "./commonPractice.ts";
 import type { Airframe, CornerProblem } from "./corner.ts";
-import { type Corners, evaluateCorners, type PointInputs } from "./corners.ts";
+import { type Corners, evaluateCorners } from "./corners.ts";
 import type { Definitions } from "./definitions.ts";
-import { describePoint, type Evaluated, evaluated as evaluate } from "./describe.ts";
+import { describePoint, type Evaluated, evaluated as evaluate, pointInputs } from "./describe.ts";
 import type { Finding } from "./finding.ts";
 import { configurationNamed, loadWithoutSpeed, readTurn, type TurnInputs } from "./inputs.ts";
 import { findMissing } from "./missing.ts";
@@ -72,14 +72,9 @@ export function evaluatePoint(
   const stopped = evaluated ? null : (withheld ?? blame(site, phaseClause, findings));
   const held = checkPoint(point, evaluated, findings);
   return {
-    point: describePoint(point, evaluated && (() => again(point, evaluated.ready)), held, stopped, findings),
+    point: describePoint(point, evaluated?.ready ?? null, held, stopped, findings),
     after: clauses.aside ? before : stateAfter(point, before, missing.told, evaluated, ready),
   };
-}
-
-/** The same figures, from the same inputs. */
-function again(point: Point, ready: Ready): Evaluated {
-  return evaluate(point, ready, evaluateCorners(ready.frame, cornerInputs(ready)) as Corners);
 }
 
 /** A point whose phase is not understood is still one; its block has the clause. */
@@ -222,25 +217,10 @@ function outsideCg(point: Point, card: Card, findings: Finding[]): Withheld {
 }
 
 function cornersOf(point: Point, ready: Ready, findings: Finding[]): Corners | null {
-  const corners = evaluateCorners(ready.frame, cornerInputs(ready));
+  const corners = evaluateCorners(ready.frame, pointInputs(ready));
   if (typeof corners !== "string") return corners;
   findings.push(cornerFinding(point, ready, corners));
   return null;
-}
-
-function cornerInputs(ready: Ready): PointInputs {
-  return {
-    mass: ready.mass,
-    pressureAltitude: ready.air.pressureAltitude,
-    deviation: ready.air.deviation,
-    air: ready.air.nominal,
-    speed: ready.speed,
-    bank: ready.turn.bank,
-    path: ready.turn.path,
-    load: ready.turn.load,
-    liftLoss: ready.liftLoss,
-    cgFactor: ready.cgFactor,
-  };
 }
 
 function cornerFinding(point: Point, ready: Ready, problem: CornerProblem): Finding {

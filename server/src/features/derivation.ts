@@ -1,0 +1,219 @@
+import type { PlacedClause } from "../notation/block.ts";
+import type { ResultName } from "../notation/vocabulary.ts";
+import { remarks } from "../plan/caution.ts";
+import {
+  formatAltitude,
+  formatAngle,
+  formatBank,
+  formatDeviation,
+  formatFlightLevel,
+  formatLoad,
+  formatMach,
+  formatMass,
+  formatPercent,
+  formatResult,
+  formatResultValue,
+  formatSpeed,
+} from "../plan/format.ts";
+import { fileName } from "../plan/names.ts";
+import { lineOf, type Origin } from "../plan/origin.ts";
+import type { Conditions, HeldRow, PointResult } from "../plan/point.ts";
+import { resultEntry } from "../plan/results.ts";
+import { atMost } from "../plan/rules.ts";
+
+/** The result of a point, then how it came about with this note's values, as Markdown. */
+export function derivation(point: PointResult, placed: PlacedClause, uri: string): string {
+  const { conditions } = point;
+  if (!conditions) return withheldText(point, uri);
+  return [
+    headline(point, placed),
+    resultsTable(point),
+    formulas(point, conditions),
+    inputsText(point, conditions, uri),
+    rulesText(point, uri),
+    absentText(point),
+    remarksText(point, conditions),
+  ]
+    .filter(Boolean)
+    .join("\n\n");
+}
+
+function withheldText(point: PointResult, uri: string): string {
+  const { withheld } = point;
+  if (!withheld) return "No figures are known here.";
+  return `No figures: ${place(withheld.origin, uri)} has to be mended first (\`${withheld.code}\`).`;
+}
+
+function place(origin: Origin, uri: string): string {
+  const line = `line ${lineOf(origin) + 1}`;
+  return origin.uri === uri ? line : `${fileName(origin.uri)}, ${line}`;
+}
+
+/** What the clause under the cursor is about comes first. */
+function headline(point: PointResult, { clause }: PlacedClause): string {
+  const show = (names: readonly ResultName[]) =>
+    names
+      .flatMap((name) => {
+        const spread = point.results?.[name];
+        return spread ? [`${name} ${formatResult(name, spread, { spread: true })}`] : [];
+      })
+      .join(", ");
+  switch (clause.keyword) {
+    case "bank":
+    case "load":
+      return `**${show(["warning-bank", "stall-bank", "load", "radius", "rate"])}**`;
+    case "weight":
+    case "burn":
+      return `**${show(["vs1g", "stall"])}**`;
+    default:
+      return `**${show(["margin", "ratio", "stall", "warning"])}**`;
+  }
+}
+
+const shownResults: readonly ResultName[] = [
+  "vs1g",
+  "stall",
+  "warning",
+  "ratio",
+  "margin",
+  "load",
+  "stall-load",
+  "stall-bank",
+  "warning-bank",
+  "overshoot",
+  "buffet-load",
+  "buffet-bank",
+  "radius",
+  "rate",
+  "rate-one-bank",
+  "v2min",
+  "vfto",
+  "vref",
+  "va",
+];
+
+function resultsTable(point: PointResult): string {
+  const rows = shownResults.flatMap((name) => {
+    const spread = point.results?.[name];
+    if (!spread) return [];
+    return [`| ${name} | ${formatResult(name, spread, { spread: true })} | ${resultEntry(name).label}${referenceNote(point, name)} |`];
+  });
+  return ["| result | value | |", "| --- | --- | --- |", ...rows].join("\n");
+}
+
+function referenceNote(point: PointResult, name: ResultName): string {
+  if (name === "va") return ": one full smooth input, one axis, one direction, no reversals; the flight manual's va governs";
+  if (name !== "v2min" && name !== "vfto" && name !== "vref") return "";
+  const reference = point.reference[name];
+  if (!reference) return "";
+  return `, at least, in ${reference.configuration} (${reference.published ? "published" : "least value of the rule"})`;
+}
+
+/** The formulas with this note's values in them. */
+function formulas(point: PointResult, conditions: Conditions): string {
+  const { configuration, card, results } = point;
+  const reference = card?.referenceMass?.value;
+  const basis = card?.basis?.value;
+  const stall = results?.stall;
+  if (!configuration || configuration.stallSpeed === null || !reference || !basis || !stall) return "";
+  const mass = formatMass(conditions.mass.nominal, reference);
+  const lines = [
+    conditions.loadStated
+      ? `n = ${formatLoad(conditions.load.nominal)}, as stated`
+      : `n = cos ${formatAngle(conditions.path.nominal)} / cos ${formatBank(conditions.bank.nominal)} = ${formatLoad(conditions.load.nominal)}`,
+    `V_c = ${formatSpeed(configuration.stallSpeed)} (${configuration.name}, ${basis.kind}${basis.kind === "vs" ? ` / ${basis.factor}` : ""}, at ${formatMass(reference, reference)})`,
+    `stall: V² f(M) = V_c² k² (n m / m_ref) / (1 - loss), with m = ${mass}, k = ${conditions.cgFactor.nominal.toFixed(3)}, loss = ${formatPercent(conditions.liftLoss.nominal)}: ${formatResultValue("stall", stall.nominal)}`,
+  ];
+  const check = weightCheck(point, conditions, reference);
+  if (check) lines.push(check);
+  return lines.map((line) => `- ${line}`).join("\n");
+}
+
+/** The rule of thumb stands beside the exact figure, never instead of it. */
+function weightCheck(point: PointResult, conditions: Conditions, reference: number): string | null {
+  const { configuration, results } = point;
+  const vs1g = results?.vs1g?.nominal;
+  if (!vs1g || !configuration?.stallSpeed) return null;
+  const change = conditions.mass.nominal / reference - 1;
+  if (Math.abs(change) < 0.005) return null;
+  const exact = Math.sqrt(conditions.mass.nominal / reference) - 1;
+  return `cross-check: the weight is ${signedPercent(change)} off the reference, so the stall speed is about ${signedPercent(change / 2)} off (half of it; exactly ${signedPercent(exact)})`;
+}
+
+function signedPercent(fraction: number): string {
+  return `${fraction < 0 ? "" : "+"}${formatPercent(fraction)}`;
+}
+
+/** Each input, with the line it came from. */
+function inputsText(point: PointResult, conditions: Conditions, uri: string): string {
+  const reference = point.card?.referenceMass?.value ?? conditions.mass.nominal;
+  const parts: string[] = [];
+  const add = (keyword: Parameters<typeof point.inputs.get>[0], text: string) => {
+    const origin = point.inputs.get(keyword);
+    parts.push(origin ? `${text} (${place(origin, uri)})` : `${text} (assumed)`);
+  };
+  add("weight", formatMass(conditions.mass.nominal, reference));
+  add("config", point.configuration?.name ?? "");
+  add("altitude", conditions.flightLevel ? formatFlightLevel(conditions.altitude.nominal) : formatAltitude(conditions.altitude.nominal));
+  add("isa", `ISA ${formatDeviation(conditions.deviation.nominal)}`);
+  const speeds = [
+    formatSpeed(conditions.cas.nominal),
+    formatSpeed(conditions.tas.nominal, 0, { type: "tas" }),
+    formatMach(conditions.mach.nominal),
+    ...(conditions.ias ? [formatSpeed(conditions.ias.nominal, 0, { type: "ias" })] : []),
+  ];
+  add("speed", speeds.join(" = "));
+  add("bank", `bank ${formatBank(conditions.bank.nominal)}`);
+  add("path", `path ${formatAngle(conditions.path.nominal)}`);
+  if (conditions.cg) add("cg", `cg ${formatPercent(conditions.cg.nominal)}`);
+  const assumed = point.assumed.length > 0 ? `\n\nAssumed: ${point.assumed.join(", ")}.` : "";
+  return `From: ${parts.join("; ")}.${assumed}`;
+}
+
+function rulesText(point: PointResult, uri: string): string {
+  const rows = point.rows.map((held) => `- ${heldText(held)} *(${held.row.remark ?? "no source stated"}; ${rowPlace(held, uri)})*`);
+  if (rows.length === 0) return point.limits ? "" : `No rule is held: ${point.limitsName} cannot be used.`;
+  return `Held against ${point.limitsName}:\n\n${rows.join("\n")}`;
+}
+
+function rowPlace({ row }: HeldRow, uri: string): string {
+  return row.origin.uri.startsWith("plumbline:") ? "built in" : place(row.origin, uri);
+}
+
+function heldText({ row, bound, figure, holds }: HeldRow): string {
+  if (figure === null) return `${row.text}: not evaluated`;
+  const show = (value: number) => {
+    switch (row.subject) {
+      case "bank":
+        return formatBank(value);
+      case "buffet":
+        return formatResultValue("buffet-load", value);
+      case "load":
+        return formatLoad(value);
+      default:
+        return formatResultValue(row.subject, value);
+    }
+  };
+  return `${row.text}: ${show(figure)}, ${atMost(row.subject) ? "at most" : "at least"} ${show(bound)}, ${holds ? "kept" : "broken"}`;
+}
+
+function absentText(point: PointResult): string {
+  const reasons = Object.entries(point.absent).map(([name, why]) => `- ${name}: ${why}`);
+  const skipped = point.notEvaluated.map(({ rule, why }) => `- ${rule}: ${why}`);
+  if (reasons.length + skipped.length === 0) return "";
+  return `Not known or not checked here:\n\n${[...reasons, ...skipped].join("\n")}`;
+}
+
+/** The cautions that belong beside these numbers. */
+function remarksText(point: PointResult, conditions: Conditions): string {
+  const { card } = point;
+  const source = card?.source ? `${card.name}: ${card.source.title}${card.source.issue ? `, issue ${card.source.issue}` : ""}.` : `${card?.name}: no source stated.`;
+  const shown = [
+    conditions.ias ? null : remarks.cas,
+    remarks.steady,
+    conditions.engineOut ? null : remarks.engines,
+    remarks.stillAir,
+    0 < conditions.liftLoss.high ? remarks.contamination : null,
+  ].filter((one) => one !== null);
+  return `*${shown.join(" ")} ${source}*`;
+}

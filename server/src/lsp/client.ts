@@ -1,0 +1,32 @@
+import type { InitializeParams } from "vscode-languageserver";
+
+/** What the client said it can do. Nothing else is asked of it. */
+export interface Client {
+  /** URIs of its folders at the start. */
+  readonly folders: readonly string[];
+  /** It asks for diagnostics; else they are sent. */
+  readonly pulls: boolean;
+  readonly refreshesDiagnostics: boolean;
+  readonly refreshesHints: boolean;
+  readonly watches: boolean;
+  readonly asksConfiguration: boolean;
+  readonly registersConfiguration: boolean;
+  readonly changesFolders: boolean;
+  readonly snippets: boolean;
+}
+
+export function clientOf({ capabilities, workspaceFolders, rootUri }: InitializeParams): Client {
+  const { workspace, textDocument } = capabilities;
+  const folders = workspaceFolders?.map(({ uri }) => uri) ?? (rootUri ? [rootUri] : []);
+  return {
+    folders,
+    pulls: textDocument?.diagnostic !== undefined,
+    refreshesDiagnostics: workspace?.diagnostics?.refreshSupport === true,
+    refreshesHints: workspace?.inlayHint?.refreshSupport === true,
+    watches: workspace?.didChangeWatchedFiles?.dynamicRegistration === true,
+    asksConfiguration: workspace?.configuration === true,
+    registersConfiguration: workspace?.didChangeConfiguration?.dynamicRegistration === true,
+    changesFolders: workspace?.workspaceFolders === true,
+    snippets: textDocument?.completion?.completionItem?.snippetSupport === true,
+  };
+}

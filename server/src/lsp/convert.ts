@@ -1,0 +1,163 @@
+import {
+  type CodeAction as LspCodeAction,
+  CodeActionKind,
+  CompletionItemKind,
+  type CompletionItem,
+  type Diagnostic,
+  DiagnosticSeverity,
+  DiagnosticTag,
+  type DocumentSymbol,
+  type FoldingRange,
+  type Hover as LspHover,
+  type InlayHint,
+  InsertTextFormat,
+  type Location,
+  type Range,
+  SymbolKind,
+  type TextEdit,
+} from "vscode-languageserver";
+import type { CodeAction } from "../features/codeActions.ts";
+import type { Completion } from "../features/completion.ts";
+import type { Symbol } from "../features/documentSymbols.ts";
+import type { Fold } from "../features/folding.ts";
+import type { Hover } from "../features/hover.ts";
+import type { Hint } from "../features/inlayHints.ts";
+import type { Edit } from "../notation/finding.ts";
+import type { LineEdit } from "../notation/layout.ts";
+import type { Span } from "../notation/span.ts";
+import { BUILT_IN_URI } from "../plan/builtIn.ts";
+import type { Severity } from "../plan/finding.ts";
+import type { Note, PlacedFinding } from "../plan/note.ts";
+import { lineOf, type Origin } from "../plan/origin.ts";
+
+/** Where a page is; the built-in limits and each finding have one. */
+export type PageUri = (name: string) => string | null;
+
+export function rangeOf(line: number, { start, end }: Span): Range {
+  return { start: { line, character: start }, end: { line, character: end } };
+}
+
+export function locationOf(origin: Origin, pageUri: PageUri): Location | null {
+  const uri = origin.uri === BUILT_IN_URI ? pageUri("common-practice.plumb") : origin.uri;
+  return uri === null ? null : { uri, range: rangeOf(lineOf(origin), origin.span) };
+}
+
+const severities: Readonly<Record<Severity, DiagnosticSeverity>> = {
+  error: DiagnosticSeverity.Error,
+  warning: DiagnosticSeverity.Warning,
+  information: DiagnosticSeverity.Information,
+  hint: DiagnosticSeverity.Hint,
+};
+
+export function diagnosticOf({ line, finding }: PlacedFinding, pageUri: PageUri): Diagnostic {
+  const href = pageUri(`${finding.code}.md`);
+  const related = finding.related.flatMap(({ origin, message }) => {
+    const location = locationOf(origin, pageUri);
+    return location ? [{ location, message }] : [];
+  });
+  return {
+    range: rangeOf(line, finding.span),
+    severity: severities[finding.severity],
+    code: finding.code,
+    source: "plumbline",
+    message: finding.message,
+    ...(href ? { codeDescription: { href } } : {}),
+    ...(related.length > 0 ? { relatedInformation: related } : {}),
+    ...(finding.code === "unused-definition" ? { tags: [DiagnosticTag.Unnecessary] } : {}),
+  };
+}
+
+/** What a hint is resolved by: its note and its place in it. */
+export interface HintData {
+  readonly uri: string;
+}
+
+/** A hint without its tooltips and locations, which few are asked for. */
+export function hintOf(hint: Hint, uri: string): InlayHint {
+  return {
+    position: { line: hint.line, character: hint.character },
+    label: hint.parts.map(({ text }) => ({ value: text })),
+    paddingLeft: true,
+    data: { uri } satisfies HintData,
+  };
+}
+
+export function resolvedHint(plain: InlayHint, hint: Hint, pageUri: PageUri): InlayHint {
+  const label = hint.parts.map(({ text, tooltip, origin }) => {
+    const location = origin && locationOf(origin, pageUri);
+    return { value: text, ...(tooltip ? { tooltip } : {}), ...(location ? { location } : {}) };
+  });
+  return { ...plain, label };
+}
+
+export function hoverOf({ line, span, text }: Hover): LspHover {
+  return { contents: { kind: "markdown", value: text }, range: rangeOf(line, span) };
+}
+
+const completionKinds: Readonly<Record<Completion["kind"], CompletionItemKind>> = {
+  keyword: CompletionItemKind.Keyword,
+  name: CompletionItemKind.Variable,
+  unit: CompletionItemKind.Unit,
+  value: CompletionItemKind.Value,
+  word: CompletionItemKind.EnumMember,
+};
+
+export function completionOf(completion: Completion, line: number, snippets: boolean): CompletionItem {
+  const { label, kind, detail, documentation, insertText, snippet, rank, span } = completion;
+  const plain = insertText.replace(/\$\{\d+[:|]([^,}|]*)[^}]*\}|\$\d+/g, "$1");
+  return {
+    label,
+    kind: completionKinds[kind],
+    ...(detail ? { detail } : {}),
+    ...(documentation ? { documentation: { kind: "markdown", value: documentation } } : {}),
+    sortText: `${String(rank).padStart(3, "0")} ${label}`,
+    filterText: label,
+    insertTextFormat: snippet && snippets ? InsertTextFormat.Snippet : InsertTextFormat.PlainText,
+    textEdit: { range: rangeOf(line, span), newText: snippet && !snippets ? plain : insertText },
+  };
+}
+
+export function textEditOf({ line, start, end, newText, wholeLine }: Edit): TextEdit {
+  const range = wholeLine ? { start: { line, character: 0 }, end: { line: line + 1, character: 0 } } : rangeOf(line, { start, end });
+  return { range, newText };
+}
+
+export function codeActionOf(action: CodeAction, uri: string, diagnostics: readonly Diagnostic[]): LspCodeAction {
+  const { finding, findingLine } = action;
+  const own = diagnostics.filter((one) => one.code === finding.code && one.range.start.line === findingLine && one.range.start.character === finding.span.start);
+  return {
+    title: action.title,
+    kind: CodeActionKind.QuickFix,
+    ...(own.length > 0 ? { diagnostics: own } : {}),
+    ...(action.preferred ? { isPreferred: true } : {}),
+    edit: { changes: { [uri]: action.edits.map(textEditOf) } },
+  };
+}
+
+const symbolKinds: Readonly<Record<Symbol["kind"], SymbolKind>> = {
+  point: SymbolKind.Event,
+  setting: SymbolKind.Property,
+  card: SymbolKind.Class,
+  limits: SymbolKind.Namespace,
+  configuration: SymbolKind.Field,
+};
+
+export function symbolOf(symbol: Symbol, note: Note): DocumentSymbol {
+  const end = note.document.lineText(symbol.lastLine).length;
+  return {
+    name: symbol.name,
+    detail: symbol.detail,
+    kind: symbolKinds[symbol.kind],
+    range: { start: { line: symbol.firstLine, character: 0 }, end: { line: symbol.lastLine, character: end } },
+    selectionRange: rangeOf(symbol.nameLine, symbol.nameSpan),
+    children: symbol.children.map((child) => symbolOf(child, note)),
+  };
+}
+
+export function foldOf({ firstLine, lastLine }: Fold): FoldingRange {
+  return { startLine: firstLine, endLine: lastLine };
+}
+
+export function lineEditOf({ line, newText }: LineEdit, note: Note): TextEdit {
+  return { range: rangeOf(line, { start: 0, end: note.document.lineText(line).length }), newText };
+}
