@@ -1,10 +1,15 @@
 // Bundles the extension, the server and the command line, and writes the pages that ship beside them.
 //   node build.mjs           what ships and what the tests run
 //   node build.mjs --debug   readable, with source maps, for a debugger
-import { mkdir, rm, writeFile } from "node:fs/promises";
+import { mkdir, readFile, rm, writeFile } from "node:fs/promises";
 import { build } from "esbuild";
 
+// A dependency asks where it stands by `import.meta.url`, which a bundle in CommonJS does not have.
+const whereItStands = 'const bundleUrl = require("node:url").pathToFileURL(__filename).href;';
 const debug = process.argv.includes("--debug");
+const { version } = JSON.parse(await readFile("package.json", "utf8"));
+// Packages written as modules ask for their own URL, which a CommonJS bundle has under another name.
+const moduleUrl = '"use strict";const moduleUrl=require("node:url").pathToFileURL(__filename).href;';
 const shared = {
   bundle: true,
   platform: "node",
@@ -12,6 +17,10 @@ const shared = {
   format: "cjs",
   minify: !debug,
   sourcemap: debug && "linked",
+  define: { "import.meta.url": "bundleUrl" },
+  banner: { js: whereItStands },
+  define: { PLUMBLINE_VERSION: JSON.stringify(version), "import.meta.url": "moduleUrl" },
+  banner: { js: moduleUrl },
   legalComments: "none",
   logLevel: "warning",
 };
@@ -21,6 +30,8 @@ async function writePages() {
   const { outputFiles } = await build({
     ...shared,
     format: "esm",
+    define: {},
+    banner: {},
     sourcemap: false,
     entryPoints: ["server/src/report/pages.ts"],
     write: false,
@@ -50,7 +61,7 @@ await Promise.all([
     ...shared,
     entryPoints: ["server/src/cli/main.ts"],
     outfile: "dist/server/cli.cjs",
-    banner: { js: "#!/usr/bin/env node" },
+    banner: { js: `#!/usr/bin/env node\n${whereItStands}` },
   }),
   writePages(),
 ]);
