@@ -4,12 +4,10 @@
 import { mkdir, readFile, rm, writeFile } from "node:fs/promises";
 import { build } from "esbuild";
 
-// A dependency asks where it stands by `import.meta.url`, which a bundle in CommonJS does not have.
-const whereItStands = 'const bundleUrl = require("node:url").pathToFileURL(__filename).href;';
 const debug = process.argv.includes("--debug");
 const { version } = JSON.parse(await readFile("package.json", "utf8"));
-// Packages written as modules ask for their own URL, which a CommonJS bundle has under another name.
-const moduleUrl = '"use strict";const moduleUrl=require("node:url").pathToFileURL(__filename).href;';
+// A dependency asks where it stands by `import.meta.url`, which a bundle in CommonJS does not have.
+const whereItStands = '"use strict";const bundleUrl=require("node:url").pathToFileURL(__filename).href;';
 const shared = {
   bundle: true,
   platform: "node",
@@ -17,10 +15,8 @@ const shared = {
   format: "cjs",
   minify: !debug,
   sourcemap: debug && "linked",
-  define: { "import.meta.url": "bundleUrl" },
+  define: { PLUMBLINE_VERSION: JSON.stringify(version), "import.meta.url": "bundleUrl" },
   banner: { js: whereItStands },
-  define: { PLUMBLINE_VERSION: JSON.stringify(version), "import.meta.url": "moduleUrl" },
-  banner: { js: moduleUrl },
   legalComments: "none",
   logLevel: "warning",
 };
