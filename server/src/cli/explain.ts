@@ -10,7 +10,9 @@ export async function explain(code: string): Promise<number> {
   if (text === null) {
     const codes = Object.keys(catalogue);
     const nearest = nearestWord(code, codes);
-    throw new UsageError(`There is no finding ${code}${nearest ? `; did you mean ${nearest}?` : `. There are ${codes.join(", ")}.`}`);
+    throw new UsageError(
+      `There is no finding ${code}${nearest ? `; did you mean ${nearest}?` : `. There are ${codes.join(", ")}.`}`,
+    );
   }
   await emit(text.endsWith("\n") ? text : `${text}\n`, {});
   return 0;

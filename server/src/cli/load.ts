@@ -42,9 +42,14 @@ export async function load(paths: readonly string[], options: LoadOptions): Prom
   const folder = createFolder({ today: options.today });
   const files = [...texts.keys()].sort();
   for (const file of files) folder.open(uriOf(file), texts.get(file) as string, flavourOf(file));
-  const loaded = wanted.files.filter((file) => isNote(folder.note(uriOf(file)), file)).map((file) => ({ path: shortPath(file, cwd), note: folder.note(uriOf(file)) as Note }));
+  const loaded = wanted.files
+    .filter((file) => isNote(folder.note(uriOf(file)), file))
+    .map((file) => ({ path: shortPath(file, cwd), note: folder.note(uriOf(file)) as Note }));
   if (!named.includes("-")) {
-    if (loaded.length === 0) throw new UsageError(`There is no note in ${named.join(", ")}: a note is a .plumb file, or a Markdown file with a \`plumb\` fence.`);
+    if (loaded.length === 0)
+      throw new UsageError(
+        `There is no note in ${named.join(", ")}: a note is a .plumb file, or a Markdown file with a \`plumb\` fence.`,
+      );
     return loaded;
   }
   const path = resolve(cwd, options.stdinPath);
@@ -57,7 +62,8 @@ function isNote(note: Note | null, file: string): boolean {
   if (!note) return false;
   if (/\.plumb$/i.test(file)) return true;
   if (note.document.findings.length > 0) return true;
-  for (let line = 0; line < note.document.lineCount; line++) if (note.document.lineKind(line) === "plumb-fence") return true;
+  for (let line = 0; line < note.document.lineCount; line++)
+    if (note.document.lineKind(line) === "plumb-fence") return true;
   return false;
 }
 

@@ -17,7 +17,9 @@ export async function emit(text: string, { output }: Pick<Common, "output">): Pr
 
 /** Colours where a terminal reads them; `NO_COLOR` and `FORCE_COLOR` are heard (no-color.org, common practice). */
 export function painter({ color, output }: Pick<Common, "color" | "output">): Paint {
-  return usesColor(color, output) ? (severity, text) => `\u001b[${codes[severity]}m${text}\u001b[0m` : (_, text) => text;
+  return usesColor(color, output)
+    ? (severity, text) => `\u001b[${codes[severity]}m${text}\u001b[0m`
+    : (_, text) => text;
 }
 
 function usesColor(color: Common["color"], output: string | undefined): boolean {
@@ -28,4 +30,9 @@ function usesColor(color: Common["color"], output: string | undefined): boolean 
 }
 
 /** The severity is written in words too, so that nothing is said by colour alone. */
-const codes: Readonly<Record<Severity, string>> = { error: "1;31", warning: "1;33", information: "36", hint: "2" };
+const codes: Readonly<Record<Severity, string>> = {
+  error: "1;31",
+  warning: "1;33",
+  information: "36",
+  hint: "2",
+};

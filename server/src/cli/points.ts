@@ -32,7 +32,11 @@ function written(notes: readonly LoadedNote[], { format }: PointsOptions): strin
 }
 
 /** A table for each note that has points. */
-function tables(notes: readonly LoadedNote[], head: (note: LoadedNote) => string, table: typeof plainTable): string {
+function tables(
+  notes: readonly LoadedNote[],
+  head: (note: LoadedNote) => string,
+  table: typeof plainTable,
+): string {
   return notes
     .map((one) => ({ one, rows: tableRows(one.note) }))
     .filter(({ rows }) => rows.length > 0)

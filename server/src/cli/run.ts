@@ -23,21 +23,39 @@ export interface Common {
 export async function run(argv: readonly string[]): Promise<number> {
   let code = 0;
   const program = new Command("plumbline")
-    .description("Checks the stall margins and bank limits of flight notes. A planning aid, not approved data.")
+    .description(
+      "Checks the stall margins and bank limits of flight notes. A planning aid, not approved data.",
+    )
     .version(VERSION)
     .exitOverride()
     .configureOutput({ outputError: (text, write) => write(text.replace(/^error: /, "plumbline: ")) })
     .showHelpAfterError("(plumbline --help lists the commands)");
   const settle = (result: Promise<number>) => result.then((value) => void (code = value));
 
-  overNotes(program.command("check", { isDefault: true }).argument("[path...]", "files, folders or globs; - for standard input"))
+  overNotes(
+    program
+      .command("check", { isDefault: true })
+      .argument("[path...]", "files, folders or globs; - for standard input"),
+  )
     .description("show findings (the default command)")
-    .addOption(new Option("--format <format>", "how they are written").choices(["text", "json", "sarif"]).default("text"))
-    .addOption(new Option("--fail-on <severity>", "what makes the exit code 1").choices(["error", "warning", "never"]).default("error"))
+    .addOption(
+      new Option("--format <format>", "how they are written")
+        .choices(["text", "json", "sarif"])
+        .default("text"),
+    )
+    .addOption(
+      new Option("--fail-on <severity>", "what makes the exit code 1")
+        .choices(["error", "warning", "never"])
+        .default("error"),
+    )
     .action((paths: string[], options) => settle(check(paths, options)));
   overNotes(program.command("points").argument("[path...]", "files, folders or globs; - for standard input"))
     .description("show every point with its computed values")
-    .addOption(new Option("--format <format>", "how they are written").choices(["table", "json", "csv", "markdown"]).default("table"))
+    .addOption(
+      new Option("--format <format>", "how they are written")
+        .choices(["table", "json", "csv", "markdown"])
+        .default("table"),
+    )
     .action((paths: string[], options) => settle(points(paths, options)));
   overNotes(program.command("format").argument("[path...]", "files, folders or globs; - for standard input"))
     .description("lay out bar lines: blanks only, never a word or a figure")
@@ -71,13 +89,22 @@ function overNotes(command: Command): Command {
     .option("--root <dir>", "where cards and limits are looked for besides", ".")
     .option("--stdin-path <name>", "where standard input pretends to be", "standard-input.plumb")
     .option("-o, --output <file>", "write there instead of to standard output")
-    .addOption(new Option("--color <when>", "colours on the terminal").choices(["auto", "always", "never"]).default("auto"))
+    .addOption(
+      new Option("--color <when>", "colours on the terminal")
+        .choices(["auto", "always", "never"])
+        .default("auto"),
+    )
     .option("--quiet", "no summary and no caution on standard error")
-    .addOption(new Option("--today <date>", "the day the notes are read on").argParser(day).default(localDay(), "today"));
+    .addOption(
+      new Option("--today <date>", "the day the notes are read on")
+        .argParser(day)
+        .default(localDay(), "today"),
+    );
 }
 
 function day(text: string): string {
-  const real = /^\d{4}-\d{2}-\d{2}$/.test(text) && new Date(`${text}T00:00:00Z`).toISOString().slice(0, 10) === text;
+  const real =
+    /^\d{4}-\d{2}-\d{2}$/.test(text) && new Date(`${text}T00:00:00Z`).toISOString().slice(0, 10) === text;
   if (!real) throw new InvalidArgumentError("It is a day such as 2026-03-01.");
   return text;
 }
@@ -95,4 +122,3 @@ async function serve(): Promise<number> {
   await import(path);
   return new Promise<number>((resolve) => process.once("exit", () => resolve(0)));
 }
-

@@ -38,7 +38,12 @@ export async function discover(paths: readonly string[], cwd: string): Promise<D
 
 async function addGlob(pattern: string, cwd: string, files: Set<string>, problems: string[]): Promise<void> {
   const { glob } = await import("tinyglobby");
-  const matched = await glob(pattern, { cwd, absolute: true, ignore: ["**/node_modules/**", "**/.git/**"], expandDirectories: false });
+  const matched = await glob(pattern, {
+    cwd,
+    absolute: true,
+    ignore: ["**/node_modules/**", "**/.git/**"],
+    expandDirectories: false,
+  });
   const notes = matched.filter(isNoteFile).map((path) => resolve(path));
   if (notes.length === 0) problems.push(`No note matches ${pattern}.`);
   const rules = await rulesAbove(cwd);
@@ -133,7 +138,8 @@ export async function readNote(path: string): Promise<ReadNote> {
     const bytes = await readFile(path);
     return { text: new TextDecoder("utf-8", { fatal: true, ignoreBOM: true }).decode(bytes) };
   } catch (error) {
-    if (error instanceof TypeError) return { problem: `${path} is not UTF-8, so it is not read: save it as UTF-8.` };
+    if (error instanceof TypeError)
+      return { problem: `${path} is not UTF-8, so it is not read: save it as UTF-8.` };
     const code = (error as NodeJS.ErrnoException).code ?? "unknown error";
     return { problem: `${path} cannot be read (${code}).` };
   }

@@ -21,13 +21,23 @@ export function argumentCompletions(place: CompletionPlace): readonly Completion
     case "limits":
       return last === "from" ? limitsNames(place) : done.length === 1 ? words(place, ["from"]) : [];
     case "config":
-      return place.result?.block.kind === "card" ? configAttributes(place, done) : done.length === 0 ? configurations(place) : [];
+      return place.result?.block.kind === "card"
+        ? configAttributes(place, done)
+        : done.length === 0
+          ? configurations(place)
+          : [];
     case "lift-mach":
     case "buffet":
     case "ias":
-      return done.length === 0 ? configurations(place) : unitsAfterNumber(place, keyword === "ias" ? "speed" : "number");
+      return done.length === 0
+        ? configurations(place)
+        : unitsAfterNumber(place, keyword === "ias" ? "speed" : "number");
     case "published":
-      return done.length === 0 ? words(place, ["vref", "v2min", "vfto"]) : done.length === 1 ? configurations(place) : [];
+      return done.length === 0
+        ? words(place, ["vref", "v2min", "vfto"])
+        : done.length === 1
+          ? configurations(place)
+          : [];
     case "rules":
       return done.length === 0 ? words(place, ["ifr", "vfr"]) : [];
     case "phase":
@@ -41,12 +51,18 @@ export function argumentCompletions(place: CompletionPlace): readonly Completion
     case "speed":
       return speedCompletions(place, done);
     case "bank":
-      return done.length === 0 && place.word === "" ? words(place, ["rate-one"]) : [...unitsAfterNumber(place, "angle"), ...words(place, ["left", "right"])];
+      return done.length === 0 && place.word === ""
+        ? words(place, ["rate-one"])
+        : [...unitsAfterNumber(place, "angle"), ...words(place, ["left", "right"])];
     case "claim":
       return done.length === 0 ? claims(place) : [];
     case "expect":
     case "accept":
-      return done.length === 0 ? codes(place) : keyword === "accept" ? words(place, ["to", "because", "by", "until"]) : [];
+      return done.length === 0
+        ? codes(place)
+        : keyword === "accept"
+          ? words(place, ["to", "because", "by", "until"])
+          : [];
     case "must":
     case "should":
       return rowCompletions(place, done);
@@ -80,8 +96,23 @@ const quantityKinds: Readonly<Record<string, QuantityKind>> = {
   wing: "area",
 };
 
-function item(place: CompletionPlace, label: string, kind: Completion["kind"], detail: string, rank = 1): Completion {
-  return { label, kind, detail, documentation: null, insertText: label, snippet: false, rank, span: place.span };
+function item(
+  place: CompletionPlace,
+  label: string,
+  kind: Completion["kind"],
+  detail: string,
+  rank = 1,
+): Completion {
+  return {
+    label,
+    kind,
+    detail,
+    documentation: null,
+    insertText: label,
+    snippet: false,
+    rank,
+    span: place.span,
+  };
 }
 
 function words(place: CompletionPlace, list: readonly string[], detail = ""): readonly Completion[] {
@@ -93,8 +124,12 @@ function cardNames(place: CompletionPlace): readonly Completion[] {
 }
 
 function limitsNames(place: CompletionPlace): readonly Completion[] {
-  const own = place.note.definitions.limits.map((limits) => item(place, limits.name, "name", limits.title ?? "limits"));
-  return [...own, item(place, "common-practice", "name", "built in", 2)].filter((one, i, all) => all.findIndex((other) => other.label === one.label) === i);
+  const own = place.note.definitions.limits.map((limits) =>
+    item(place, limits.name, "name", limits.title ?? "limits"),
+  );
+  return [...own, item(place, "common-practice", "name", "built in", 2)].filter(
+    (one, i, all) => all.findIndex((other) => other.label === one.label) === i,
+  );
 }
 
 /** The configurations of the card in use, with the stall speed that the card states. */
@@ -102,20 +137,28 @@ function configurations(place: CompletionPlace): readonly Completion[] {
   const card = place.result && cardInUse(place.result);
   const reference = card?.referenceMass?.value;
   return (card?.configurations ?? []).map((one, i) => {
-    const stall = one.statedStall === null ? "" : `stall ${formatSpeed(one.statedStall)}${reference ? ` at ${formatMass(reference, reference)}` : ""}`;
+    const stall =
+      one.statedStall === null
+        ? ""
+        : `stall ${formatSpeed(one.statedStall)}${reference ? ` at ${formatMass(reference, reference)}` : ""}`;
     return item(place, one.name, "name", stall, i);
   });
 }
 
 function contaminants(place: CompletionPlace): readonly Completion[] {
   const card = place.result && cardInUse(place.result);
-  const named = (card?.contaminants ?? []).map((one) => item(place, one.name, "name", one.rain ? "rain" : "not for takeoff"));
+  const named = (card?.contaminants ?? []).map((one) =>
+    item(place, one.name, "name", one.rain ? "rain" : "not for takeoff"),
+  );
   return [...named, item(place, "none", "word", "a clean wing", 2)];
 }
 
 function configAttributes(place: CompletionPlace, done: readonly string[]): readonly Completion[] {
   if (done.length === 0) return [];
-  return [...unitsAfterNumber(place, "speed"), ...words(place, ["stall", "load", "vfe", "takeoff", "landing"])];
+  return [
+    ...unitsAfterNumber(place, "speed"),
+    ...words(place, ["stall", "load", "vfe", "takeoff", "landing"]),
+  ];
 }
 
 /** Units once a number stands there, then `+-` and a sweep. */
@@ -134,18 +177,26 @@ function unitSpan(place: CompletionPlace) {
 
 function speedCompletions(place: CompletionPlace, done: readonly string[]): readonly Completion[] {
   if (done.length === 0 && !/^\d/.test(place.word)) {
-    const snippet = (label: string, insertText: string, detail: string, rank: number): Completion => ({ ...item(place, label, "value", detail, rank), insertText, snippet: true });
+    const snippet = (label: string, insertText: string, detail: string, rank: number): Completion => ({
+      ...item(place, label, "value", detail, rank),
+      insertText,
+      snippet: true,
+    });
     return [
       snippet("M", "M $0", "Mach number", 0),
       snippet("vref +", "vref + ${1:5} kt$0", "least landing reference speed and an addition", 1),
       snippet("v2min +", "v2min + ${1:10} kt$0", "least take-off safety speed and an addition", 2),
       snippet("1.3 vs1g", "${1:1.3} vs1g$0", "a multiple of the 1-g stall speed", 3),
-      ...speedNames.filter((name) => name !== "vs").map((name, i) => item(place, name, "word", resultLabel(name), 4 + i)),
+      ...speedNames
+        .filter((name) => name !== "vs")
+        .map((name, i) => item(place, name, "word", resultLabel(name), 4 + i)),
     ];
   }
   const units = unitsAfterNumber(place, "speed");
   const number = /^[\d.]+$/.test(done[done.length - 1] ?? "");
-  const kinds = /(kt|kts|km\/h|m\/s|mph)$/.test(done[done.length - 1] ?? "") ? words(place, ["cas", "tas", "eas", "ias"]) : [];
+  const kinds = /(kt|kts|km\/h|m\/s|mph)$/.test(done[done.length - 1] ?? "")
+    ? words(place, ["cas", "tas", "eas", "ias"])
+    : [];
   return [...units, ...kinds, ...(number ? words(place, speedNames) : [])];
 }
 
@@ -159,14 +210,19 @@ function claims(place: CompletionPlace): readonly Completion[] {
   return results.map((name, i): Completion => {
     const spread = point?.results?.[name];
     const value = spread ? formatResult(name, spread) : null;
-    return { ...item(place, name, "value", value ?? "not known here", value ? i : 100 + i), insertText: value ? `${name} ${value}` : `${name} ` };
+    return {
+      ...item(place, name, "value", value ?? "not known here", value ? i : 100 + i),
+      insertText: value ? `${name} ${value}` : `${name} `,
+    };
   });
 }
 
 /** This point's own findings first. */
 function codes(place: CompletionPlace): readonly Completion[] {
   const own = new Set((place.result?.findings ?? []).map((one) => one.code as string));
-  return findingCodes.map((code) => item(place, code, "value", catalogue[code as FindingCode]?.title ?? "", own.has(code) ? 0 : 1));
+  return findingCodes.map((code) =>
+    item(place, code, "value", catalogue[code as FindingCode]?.title ?? "", own.has(code) ? 0 : 1),
+  );
 }
 
 /** Phases, then the subject, then conditions. */
@@ -174,7 +230,10 @@ function rowCompletions(place: CompletionPlace, done: readonly string[]): readon
   const subject = done.findIndex((word) => (subjects as readonly string[]).includes(word));
   if (subject < 0) {
     const first = done.length === 0 ? ["any", "emergency"] : [];
-    return [...words(place, [...first, ...phases], "phase"), ...(done.length > 0 ? words(place, subjects, "what the row bounds") : [])];
+    return [
+      ...words(place, [...first, ...phases], "phase"),
+      ...(done.length > 0 ? words(place, subjects, "what the row bounds") : []),
+    ];
   }
   const last = done[done.length - 1] ?? "";
   if (last === "when") return words(place, ["ifr", "vfr", "engine-out"]);

@@ -18,13 +18,15 @@ export function codeActions(note: Note, from: number, to: number): readonly Code
     // A finding of a block counts its lines from the block's first, one of the whole note from the note's.
     const base = line - finding.line;
     const fixes = [...finding.fixes.map((fix) => ({ ...fix, base })), ...joinFix(note, line, finding)];
-    return fixes.map(({ title, edits, preferred, base: first }): CodeAction => ({
-      title,
-      finding,
-      findingLine: line,
-      edits: edits.map((edit) => ({ ...edit, line: first + edit.line })),
-      preferred: preferred === true && fixes.filter((one) => one.preferred).length === 1,
-    }));
+    return fixes.map(
+      ({ title, edits, preferred, base: first }): CodeAction => ({
+        title,
+        finding,
+        findingLine: line,
+        edits: edits.map((edit) => ({ ...edit, line: first + edit.line })),
+        preferred: preferred === true && fixes.filter((one) => one.preferred).length === 1,
+      }),
+    );
   });
 }
 
@@ -36,6 +38,12 @@ function joinFix(note: Note, line: number, finding: Finding) {
   if (!block || block.start < 2) return [];
   const gap = block.start - 1;
   if (document.lineText(gap).trim() !== "" || document.blockAt(gap - 1)?.kind !== "point") return [];
-  const join: Edit = { line: gap, start: 0, end: document.lineText(gap).length, newText: "", wholeLine: true };
+  const join: Edit = {
+    line: gap,
+    start: 0,
+    end: document.lineText(gap).length,
+    newText: "",
+    wholeLine: true,
+  };
   return [{ title: "Join it to the point above", preferred: false, edits: [join], base: 0 }];
 }

@@ -1,6 +1,6 @@
 import type { BlockKind } from "../notation/block.ts";
-import type { Span } from "../notation/span.ts";
 import { parseLine } from "../notation/parseLine.ts";
+import type { Span } from "../notation/span.ts";
 import { type Keyword, type KeywordEntry, vocabulary } from "../notation/vocabulary.ts";
 import type { BlockResult, Note } from "../plan/note.ts";
 import { argumentCompletions } from "./argumentCompletions.ts";
@@ -77,9 +77,16 @@ function keywordCompletions(place: CompletionPlace): readonly Completion[] {
   }
   const lacking = lackingKeywords(result);
   const start = result === null || there.size === 0;
-  const offered = vocabulary.filter((entry) => isOffered(entry, kind, start) && (!there.has(entry.keyword) || lists(entry.keyword)));
+  const offered = vocabulary.filter(
+    (entry) => isOffered(entry, kind, start) && (!there.has(entry.keyword) || lists(entry.keyword)),
+  );
   return offered.map((entry): Completion => {
-    const rank = start && (entry.keyword === "phase" || entry.keyword === "fly") ? 0 : lacking.has(entry.keyword) ? 1 : 2;
+    const rank =
+      start && (entry.keyword === "phase" || entry.keyword === "fly")
+        ? 0
+        : lacking.has(entry.keyword)
+          ? 1
+          : 2;
     return {
       label: entry.keyword,
       kind: "keyword",
@@ -103,7 +110,19 @@ function snippetOf(entry: KeywordEntry): string {
 
 /** Clauses that may stand more than once. */
 function lists(keyword: Keyword): boolean {
-  return ["config", "contamination", "lift-mach", "buffet", "ias", "published", "must", "should", "claim", "expect", "accept"].includes(keyword);
+  return [
+    "config",
+    "contamination",
+    "lift-mach",
+    "buffet",
+    "ias",
+    "published",
+    "must",
+    "should",
+    "claim",
+    "expect",
+    "accept",
+  ].includes(keyword);
 }
 
 function blockKindAt({ result }: CompletionPlace): BlockKind {
@@ -130,5 +149,7 @@ function lackingKeywords(result: BlockResult | null): ReadonlySet<Keyword> {
   }
   if (result?.kind !== "point") return new Set();
   const { inputs } = result.point;
-  return new Set((["fly", "weight", "config", "altitude", "speed", "bank"] as const).filter((one) => !inputs.has(one)));
+  return new Set(
+    (["fly", "weight", "config", "altitude", "speed", "bank"] as const).filter((one) => !inputs.has(one)),
+  );
 }

@@ -96,13 +96,16 @@ function resultsTable(point: PointResult): string {
   const rows = shownResults.flatMap((name) => {
     const spread = point.results?.[name];
     if (!spread) return [];
-    return [`| ${name} | ${formatResult(name, spread, { spread: true })} | ${resultEntry(name).label}${referenceNote(point, name)} |`];
+    return [
+      `| ${name} | ${formatResult(name, spread, { spread: true })} | ${resultEntry(name).label}${referenceNote(point, name)} |`,
+    ];
   });
   return ["| result | value | |", "| --- | --- | --- |", ...rows].join("\n");
 }
 
 function referenceNote(point: PointResult, name: ResultName): string {
-  if (name === "va") return ": one full smooth input, one axis, one direction, no reversals; the flight manual's va governs";
+  if (name === "va")
+    return ": one full smooth input, one axis, one direction, no reversals; the flight manual's va governs";
   if (name !== "v2min" && name !== "vfto" && name !== "vref") return "";
   const reference = point.reference[name];
   if (!reference) return "";
@@ -154,7 +157,12 @@ function inputsText(point: PointResult, conditions: Conditions, uri: string): st
   };
   add("weight", formatMass(conditions.mass.nominal, reference));
   add("config", point.configuration?.name ?? "");
-  add("altitude", conditions.flightLevel ? formatFlightLevel(conditions.altitude.nominal) : formatAltitude(conditions.altitude.nominal));
+  add(
+    "altitude",
+    conditions.flightLevel
+      ? formatFlightLevel(conditions.altitude.nominal)
+      : formatAltitude(conditions.altitude.nominal),
+  );
   add("isa", `ISA ${formatDeviation(conditions.deviation.nominal)}`);
   const speeds = [
     formatSpeed(conditions.cas.nominal),
@@ -171,7 +179,9 @@ function inputsText(point: PointResult, conditions: Conditions, uri: string): st
 }
 
 function rulesText(point: PointResult, uri: string): string {
-  const rows = point.rows.map((held) => `- ${heldText(held)} *(${held.row.remark ?? "no source stated"}; ${rowPlace(held, uri)})*`);
+  const rows = point.rows.map(
+    (held) => `- ${heldText(held)} *(${held.row.remark ?? "no source stated"}; ${rowPlace(held, uri)})*`,
+  );
   if (rows.length === 0) return point.limits ? "" : `No rule is held: ${point.limitsName} cannot be used.`;
   return `Held against ${point.limitsName}:\n\n${rows.join("\n")}`;
 }
@@ -207,7 +217,9 @@ function absentText(point: PointResult): string {
 /** The cautions that belong beside these numbers. */
 function remarksText(point: PointResult, conditions: Conditions): string {
   const { card } = point;
-  const source = card?.source ? `${card.name}: ${card.source.title}${card.source.issue ? `, issue ${card.source.issue}` : ""}.` : `${card?.name}: no source stated.`;
+  const source = card?.source
+    ? `${card.name}: ${card.source.title}${card.source.issue ? `, issue ${card.source.issue}` : ""}.`
+    : `${card?.name}: no source stated.`;
   const shown = [
     conditions.ias ? null : remarks.cas,
     remarks.steady,

@@ -35,7 +35,12 @@ function symbolOf(result: BlockResult): Symbol {
       return { ...base, kind: "point", name, detail: point.aside ? "aside" : "" };
     }
     case "setting":
-      return { ...base, kind: "setting", name: block.clauses.map(({ clause }) => clause.keyword ?? "?").join(", ") || "empty", detail: "setting" };
+      return {
+        ...base,
+        kind: "setting",
+        name: block.clauses.map(({ clause }) => clause.keyword ?? "?").join(", ") || "empty",
+        detail: "setting",
+      };
     case "card":
       return {
         ...base,
@@ -54,6 +59,11 @@ function symbolOf(result: BlockResult): Symbol {
         })),
       };
     case "limits":
-      return { ...base, kind: "limits", name: result.limits.name || "limits", detail: result.limits.title ?? "limits" };
+      return {
+        ...base,
+        kind: "limits",
+        name: result.limits.name || "limits",
+        detail: result.limits.title ?? "limits",
+      };
   }
 }

@@ -36,14 +36,22 @@ export function hover(note: Note, line: number, character: number): Hover | null
 
 export function clauseAt(result: BlockResult, line: number, character: number): PlacedClause | null {
   const index = line - result.block.start;
-  return result.block.clauses.find((placed) => placed.line === index && inside(placed.clause.span, character)) ?? null;
+  return (
+    result.block.clauses.find((placed) => placed.line === index && inside(placed.clause.span, character)) ??
+    null
+  );
 }
 
 function inside(span: Span, character: number): boolean {
   return span.start <= character && character <= span.end;
 }
 
-function clauseText(result: BlockResult, placed: PlacedClause, uri: string, onKeyword: boolean): string | null {
+function clauseText(
+  result: BlockResult,
+  placed: PlacedClause,
+  uri: string,
+  onKeyword: boolean,
+): string | null {
   const { clause } = placed;
   const keyword = clause.keyword;
   if (keyword === null) return null;
@@ -55,7 +63,18 @@ function clauseText(result: BlockResult, placed: PlacedClause, uri: string, onKe
 
 /** Keywords whose own hover begins with what is computed. */
 function hasFigures(keyword: Keyword): boolean {
-  return ["weight", "burn", "altitude", "speed", "bank", "load", "path", "contamination", "claim", "config"].includes(keyword);
+  return [
+    "weight",
+    "burn",
+    "altitude",
+    "speed",
+    "bank",
+    "load",
+    "path",
+    "contamination",
+    "claim",
+    "config",
+  ].includes(keyword);
 }
 
 /** The documentation of a keyword, as completion shows it too. */
@@ -90,7 +109,10 @@ function cardText(card: Card, uri: string): string {
     return `| ${one.name} | ${stall} | ${marks} |`;
   });
   const basis = card.basis?.value;
-  const held = reference && basis ? `Stall speeds (${basis.kind}${basis.kind === "vs" ? ` ${basis.factor}` : ""}) at ${formatMass(reference, reference)}:` : "";
+  const held =
+    reference && basis
+      ? `Stall speeds (${basis.kind}${basis.kind === "vs" ? ` ${basis.factor}` : ""}) at ${formatMass(reference, reference)}:`
+      : "";
   return [
     `**${card.name}**${card.title ? ` - ${card.title}` : ""} (${where(card, uri)})`,
     held,
@@ -112,4 +134,3 @@ function limitsText(limits: Limits, uri: string): string {
     .filter(Boolean)
     .join("\n\n");
 }
-

@@ -1,12 +1,7 @@
 import type { PlacedClause } from "../notation/block.ts";
 import type { ResultName } from "../notation/vocabulary.ts";
 import type { Card } from "../plan/card.ts";
-import {
-  formatFlightLevel,
-  formatMass,
-  formatResult,
-  formatSpeed,
-} from "../plan/format.ts";
+import { formatFlightLevel, formatMass, formatResult, formatSpeed } from "../plan/format.ts";
 import type { BlockResult, Note } from "../plan/note.ts";
 import { lineOf, type Origin } from "../plan/origin.ts";
 import type { PointResult } from "../plan/point.ts";
@@ -39,7 +34,8 @@ export function inlayHints(note: Note, from: number, to: number, level: HintLeve
   if (level === "off") return [];
   const hints: Hint[] = [];
   for (const result of blocksBetween(note, from, to)) {
-    for (const hint of blockHints(note, result, level)) if (from <= hint.line && hint.line <= to) hints.push(hint);
+    for (const hint of blockHints(note, result, level))
+      if (from <= hint.line && hint.line <= to) hints.push(hint);
   }
   return hints;
 }
@@ -47,7 +43,9 @@ export function inlayHints(note: Note, from: number, to: number, level: HintLeve
 function blockHints(note: Note, result: BlockResult, level: Exclude<HintLevel, "off">): readonly Hint[] {
   switch (result.kind) {
     case "point":
-      return note.flavour === "markdown" ? markdownHints(result.point, level) : pointHints(result.point, level);
+      return note.flavour === "markdown"
+        ? markdownHints(result.point, level)
+        : pointHints(result.point, level);
     case "setting":
       return note.flavour === "markdown" ? [] : settingHints(result);
     case "card":
@@ -57,10 +55,17 @@ function blockHints(note: Note, result: BlockResult, level: Exclude<HintLevel, "
   }
 }
 
-function hintAt(point: { readonly block: BlockResult["block"] }, placed: PlacedClause, parts: readonly HintPart[]): Hint | null {
+function hintAt(
+  point: { readonly block: BlockResult["block"] },
+  placed: PlacedClause,
+  parts: readonly HintPart[],
+): Hint | null {
   if (parts.length === 0) return null;
   const [first, ...rest] = parts as [HintPart, ...HintPart[]];
-  const joined = [{ ...first, text: `≈ ${first.text}` }, ...rest.map((part) => ({ ...part, text: `, ${part.text}` }))];
+  const joined = [
+    { ...first, text: `≈ ${first.text}` },
+    ...rest.map((part) => ({ ...part, text: `, ${part.text}` })),
+  ];
   return { line: point.block.start + placed.line, character: placed.clause.span.end, parts: joined };
 }
 
@@ -71,7 +76,13 @@ function resultPart(point: PointResult, name: ResultName, lead: string): readonl
   const shown = formatResult(name, spread);
   const whole = formatResult(name, spread, { spread: true });
   const { label } = resultEntry(name);
-  return [{ text: `${lead}${shown}`, tooltip: `The ${label} here is ${whole}.`, origin: point.configuration?.origin ?? null }];
+  return [
+    {
+      text: `${lead}${shown}`,
+      tooltip: `The ${label} here is ${whole}.`,
+      origin: point.configuration?.origin ?? null,
+    },
+  ];
 }
 
 /** In place of figures that wait for a line in error: nothing moves, and nothing stale is shown. */
@@ -95,7 +106,11 @@ function pointHints(point: PointResult, level: "full" | "brief"): readonly Hint[
 }
 
 /** What stands behind a clause of a point; null where no hint ever does. */
-function clauseParts(point: PointResult, placed: PlacedClause, level: "full" | "brief"): readonly HintPart[] | null {
+function clauseParts(
+  point: PointResult,
+  placed: PlacedClause,
+  level: "full" | "brief",
+): readonly HintPart[] | null {
   const body = placed.clause.body;
   if (!body || !placed.counts) return placed.clause.keyword === "phase" ? phaseParts(point, level) : null;
   switch (body.kind) {
@@ -119,8 +134,12 @@ function clauseParts(point: PointResult, placed: PlacedClause, level: "full" | "
 function phaseParts(point: PointResult, level: "full" | "brief"): readonly HintPart[] {
   const brief = [...resultPart(point, "margin", "margin "), ...resultPart(point, "ratio", "ratio ")];
   const parts =
-    level === "full" ? [...brief, ...resultPart(point, "stall", "stall "), ...resultPart(point, "warning", "warning ")] : brief;
-  return parts.length > 0 ? parts : [{ text: "…", tooltip: "The stall is not known here; the hover says why.", origin: null }];
+    level === "full"
+      ? [...brief, ...resultPart(point, "stall", "stall "), ...resultPart(point, "warning", "warning ")]
+      : brief;
+  return parts.length > 0
+    ? parts
+    : [{ text: "…", tooltip: "The stall is not known here; the hover says why.", origin: null }];
 }
 
 function massParts(point: PointResult): readonly HintPart[] {
@@ -139,7 +158,9 @@ function altitudeParts(point: PointResult): readonly HintPart[] | null {
   const { conditions } = point;
   if (conditions?.flightLevel) return null;
   if (!conditions) return [];
-  const differs = conditions.qnh !== null && Math.abs(conditions.pressureAltitude.nominal - conditions.altitude.nominal) > 0.5;
+  const differs =
+    conditions.qnh !== null &&
+    Math.abs(conditions.pressureAltitude.nominal - conditions.altitude.nominal) > 0.5;
   if (!differs) return null;
   return [
     {
@@ -157,7 +178,11 @@ function isPlainSpeed(speed: { readonly kind: string }): boolean {
 function speedParts(point: PointResult, level: "full" | "brief"): readonly HintPart[] {
   const { conditions } = point;
   if (!conditions) return [];
-  const cas: HintPart = { text: formatSpeed(conditions.cas.nominal), tooltip: "The calibrated airspeed.", origin: null };
+  const cas: HintPart = {
+    text: formatSpeed(conditions.cas.nominal),
+    tooltip: "The calibrated airspeed.",
+    origin: null,
+  };
   if (level === "brief") return [cas];
   const tas = formatSpeed(conditions.tas.nominal, 0, { type: "tas" });
   return [cas, { text: tas, tooltip: "The true airspeed.", origin: null }];
@@ -191,7 +216,11 @@ function settingHints(result: Extract<BlockResult, { kind: "setting" }>): readon
   const flown = result.after.carried.speed?.value;
   const part: HintPart =
     flown?.kind === "cas"
-      ? { text: formatSpeed(flown.speed.nominal), tooltip: "The calibrated airspeed that goes on from here.", origin: null }
+      ? {
+          text: formatSpeed(flown.speed.nominal),
+          tooltip: "The calibrated airspeed that goes on from here.",
+          origin: null,
+        }
       : { text: "…", tooltip: "This speed is not known here.", origin: null };
   const hint = hintAt(result, placed, [part]);
   return hint ? [hint] : [];

@@ -29,10 +29,16 @@ export function cardInUse(result: BlockResult): Card | null {
 }
 
 /** What the name under the cursor names; null where no name stands there, or nothing is called so. */
-export function targetAt(note: Note, result: BlockResult, placed: PlacedClause, character: number): Target | null {
+export function targetAt(
+  note: Note,
+  result: BlockResult,
+  placed: PlacedClause,
+  character: number,
+): Target | null {
   const body = placed.clause.body;
   if (!body) return null;
-  const under = (name: Name | null | undefined) => (name && name.span.start <= character && character <= name.span.end ? name : null);
+  const under = (name: Name | null | undefined) =>
+    name && name.span.start <= character && character <= name.span.end ? name : null;
   switch (body.kind) {
     case "fly":
     case "aircraft":
@@ -49,7 +55,9 @@ export function targetAt(note: Note, result: BlockResult, placed: PlacedClause, 
     case "published":
       return namedConfiguration(cardInUse(result), under(body.config));
     case "contamination":
-      return typeof body.value === "object" && "text" in body.value ? namedContaminant(cardInUse(result), under(body.value)) : null;
+      return typeof body.value === "object" && "text" in body.value
+        ? namedContaminant(cardInUse(result), under(body.value))
+        : null;
     case "contaminant":
       return namedContaminant(cardInUse(result), under(body.name));
     default:
@@ -59,16 +67,21 @@ export function targetAt(note: Note, result: BlockResult, placed: PlacedClause, 
 
 function namedCard(note: Note, name: Name | null): Target | null {
   const found = name && note.definitions.card(name.text);
-  return name && found?.kind === "found" ? { span: name.span, definition: found.definition, origin: found.definition.origin } : null;
+  return name && found?.kind === "found"
+    ? { span: name.span, definition: found.definition, origin: found.definition.origin }
+    : null;
 }
 
 function namedLimits(note: Note, name: Name | null): Target | null {
   const found = name && note.definitions.limitsNamed(name.text);
-  return name && found?.kind === "found" ? { span: name.span, definition: found.definition, origin: found.definition.origin } : null;
+  return name && found?.kind === "found"
+    ? { span: name.span, definition: found.definition, origin: found.definition.origin }
+    : null;
 }
 
 function namedConfiguration(card: Card | null, name: Name | null): Target | null {
-  const found = name && card?.configurations.find((one) => one.name.toLowerCase() === name.text.toLowerCase());
+  const found =
+    name && card?.configurations.find((one) => one.name.toLowerCase() === name.text.toLowerCase());
   return card && found ? { span: name.span, definition: card, origin: found.origin } : null;
 }
 

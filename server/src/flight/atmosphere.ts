@@ -1,5 +1,5 @@
-import { FOOT } from "./units.ts";
 import { G0, KAPPA, LAPSE, P0, R, RHO0, T0, TROPOPAUSE } from "./constants.ts";
+import { FOOT } from "./units.ts";
 
 /** The air at one pressure altitude. */
 export interface Atmosphere {

@@ -27,7 +27,12 @@ function factor(name: keyof typeof factors, basis: StallBasis): number {
  *
  * Example: VSR 100 kt, vmca 110 kt: 121 kt.
  */
-export function leastV2min(stall: number, basis: StallBasis, vmca: number | null, stated: number | null): number {
+export function leastV2min(
+  stall: number,
+  basis: StallBasis,
+  vmca: number | null,
+  stated: number | null,
+): number {
   const byStall = (stated ?? factor("v2min", basis)) * stall;
   return vmca === null ? byStall : Math.max(byStall, MINIMUM_CONTROL_FACTOR * vmca);
 }

@@ -60,11 +60,14 @@ const noLevelFlight: StallSpeed = { kind: "no-level-flight" };
  * Stalling Speeds").
  * Example: V_c 50 kt, m = m_ref, n = 4: 100 kt.
  */
-export function stallSpeed(lift: Lift, state: LiftState & { readonly load: number }, air: Atmosphere): StallSpeed {
+export function stallSpeed(
+  lift: Lift,
+  state: LiftState & { readonly load: number },
+  air: Atmosphere,
+): StallSpeed {
   const { mass, load, liftLoss, cgFactor } = state;
   if (load === 0) return zero;
-  const square =
-    (lift.stallSpeed * cgFactor) ** 2 * ((load * mass) / lift.referenceMass / (1 - liftLoss));
+  const square = (lift.stallSpeed * cgFactor) ** 2 * ((load * mass) / lift.referenceMass / (1 - liftLoss));
   if (!(0 < square && square < Number.POSITIVE_INFINITY && liftLoss < 1)) return none;
   const sound = A0 * Math.sqrt(air.delta);
   const plain = Math.sqrt(square);
@@ -113,7 +116,8 @@ export function loadAtStall(lift: Lift, state: LiftState, eas: number, air: Atmo
   if (factor === null) return null;
   const { mass, liftLoss, cgFactor } = state;
   const load =
-    ((lift.referenceMass / mass) * (eas / lift.stallSpeed) ** 2 * factor * (1 - liftLoss)) / (cgFactor * cgFactor);
+    ((lift.referenceMass / mass) * (eas / lift.stallSpeed) ** 2 * factor * (1 - liftLoss)) /
+    (cgFactor * cgFactor);
   return Number.isFinite(load) ? load : null;
 }
 
@@ -166,7 +170,10 @@ export function warningBank(
  * Mach number at sea level at or below its first argument, so that the card's stall speed holds with
  * f = 1. Null where nothing is.
  */
-export function checkLiftMach(table: Table, lift: Pick<Lift, "stallSpeed">): "first-factor" | "stall-mach" | null {
+export function checkLiftMach(
+  table: Table,
+  lift: Pick<Lift, "stallSpeed">,
+): "first-factor" | "stall-mach" | null {
   if (Math.abs((table.values[0] ?? 0) - 1) > 1e-9) return "first-factor";
   return lift.stallSpeed / A0 <= (table.arguments[0] ?? 0) * (1 + 1e-9) ? null : "stall-mach";
 }

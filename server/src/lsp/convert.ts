@@ -1,17 +1,17 @@
 import {
-  type CodeAction as LspCodeAction,
   CodeActionKind,
-  CompletionItemKind,
   type CompletionItem,
+  CompletionItemKind,
   type Diagnostic,
   DiagnosticSeverity,
   DiagnosticTag,
   type DocumentSymbol,
   type FoldingRange,
-  type Hover as LspHover,
   type InlayHint,
   InsertTextFormat,
   type Location,
+  type CodeAction as LspCodeAction,
+  type Hover as LspHover,
   type Range,
   SymbolKind,
   type TextEdit,
@@ -118,13 +118,24 @@ export function completionOf(completion: Completion, line: number, snippets: boo
 }
 
 export function textEditOf({ line, start, end, newText, wholeLine }: Edit): TextEdit {
-  const range = wholeLine ? { start: { line, character: 0 }, end: { line: line + 1, character: 0 } } : rangeOf(line, { start, end });
+  const range = wholeLine
+    ? { start: { line, character: 0 }, end: { line: line + 1, character: 0 } }
+    : rangeOf(line, { start, end });
   return { range, newText };
 }
 
-export function codeActionOf(action: CodeAction, uri: string, diagnostics: readonly Diagnostic[]): LspCodeAction {
+export function codeActionOf(
+  action: CodeAction,
+  uri: string,
+  diagnostics: readonly Diagnostic[],
+): LspCodeAction {
   const { finding, findingLine } = action;
-  const own = diagnostics.filter((one) => one.code === finding.code && one.range.start.line === findingLine && one.range.start.character === finding.span.start);
+  const own = diagnostics.filter(
+    (one) =>
+      one.code === finding.code &&
+      one.range.start.line === findingLine &&
+      one.range.start.character === finding.span.start,
+  );
   return {
     title: action.title,
     kind: CodeActionKind.QuickFix,
@@ -148,7 +159,10 @@ export function symbolOf(symbol: Symbol, note: Note): DocumentSymbol {
     name: symbol.name,
     detail: symbol.detail,
     kind: symbolKinds[symbol.kind],
-    range: { start: { line: symbol.firstLine, character: 0 }, end: { line: symbol.lastLine, character: end } },
+    range: {
+      start: { line: symbol.firstLine, character: 0 },
+      end: { line: symbol.lastLine, character: end },
+    },
     selectionRange: rangeOf(symbol.nameLine, symbol.nameSpan),
     children: symbol.children.map((child) => symbolOf(child, note)),
   };

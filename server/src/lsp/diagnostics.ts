@@ -37,12 +37,21 @@ export function workspaceReport(
     const diagnostics = diagnosticsOf(note, pageUri);
     const id = resultId(diagnostics);
     const version = workspace.openNotes.get(note.uri)?.version ?? null;
-    if (known.get(note.uri) === id) items.push({ uri: note.uri, version, kind: DocumentDiagnosticReportKind.Unchanged, resultId: id });
-    else items.push({ uri: note.uri, version, kind: DocumentDiagnosticReportKind.Full, resultId: id, items: diagnostics });
+    if (known.get(note.uri) === id)
+      items.push({ uri: note.uri, version, kind: DocumentDiagnosticReportKind.Unchanged, resultId: id });
+    else
+      items.push({
+        uri: note.uri,
+        version,
+        kind: DocumentDiagnosticReportKind.Full,
+        resultId: id,
+        items: diagnostics,
+      });
   }
   // What a removed note was told is taken back.
   for (const uri of known.keys()) {
-    if (!seen.has(uri)) items.push({ uri, version: null, kind: DocumentDiagnosticReportKind.Full, items: [] });
+    if (!seen.has(uri))
+      items.push({ uri, version: null, kind: DocumentDiagnosticReportKind.Full, items: [] });
   }
   return { items };
 }

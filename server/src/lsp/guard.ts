@@ -13,7 +13,10 @@ export function guardWith(connection: Connection) {
         if (error instanceof ResponseError) throw error;
         const reason = error instanceof Error ? (error.stack ?? error.message) : String(error);
         connection.console.error(`${name}: ${reason}`);
-        throw new ResponseError(ErrorCodes.InternalError, `Plumbline could not answer ${name}; its log says why.`);
+        throw new ResponseError(
+          ErrorCodes.InternalError,
+          `Plumbline could not answer ${name}; its log says why.`,
+        );
       }
     };
   };

@@ -23,7 +23,18 @@ import { hover } from "../features/hover.ts";
 import { inlayHints } from "../features/inlayHints.ts";
 import { fileJson } from "../report/pointsJson.ts";
 import { type Client, clientOf } from "./client.ts";
-import { codeActionOf, completionOf, foldOf, type HintData, hintOf, hoverOf, lineEditOf, locationOf, resolvedHint, symbolOf } from "./convert.ts";
+import {
+  codeActionOf,
+  completionOf,
+  foldOf,
+  type HintData,
+  hintOf,
+  hoverOf,
+  lineEditOf,
+  locationOf,
+  resolvedHint,
+  symbolOf,
+} from "./convert.ts";
 import { diagnosticsOf, Pusher, workspaceReport } from "./diagnostics.ts";
 import { guardWith } from "./guard.ts";
 import { type PointsAnswer, type PointsParams, pointsRequest } from "./protocol.ts";
@@ -61,7 +72,9 @@ export function startServer(connection: Connection, runtime: Runtime): void {
   async function registerWhatIsOffered(): Promise<void> {
     if (client.watches) {
       const globs = ["**/*.plumb", "**/*.md", "**/*.markdown", "**/.gitignore"];
-      await connection.client.register(DidChangeWatchedFilesNotification.type, { watchers: globs.map((globPattern) => ({ globPattern })) });
+      await connection.client.register(DidChangeWatchedFilesNotification.type, {
+        watchers: globs.map((globPattern) => ({ globPattern })),
+      });
     }
     if (client.registersConfiguration) {
       await connection.client.register(DidChangeConfigurationNotification.type, { section: "plumbline" });
@@ -79,7 +92,9 @@ export function startServer(connection: Connection, runtime: Runtime): void {
   }
 
   async function updateSettings(): Promise<void> {
-    settings = client.asksConfiguration ? readSettings(await connection.workspace.getConfiguration("plumbline")) : settings;
+    settings = client.asksConfiguration
+      ? readSettings(await connection.workspace.getConfiguration("plumbline"))
+      : settings;
   }
 
   /** Asks for a refresh where something other than a note's own text changed. */
@@ -101,7 +116,12 @@ export function startServer(connection: Connection, runtime: Runtime): void {
   connection.onDidOpenTextDocument(
     guard("open", ({ textDocument: { uri, languageId, text, version } }) => {
       const before = workspace.find(uri)?.folder.definitionsVersion;
-      workspace.open(uri, text, languageId === "markdown" ? "markdown" : languageId === "plumb" ? "plumb" : flavourOf(uri), version);
+      workspace.open(
+        uri,
+        text,
+        languageId === "markdown" ? "markdown" : languageId === "plumb" ? "plumb" : flavourOf(uri),
+        version,
+      );
       afterChange(uri, before);
     }),
   );
@@ -162,7 +182,9 @@ export function startServer(connection: Connection, runtime: Runtime): void {
     guard("diagnostic", async ({ textDocument: { uri } }, token) => {
       await settled(uri, token).catch((error) => {
         if (error instanceof ResponseError && error.code === LSPErrorCodes.ContentModified) {
-          throw new ResponseError(LSPErrorCodes.ServerCancelled, "The text has changed since.", { retriggerRequest: false });
+          throw new ResponseError(LSPErrorCodes.ServerCancelled, "The text has changed since.", {
+            retriggerRequest: false,
+          });
         }
         throw error;
       });
@@ -183,7 +205,9 @@ export function startServer(connection: Connection, runtime: Runtime): void {
       await settled(uri, token);
       const note = await noteOf(uri);
       if (!note) return [];
-      return inlayHints(note, range.start.line, range.end.line, settings.hints).map((hint) => hintOf(hint, uri));
+      return inlayHints(note, range.start.line, range.end.line, settings.hints).map((hint) =>
+        hintOf(hint, uri),
+      );
     }),
   );
 
@@ -191,7 +215,8 @@ export function startServer(connection: Connection, runtime: Runtime): void {
     guard("resolve a hint", async (plain: InlayHint) => {
       const note = await noteOf((plain.data as HintData | undefined)?.uri ?? "");
       const { line, character } = plain.position;
-      const hint = note && inlayHints(note, line, line, settings.hints).find((one) => one.character === character);
+      const hint =
+        note && inlayHints(note, line, line, settings.hints).find((one) => one.character === character);
       return hint ? resolvedHint(plain, hint, pageUri) : plain;
     }),
   );
@@ -223,8 +248,15 @@ export function startServer(connection: Connection, runtime: Runtime): void {
   connection.onCodeAction(
     guard("code action", async ({ textDocument: { uri }, range, context }) => {
       const note = await noteOf(uri);
-      if (!note || (context.only && !context.only.some((kind) => kind === "" || CodeActionKind.QuickFix.startsWith(kind)))) return [];
-      return codeActions(note, range.start.line, range.end.line).map((action) => codeActionOf(action, uri, context.diagnostics));
+      if (
+        !note ||
+        (context.only &&
+          !context.only.some((kind) => kind === "" || CodeActionKind.QuickFix.startsWith(kind)))
+      )
+        return [];
+      return codeActions(note, range.start.line, range.end.line).map((action) =>
+        codeActionOf(action, uri, context.diagnostics),
+      );
     }),
   );
 
@@ -245,14 +277,18 @@ export function startServer(connection: Connection, runtime: Runtime): void {
   connection.onDocumentFormatting(
     guard("formatting", async ({ textDocument: { uri } }) => {
       const note = await noteOf(uri);
-      return note ? formatting(note, 0, note.document.lineCount - 1).map((edit) => lineEditOf(edit, note)) : [];
+      return note
+        ? formatting(note, 0, note.document.lineCount - 1).map((edit) => lineEditOf(edit, note))
+        : [];
     }),
   );
 
   connection.onDocumentRangeFormatting(
     guard("range formatting", async ({ textDocument: { uri }, range }) => {
       const note = await noteOf(uri);
-      return note ? formatting(note, range.start.line, range.end.line).map((edit) => lineEditOf(edit, note)) : [];
+      return note
+        ? formatting(note, range.start.line, range.end.line).map((edit) => lineEditOf(edit, note))
+        : [];
     }),
   );
 
@@ -272,7 +308,13 @@ function capabilities(client: Client): InitializeResult["capabilities"] {
     positionEncoding: "utf-16",
     textDocumentSync: { openClose: true, change: TextDocumentSyncKind.Incremental },
     ...(client.pulls
-      ? { diagnosticProvider: { identifier: "plumbline", interFileDependencies: true, workspaceDiagnostics: true } }
+      ? {
+          diagnosticProvider: {
+            identifier: "plumbline",
+            interFileDependencies: true,
+            workspaceDiagnostics: true,
+          },
+        }
       : {}),
     inlayHintProvider: { resolveProvider: true },
     hoverProvider: true,

@@ -141,7 +141,8 @@ export class Workspace {
   /** The innermost folder that holds the note. */
   #folderOf(uri: string): Folder | null {
     let best = "";
-    for (const base of this.#folders.keys()) if (uri.startsWith(base) && best.length < base.length) best = base;
+    for (const base of this.#folders.keys())
+      if (uri.startsWith(base) && best.length < base.length) best = base;
     return this.#folders.get(best) ?? null;
   }
 }

@@ -29,7 +29,11 @@ function readPair(cursor: Cursor, argument: QuantityKind, value: QuantityKind): 
   if (!first) return null;
   const second = readQuantity(cursor, value, { inPair: true });
   if (!second) {
-    cursor.report("bad-table", { start, end: cursor.lastEnd }, "A table holds pairs, and this one has no second number: write it, with a comma after each pair.");
+    cursor.report(
+      "bad-table",
+      { start, end: cursor.lastEnd },
+      "A table holds pairs, and this one has no second number: write it, with a comma after each pair.",
+    );
     return null;
   }
   return { argument: first, value: second, span: { start, end: cursor.lastEnd } };
@@ -48,7 +52,11 @@ function numberAfterComma(cursor: Cursor): boolean {
 function table(cursor: Cursor, argument: QuantityKind, value: QuantityKind): PairTable | null {
   const read = readTable(cursor, argument, value);
   if (read && read.pairs.length < 2 && !cursor.faulty) {
-    cursor.report("bad-table", read.span, "A table needs two pairs or more, since nothing is extrapolated: add a pair after a comma.");
+    cursor.report(
+      "bad-table",
+      read.span,
+      "A table needs two pairs or more, since nothing is extrapolated: add a pair after a comma.",
+    );
   }
   return read;
 }
@@ -82,7 +90,11 @@ function readConfig(cursor: Cursor): ClauseBody | null {
     const attribute = readAttribute(cursor, word);
     if (!attribute) return { kind: "config", name, attributes };
     if (attributes.some((one) => one.kind === attribute.kind)) {
-      cursor.report("duplicate-clause", attribute.span, `${name.text} states its ${attribute.kind} twice here: keep one.`);
+      cursor.report(
+        "duplicate-clause",
+        attribute.span,
+        `${name.text} states its ${attribute.kind} twice here: keep one.`,
+      );
     }
     attributes.push(attribute);
   }
@@ -112,7 +124,11 @@ function readAttribute(cursor: Cursor, word: string): ConfigAttribute | null {
     default: {
       const speed = readQuantity(cursor, "speed");
       if (!speed) {
-        cursor.report("missing-argument", span(), `After \`${word}\` comes a speed: write it, such as ${word} 138 kt.`);
+        cursor.report(
+          "missing-argument",
+          span(),
+          `After \`${word}\` comes a speed: write it, such as ${word} 138 kt.`,
+        );
         return null;
       }
       cursor.skip();
@@ -125,7 +141,8 @@ function readAttribute(cursor: Cursor, word: string): ConfigAttribute | null {
 function readRange(cursor: Cursor, kind: QuantityKind): Range | null {
   const read = readValue(cursor, kind);
   if (read && isRange(read)) return read;
-  if (read) cursor.report("missing-argument", read.span, "A range has two ends: write `to` and the other one.");
+  if (read)
+    cursor.report("missing-argument", read.span, "A range has two ends: write `to` and the other one.");
   return null;
 }
 
@@ -143,7 +160,11 @@ function readMass(cursor: Cursor): ClauseBody | null {
     cursor.takeWord("landing");
     landing = readQuantity(cursor, "mass");
     if (!landing) {
-      cursor.report("missing-argument", { start: read.span.start, end: cursor.lastEnd }, "After `landing` comes the greatest landing mass: write it.");
+      cursor.report(
+        "missing-argument",
+        { start: read.span.start, end: cursor.lastEnd },
+        "After `landing` comes the greatest landing mass: write it.",
+      );
       return null;
     }
   }
@@ -158,13 +179,21 @@ function readBasis(cursor: Cursor): ClauseBody | null {
   if (!vs) {
     if (cursor.word()) {
       const span = cursor.take(cursor.nameEnd(), "unread");
-      cursor.report("unexpected-text", span, "A basis is vsr, vs1g, or vs with its factor, such as `basis vs 0.94`.");
+      cursor.report(
+        "unexpected-text",
+        span,
+        "A basis is vsr, vs1g, or vs with its factor, such as `basis vs 0.94`.",
+      );
     }
     return null;
   }
   const value = readQuantity(cursor, "number");
   if (!value) {
-    cursor.report("missing-argument", vs, "The basis vs needs its factor, vs over the 1-g stall speed: 0.94 is usual for transport jets, 1.00 takes the figure as the 1-g speed. Write the one that holds.");
+    cursor.report(
+      "missing-argument",
+      vs,
+      "The basis vs needs its factor, vs over the 1-g stall speed: 0.94 is usual for transport jets, 1.00 takes the figure as the 1-g speed. Write the one that holds.",
+    );
     return null;
   }
   return { kind: "basis", basis: "vs", factor: value };
@@ -184,7 +213,8 @@ function readWing(cursor: Cursor): ClauseBody | null {
     if (word === "chord") chord = readQuantity(cursor, "length");
     else slope = readSlope(cursor);
     if (!(word === "chord" ? chord : slope)) {
-      if (at && !cursor.faulty) cursor.report("missing-argument", at, `After \`${word}\` comes its figure: write it.`);
+      if (at && !cursor.faulty)
+        cursor.report("missing-argument", at, `After \`${word}\` comes its figure: write it.`);
       return null;
     }
   }
@@ -217,9 +247,12 @@ function readSlope(cursor: Cursor): Quantity | PairTable | null {
   const per = cursor.takeWord("per");
   cursor.skip();
   if (!per || !cursor.takeWord("rad")) {
-    cursor.report("missing-unit", { start, end }, "A lift-curve slope is written per rad: write `per rad` after it.", [
-      { title: "Write per rad", edits: [{ line: 0, start: end, end, newText: per ? " rad" : " per rad" }] },
-    ]);
+    cursor.report(
+      "missing-unit",
+      { start, end },
+      "A lift-curve slope is written per rad: write `per rad` after it.",
+      [{ title: "Write per rad", edits: [{ line: 0, start: end, end, newText: per ? " rad" : " per rad" }] }],
+    );
   }
   return slope;
 }
@@ -287,7 +320,11 @@ function readSource(cursor: Cursor): ClauseBody | null {
     cursor.takeWord("from");
     from = readDate(cursor);
     if (!from) {
-      cursor.report("missing-argument", title.span, "After `from` comes the day, such as 2026-03-01: write it.");
+      cursor.report(
+        "missing-argument",
+        title.span,
+        "After `from` comes the day, such as 2026-03-01: write it.",
+      );
       return null;
     }
   }
@@ -326,4 +363,3 @@ export const cardClauses: Readonly<Record<string, ClauseReader>> = {
   "power-effect": effect("power-effect"),
   published: readPublished,
 };
-

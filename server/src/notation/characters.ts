@@ -20,7 +20,12 @@ export function isLetter(code: number): boolean {
 
 /** What a name is made of: letters of any script, digits and hyphens. */
 export function isNameCharacter(code: number): boolean {
-  return isLetter(code) || isDigit(code) || code === 45 || (0x80 <= code && unicodeDigit.test(String.fromCharCode(code)));
+  return (
+    isLetter(code) ||
+    isDigit(code) ||
+    code === 45 ||
+    (0x80 <= code && unicodeDigit.test(String.fromCharCode(code)))
+  );
 }
 
 /** A character that shows nothing and changes what is read, so that it is told and never passed over. */

@@ -47,7 +47,12 @@ export function classify(text: string, before: LineState, first: boolean, everyw
   return prose;
 }
 
-function fenceLine(text: string, at: number, mark: 96 | 126, before: Exclude<LineState, "front-matter">): Classified | null {
+function fenceLine(
+  text: string,
+  at: number,
+  mark: 96 | 126,
+  before: Exclude<LineState, "front-matter">,
+): Classified | null {
   let end = at;
   while (text.charCodeAt(end) === mark) end++;
   const length = end - at;
@@ -69,7 +74,10 @@ export function sameState(a: LineState, b: LineState): boolean {
 
 /** `| --- | :--: |`. */
 export function isDelimiterRow(text: string): boolean {
-  return /^[\s\uFEFF]*\|(\s*:?-+:?\s*\|)+\s*(:?-+:?\s*)?$/.test(text) || /^[\s\uFEFF]*\|\s*:?-+:?\s*(\|\s*:?-+:?\s*)+\|?\s*$/.test(text);
+  return (
+    /^[\s\uFEFF]*\|(\s*:?-+:?\s*\|)+\s*(:?-+:?\s*)?$/.test(text) ||
+    /^[\s\uFEFF]*\|\s*:?-+:?\s*(\|\s*:?-+:?\s*)+\|?\s*$/.test(text)
+  );
 }
 
 export function hasSecondBar(text: string): boolean {

@@ -84,9 +84,18 @@ export class Cursor {
   #invisible(): void {
     const span = this.take(this.at + 1, "unread");
     const code = this.text.charCodeAt(span.start).toString(16).toUpperCase().padStart(4, "0");
-    this.report("unexpected-text", span, `An invisible character (U+${code}) stands here and may change what is read: remove it.`, [
-      { title: "Remove the invisible character", preferred: true, edits: [{ line: 0, ...span, newText: "" }] },
-    ]);
+    this.report(
+      "unexpected-text",
+      span,
+      `An invisible character (U+${code}) stands here and may change what is read: remove it.`,
+      [
+        {
+          title: "Remove the invisible character",
+          preferred: true,
+          edits: [{ line: 0, ...span, newText: "" }],
+        },
+      ],
+    );
   }
 
   /** `( … )`, nested; one left open ends at the next `;` or the line's end. */
@@ -107,7 +116,11 @@ export class Cursor {
     const span = this.take(end, "remark");
     const close = this.text.slice(0, end).trimEnd().length;
     this.report("unclosed-remark", span, "This remark is not closed, so it ends here: write `)`.", [
-      { title: "Close the remark", preferred: true, edits: [{ line: 0, start: close, end: close, newText: ")" }] },
+      {
+        title: "Close the remark",
+        preferred: true,
+        edits: [{ line: 0, start: close, end: close, newText: ")" }],
+      },
     ]);
   }
 
@@ -115,12 +128,18 @@ export class Cursor {
   #speedKindInRemark(span: Span): void {
     const length = span.end - span.start;
     if (length < 5 || 9 < length) return;
-    const content = this.text.slice(span.start + 1, span.end - 1).trim().toLowerCase();
+    const content = this.text
+      .slice(span.start + 1, span.end - 1)
+      .trim()
+      .toLowerCase();
     const kind = /^k?([cetiCETI]as)$/.exec(content)?.[1];
     if (!kind) return;
-    this.report("remark-not-read", span, `A remark is never read, so the speed would stay calibrated: write ${kind} without the brackets, or leave it out.`, [
-      { title: `Write ${kind}`, preferred: kind !== "cas", edits: [{ line: 0, ...span, newText: kind }] },
-    ]);
+    this.report(
+      "remark-not-read",
+      span,
+      `A remark is never read, so the speed would stay calibrated: write ${kind} without the brackets, or leave it out.`,
+      [{ title: `Write ${kind}`, preferred: kind !== "cas", edits: [{ line: 0, ...span, newText: kind }] }],
+    );
   }
 
   /** The end of the run of name characters that begins here. */

@@ -29,7 +29,9 @@ export function layout(document: Document, from = 0, to = document.lineCount - 1
 function layoutBlock(block: Block): readonly string[] {
   const faulty = new Set(block.findings.map((finding) => finding.line));
   const names = block.kind === "card" ? alignedNames(block, faulty) : [];
-  return block.lines.map((line, index) => (faulty.has(index) ? line.text : layoutLine(line, names[index] ?? 0)));
+  return block.lines.map((line, index) =>
+    faulty.has(index) ? line.text : layoutLine(line, names[index] ?? 0),
+  );
 }
 
 /** For each line of a run of `config` lines, the width that its name is padded to; 0 elsewhere. */
@@ -91,14 +93,24 @@ function layoutLine(line: BarLine, nameWidth: number): string {
 /** The blank between two neighbours of one clause. */
 function gap(left: Token, right: Token, text: string, clause: string): string {
   if (right.kind === "comma") return "";
-  if (left.kind === "sign" && left.end - left.start === 1 && text[left.start] !== "±" && !isOffset(left, text, clause)) return "";
+  if (
+    left.kind === "sign" &&
+    left.end - left.start === 1 &&
+    text[left.start] !== "±" &&
+    !isOffset(left, text, clause)
+  )
+    return "";
   if (right.kind === "unit" && text[right.start] === "°" && left.kind === "number") return "";
   return " ";
 }
 
 /** The sign of a speed expression stands between blanks: `vref + 5 kt`. Any other belongs to its number. */
 function isOffset(sign: Token, text: string, clause: string): boolean {
-  return clause === "speed" && /[a-z0-9]\s*$/i.test(text.slice(0, sign.start)) && !/^speed$/i.test(lastWord(text.slice(0, sign.start)));
+  return (
+    clause === "speed" &&
+    /[a-z0-9]\s*$/i.test(text.slice(0, sign.start)) &&
+    !/^speed$/i.test(lastWord(text.slice(0, sign.start)))
+  );
 }
 
 function lastWord(text: string): string {

@@ -60,12 +60,22 @@ function readPhases(cursor: Cursor) {
   if (typed && !(subjects as readonly string[]).includes(typed)) {
     const span = cursor.take(cursor.at + typed.length, "unread");
     const nearest = nearestWord(typed, rowPhases);
-    cursor.report("unknown-phase", span, `${typed} is no phase: write any, emergency, or ${phases.join(", ").replace(/, ([^,]*)$/, " or $1")}.`, nearest ? [{ title: `Write ${nearest}`, preferred: true, edits: [{ line: 0, ...span, newText: nearest }] }] : []);
+    cursor.report(
+      "unknown-phase",
+      span,
+      `${typed} is no phase: write any, emergency, or ${phases.join(", ").replace(/, ([^,]*)$/, " or $1")}.`,
+      nearest
+        ? [{ title: `Write ${nearest}`, preferred: true, edits: [{ line: 0, ...span, newText: nearest }] }]
+        : [],
+    );
   } else if (typed) {
     const at = cursor.at;
-    cursor.report("missing-argument", { start: at, end: at + typed.length }, "A row says in which phases it holds: write `any`, or the phases, before the subject.", [
-      { title: "Write any", edits: [{ line: 0, start: at, end: at, newText: "any " }] },
-    ]);
+    cursor.report(
+      "missing-argument",
+      { start: at, end: at + typed.length },
+      "A row says in which phases it holds: write `any`, or the phases, before the subject.",
+      [{ title: "Write any", edits: [{ line: 0, start: at, end: at, newText: "any " }] }],
+    );
   }
   return null;
 }
@@ -79,7 +89,14 @@ function readSubject(cursor: Cursor) {
   if (typed) {
     const span = cursor.take(cursor.at + typed.length, "unread");
     const nearest = nearestWord(typed, subjects);
-    cursor.report("unexpected-text", span, `${typed} is nothing a row can bound: write ${subjects.join(", ").replace(/, ([^,]*)$/, " or $1")}.`, nearest ? [{ title: `Write ${nearest}`, preferred: true, edits: [{ line: 0, ...span, newText: nearest }] }] : []);
+    cursor.report(
+      "unexpected-text",
+      span,
+      `${typed} is nothing a row can bound: write ${subjects.join(", ").replace(/, ([^,]*)$/, " or $1")}.`,
+      nearest
+        ? [{ title: `Write ${nearest}`, preferred: true, edits: [{ line: 0, ...span, newText: nearest }] }]
+        : [],
+    );
   }
   return null;
 }
@@ -97,11 +114,19 @@ function readBound(cursor: Cursor, subject: Subject) {
     const at = cursor.takeWord("vs");
     vs = readQuantity(cursor, "number");
     if (at && !vs) {
-      cursor.report("missing-argument", at, "After `vs` comes the figure for cards on the vs basis: write it.");
+      cursor.report(
+        "missing-argument",
+        at,
+        "After `vs` comes the figure for cards on the vs basis: write it.",
+      );
       return null;
     }
     if (at && subject !== "ratio") {
-      cursor.report("unexpected-text", at, "Only a ratio has another figure for cards on the vs basis: leave `vs` out.");
+      cursor.report(
+        "unexpected-text",
+        at,
+        "Only a ratio has another figure for cards on the vs basis: leave `vs` out.",
+      );
     }
   }
   cursor.skip();
@@ -109,7 +134,8 @@ function readBound(cursor: Cursor, subject: Subject) {
     const at = cursor.takeWord("or");
     cursor.skip();
     rateOne = cursor.takeWord("rate-one") !== null;
-    if (!rateOne && at) cursor.report("missing-argument", at, "After `or` only `rate-one` may follow: write it.");
+    if (!rateOne && at)
+      cursor.report("missing-argument", at, "After `or` only `rate-one` may follow: write it.");
     else if (at && subject !== "bank") {
       cursor.report("unexpected-text", at, "Only a bank can be held to rate one: leave `or rate-one` out.");
     }
@@ -137,7 +163,11 @@ function readCondition(cursor: Cursor, word: string, start: number): RowConditio
       cursor.takeWord(word);
       const level = readQuantity(cursor, "altitude");
       if (!level) {
-        cursor.report("missing-argument", span(), `After \`${word}\` comes a level, such as FL250 or 10000 ft: write it.`);
+        cursor.report(
+          "missing-argument",
+          span(),
+          `After \`${word}\` comes a level, such as FL250 or 10000 ft: write it.`,
+        );
         return null;
       }
       return { kind: word, level, span: span() };
@@ -147,7 +177,11 @@ function readCondition(cursor: Cursor, word: string, start: number): RowConditio
       cursor.skip();
       const found = (["ifr", "vfr", "engine-out"] as const).find((one) => cursor.takeWord(one));
       if (!found) {
-        cursor.report("missing-argument", span(), "After `when` comes ifr, vfr or engine-out: write one of them.");
+        cursor.report(
+          "missing-argument",
+          span(),
+          "After `when` comes ifr, vfr or engine-out: write one of them.",
+        );
         return null;
       }
       return { kind: found, span: span() };
@@ -177,7 +211,11 @@ function readLimits(cursor: Cursor): ClauseBody | null {
     const at = cursor.takeWord("from");
     from = readName(cursor);
     if (!from && at) {
-      cursor.report("missing-argument", at, "After `from` comes the name of the limits whose rows are taken: write it.");
+      cursor.report(
+        "missing-argument",
+        at,
+        "After `from` comes the name of the limits whose rows are taken: write it.",
+      );
       return null;
     }
   }
@@ -189,4 +227,3 @@ export const limitsClauses: Readonly<Record<string, ClauseReader>> = {
   must: readRow("must"),
   should: readRow("should"),
 };
-

@@ -11,14 +11,22 @@ export function makeBlock(lines: readonly BarLine[], start: number): Block {
   const findings: TextFinding[] = [];
   const placed: { line: number; clause: Clause; counts: boolean }[] = [];
   lines.forEach((line, index) => {
-    for (const finding of line.findings) findings.push(index === 0 ? finding : { ...finding, line: index, fixes: onLine(finding.fixes, index) });
-    for (const clause of line.clauses) placed.push({ line: index, clause, counts: !clause.faulty && clause.body !== null });
+    for (const finding of line.findings)
+      findings.push(index === 0 ? finding : { ...finding, line: index, fixes: onLine(finding.fixes, index) });
+    for (const clause of line.clauses)
+      placed.push({ line: index, clause, counts: !clause.faulty && clause.body !== null });
   });
   for (const one of placed) if (one.counts) one.counts = checkPlace(kind, one, placed, findings);
   checkTwice(kind, placed, findings);
   if (kind === "point") checkOpen(placed, findings);
   if (kind === "setting") checkNeedsPhase(placed, lines, findings);
-  return { kind, lines, clauses: placed, findings: findings.length > 0 ? sorted(findings) : noFindings, start };
+  return {
+    kind,
+    lines,
+    clauses: placed,
+    findings: findings.length > 0 ? sorted(findings) : noFindings,
+    start,
+  };
 }
 
 function sorted(findings: TextFinding[]): readonly TextFinding[] {
@@ -73,20 +81,46 @@ const blockNames: Readonly<Record<BlockKind, string>> = {
 };
 
 /** Clauses whose absence of a phase has its own finding. */
-const pointOnly = new Set<Keyword>(["bank", "load", "path", "gust", "shear", "decel", "aside", "claim", "expect", "accept", "emergency"]);
+const pointOnly = new Set<Keyword>([
+  "bank",
+  "load",
+  "path",
+  "gust",
+  "shear",
+  "decel",
+  "aside",
+  "claim",
+  "expect",
+  "accept",
+  "emergency",
+]);
 
 /** False, after a finding, where the clause stands in a block of another kind. */
-function checkPlace(kind: BlockKind, { line, clause }: PlacedClause, placed: readonly PlacedClause[], findings: TextFinding[]): boolean {
+function checkPlace(
+  kind: BlockKind,
+  { line, clause }: PlacedClause,
+  placed: readonly PlacedClause[],
+  findings: TextFinding[],
+): boolean {
   const keyword = clause.keyword as Keyword;
   const first = placed[0]?.clause === clause;
   if (blocksOf(clause).includes(kind)) {
     // What names a card or limits begins the block, and does so once.
     if ((keyword !== "aircraft" && keyword !== "limits") || first) return true;
-    findings.push(misplaced(line, clause, `\`${keyword}\` begins ${keyword === "aircraft" ? "a card" : "limits"} and stands first: leave a blank line before it.`, [blankLineBefore(line)]));
+    findings.push(
+      misplaced(
+        line,
+        clause,
+        `\`${keyword}\` begins ${keyword === "aircraft" ? "a card" : "limits"} and stands first: leave a blank line before it.`,
+        [blankLineBefore(line)],
+      ),
+    );
     return false;
   }
   if (kind === "setting" && pointOnly.has(keyword)) return true;
-  findings.push(misplaced(line, clause, misplacedMessage(kind, keyword, clause), misplacedFixes(kind, line, clause)));
+  findings.push(
+    misplaced(line, clause, misplacedMessage(kind, keyword, clause), misplacedFixes(kind, line, clause)),
+  );
   return false;
 }
 
@@ -95,22 +129,30 @@ function misplaced(line: number, clause: Clause, message: string, fixes: readonl
 }
 
 function misplacedMessage(kind: BlockKind, keyword: Keyword, clause: Clause): string {
-  const name = clause.body && "name" in clause.body && typeof clause.body.name === "object" ? clause.body.name.text : "NAME";
+  const name =
+    clause.body && "name" in clause.body && typeof clause.body.name === "object"
+      ? clause.body.name.text
+      : "NAME";
   if (kind === "point" || kind === "setting") {
     if (keyword === "aircraft") return `\`aircraft\` begins a card; to use one here write \`fly ${name}\`.`;
     if (keyword === "limits") return `\`limits\` begins limits; to use them here write \`under ${name}\`.`;
-    if (keyword === "config") return "A stall speed, a load range or a flap speed belongs to the card's `config`; here only the name stands.";
+    if (keyword === "config")
+      return "A stall speed, a load range or a flap speed belongs to the card's `config`; here only the name stands.";
   }
-  if (kind === "card" && keyword === "phase") return "A card has no phase: leave a blank line before it, and it begins a point.";
+  if (kind === "card" && keyword === "phase")
+    return "A card has no phase: leave a blank line before it, and it begins a point.";
   const home = blocksOf(clause).map((one) => blockNames[one]);
-  const places = home.length < 2 ? (home[0] ?? "") : `${home.slice(0, -1).join(", ")} or ${home[home.length - 1]}`;
+  const places =
+    home.length < 2 ? (home[0] ?? "") : `${home.slice(0, -1).join(", ")} or ${home[home.length - 1]}`;
   return `\`${keyword}\` belongs to ${places}, and this block is ${blockNames[kind]}: move it there, or leave a blank line before it.`;
 }
 
 function misplacedFixes(kind: BlockKind, line: number, clause: Clause): Fix[] {
   const meant = clause.keyword === "aircraft" ? "fly" : clause.keyword === "limits" ? "under" : null;
   if ((kind === "point" || kind === "setting") && meant) {
-    return [{ title: `Write ${meant}`, preferred: true, edits: [{ line, ...clause.keywordSpan, newText: meant }] }];
+    return [
+      { title: `Write ${meant}`, preferred: true, edits: [{ line, ...clause.keywordSpan, newText: meant }] },
+    ];
   }
   return line > 0 ? [blankLineBefore(line)] : [];
 }
@@ -157,7 +199,11 @@ function identity(kind: BlockKind, clause: Clause): string | null {
 }
 
 /** A clause given twice is an error, and neither counts. */
-function checkTwice(kind: BlockKind, placed: { line: number; clause: Clause; counts: boolean }[], findings: TextFinding[]): void {
+function checkTwice(
+  kind: BlockKind,
+  placed: { line: number; clause: Clause; counts: boolean }[],
+  findings: TextFinding[],
+): void {
   if (!anyTwice(placed)) return;
   const seen = new Map<string, (typeof placed)[number]>();
   const known = blockKeywords[kind];
@@ -186,7 +232,8 @@ function anyTwice(placed: readonly PlacedClause[]): boolean {
   for (let i = 1; i < placed.length; i++) {
     const keyword = alike((placed[i] as PlacedClause).clause.keyword);
     if (keyword === null) continue;
-    for (let j = 0; j < i; j++) if (alike((placed[j] as PlacedClause).clause.keyword) === keyword) return true;
+    for (let j = 0; j < i; j++)
+      if (alike((placed[j] as PlacedClause).clause.keyword) === keyword) return true;
   }
   return false;
 }
@@ -208,17 +255,31 @@ function startsLine(placed: readonly PlacedClause[], one: PlacedClause): boolean
 
 function twiceMessage(clause: Clause, before: PlacedClause, line: number): string {
   const keyword = clause.keyword as Keyword;
-  if (keyword === "phase") return "A block is one moment of the plan and this is its second phase; a blank line before it begins a new point.";
-  const where = before.line === line ? "on this line" : `${line - before.line} line${line - before.line === 1 ? "" : "s"} above`;
+  if (keyword === "phase")
+    return "A block is one moment of the plan and this is its second phase; a blank line before it begins a new point.";
+  const where =
+    before.line === line
+      ? "on this line"
+      : `${line - before.line} line${line - before.line === 1 ? "" : "s"} above`;
   const first = before.clause.keyword;
-  if (first !== keyword) return `\`${keyword}\` and \`${first}\` (${where}) state one thing twice, so neither counts: keep one.`;
+  if (first !== keyword)
+    return `\`${keyword}\` and \`${first}\` (${where}) state one thing twice, so neither counts: keep one.`;
   return `\`${keyword}\` is stated a second time (first ${where}), so neither counts: keep one.`;
 }
 
 function isUnknown(body: ClauseBody | null): boolean {
   if (!body) return false;
-  if (body.kind === "speed") return body.speed.kind === "unknown" || (body.speed.kind === "mach" && body.speed.value.kind === "unknown");
-  return "value" in body && typeof body.value === "object" && body.value !== null && "kind" in body.value && body.value.kind === "unknown";
+  if (body.kind === "speed")
+    return (
+      body.speed.kind === "unknown" || (body.speed.kind === "mach" && body.speed.value.kind === "unknown")
+    );
+  return (
+    "value" in body &&
+    typeof body.value === "object" &&
+    body.value !== null &&
+    "kind" in body.value &&
+    body.value.kind === "unknown"
+  );
 }
 
 function isSweep(body: ClauseBody | null): boolean {
@@ -228,11 +289,20 @@ function isSweep(body: ClauseBody | null): boolean {
     if (speed.kind === "multiple") return speed.factor.kind === "sweep";
     return (speed.kind === "mach" || speed.kind === "airspeed") && speed.value.kind === "sweep";
   }
-  return "value" in body && typeof body.value === "object" && body.value !== null && "kind" in body.value && body.value.kind === "sweep";
+  return (
+    "value" in body &&
+    typeof body.value === "object" &&
+    body.value !== null &&
+    "kind" in body.value &&
+    body.value.kind === "sweep"
+  );
 }
 
 /** One unknown and one sweep to a point. */
-function checkOpen(placed: { line: number; clause: Clause; counts: boolean }[], findings: TextFinding[]): void {
+function checkOpen(
+  placed: { line: number; clause: Clause; counts: boolean }[],
+  findings: TextFinding[],
+): void {
   let open = 0;
   for (const { clause } of placed) if (isUnknown(clause.body) || isSweep(clause.body)) open++;
   if (open < 2) return;
@@ -240,14 +310,32 @@ function checkOpen(placed: { line: number; clause: Clause; counts: boolean }[], 
     if (found.length < 2) return;
     for (const one of found) one.counts = false;
     for (const one of found.slice(1)) {
-      findings.push({ code, line: one.line, span: one.clause.span, message: `A point has one ${what}, and this is its second: state a value here, or make it another point.`, fixes: [] });
+      findings.push({
+        code,
+        line: one.line,
+        span: one.clause.span,
+        message: `A point has one ${what}, and this is its second: state a value here, or make it another point.`,
+        fixes: [],
+      });
     }
   };
-  tell("two-unknowns", placed.filter((one) => one.counts && isUnknown(one.clause.body)), "`?`");
-  tell("two-sweeps", placed.filter((one) => one.counts && isSweep(one.clause.body)), "sweep");
+  tell(
+    "two-unknowns",
+    placed.filter((one) => one.counts && isUnknown(one.clause.body)),
+    "`?`",
+  );
+  tell(
+    "two-sweeps",
+    placed.filter((one) => one.counts && isSweep(one.clause.body)),
+    "sweep",
+  );
 }
 
-function checkNeedsPhase(placed: { line: number; clause: Clause; counts: boolean }[], lines: readonly BarLine[], findings: TextFinding[]): void {
+function checkNeedsPhase(
+  placed: { line: number; clause: Clause; counts: boolean }[],
+  lines: readonly BarLine[],
+  findings: TextFinding[],
+): void {
   const needing = placed.filter((one) => one.clause.keyword !== null && pointOnly.has(one.clause.keyword));
   const first = needing[0];
   if (!first) return;
@@ -259,7 +347,12 @@ function checkNeedsPhase(placed: { line: number; clause: Clause; counts: boolean
     line: first.line,
     span: first.clause.span,
     message: `\`${first.clause.keyword}\` belongs to a point, and this block has no phase: write \`phase\` and the phase, or leave out the blank line above to join it to that block.`,
-    fixes: [{ title: "Write phase", preferred: true, edits: [{ line: last, start: end, end, newText: "; phase " }] }],
+    fixes: [
+      {
+        title: "Write phase",
+        preferred: true,
+        edits: [{ line: last, start: end, end, newText: "; phase " }],
+      },
+    ],
   });
 }
-

@@ -65,11 +65,14 @@ export function readNumber(cursor: Cursor): ReadNumber | null {
     end++;
   }
   cursor.pass(end, "number");
-  const size = decimals === 0 && end - first < 10 ? integer(text, first, end) : Number(text.slice(first, end));
+  const size =
+    decimals === 0 && end - first < 10 ? integer(text, first, end) : Number(text.slice(first, end));
   const value = negative ? -size : size;
   const span = { start, end };
-  if (text.charCodeAt(end) === 44 && isDigit(text.charCodeAt(end + 1))) commaNumber(cursor, first, text.slice(first, end));
-  else if (text.charCodeAt(end) === 39 && isDigit(text.charCodeAt(end + 1))) groupedNumber(cursor, first, text.slice(first, end), end + 1);
+  if (text.charCodeAt(end) === 44 && isDigit(text.charCodeAt(end + 1)))
+    commaNumber(cursor, first, text.slice(first, end));
+  else if (text.charCodeAt(end) === 39 && isDigit(text.charCodeAt(end + 1)))
+    groupedNumber(cursor, first, text.slice(first, end), end + 1);
   return { value: value === 0 ? 0 : value, decimals, signed, span };
 }
 
@@ -89,12 +92,17 @@ function commaNumber(cursor: Cursor, first: number, before: string): void {
   let end = cursor.at;
   while (text.charCodeAt(end) === 44 && isDigit(text.charCodeAt(end + 1))) {
     end++;
-    while (isDigit(text.charCodeAt(end)) || (text.charCodeAt(end) === 46 && isDigit(text.charCodeAt(end + 1)))) end++;
+    while (
+      isDigit(text.charCodeAt(end)) ||
+      (text.charCodeAt(end) === 46 && isDigit(text.charCodeAt(end + 1)))
+    )
+      end++;
   }
   const span = { start: first, end };
   const written = text.slice(first, end);
   const groups = written.split(",");
-  const asGroups = groups.slice(1).every((group) => /^\d{3}(\.\d+)?$/.test(group)) && /^\d{1,3}$/.test(before);
+  const asGroups =
+    groups.slice(1).every((group) => /^\d{3}(\.\d+)?$/.test(group)) && /^\d{1,3}$/.test(before);
   const asDecimal = groups.length === 2 && !written.includes(".");
   cursor.take(end, "unread");
   const whole = written.replaceAll(",", "");
@@ -102,18 +110,26 @@ function commaNumber(cursor: Cursor, first: number, before: string): void {
   const after = unitAhead(cursor);
   if (asGroups && asDecimal) {
     const plain = String(Number(decimal));
-    cursor.report("ambiguous-number", span, `Is ${written}${after} ${whole}${after} or ${plain}${after}? Choose one.`, [
-      replace(span, whole),
-      replace(span, plain),
-    ]);
+    cursor.report(
+      "ambiguous-number",
+      span,
+      `Is ${written}${after} ${whole}${after} or ${plain}${after}? Choose one.`,
+      [replace(span, whole), replace(span, plain)],
+    );
   } else if (asGroups) {
-    cursor.report("ambiguous-number", span, `${written} is not read, for digits stand without groups: write ${whole}.`, [
-      { ...replace(span, whole), preferred: true },
-    ]);
+    cursor.report(
+      "ambiguous-number",
+      span,
+      `${written} is not read, for digits stand without groups: write ${whole}.`,
+      [{ ...replace(span, whole), preferred: true }],
+    );
   } else if (asDecimal) {
-    cursor.report("ambiguous-number", span, `${written} is not read, for the decimal mark is a point: write ${decimal}.`, [
-      { ...replace(span, decimal), preferred: true },
-    ]);
+    cursor.report(
+      "ambiguous-number",
+      span,
+      `${written} is not read, for the decimal mark is a point: write ${decimal}.`,
+      [{ ...replace(span, decimal), preferred: true }],
+    );
   } else {
     cursor.report("bad-quantity", span, `${written} is no number: write digits with at most one point.`);
   }
@@ -128,9 +144,12 @@ function groupedNumber(cursor: Cursor, first: number, before: string, from: numb
   const span = { start: first, end };
   cursor.take(end, "unread");
   const whole = before + rest[0];
-  cursor.report("ambiguous-number", span, `${text.slice(first, end)} is not read, for digits stand without groups: write ${whole}.`, [
-    { ...replace(span, whole), preferred: true },
-  ]);
+  cursor.report(
+    "ambiguous-number",
+    span,
+    `${text.slice(first, end)} is not read, for digits stand without groups: write ${whole}.`,
+    [{ ...replace(span, whole), preferred: true }],
+  );
 }
 
 function replace(span: Span, newText: string): Fix {
@@ -150,13 +169,23 @@ function unitEnd(cursor: Cursor): number {
     const code = text.charCodeAt(end);
     if (code === 0xb0 || code === 37 || code === 0xb2 || isLetter(code)) end++;
     else if (code === 47 && end > cursor.at) end++;
-    else if (code === 50 && end > cursor.at && !isDigit(text.charCodeAt(end + 1)) && isLetter(text.charCodeAt(end - 1))) end++;
+    else if (
+      code === 50 &&
+      end > cursor.at &&
+      !isDigit(text.charCodeAt(end + 1)) &&
+      isLetter(text.charCodeAt(end - 1))
+    )
+      end++;
     else return end;
   }
 }
 
 /** The word where a unit is due, and the unit it spells. */
-function unitHere(cursor: Cursor): { readonly end: number; readonly word: string; readonly unit: Unit | null } {
+function unitHere(cursor: Cursor): {
+  readonly end: number;
+  readonly word: string;
+  readonly unit: Unit | null;
+} {
   let end = unitEnd(cursor);
   let word = cursor.text.slice(cursor.at, end);
   let unit = unitOf(word);
@@ -180,7 +209,11 @@ export interface QuantityOptions {
  * Reads a number and its unit. Null, after a finding, where there is none; a quantity with a wrong or
  * missing unit is told and given with the unit null.
  */
-export function readQuantity(cursor: Cursor, kind: QuantityKind, options: QuantityOptions = {}): Quantity | null {
+export function readQuantity(
+  cursor: Cursor,
+  kind: QuantityKind,
+  options: QuantityOptions = {},
+): Quantity | null {
   cursor.skip();
   if (kind === "altitude") {
     const level = readFlightLevel(cursor);
@@ -204,12 +237,24 @@ export function readQuantity(cursor: Cursor, kind: QuantityKind, options: Quanti
     cursor.report("wrong-unit", span, wrongUnit(kind, word, unit), wrongUnitFixes(kind, span, unit));
     return quantity(cursor, number, null);
   }
-  if (!unit && word && !rule.optional && !keywordOf(cursor.text.slice(cursor.at, cursor.nameEnd())) && !isDueWord(cursor)) {
+  if (
+    !unit &&
+    word &&
+    !rule.optional &&
+    !keywordOf(cursor.text.slice(cursor.at, cursor.nameEnd())) &&
+    !isDueWord(cursor)
+  ) {
     const span = cursor.take(end, "unread");
-    cursor.report("wrong-unit", span, unknownUnit(kind, word), word.toLowerCase().startsWith("ton") ? tonFixes(span) : unitFixes(kind, span));
+    cursor.report(
+      "wrong-unit",
+      span,
+      unknownUnit(kind, word),
+      word.toLowerCase().startsWith("ton") ? tonFixes(span) : unitFixes(kind, span),
+    );
     return quantity(cursor, number, null);
   }
-  if (!rule.optional && !options.unitLater && !(cursor.faulty && !faultyBefore)) missingUnit(cursor, kind, number, before);
+  if (!rule.optional && !options.unitLater && !(cursor.faulty && !faultyBefore))
+    missingUnit(cursor, kind, number, before);
   return quantity(cursor, number, null);
 }
 
@@ -230,7 +275,39 @@ function isAhead(_cursor: Cursor, word: string): boolean {
   return word === "";
 }
 
-const dueWords = new Set(["to", "by", "for", "within", "or", "when", "above", "below", "after", "left", "right", "per", "from", "because", "until", "cas", "eas", "tas", "ias", "chord", "slope", "landing", "vs", "vs1g", "stall", "warning", "v2min", "vfto", "vref", "va", "rain"]);
+const dueWords = new Set([
+  "to",
+  "by",
+  "for",
+  "within",
+  "or",
+  "when",
+  "above",
+  "below",
+  "after",
+  "left",
+  "right",
+  "per",
+  "from",
+  "because",
+  "until",
+  "cas",
+  "eas",
+  "tas",
+  "ias",
+  "chord",
+  "slope",
+  "landing",
+  "vs",
+  "vs1g",
+  "stall",
+  "warning",
+  "v2min",
+  "vfto",
+  "vref",
+  "va",
+  "rain",
+]);
 
 function isDueWord(cursor: Cursor): boolean {
   return dueWords.has(cursor.word());
@@ -261,8 +338,18 @@ function readFlightLevel(cursor: Cursor): Quantity | null {
     if (digits.length < 3) {
       const tenfold = `${digits}0`.padStart(3, "0");
       const readings = tenfold === padded || tenfold.length > 3 ? [padded] : [padded, tenfold];
-      cursor.report("ambiguous-number", span, `A flight level has three digits: is FL${digits} ${readings.map((one) => `FL${one}`).join(" or ")}? Choose one.`, readings.map((one) => replace(span, `FL${one}`)));
-    } else cursor.report("ambiguous-number", span, `A flight level has three digits, and FL${digits} has ${digits.length}: write FL and three digits.`);
+      cursor.report(
+        "ambiguous-number",
+        span,
+        `A flight level has three digits: is FL${digits} ${readings.map((one) => `FL${one}`).join(" or ")}? Choose one.`,
+        readings.map((one) => replace(span, `FL${one}`)),
+      );
+    } else
+      cursor.report(
+        "ambiguous-number",
+        span,
+        `A flight level has three digits, and FL${digits} has ${digits.length}: write FL and three digits.`,
+      );
     return level(span, Number(digits));
   }
   cursor.take(end, "number");
@@ -290,7 +377,12 @@ function threeDecimals(cursor: Cursor, number: ReadNumber, unit: Unit): void {
   const span = { start: number.span.end - digits.length, end: number.span.end };
   const whole = String(Number(digits.replace(".", "")));
   const plain = String(Number(digits)).includes(".") ? String(Number(digits)) : `${Number(digits)}`;
-  cursor.report("ambiguous-number", span, `Is ${digits} ${unit} ${whole} ${unit} or ${plain} ${unit}? Choose one.`, [replace(span, whole), replace(span, plain)]);
+  cursor.report(
+    "ambiguous-number",
+    span,
+    `Is ${digits} ${unit} ${whole} ${unit} or ${plain} ${unit}? Choose one.`,
+    [replace(span, whole), replace(span, plain)],
+  );
 }
 
 function wrongUnit(kind: QuantityKind, word: string, unit: Unit): string {
@@ -321,7 +413,9 @@ function wrongUnitFixes(kind: QuantityKind, span: Span, unit: Unit): Fix[] {
 }
 
 function unitFixes(kind: QuantityKind, span: Span): Fix[] {
-  return unitRule(kind).units.filter((unit) => unit !== "FL").map((unit) => replace(span, unit));
+  return unitRule(kind)
+    .units.filter((unit) => unit !== "FL")
+    .map((unit) => replace(span, unit));
 }
 
 function missingUnit(cursor: Cursor, kind: QuantityKind, number: ReadNumber, at: number): void {
@@ -331,14 +425,23 @@ function missingUnit(cursor: Cursor, kind: QuantityKind, number: ReadNumber, at:
   const readings = choices.slice(0, 3).map((unit) => `${written} ${unit}`);
   const subject = noun.replace(/^an? /, "");
   const name = subject.charAt(0).toUpperCase() + subject.slice(1);
-  cursor.report("missing-unit", number.span, `${name} ${written} of what? Write ${orList(readings)}.`, choices.map((unit): Fix => ({
-    title: `Write ${written} ${unit}`,
-    edits: [{ line: 0, start: at, end: at, newText: ` ${unit}` }],
-  })));
+  cursor.report(
+    "missing-unit",
+    number.span,
+    `${name} ${written} of what? Write ${orList(readings)}.`,
+    choices.map(
+      (unit): Fix => ({
+        title: `Write ${written} ${unit}`,
+        edits: [{ line: 0, start: at, end: at, newText: ` ${unit}` }],
+      }),
+    ),
+  );
 }
 
 function orList(items: readonly string[]): string {
-  return items.length < 2 ? (items[0] ?? "") : `${items.slice(0, -1).join(", ")} or ${items[items.length - 1]}`;
+  return items.length < 2
+    ? (items[0] ?? "")
+    : `${items.slice(0, -1).join(", ")} or ${items[items.length - 1]}`;
 }
 
 /** `+- NUMBER [UNIT]`. */
@@ -351,7 +454,11 @@ export function readTolerance(cursor: Cursor, kind: QuantityKind): Tolerance | n
   cursor.skip();
   const size = readQuantity(cursor, kind === "altitude" ? "altitude" : kind, { unitLater: true });
   if (!size || size.signed) {
-    cursor.report("bad-quantity", { start, end: cursor.lastEnd }, "A tolerance is a number after +-, without a sign of its own: write it, such as +- 0.4 t.");
+    cursor.report(
+      "bad-quantity",
+      { start, end: cursor.lastEnd },
+      "A tolerance is a number after +-, without a sign of its own: write it, such as +- 0.4 t.",
+    );
     return null;
   }
   return { value: size.value, unit: size.unit, span: { start, end: size.span.end } };
@@ -371,7 +478,12 @@ export function readValue(cursor: Cursor, kind: QuantityKind): Value | Range | n
 }
 
 /** The quantity with its unit, which another part of the value may have stated; told where none did. */
-function needUnit(cursor: Cursor, kind: QuantityKind, own: Quantity, others: readonly (Unit | null)[]): Quantity {
+function needUnit(
+  cursor: Cursor,
+  kind: QuantityKind,
+  own: Quantity,
+  others: readonly (Unit | null)[],
+): Quantity {
   if (own.unit || unitRule(kind).optional) return own;
   const stated = others.find((unit) => unit !== null && unit !== "FL");
   if (stated) return { ...own, unit: stated };
@@ -384,7 +496,11 @@ function readSweep(cursor: Cursor, kind: QuantityKind, from: Quantity): Sweep | 
   cursor.skip();
   const to = readQuantity(cursor, kind, { unitLater: true });
   if (!to) {
-    cursor.report("missing-argument", { start: from.span.start, end: cursor.lastEnd }, "After `to` comes the last value: write it.");
+    cursor.report(
+      "missing-argument",
+      { start: from.span.start, end: cursor.lastEnd },
+      "After `to` comes the last value: write it.",
+    );
     return null;
   }
   cursor.skip();
@@ -394,7 +510,11 @@ function readSweep(cursor: Cursor, kind: QuantityKind, from: Quantity): Sweep | 
     cursor.skip();
     by = readQuantity(cursor, kind, { unitLater: true });
     if (!by) {
-      cursor.report("missing-argument", { start: from.span.start, end: cursor.lastEnd }, "After `by` comes the step: write it.");
+      cursor.report(
+        "missing-argument",
+        { start: from.span.start, end: cursor.lastEnd },
+        "After `by` comes the step: write it.",
+      );
       return null;
     }
   }

@@ -1,5 +1,12 @@
 import type { Block } from "./block.ts";
-import { classify, hasSecondBar, isDelimiterRow, type LineKind, type LineState, sameState } from "./classify.ts";
+import {
+  classify,
+  hasSecondBar,
+  isDelimiterRow,
+  type LineKind,
+  type LineState,
+  sameState,
+} from "./classify.ts";
 import type { BlockChange, Document, Flavour, Position } from "./document.ts";
 import type { TextFinding } from "./finding.ts";
 import { makeBlock } from "./makeBlock.ts";
@@ -157,7 +164,8 @@ class OpenDocument implements Document {
     const oldLast = last - delta;
     while (tail > head && (this.#blocks[tail - 1] as Block).start > oldLast) tail--;
     const gone = this.#blocks.slice(head, tail);
-    if (delta !== 0) for (let i = tail; i < this.#blocks.length; i++) (this.#blocks[i] as Block).start += delta;
+    if (delta !== 0)
+      for (let i = tail; i < this.#blocks.length; i++) (this.#blocks[i] as Block).start += delta;
     const come = this.#makeBlocks(first, last, gone);
     splice(this.#blocks, head, gone.length, come);
     return { from: head, removed: gone.length, added: come.length };
@@ -198,7 +206,9 @@ class OpenDocument implements Document {
       line.tree ??= parseLine(line.text);
       trees.push(line.tree);
     }
-    const kept = old.find((block) => block.lines.length === trees.length && block.lines.every((tree, i) => tree === trees[i]));
+    const kept = old.find(
+      (block) => block.lines.length === trees.length && block.lines.every((tree, i) => tree === trees[i]),
+    );
     if (kept) {
       kept.start = from;
       return kept;
@@ -237,7 +247,17 @@ function splitLines(text: string): Line[] {
 }
 
 function newLine(text: string, end: string): Line {
-  return { text, end, kind: null, raw: null, before: null, after: null, opens: false, tree: null, likeness: -1 };
+  return {
+    text,
+    end,
+    kind: null,
+    raw: null,
+    before: null,
+    after: null,
+    opens: false,
+    tree: null,
+    likeness: -1,
+  };
 }
 
 /** `splice` with many items without spreading them over the stack. */

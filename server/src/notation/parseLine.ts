@@ -1,5 +1,5 @@
-import { isBlank, isDigit, isMinus } from "./characters.ts";
 import { cardClauses } from "./cardClauses.ts";
+import { isBlank, isDigit, isMinus } from "./characters.ts";
 import { Cursor } from "./cursor.ts";
 import type { Fix, TextFinding } from "./finding.ts";
 import { limitsClauses } from "./limitsClauses.ts";
@@ -89,7 +89,16 @@ function cap(findings: readonly TextFinding[], text: string): readonly TextFindi
   const rest = findings.length - MOST_FINDINGS + 1;
   const first = findings.slice(0, MOST_FINDINGS - 1);
   const span = { start: 0, end: text.length };
-  return [...first, { code: "unexpected-text", line: 0, span, message: `And ${rest} more findings on this line: mend the first ones.`, fixes: [] }];
+  return [
+    ...first,
+    {
+      code: "unexpected-text",
+      line: 0,
+      span,
+      message: `And ${rest} more findings on this line: mend the first ones.`,
+      fixes: [],
+    },
+  ];
 }
 
 function readClause(cursor: Cursor, text: string): Clause {
@@ -124,7 +133,8 @@ function keywordAt(cursor: Cursor): { readonly end: number; readonly keyword: Ke
   if (whole) return { end, keyword: whole };
   for (let i = at + 1; i < end; i++) {
     const code = text.charCodeAt(i);
-    const touches = isDigit(code) || (isMinus(code) && (isDigit(text.charCodeAt(i + 1)) || text.charCodeAt(i + 1) === 46));
+    const touches =
+      isDigit(code) || (isMinus(code) && (isDigit(text.charCodeAt(i + 1)) || text.charCodeAt(i + 1) === 46));
     if (!touches) continue;
     const part = keywordOf(text.slice(at, i));
     if (part) return { end: i, keyword: part };
@@ -152,8 +162,20 @@ function unknownKeyword(cursor: Cursor, start: number, end: number): Clause {
   const stranger = strangers[typed.toLowerCase()] ?? null;
   const guess = stranger ?? guessKeyword(typed);
   const span = takeRest(cursor);
-  cursor.report("unknown-keyword", keywordSpan, unknownMessage(typed, stranger, guess), guess ? keywordFixes(typed, keywordSpan, guess) : []);
-  return { span: { start, end: Math.max(span.end, end) }, keywordSpan, keyword: null, meant: guess, faulty: true, body: null };
+  cursor.report(
+    "unknown-keyword",
+    keywordSpan,
+    unknownMessage(typed, stranger, guess),
+    guess ? keywordFixes(typed, keywordSpan, guess) : [],
+  );
+  return {
+    span: { start, end: Math.max(span.end, end) },
+    keywordSpan,
+    keyword: null,
+    meant: guess,
+    faulty: true,
+    body: null,
+  };
 }
 
 function guessKeyword(typed: string): Keyword | null {
@@ -165,7 +187,8 @@ function guessKeyword(typed: string): Keyword | null {
 
 function unknownMessage(typed: string, stranger: Keyword | null, guess: Keyword | null): string {
   if (stranger === "config") return `\`${typed}\` is not a keyword; a configuration is \`config flaps-5\`.`;
-  if (guess) return `\`${typed}\` is not a keyword; did you mean \`${guess}\`, as in \`${keywordEntry(guess).example}\`?`;
+  if (guess)
+    return `\`${typed}\` is not a keyword; did you mean \`${guess}\`, as in \`${keywordEntry(guess).example}\`?`;
   return `\`${typed}\` is not a keyword: write one, or begin the line with \`\\|\` if it is prose.`;
 }
 
@@ -190,12 +213,21 @@ function slipAfterKeyword(cursor: Cursor): void {
   ]);
 }
 
-function missingArgument(cursor: Cursor, keyword: Keyword, span: { start: number; end: number }, before: number): void {
+function missingArgument(
+  cursor: Cursor,
+  keyword: Keyword,
+  span: { start: number; end: number },
+  before: number,
+): void {
   if (cursor.findings.length > before && cursor.faulty) return;
   const { pattern, example } = keywordEntry(keyword);
   const due = pattern || "nothing";
   const end = cursor.atClauseEnd() ? span.end : span.end;
-  cursor.report("missing-argument", { start: span.start, end }, `After \`${keyword}\` comes ${due}: write it, as in \`${example}\`.`);
+  cursor.report(
+    "missing-argument",
+    { start: span.start, end },
+    `After \`${keyword}\` comes ${due}: write it, as in \`${example}\`.`,
+  );
 }
 
 /** Brings the cursor to the clause's end; what stands before it is told, or read as a missing `;`. */
@@ -208,17 +240,23 @@ function finish(cursor: Cursor, text: string): void {
     if (startsKeyword(cursor, next)) {
       const word = text.slice(next, cursor.nameEnd(next));
       const span = cursor.take(cursor.at + 1, "slip");
-      cursor.report("separator", span, `Clauses are separated by \`;\`: put one here instead of the comma, before ${word}.`, [
-        { title: "Write ;", preferred: true, edits: [{ line: 0, ...span, newText: ";" }] },
-      ]);
+      cursor.report(
+        "separator",
+        span,
+        `Clauses are separated by \`;\`: put one here instead of the comma, before ${word}.`,
+        [{ title: "Write ;", preferred: true, edits: [{ line: 0, ...span, newText: ";" }] }],
+      );
       return;
     }
   } else if (startsKeyword(cursor, cursor.at)) {
     const word = text.slice(cursor.at, cursor.nameEnd());
     const at = cursor.lastEnd;
-    cursor.report("separator", { start: cursor.at, end: cursor.at + word.length }, `Clauses are separated by \`;\`: put one here, before ${word}.`, [
-      { title: "Write ;", preferred: true, edits: [{ line: 0, start: at, end: at, newText: ";" }] },
-    ]);
+    cursor.report(
+      "separator",
+      { start: cursor.at, end: cursor.at + word.length },
+      `Clauses are separated by \`;\`: put one here, before ${word}.`,
+      [{ title: "Write ;", preferred: true, edits: [{ line: 0, start: at, end: at, newText: ";" }] }],
+    );
     return;
   }
   const start = cursor.at;
@@ -256,7 +294,14 @@ function takeRest(cursor: Cursor): { start: number; end: number } {
       const semicolon = text.indexOf(";", next);
       next = close >= 0 ? close + 1 : semicolon >= 0 ? semicolon : text.length;
     } else {
-      while (next < text.length && !isBlank(text.charCodeAt(next)) && text.charCodeAt(next) !== 59 && text.charCodeAt(next) !== 40 && text.charCodeAt(next) !== 34) next++;
+      while (
+        next < text.length &&
+        !isBlank(text.charCodeAt(next)) &&
+        text.charCodeAt(next) !== 59 &&
+        text.charCodeAt(next) !== 40 &&
+        text.charCodeAt(next) !== 34
+      )
+        next++;
     }
     cursor.take(next, "unread");
     end = cursor.at;

@@ -4,7 +4,7 @@ import { atNumber, isRange, readQuantity, readUnknown, readValue } from "./numbe
 import { readSpeed } from "./speeds.ts";
 import type { ClauseBody, Quantity, Title, Unknown, Value } from "./tree.ts";
 import type { QuantityKind } from "./units.ts";
-import { phases, results, type ResultName, synonyms } from "./vocabulary.ts";
+import { phases, type ResultName, results, synonyms } from "./vocabulary.ts";
 import { readDate, readName, readTitle, readWord } from "./words.ts";
 
 /** Reads the arguments of one keyword. Null where they are missing or not understood. */
@@ -31,7 +31,10 @@ function named(kind: "fly" | "under"): ClauseReader {
   };
 }
 
-function valued(kind: "path" | "load" | "gust" | "cg" | "power" | "decel", quantity: QuantityKind): ClauseReader {
+function valued(
+  kind: "path" | "load" | "gust" | "cg" | "power" | "decel",
+  quantity: QuantityKind,
+): ClauseReader {
   return (cursor) => {
     const read = value(cursor, quantity);
     return read && { kind, value: read };
@@ -45,7 +48,11 @@ function readBurn(cursor: Cursor): ClauseBody | null {
     if (!rate) return null;
     cursor.skip();
     if (!cursor.takeWord("for")) {
-      cursor.report("missing-argument", rate.span, "A fuel flow needs its time: write `for` and the time, such as `for 35 min`.");
+      cursor.report(
+        "missing-argument",
+        rate.span,
+        "A fuel flow needs its time: write `for` and the time, such as `for 35 min`.",
+      );
       return null;
     }
     const time = readQuantity(cursor, "time");
@@ -55,7 +62,11 @@ function readBurn(cursor: Cursor): ClauseBody | null {
   const amount = value(cursor, "mass");
   if (!amount) return null;
   if (amount.kind === "scalar") return { kind: "burn", amount };
-  cursor.report("bad-quantity", amount.span, "A burn is one figure and cannot be swept: sweep the weight instead.");
+  cursor.report(
+    "bad-quantity",
+    amount.span,
+    "A burn is one figure and cannot be swept: sweep the weight instead.",
+  );
   return null;
 }
 
@@ -74,10 +85,15 @@ function readIsa(cursor: Cursor): ClauseBody | null {
   for (const one of quantities) {
     if (one.signed || one.value === 0) continue;
     const at = one.numberSpan.start;
-    cursor.report("bad-quantity", one.span, `A deviation other than 0 has its sign: write +${one.value} or -${one.value}.`, [
-      { title: `Write +${one.value}`, edits: [{ line: 0, start: at, end: at, newText: "+" }] },
-      { title: `Write -${one.value}`, edits: [{ line: 0, start: at, end: at, newText: "-" }] },
-    ]);
+    cursor.report(
+      "bad-quantity",
+      one.span,
+      `A deviation other than 0 has its sign: write +${one.value} or -${one.value}.`,
+      [
+        { title: `Write +${one.value}`, edits: [{ line: 0, start: at, end: at, newText: "+" }] },
+        { title: `Write -${one.value}`, edits: [{ line: 0, start: at, end: at, newText: "-" }] },
+      ],
+    );
   }
   return { kind: "isa", value: read };
 }
@@ -92,9 +108,12 @@ function readBank(cursor: Cursor): ClauseBody | null {
     const first = read.kind === "scalar" ? read.quantity : read.from;
     if (first.signed) {
       const digits = Math.abs(first.value);
-      cursor.report("bad-quantity", first.span, `A bank is never signed: write ${digits} left or ${digits} right.`, [
-        { title: `Write ${digits}`, edits: [{ line: 0, ...first.numberSpan, newText: String(digits) }] },
-      ]);
+      cursor.report(
+        "bad-quantity",
+        first.span,
+        `A bank is never signed: write ${digits} left or ${digits} right.`,
+        [{ title: `Write ${digits}`, edits: [{ line: 0, ...first.numberSpan, newText: String(digits) }] }],
+      );
     }
   }
   return { kind: "bank", value: read, side };
@@ -120,7 +139,12 @@ function readContamination(cursor: Cursor): ClauseBody | null {
     cursor.take(at + 1, "comma");
     cursor.skip();
     rain = cursor.takeWord("rain") !== null;
-    if (!rain) cursor.report("unexpected-text", { start: at, end: at + 1 }, "After the loss only `rain` may follow: write `, rain` or nothing.");
+    if (!rain)
+      cursor.report(
+        "unexpected-text",
+        { start: at, end: at + 1 },
+        "After the loss only `rain` may follow: write `, rain` or nothing.",
+      );
   }
   return { kind: "contaminant", name, loss, rain };
 }
@@ -164,7 +188,11 @@ function readClaim(cursor: Cursor): ClauseBody | null {
   if (cursor.takeWord("within")) {
     within = readQuantity(cursor, kind, { unitLater: true });
     if (!within) {
-      cursor.report("missing-argument", claimed.span, "After `within` comes how far the figure may be off: write it.");
+      cursor.report(
+        "missing-argument",
+        claimed.span,
+        "After `within` comes how far the figure may be off: write it.",
+      );
       return null;
     }
     if (!within.unit && claimed.unit) within = { ...within, unit: claimed.unit };
@@ -202,9 +230,12 @@ function readAccept(cursor: Cursor): ClauseBody | null {
   }
   if (!because) {
     const at = cursor.lastEnd;
-    cursor.report("missing-argument", code.span, "What is accepted needs its reason: write `because` and the reason in quotation marks.", [
-      { title: "Write because", edits: [{ line: 0, start: at, end: at, newText: ' because ""' }] },
-    ]);
+    cursor.report(
+      "missing-argument",
+      code.span,
+      "What is accepted needs its reason: write `because` and the reason in quotation marks.",
+      [{ title: "Write because", edits: [{ line: 0, start: at, end: at, newText: ' because ""' }] }],
+    );
   }
   return { kind: "accept", code: code.word, codeSpan: code.span, to, because, by, until };
 }
@@ -215,11 +246,30 @@ function readLooseQuantity(cursor: Cursor): Quantity | null {
   const rest = cursor.text.slice(cursor.at);
   const unit = /^[-+−–]?[\d.]+\s*([A-Za-z°%]+(?:\/[A-Za-z]+)?)/.exec(rest)?.[1]?.toLowerCase() ?? "";
   const kinds: Readonly<Record<string, QuantityKind>> = {
-    kt: "speed", kts: "speed", "km/h": "speed", "m/s": "speed", mph: "speed",
-    t: "mass", kg: "mass", lb: "mass", lbs: "mass", n: "mass", kn: "mass",
-    ft: "altitude", m: "altitude", fl: "altitude", nm: "distance", km: "distance", "kt/s": "decel", "°": "angle", deg: "angle",
+    kt: "speed",
+    kts: "speed",
+    "km/h": "speed",
+    "m/s": "speed",
+    mph: "speed",
+    t: "mass",
+    kg: "mass",
+    lb: "mass",
+    lbs: "mass",
+    n: "mass",
+    kn: "mass",
+    ft: "altitude",
+    m: "altitude",
+    fl: "altitude",
+    nm: "distance",
+    km: "distance",
+    "kt/s": "decel",
+    "°": "angle",
+    deg: "angle",
   };
-  return readQuantity(cursor, rest.slice(0, 2).toLowerCase() === "fl" ? "altitude" : (kinds[unit] ?? "number"));
+  return readQuantity(
+    cursor,
+    rest.slice(0, 2).toLowerCase() === "fl" ? "altitude" : (kinds[unit] ?? "number"),
+  );
 }
 
 export const planClauses: Readonly<Record<string, ClauseReader>> = {

@@ -87,8 +87,15 @@ function missingBar(lines: readonly Line[], index: number, findings: TextFinding
     code: "missing-bar",
     line: index,
     span: { start, end: line.text.trimEnd().length },
-    message: "This line reads as notation but no bar stands before it, so it is prose: write `|` before it, or begin it with `\\|` if it is meant as prose.",
-    fixes: [{ title: "Write | before it", preferred: true, edits: [{ line: index, start, end: start, newText: "| " }] }],
+    message:
+      "This line reads as notation but no bar stands before it, so it is prose: write `|` before it, or begin it with `\\|` if it is meant as prose.",
+    fixes: [
+      {
+        title: "Write | before it",
+        preferred: true,
+        edits: [{ line: index, start, end: start, newText: "| " }],
+      },
+    ],
   });
 }
 
@@ -98,7 +105,8 @@ function noBarLines(lines: readonly Line[], open: number): TextFinding {
     code: "no-bar-lines",
     line: open,
     span: { start: text.length - text.trimStart().length, end: text.trimEnd().length },
-    message: "This plumb fence holds text and no bar line, so nothing in it is read: begin its lines with `|`.",
+    message:
+      "This plumb fence holds text and no bar line, so nothing in it is read: begin its lines with `|`.",
     fixes: [],
   };
 }
@@ -121,7 +129,14 @@ function unclosed(lines: readonly Line[], open: number, bars: number, findings: 
     fixes: [
       {
         title: "Close the fence at the end of the file",
-        edits: [{ line: last, start: lastText.length, end: lastText.length, newText: `${lastText === "" ? "" : "\n"}${marks}` }],
+        edits: [
+          {
+            line: last,
+            start: lastText.length,
+            end: lastText.length,
+            newText: `${lastText === "" ? "" : "\n"}${marks}`,
+          },
+        ],
       },
     ],
   });

@@ -1,6 +1,14 @@
 import { isBlank, isDigit, isMinus } from "./characters.ts";
 import type { Cursor } from "./cursor.ts";
-import { atNumber, atTolerance, isRange, readQuantity, readTolerance, readUnknown, readValue } from "./numbers.ts";
+import {
+  atNumber,
+  atTolerance,
+  isRange,
+  readQuantity,
+  readTolerance,
+  readUnknown,
+  readValue,
+} from "./numbers.ts";
 import type { AirspeedKind, ClauseBody, Quantity, Speed, Sweep } from "./tree.ts";
 import { unitOf } from "./units.ts";
 import { type SpeedName, speedNames } from "./vocabulary.ts";
@@ -18,7 +26,8 @@ export function readSpeed(cursor: Cursor): ClauseBody | null {
 function readExpression(cursor: Cursor, start: number): Speed | null {
   if (cursor.code() === 63) return readUnknown(cursor, "speed");
   if (atMach(cursor)) return readMach(cursor, start);
-  if (atNumber(cursor)) return multipleAhead(cursor) ? readMultiple(cursor, start) : readAirspeed(cursor, start);
+  if (atNumber(cursor))
+    return multipleAhead(cursor) ? readMultiple(cursor, start) : readAirspeed(cursor, start);
   return readNamed(cursor, start);
 }
 
@@ -81,7 +90,11 @@ function readMultiple(cursor: Cursor, start: number): Speed | null {
   const ofSpan = cursor.take(cursor.at + word.length, "word");
   const factor: Quantity | Sweep = value.kind === "scalar" ? value.quantity : value;
   if (value.kind === "scalar" && value.tolerance) {
-    cursor.report("bad-quantity", value.tolerance.span, `A multiple of ${word} takes no tolerance of its own: write it in knots after the name, such as ${word} +- 3 kt.`);
+    cursor.report(
+      "bad-quantity",
+      value.tolerance.span,
+      `A multiple of ${word} takes no tolerance of its own: write it in knots after the name, such as ${word} +- 3 kt.`,
+    );
   }
   return { kind: "multiple", factor, of: word, ofSpan, span: { start, end: cursor.lastEnd } };
 }
@@ -119,7 +132,11 @@ function readNamed(cursor: Cursor, start: number): Speed | null {
     cursor.skip();
     const size = atNumber(cursor) && isDigitOrPoint(cursor.code()) ? readQuantity(cursor, "speed") : null;
     if (!size) {
-      cursor.report("missing-argument", { start: signStart, end: signStart + 1 }, `After the sign comes a speed: write it, such as ${word} + 5 kt.`);
+      cursor.report(
+        "missing-argument",
+        { start: signStart, end: signStart + 1 },
+        `After the sign comes a speed: write it, such as ${word} + 5 kt.`,
+      );
       return null;
     }
     const value = isMinus(code) ? -size.value : size.value;
@@ -128,9 +145,17 @@ function readNamed(cursor: Cursor, start: number): Speed | null {
   }
   const tolerance = atTolerance(cursor) ? readTolerance(cursor, "speed") : null;
   if (tolerance && !tolerance.unit && !offset?.unit && !cursor.faulty) {
-    cursor.report("missing-unit", tolerance.span, `The tolerance ${tolerance.value} of what? Write ${tolerance.value} kt.`, [
-      { title: `Write ${tolerance.value} kt`, edits: [{ line: 0, start: tolerance.span.end, end: tolerance.span.end, newText: " kt" }] },
-    ]);
+    cursor.report(
+      "missing-unit",
+      tolerance.span,
+      `The tolerance ${tolerance.value} of what? Write ${tolerance.value} kt.`,
+      [
+        {
+          title: `Write ${tolerance.value} kt`,
+          edits: [{ line: 0, start: tolerance.span.end, end: tolerance.span.end, newText: " kt" }],
+        },
+      ],
+    );
   }
   return { kind: "named", name: word, nameSpan, offset, tolerance, span: { start, end: cursor.lastEnd } };
 }
@@ -145,5 +170,7 @@ function leadingName(cursor: Cursor): SpeedName | null {
   if (isSpeedName(run)) return run;
   const hyphen = run.indexOf("-");
   const before = hyphen > 0 ? run.slice(0, hyphen) : "";
-  return isSpeedName(before) && (hyphen === run.length - 1 || isDigit(run.charCodeAt(hyphen + 1))) ? before : null;
+  return isSpeedName(before) && (hyphen === run.length - 1 || isDigit(run.charCodeAt(hyphen + 1)))
+    ? before
+    : null;
 }

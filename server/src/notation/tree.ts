@@ -250,4 +250,8 @@ export type ClauseBody =
     };
 
 /** The body of a clause that states one kind of thing; several kinds may share a shape. */
-export type BodyOf<K extends ClauseBody["kind"], B = ClauseBody> = B extends { kind: infer X } ? (K extends X ? B : never) : never;
+export type BodyOf<K extends ClauseBody["kind"], B = ClauseBody> = B extends { kind: infer X }
+  ? K extends X
+    ? B
+    : never
+  : never;

@@ -34,7 +34,11 @@ export function readTitle(cursor: Cursor): Title | null {
   const span = cursor.take(Math.max(end, at + 1), "title");
   const mark = marks.charAt(0);
   cursor.report("unclosed-title", span, `This title is not closed, so it ends here: write ${mark}.`, [
-    { title: "Close the title", preferred: true, edits: [{ line: 0, start: span.end, end: span.end, newText: mark }] },
+    {
+      title: "Close the title",
+      preferred: true,
+      edits: [{ line: 0, start: span.end, end: span.end, newText: mark }],
+    },
   ]);
   return { text: text.slice(at + 1, span.end), span };
 }
@@ -84,8 +88,17 @@ export function readWord<T extends string>(
   const fixes: Fix[] = nearest
     ? [{ title: `Write ${nearest}`, preferred: true, edits: [{ line: 0, ...span, newText: nearest }] }]
     : [];
-  const way = all ? `write ${all.replace(/, ([^,]*)$/, " or $1")}` : nearest ? `did you mean ${nearest}?` : "check its spelling";
-  cursor.report(code, span, `${cursor.text.slice(span.start, span.end)} is no ${noun}: ${way}${way.endsWith("?") ? "" : "."}`, fixes);
+  const way = all
+    ? `write ${all.replace(/, ([^,]*)$/, " or $1")}`
+    : nearest
+      ? `did you mean ${nearest}?`
+      : "check its spelling";
+  cursor.report(
+    code,
+    span,
+    `${cursor.text.slice(span.start, span.end)} is no ${noun}: ${way}${way.endsWith("?") ? "" : "."}`,
+    fixes,
+  );
   return null;
 }
 

@@ -47,12 +47,16 @@ export function whyAbsent(evaluated: Evaluated, name: ResultName | "ias"): strin
 
 function liftUnknown({ corners, ready }: Evaluated): string {
   const kinds = new Set(corners.all.flatMap((one) => [one.stallKind, one.vs1gKind]));
-  if (kinds.has("no-level-flight")) return "At this weight and altitude the wing carries the load at no speed.";
+  if (kinds.has("no-level-flight"))
+    return "At this weight and altitude the wing carries the load at no speed.";
   if (kinds.has("none")) return "Under a negative load no stall speed is computed.";
   return `It lies outside the card's lift-mach table for ${ready.configuration.name}, which is never extrapolated.`;
 }
 
-function buffetUnknown({ ready, conditions, results }: Evaluated, name: "buffet-load" | "buffet-bank"): string {
+function buffetUnknown(
+  { ready, conditions, results }: Evaluated,
+  name: "buffet-load" | "buffet-bank",
+): string {
   const { configuration, card, frame } = ready;
   if (!configuration.buffet) return `The card has no buffet table for ${configuration.name}.`;
   if (!card.wing) return "The card states no wing area, which the buffet table needs.";

@@ -16,7 +16,10 @@ export function calibratedStall(
   referenceMass: number | null,
 ): number | null {
   if (ias && (ias.value === null || referenceMass === null)) return null;
-  const calibrated = ias?.value && referenceMass !== null ? calibratedFromIndicated(ias.value, indicated, 1, referenceMass, referenceMass) : null;
+  const calibrated =
+    ias?.value && referenceMass !== null
+      ? calibratedFromIndicated(ias.value, indicated, 1, referenceMass, referenceMass)
+      : null;
   if (calibrated !== null) return calibrated;
   lowering.findings.push(
     findingAt(

@@ -10,10 +10,17 @@ import { formatMass } from "./format.ts";
 import { flyCard, underLimits, useContaminant } from "./names.ts";
 import type { Origin } from "./origin.ts";
 import { type Measured, measure, measureTolerance } from "./quantity.ts";
-import { pressureAltitudeOf } from "./situation.ts";
 import { findingAt, originOf, type Site } from "./site.ts";
+import { pressureAltitudeOf } from "./situation.ts";
 import { exactly, type Spread } from "./spread.ts";
-import { type Carried, type CarriedKey, type CarriedState, type CarriedValues, keywordOf, type State } from "./state.ts";
+import {
+  type Carried,
+  type CarriedKey,
+  type CarriedState,
+  type CarriedValues,
+  keywordOf,
+  type State,
+} from "./state.ts";
 
 /** A block's carried clauses applied to what reached it. The speed comes later: it may need the turn. */
 export interface Applied {
@@ -45,7 +52,8 @@ export function applyClauses(site: Site, clauses: Clauses, definitions: Definiti
   const applying: Applying = { site, clauses, definitions, phase, draft, findings: [] };
   const newSector = before.landed && phase === "takeoff";
   if (newSector) {
-    for (const key of ["mass", "config", "altitude", "speed", "contamination", "engineOut"] as const) draft[key] = undefined;
+    for (const key of ["mass", "config", "altitude", "speed", "contamination", "engineOut"] as const)
+      draft[key] = undefined;
   }
   const another = applyAircraft(applying);
   if (clauses.under) set(applying, "limits", clauses.under.placed, underLimits(applying, clauses.under));
@@ -55,7 +63,13 @@ export function applyClauses(site: Site, clauses: Clauses, definitions: Definiti
   if (clauses.config) set(applying, "config", clauses.config.placed, clauses.config.body.name.text);
   applyAltitude(applying);
   applyDeviation(applying);
-  if (clauses.cg) set(applying, "cg", clauses.cg.placed, spreadIn(applying, clauses.cg.placed, clauses.cg.body.value, "cg"));
+  if (clauses.cg)
+    set(
+      applying,
+      "cg",
+      clauses.cg.placed,
+      spreadIn(applying, clauses.cg.placed, clauses.cg.body.value, "cg"),
+    );
   applyContamination(applying);
   if (clauses.engineOut) set(applying, "engineOut", clauses.engineOut.placed, clauses.engineOut.body.engine);
   spoil(applying);
@@ -234,7 +248,12 @@ function spoil(applying: Applying): void {
     if (!key) continue;
     const code = textCode(site, placed) ?? codeAt(findings, placed);
     const origin: Origin = originOf(site, placed);
-    (draft as Record<CarriedKey, Carried<unknown> | undefined>)[key] = { value: null, origin, unknown: code, phase };
+    (draft as Record<CarriedKey, Carried<unknown> | undefined>)[key] = {
+      value: null,
+      origin,
+      unknown: code,
+      phase,
+    };
   }
 }
 
@@ -267,7 +286,11 @@ export function textCode(site: Site, placed: PlacedClause): string | null {
   return own?.code ?? null;
 }
 
-function single(applying: Applying, read: { placed: PlacedClause; body: { value: Quantity } }, what: Measured): number | null {
+function single(
+  applying: Applying,
+  read: { placed: PlacedClause; body: { value: Quantity } },
+  what: Measured,
+): number | null {
   return measured(applying, read.placed, read.body.value, what);
 }
 

@@ -11,8 +11,8 @@ import type { Origin } from "./origin.ts";
 import { checkRules, type RuleOutcome } from "./ruleChecks.ts";
 import { checkSafety } from "./safetyChecks.ts";
 import { type Details, findingAt, oneStepLower } from "./site.ts";
-import { checkState } from "./stateChecks.ts";
 import { type CarriedKey, keywordOf } from "./state.ts";
+import { checkState } from "./stateChecks.ts";
 
 /** What the checks found beside their findings. */
 export interface Held extends RuleOutcome {

@@ -12,7 +12,11 @@ import { findingAt } from "./site.ts";
 export type ClaimOutcome = ClaimResult;
 
 /** Holds every figure that the author wrote down against the one that is computed. */
-export function checkClaims(point: Point, evaluated: Evaluated | null, findings: Finding[]): readonly ClaimOutcome[] {
+export function checkClaims(
+  point: Point,
+  evaluated: Evaluated | null,
+  findings: Finding[],
+): readonly ClaimOutcome[] {
   return point.clauses.claims.map(({ placed, body }): ClaimOutcome => {
     const claimed = inSI(body.result, body.value);
     const spread = evaluated?.results[body.result] ?? null;
@@ -52,7 +56,10 @@ function inSI(name: ResultName, { value, unit }: Quantity): number {
 }
 
 /** The worst corner, which is what is shown. */
-function worstOf(name: ResultName, spread: { readonly nominal: number; readonly low: number; readonly high: number }): number {
+function worstOf(
+  name: ResultName,
+  spread: { readonly nominal: number; readonly low: number; readonly high: number },
+): number {
   return spread[resultEntry(name).worst];
 }
 

@@ -16,7 +16,10 @@ export function collectDefinitions(
   const findings = new Map<Block, Finding[]>();
   const cardsByName = byName(cards);
   // A user's limits of the reserved name are told at their own place and never found.
-  const limitsByName = byName([commonPractice(), ...limits.filter((one) => one.name.toLowerCase() !== BUILT_IN_NAME)]);
+  const limitsByName = byName([
+    commonPractice(),
+    ...limits.filter((one) => one.name.toLowerCase() !== BUILT_IN_NAME),
+  ]);
   tellTwice(cardsByName, "card", findings);
   tellTwice(limitsByName, "set of limits", findings);
   const definitions: Definitions = {
@@ -46,22 +49,36 @@ function lookUp<T extends Named>(definitions: ReadonlyMap<string, readonly T[]>,
   const found = definitions.get(name.toLowerCase()) ?? [];
   const [first] = found;
   if (first) {
-    return found.length === 1 ? { kind: "found", definition: first } : { kind: "twice", places: found.map((one) => one.origin) };
+    return found.length === 1
+      ? { kind: "found", definition: first }
+      : { kind: "twice", places: found.map((one) => one.origin) };
   }
   const nearest = nearestWord(name, [...definitions.keys()]);
   return { kind: "missing", nearest: nearest ? (definitions.get(nearest)?.[0] ?? null) : null };
 }
 
-function tellTwice<T extends Named>(definitions: ReadonlyMap<string, readonly T[]>, what: string, findings: Map<Block, Finding[]>): void {
+function tellTwice<T extends Named>(
+  definitions: ReadonlyMap<string, readonly T[]>,
+  what: string,
+  findings: Map<Block, Finding[]>,
+): void {
   for (const same of definitions.values()) {
     if (same.length < 2) continue;
     for (const one of same) {
       const others = same.filter((other) => other !== one);
       const head = one.block.clauses[0] as PlacedClause;
-      const finding = findingAt("duplicate-name", head, `${one.name} is the name of another ${what} too, so none of them is used: rename one.`, {
-        span: one.origin.span,
-        related: others.map((other) => ({ origin: other.origin, message: `${other.name} is also defined here.` })),
-      });
+      const finding = findingAt(
+        "duplicate-name",
+        head,
+        `${one.name} is the name of another ${what} too, so none of them is used: rename one.`,
+        {
+          span: one.origin.span,
+          related: others.map((other) => ({
+            origin: other.origin,
+            message: `${other.name} is also defined here.`,
+          })),
+        },
+      );
       findings.set(one.block, [...(findings.get(one.block) ?? []), finding]);
     }
   }

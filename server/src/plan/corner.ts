@@ -10,7 +10,15 @@ import {
 import { type Atmosphere, atmosphere } from "../flight/atmosphere.ts";
 import { buffetBank, buffetLoad } from "../flight/buffet.ts";
 import { calibratedFromIndicated, indicatedFromCalibrated } from "../flight/ias.ts";
-import { type Lift, type LiftState, loadAtStall, type StallSpeed, stallBank, stallSpeed, warningBank } from "../flight/stall.ts";
+import {
+  type Lift,
+  type LiftState,
+  loadAtStall,
+  type StallSpeed,
+  stallBank,
+  stallSpeed,
+  warningBank,
+} from "../flight/stall.ts";
 import type { Table } from "../flight/table.ts";
 import {
   loadFactor,
@@ -108,11 +116,16 @@ export class Corner {
   get ias(): number {
     const { ias, lift } = this.#frame;
     if (!ias) return Number.NaN;
-    return indicatedFromCalibrated(ias, this.cas, this.load, this.input.mass, lift.referenceMass) ?? Number.NaN;
+    return (
+      indicatedFromCalibrated(ias, this.cas, this.load, this.input.mass, lift.referenceMass) ?? Number.NaN
+    );
   }
 
   get #oneGStall(): StallSpeed {
-    this.#oneG ??= this.load === 1 ? this.#turningStall : stallSpeed(this.#frame.lift, { ...this.#lift, load: 1 }, this.air);
+    this.#oneG ??=
+      this.load === 1
+        ? this.#turningStall
+        : stallSpeed(this.#frame.lift, { ...this.#lift, load: 1 }, this.air);
     return this.#oneG;
   }
 
@@ -276,11 +289,18 @@ function pathAngleOf(path: PathInput, tas: number): number | null {
 /** An indicated speed becomes calibrated through the card's table, which is entered at the load that is flown. */
 function indicatedSpeed(frame: Airframe, input: CornerInput, air: Atmosphere): Flown | CornerProblem {
   if (!frame.ias) return "ias";
-  if (input.bank === "rate-one" || (input.path.kind === "vertical-speed" && input.load === null)) return "ias";
+  if (input.bank === "rate-one" || (input.path.kind === "vertical-speed" && input.load === null))
+    return "ias";
   const path = pathAngleOf(input.path, Number.NaN);
   const load = input.load ?? (path === null ? null : loadFactor(input.bank, path));
   if (load === null || !(0 < load)) return "ias";
-  const cas = calibratedFromIndicated(frame.ias, input.speed.value, load, input.mass, frame.lift.referenceMass);
+  const cas = calibratedFromIndicated(
+    frame.ias,
+    input.speed.value,
+    load,
+    input.mass,
+    frame.lift.referenceMass,
+  );
   if (cas === null) return "ias";
   const mach = machFromCas(cas, air);
   if (mach === null) return "speed";

@@ -1,8 +1,8 @@
 import { casFromMach, easFromMach, impactPressureOfCas, tasFromMach } from "../flight/airspeed.ts";
 import { type Atmosphere, altitudeOfPressure, atmosphere } from "../flight/atmosphere.ts";
 import { A0, P0 } from "../flight/constants.ts";
-import { type Airframe, type Corner, type CornerInput, type CornerProblem, corner } from "./corner.ts";
 import type { PathInput, SpeedInput } from "./corner.ts";
+import { type Airframe, type Corner, type CornerInput, type CornerProblem, corner } from "./corner.ts";
 import type { Spread } from "./spread.ts";
 
 /** The inputs of a point with their tolerances, SI. */

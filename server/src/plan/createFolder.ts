@@ -89,7 +89,9 @@ class OpenFolder implements Folder, Surroundings {
     if (!this.#collected || !same(cards, this.#cards) || !same(drafts, this.#drafts)) {
       this.#cards = cards;
       this.#drafts = drafts;
-      this.#resolved = new Map(drafts.map((draft) => [draft, resolveLimits(draft, [commonPracticeDraft(), ...drafts])]));
+      this.#resolved = new Map(
+        drafts.map((draft) => [draft, resolveLimits(draft, [commonPracticeDraft(), ...drafts])]),
+      );
       this.#collected = collectDefinitions(cards, [...this.#resolved.values()]);
       this.#version++;
     }

@@ -17,10 +17,16 @@ export function evaluateBlock(
   before: State,
 ): Extract<BlockResult, { kind: "point" | "setting" }> {
   const { block } = site;
-  const written = clauses.later.length > 0 ? [...textFindings(block), ...laterFindings(clauses)] : textFindings(block);
+  const written =
+    clauses.later.length > 0 ? [...textFindings(block), ...laterFindings(clauses)] : textFindings(block);
   if (block.kind === "setting") {
     const { after, findings } = evaluateSetting(site, clauses, definitions, before);
-    return { kind: "setting", block, after, findings: written.length > 0 ? [...written, ...findings] : findings };
+    return {
+      kind: "setting",
+      block,
+      after,
+      findings: written.length > 0 ? [...written, ...findings] : findings,
+    };
   }
   const { point, after } = evaluatePoint(site, clauses, definitions, before);
   const findings = written.length > 0 ? [...written, ...point.findings] : point.findings;

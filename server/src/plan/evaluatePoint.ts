@@ -2,7 +2,7 @@ import type { PlacedClause } from "../notation/block.ts";
 import type { Phase } from "../notation/vocabulary.ts";
 import { airframeOf, cgFactorAt } from "./airframe.ts";
 import type { Card, Configuration } from "./card.ts";
-import { applyClauses, type Applied, textCode } from "./carry.ts";
+import { type Applied, applyClauses, textCode } from "./carry.ts";
 import { checkPoint } from "./checks.ts";
 import { type Clauses, intendedKeyword, isOpen } from "./clauses.ts";
 import { commonPractice } from "./commonPractice.ts";
@@ -16,8 +16,8 @@ import { findMissing } from "./missing.ts";
 import { unknownConfiguration } from "./names.ts";
 import type { Origin } from "./origin.ts";
 import type { PointResult, Withheld } from "./point.ts";
-import { type Air, airOf, isUnknown } from "./situation.ts";
 import { findingAt, originOf, type Site } from "./site.ts";
+import { type Air, airOf, isUnknown } from "./situation.ts";
 import { type ResolvedSpeed, resolveSpeed, type SpeedSetting } from "./speed.ts";
 import { exactly, type Spread } from "./spread.ts";
 import type { AppliedLimits, Carried, CarriedKey, CarriedState, FlownSpeed, State } from "./state.ts";
@@ -137,7 +137,8 @@ function prepare(
     withheld ??= { origin: originOf(point.site, placed), code: "unknown-config" };
   }
   const frame = card && configuration ? airframeOf(card, configuration) : null;
-  if (card && configuration && !frame) withheld ??= { origin: configuration.origin, code: "broken-definition" };
+  if (card && configuration && !frame)
+    withheld ??= { origin: configuration.origin, code: "broken-definition" };
   const air = airOf(carried);
   if (!air && carried.altitude?.value && !isUnknown(carried.qnh) && !isUnknown(carried.deviation)) {
     withheld ??= outsideAtmosphere(point, findings);
@@ -179,7 +180,9 @@ function firstUnknown(carried: CarriedState): Withheld | null {
 
 function unknownSpeed(carried: CarriedState): Withheld | null {
   const speed = carried.speed;
-  return speed && speed.value === null ? { origin: speed.origin, code: speed.unknown ?? "missing-value" } : null;
+  return speed && speed.value === null
+    ? { origin: speed.origin, code: speed.unknown ?? "missing-value" }
+    : null;
 }
 
 function speedOf(point: Point, setting: SpeedSetting | null, findings: Finding[]): ResolvedSpeed | null {
@@ -204,13 +207,16 @@ function outsideAtmosphere(point: Point, findings: Finding[]): Withheld {
 function outsideCg(point: Point, card: Card, findings: Finding[]): Withheld {
   const placed = point.clauses.cg?.placed ?? point.phaseClause;
   const origin = originOf(point.site, placed);
-  if (card.cgEffect && !card.cgEffect.value) return { origin: card.cgEffect.origin, code: "broken-definition" };
+  if (card.cgEffect && !card.cgEffect.value)
+    return { origin: card.cgEffect.origin, code: "broken-definition" };
   findings.push(
     findingAt(
       "outside-table",
       placed,
       `The cg lies outside the cg-effect table of ${card.name}, which is never extrapolated: check it, or extend the table.`,
-      card.cgEffect ? { related: [{ origin: card.cgEffect.origin, message: "The card's cg-effect table." }] } : {},
+      card.cgEffect
+        ? { related: [{ origin: card.cgEffect.origin, message: "The card's cg-effect table." }] }
+        : {},
     ),
   );
   return { origin, code: "outside-table" };
@@ -234,7 +240,11 @@ function cornerFinding(point: Point, ready: Ready, problem: CornerProblem): Find
         "With its tolerance the altitude or the temperature leaves the atmosphere that is modelled (-5000 ft to 20 000 m): check them.",
       );
     case "speed":
-      return findingAt("out-of-range", speedAt, "At this altitude the speed is not below the speed of sound, where nothing is computed: check it.");
+      return findingAt(
+        "out-of-range",
+        speedAt,
+        "At this altitude the speed is not below the speed of sound, where nothing is computed: check it.",
+      );
     case "ias":
       return findingAt(
         ready.frame.ias ? "outside-table" : "missing-value",
@@ -244,9 +254,17 @@ function cornerFinding(point: Point, ready: Ready, problem: CornerProblem): Find
           : `${ready.card.name} has no ias table for ${ready.configuration.name}, so an indicated speed is not known: state the calibrated speed.`,
       );
     case "path":
-      return findingAt("out-of-range", clauses.path?.placed ?? phaseClause, "The path is steeper than the speed can fly: check it.");
+      return findingAt(
+        "out-of-range",
+        clauses.path?.placed ?? phaseClause,
+        "The path is steeper than the speed can fly: check it.",
+      );
     case "bank":
-      return findingAt("missing-value", clauses.bank?.placed ?? phaseClause, "From 90° of bank no bank alone gives the load: state it with `load`.");
+      return findingAt(
+        "missing-value",
+        clauses.bank?.placed ?? phaseClause,
+        "From 90° of bank no bank alone gives the load: state it with `load`.",
+      );
   }
 }
 

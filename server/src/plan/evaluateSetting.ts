@@ -6,8 +6,8 @@ import type { Definitions } from "./definitions.ts";
 import type { Finding } from "./finding.ts";
 import { configurationNamed } from "./inputs.ts";
 import { unknownConfiguration } from "./names.ts";
-import { airOf } from "./situation.ts";
 import { findingAt, listed, originOf, type Site } from "./site.ts";
+import { airOf } from "./situation.ts";
 import { type ResolvedSpeed, resolveSpeed, type SpeedSetting, settingCas } from "./speed.ts";
 import { exactly } from "./spread.ts";
 import type { Carried, CarriedState, FlownSpeed, State } from "./state.ts";
@@ -45,7 +45,11 @@ function withSpeed(site: Site, clauses: Clauses, carried: CarriedState, findings
     const lacks = lacking(carried);
     if (lacks.length > 0) {
       findings.push(
-        findingAt("missing-value", read.placed, `This speed is reckoned here and needs ${listed(lacks)}, and no line up to here states ${lacks.length === 1 ? "it" : "them"}.`),
+        findingAt(
+          "missing-value",
+          read.placed,
+          `This speed is reckoned here and needs ${listed(lacks)}, and no line up to here states ${lacks.length === 1 ? "it" : "them"}.`,
+        ),
       );
     }
   }
@@ -81,7 +85,11 @@ function settingOf(carried: CarriedState): SpeedSetting | null {
   };
 }
 
-function flownIn(speed: ResolvedSpeed, carried: CarriedState, setting: SpeedSetting | null): FlownSpeed | null {
+function flownIn(
+  speed: ResolvedSpeed,
+  carried: CarriedState,
+  setting: SpeedSetting | null,
+): FlownSpeed | null {
   if (speed.kind === "cas" || speed.kind === "mach") return { kind: speed.kind, speed: speed.value };
   if (speed.kind === "ias") {
     const cas = settingCas(speed, setting);

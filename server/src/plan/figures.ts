@@ -93,7 +93,9 @@ export function resultsOf(corners: Corners, references: () => References): Resul
   return new LazyResults(corners, references) as unknown as Results;
 }
 
-export function referenceSpeeds(references: References): Readonly<Record<ReferenceName, ReferenceSpeed | null>> {
+export function referenceSpeeds(
+  references: References,
+): Readonly<Record<ReferenceName, ReferenceSpeed | null>> {
   const speed = (name: ReferenceName) => {
     const reference = references[name];
     return "speed" in reference ? reference.speed : null;

@@ -23,7 +23,9 @@ export interface TurnInputs {
 export function readTurn(clauses: Clauses, findings: Finding[]): TurnInputs | null {
   const bank = readBank(clauses, findings);
   const path = readPath(clauses, findings);
-  const load = clauses.load ? spreadIn({ findings }, clauses.load.placed, clauses.load.body.value, "load") : undefined;
+  const load = clauses.load
+    ? spreadIn({ findings }, clauses.load.placed, clauses.load.body.value, "load")
+    : undefined;
   if (bank === null || path === null || load === null) return null;
   const turn: TurnInputs = {
     bank,
@@ -40,7 +42,9 @@ function readBank(clauses: Clauses, findings: Finding[]): Spread | "rate-one" | 
   if (body.value === "rate-one") return "rate-one";
   const bank = spreadIn({ findings }, placed, body.value, "bank");
   // A tolerance about wings level banks either way; the load is the same.
-  return bank && bank.low < 0 ? { nominal: bank.nominal, low: 0, high: Math.max(bank.high, -bank.low) } : bank;
+  return bank && bank.low < 0
+    ? { nominal: bank.nominal, low: 0, high: Math.max(bank.high, -bank.low) }
+    : bank;
 }
 
 function readPath(clauses: Clauses, findings: Finding[]): TurnInputs["path"] | null {
@@ -68,9 +72,14 @@ function needsLoad(turn: TurnInputs, clauses: Clauses, findings: Finding[]): boo
   if (turn.load || turn.bank === "rate-one" || !clauses.bank) return false;
   if (turn.bank.high < Math.PI / 2) return false;
   findings.push(
-    findingAt("missing-value", clauses.bank.placed, "From 90° of bank no bank alone gives the load: state it with `load`.", {
-      fixes: [loadFix(clauses.bank.placed)],
-    }),
+    findingAt(
+      "missing-value",
+      clauses.bank.placed,
+      "From 90° of bank no bank alone gives the load: state it with `load`.",
+      {
+        fixes: [loadFix(clauses.bank.placed)],
+      },
+    ),
   );
   return true;
 }
@@ -84,7 +93,8 @@ function loadFix(placed: PlacedClause) {
 export function loadWithoutSpeed(turn: TurnInputs): number | null {
   if (turn.load) return turn.load.nominal;
   if (turn.bank === "rate-one" || turn.path.kind === "vertical-speed") return null;
-  const path = turn.path.kind === "angle" ? turn.path.value.nominal : pathFromGradient(turn.path.value.nominal);
+  const path =
+    turn.path.kind === "angle" ? turn.path.value.nominal : pathFromGradient(turn.path.value.nominal);
   return path === null ? null : loadFactor(turn.bank.nominal, path);
 }
 
@@ -93,4 +103,3 @@ export function configurationNamed(card: Card, name: string): Configuration | nu
   const wanted = name.toLowerCase();
   return card.configurations.find((one) => one.name.toLowerCase() === wanted) ?? null;
 }
-

@@ -3,10 +3,10 @@ import type { CardSpeed, Stated } from "./card.ts";
 import { byTolerance, type Checking, carriedFrom, clauseFor, sentence, tell } from "./checks.ts";
 import type { Corner } from "./corner.ts";
 import type { FindingCode } from "./findings.ts";
+import { catalogue } from "./findings.ts";
 import { formatAltitude, formatDistinct, formatLoad, formatMach, formatMass, formatSpeed } from "./format.ts";
 import { ALLOWANCE } from "./rules.ts";
 import { oneStepLower } from "./site.ts";
-import { catalogue } from "./findings.ts";
 
 /** The card's own limits: masses, speeds, ceiling, load factors. */
 export function checkAirframeLimits(checking: Checking): void {
@@ -33,24 +33,44 @@ function checkMass(checking: Checking): void {
     if (!above(mass.high, limit)) return false;
     const [weight, most] = formatDistinct(mass.high, limit, (kg, more) => formatMass(kg, limit, more));
     const lead = byTolerance(!above(mass.nominal, limit));
-    tell(checking, "overweight", at, sentence(lead, `The weight ${weight} exceeds the ${most} ${what} of ${card.name}: burn or unload, or check the figure.`), {
-      severity,
-      related: [...related, { origin: origin.origin, message: `The masses of ${card.name}.` }],
-    });
+    tell(
+      checking,
+      "overweight",
+      at,
+      sentence(
+        lead,
+        `The weight ${weight} exceeds the ${most} ${what} of ${card.name}: burn or unload, or check the figure.`,
+      ),
+      {
+        severity,
+        related: [...related, { origin: origin.origin, message: `The masses of ${card.name}.` }],
+      },
+    );
     return true;
   };
   const masses = card.mass;
   const landing = card.landingMass;
   const told =
-    point.phase === "landing" && landing?.value ? over(landing.value, "greatest landing mass", landing) : false;
+    point.phase === "landing" && landing?.value
+      ? over(landing.value, "greatest landing mass", landing)
+      : false;
   if (!told && masses?.value) over(masses.value.high, "greatest mass", masses);
   if (masses?.value && above(masses.value.low, mass.low)) {
     const least = masses.value.low;
     const [weight, limit] = formatDistinct(mass.low, least, (kg, more) => formatMass(kg, least, more));
     const lead = byTolerance(!above(least, mass.nominal));
-    tell(checking, "underweight", at, sentence(lead, `The weight ${weight} is below the ${limit} least mass of ${card.name}: check the figure.`), {
-      related: [...related, { origin: masses.origin, message: `The masses of ${card.name}.` }],
-    });
+    tell(
+      checking,
+      "underweight",
+      at,
+      sentence(
+        lead,
+        `The weight ${weight} is below the ${limit} least mass of ${card.name}: check the figure.`,
+      ),
+      {
+        related: [...related, { origin: masses.origin, message: `The masses of ${card.name}.` }],
+      },
+    );
   }
 }
 
@@ -67,7 +87,13 @@ function limitCas(checking: Checking, limit: CardSpeed, corner: Corner): number 
   if (!limit.ias) return limit.speed;
   const { frame } = checking.evaluated.ready;
   if (!frame.ias || !(0 < corner.load)) return null;
-  return calibratedFromIndicated(frame.ias, limit.speed, corner.load, corner.input.mass, frame.lift.referenceMass);
+  return calibratedFromIndicated(
+    frame.ias,
+    limit.speed,
+    corner.load,
+    corner.input.mass,
+    frame.lift.referenceMass,
+  );
 }
 
 function maximumSpeed(
@@ -89,7 +115,10 @@ function maximumSpeed(
     checking,
     code,
     clauseFor(checking.point, "speed"),
-    sentence(byTolerance(nominalPasses), `The speed ${flown} exceeds the ${name}${of}, ${most}: slow down${code === "over-vfe" ? " or change the configuration" : ""}.`),
+    sentence(
+      byTolerance(nominalPasses),
+      `The speed ${flown} exceeds the ${name}${of}, ${most}: slow down${code === "over-vfe" ? " or change the configuration" : ""}.`,
+    ),
     {
       related: [
         ...carriedFrom(checking.point, code === "over-vfe" ? ["speed", "config"] : ["speed"]),
@@ -129,7 +158,10 @@ function checkMinimumControl(checking: Checking): void {
       `The speed ${flown} is below the minimum control speed in the air, ${minimum}${engineOut ? ", with an engine out" : ", should an engine fail"}: fly faster.`,
       {
         severity: engineOut ? "error" : "warning",
-        related: [...carriedFrom(point, ["speed"]), { origin: card.vmca.origin, message: "The card states vmca here." }],
+        related: [
+          ...carriedFrom(point, ["speed"]),
+          { origin: card.vmca.origin, message: "The card states vmca here." },
+        ],
       },
     );
     return;
@@ -146,7 +178,10 @@ function checkMach(checking: Checking): void {
     checking,
     "over-mmo",
     clauseFor(checking.point, "speed"),
-    sentence(byTolerance(!above(mach.nominal, limit)), `The Mach number ${flown} exceeds the mmo, ${most}: slow down or fly lower.`),
+    sentence(
+      byTolerance(!above(mach.nominal, limit)),
+      `The Mach number ${flown} exceeds the mmo, ${most}: slow down or fly lower.`,
+    ),
     {
       related: [
         ...carriedFrom(checking.point, ["speed", "altitude"]),
@@ -189,10 +224,28 @@ function checkLoad(checking: Checking): void {
   if (above(load.high, limit.high)) {
     const [flown, most] = formatDistinct(load.high, limit.high, formatLoad);
     const lead = byTolerance(!above(load.nominal, limit.high));
-    tell(checking, "over-load-limit", at, sentence(lead, `The load factor ${flown} exceeds the limit of ${configuration.name}, ${most}: bank or pull less.`), { related });
+    tell(
+      checking,
+      "over-load-limit",
+      at,
+      sentence(
+        lead,
+        `The load factor ${flown} exceeds the limit of ${configuration.name}, ${most}: bank or pull less.`,
+      ),
+      { related },
+    );
   } else if (above(limit.low, load.low)) {
     const [flown, least] = formatDistinct(load.low, limit.low, formatLoad);
     const lead = byTolerance(!above(limit.low, load.nominal));
-    tell(checking, "over-load-limit", at, sentence(lead, `The load factor ${flown} is below the limit of ${configuration.name}, ${least}: unload less.`), { related });
+    tell(
+      checking,
+      "over-load-limit",
+      at,
+      sentence(
+        lead,
+        `The load factor ${flown} is below the limit of ${configuration.name}, ${least}: unload less.`,
+      ),
+      { related },
+    );
   }
 }

@@ -1,6 +1,7 @@
 import type { Block, PlacedClause } from "../notation/block.ts";
 import type { BodyOf, ClauseBody, ConfigAttribute, Quantity, Range } from "../notation/tree.ts";
 import type { Basis, Card, CardSpeed, Configuration, Contaminant, Interval, Source, Stated } from "./card.ts";
+import { calibratedStall } from "./cardIas.ts";
 import { intendedKeyword } from "./clauses.ts";
 import type { Finding } from "./finding.ts";
 import { lowerTable, type PairKinds } from "./lowerTable.ts";
@@ -9,7 +10,6 @@ import { publishedFindings } from "./publishedSpeeds.ts";
 import { type Measured, measure } from "./quantity.ts";
 import { findingAt, listed, originOf, type Site, stateFix } from "./site.ts";
 import { checkTables } from "./tableChecks.ts";
-import { calibratedStall } from "./cardIas.ts";
 
 type Of<K extends ClauseBody["kind"]> = BodyOf<K>;
 
@@ -30,22 +30,34 @@ export function lowerCard(block: Block, uri: string): Card {
   const names = cardName(head);
   const origin: Origin = { ...originOf(site, head), span: names.span };
   const find = <K extends ClauseBody["kind"]>(kind: K) => all(block, kind)[0] ?? null;
-  const number = (kind: ClauseBody["kind"], what: Measured, pick: (body: never) => Quantity) => single(lowering, kind, what, pick as (body: ClauseBody) => Quantity);
+  const number = (kind: ClauseBody["kind"], what: Measured, pick: (body: never) => Quantity) =>
+    single(lowering, kind, what, pick as (body: ClauseBody) => Quantity);
 
   const basis = stated(lowering, "basis", (placed, body: Of<"basis">): Basis | null => {
     if (body.basis !== "vs") return { kind: body.basis, factor: 1 };
     const factor = value(lowering, placed, body.factor, "factor");
     if (factor === null) return null;
     if (0.8 <= factor && factor <= 1.05) return { kind: "vs", factor };
-    lowering.findings.push(findingAt("out-of-range", placed, `The factor ${body.factor.value} of vs is vs over the 1-g stall speed, which lies from 0.8 to 1.05: check it.`));
+    lowering.findings.push(
+      findingAt(
+        "out-of-range",
+        placed,
+        `The factor ${body.factor.value} of vs is vs over the 1-g stall speed, which lies from 0.8 to 1.05: check it.`,
+      ),
+    );
     return null;
   });
   const referenceMass = number("reference", "mass", (body: Of<"reference">) => body.mass);
-  const mass = stated(lowering, "mass", (placed, body: Of<"mass">) => interval(lowering, placed, body.range, "mass"));
+  const mass = stated(lowering, "mass", (placed, body: Of<"mass">) =>
+    interval(lowering, placed, body.range, "mass"),
+  );
   const landingClause = find("mass");
   const landingMass =
     landingClause?.body.landing && mass
-      ? { value: value(lowering, landingClause.placed, landingClause.body.landing, "mass"), origin: mass.origin }
+      ? {
+          value: value(lowering, landingClause.placed, landingClause.body.landing, "mass"),
+          origin: mass.origin,
+        }
       : null;
   const configurations = lowerConfigurations(lowering, basis?.value ?? null, referenceMass?.value ?? null);
   const card: Card = {
@@ -69,8 +81,12 @@ export function lowerCard(block: Block, uri: string): Card {
     ceiling: number("ceiling", "altitude", (body: Of<"ceiling">) => body.altitude),
     warning: bounded(lowering, "warning", 1, 1.5),
     v2min: bounded(lowering, "v2min", 1, 1.3),
-    cgEffect: stated(lowering, "cg-effect", (placed, body: Of<"cg-effect">) => lowerTable(lowering, placed, body.table, effectPairs)),
-    powerEffect: stated(lowering, "power-effect", (placed, body: Of<"power-effect">) => lowerTable(lowering, placed, body.table, powerPairs)),
+    cgEffect: stated(lowering, "cg-effect", (placed, body: Of<"cg-effect">) =>
+      lowerTable(lowering, placed, body.table, effectPairs),
+    ),
+    powerEffect: stated(lowering, "power-effect", (placed, body: Of<"power-effect">) =>
+      lowerTable(lowering, placed, body.table, powerPairs),
+    ),
     contaminants: lowerContaminants(lowering),
     findings: lowering.findings,
   };
@@ -84,7 +100,8 @@ const powerPairs: PairKinds = { argument: "power", value: "factor", unit: null }
 
 function cardName({ clause }: PlacedClause) {
   const body = clause.body;
-  if (body?.kind === "aircraft") return { name: body.name.text, title: body.title?.text ?? null, span: body.name.span };
+  if (body?.kind === "aircraft")
+    return { name: body.name.text, title: body.title?.text ?? null, span: body.name.span };
   return { name: "", title: null, span: clause.span };
 }
 
@@ -102,7 +119,11 @@ function spoiltClause(block: Block, keyword: string): PlacedClause | null {
 }
 
 /** What one clause states. Null where no such clause stands here; a value of null where it is in error. */
-function stated<K extends ClauseBody["kind"], T>(lowering: Lowering, kind: K, read: (placed: PlacedClause, body: Of<K>) => T | null): Stated<T> | null {
+function stated<K extends ClauseBody["kind"], T>(
+  lowering: Lowering,
+  kind: K,
+  read: (placed: PlacedClause, body: Of<K>) => T | null,
+): Stated<T> | null {
   const { block } = lowering.site;
   const first = all(block, kind)[0];
   if (first) return { value: read(first.placed, first.body), origin: originOf(lowering.site, first.placed) };
@@ -110,21 +131,43 @@ function stated<K extends ClauseBody["kind"], T>(lowering: Lowering, kind: K, re
   return spoilt && { value: null, origin: originOf(lowering.site, spoilt) };
 }
 
-function single(lowering: Lowering, kind: ClauseBody["kind"], what: Measured, pick: (body: ClauseBody) => Quantity): Stated<number> | null {
+function single(
+  lowering: Lowering,
+  kind: ClauseBody["kind"],
+  what: Measured,
+  pick: (body: ClauseBody) => Quantity,
+): Stated<number> | null {
   return stated(lowering, kind, (placed, body) => value(lowering, placed, pick(body), what));
 }
 
-function bounded(lowering: Lowering, kind: "warning" | "v2min", least: number, most: number): Stated<number> | null {
+function bounded(
+  lowering: Lowering,
+  kind: "warning" | "v2min",
+  least: number,
+  most: number,
+): Stated<number> | null {
   return stated(lowering, kind, (placed, body) => {
     const factor = value(lowering, placed, body.value, "factor");
     if (factor === null || (least <= factor && factor <= most)) return factor;
-    lowering.findings.push(findingAt("out-of-range", placed, `The factor ${factor} of ${kind} lies outside ${least} to ${most}: check it.`, { span: body.value.span }));
+    lowering.findings.push(
+      findingAt(
+        "out-of-range",
+        placed,
+        `The factor ${factor} of ${kind} lies outside ${least} to ${most}: check it.`,
+        { span: body.value.span },
+      ),
+    );
     return null;
   });
 }
 
 /** The SI value of a quantity; out of its range it is told and gives none. */
-export function value(lowering: Lowering, placed: PlacedClause, quantity: Quantity, what: Measured): number | null {
+export function value(
+  lowering: Lowering,
+  placed: PlacedClause,
+  quantity: Quantity,
+  what: Measured,
+): number | null {
   const measured = measure(quantity, what);
   if (measured.problem === null) return measured.value;
   lowering.findings.push(findingAt("out-of-range", placed, measured.problem, { span: quantity.span }));
@@ -136,7 +179,14 @@ function interval(lowering: Lowering, placed: PlacedClause, range: Range, what: 
   const high = value(lowering, placed, range.to, what);
   if (low === null || high === null) return null;
   if (low < high) return { low, high };
-  lowering.findings.push(findingAt("out-of-range", placed, "A range goes from the lower figure to the higher one: turn them round.", { span: range.span }));
+  lowering.findings.push(
+    findingAt(
+      "out-of-range",
+      placed,
+      "A range goes from the lower figure to the higher one: turn them round.",
+      { span: range.span },
+    ),
+  );
   return null;
 }
 
@@ -159,15 +209,40 @@ function lowerWing(lowering: Lowering, placed: PlacedClause, body: Of<"wing">) {
   return slope === null ? null : { area, chord, slope };
 }
 
-function limitSpeed(lowering: Lowering, kind: "vmo" | "vmca" | "vne" | "vno", configurations: readonly Configuration[]): Stated<CardSpeed> | null {
-  return stated(lowering, kind, (placed, body) => cardSpeed(lowering, placed, body.speed, body.ias, configurations.some((one) => one.ias !== null)));
+function limitSpeed(
+  lowering: Lowering,
+  kind: "vmo" | "vmca" | "vne" | "vno",
+  configurations: readonly Configuration[],
+): Stated<CardSpeed> | null {
+  return stated(lowering, kind, (placed, body) =>
+    cardSpeed(
+      lowering,
+      placed,
+      body.speed,
+      body.ias,
+      configurations.some((one) => one.ias !== null),
+    ),
+  );
 }
 
-function cardSpeed(lowering: Lowering, placed: PlacedClause, quantity: Quantity, ias: boolean, hasTable: boolean): CardSpeed | null {
+function cardSpeed(
+  lowering: Lowering,
+  placed: PlacedClause,
+  quantity: Quantity,
+  ias: boolean,
+  hasTable: boolean,
+): CardSpeed | null {
   const speed = value(lowering, placed, quantity, "speed");
   if (speed === null) return null;
   if (!ias || hasTable) return { speed, ias };
-  lowering.findings.push(findingAt("missing-value", placed, "An indicated speed needs an ias table in this card: write one with `ias`, or the calibrated speed.", { span: quantity.span }));
+  lowering.findings.push(
+    findingAt(
+      "missing-value",
+      placed,
+      "An indicated speed needs an ias table in this card: write one with `ias`, or the calibrated speed.",
+      { span: quantity.span },
+    ),
+  );
   return null;
 }
 
@@ -183,14 +258,25 @@ function lowerContaminants(lowering: Lowering): readonly Contaminant[] {
   );
   const spoilt = site.block.clauses.flatMap((placed): Contaminant[] => {
     const body = placed.clause.body;
-    return !placed.counts && body?.kind === "contaminant" ? [{ name: body.name.text, loss: null, rain: false, origin: originOf(site, placed) }] : [];
+    return !placed.counts && body?.kind === "contaminant"
+      ? [{ name: body.name.text, loss: null, rain: false, origin: originOf(site, placed) }]
+      : [];
   });
   return [...found, ...spoilt];
 }
 
-function lowerConfigurations(lowering: Lowering, basis: Basis | null, referenceMass: number | null): readonly Configuration[] {
+function lowerConfigurations(
+  lowering: Lowering,
+  basis: Basis | null,
+  referenceMass: number | null,
+): readonly Configuration[] {
   const { site } = lowering;
-  return [...all(site.block, "config").map(({ placed, body }) => lowerConfiguration(lowering, placed, body, basis, referenceMass)), ...spoiltConfigurations(lowering)];
+  return [
+    ...all(site.block, "config").map(({ placed, body }) =>
+      lowerConfiguration(lowering, placed, body, basis, referenceMass),
+    ),
+    ...spoiltConfigurations(lowering),
+  ];
 }
 
 /** A configuration in error keeps its name, so that a plan that flies it waits for it, and gives no figure. */
@@ -218,40 +304,64 @@ function spoiltConfigurations({ site }: Lowering): readonly Configuration[] {
   return [...spoilt.values()];
 }
 
-function lowerConfiguration(lowering: Lowering, placed: PlacedClause, body: Of<"config">, basis: Basis | null, referenceMass: number | null): Configuration {
-    const { site } = lowering;
-    const named = { lowering, name: body.name.text };
-    const ias = configTable(named, "ias", { argument: "speed", value: "speed", unit: "rising" });
-    const stall = attribute(body, "stall");
-    const stallValue = stall ? value(lowering, placed, stall.speed, "speed") : null;
-    if (!stall) {
-      lowering.findings.push(findingAt("missing-value", placed, `${body.name.text} needs its stall speed: write \`stall\` and the speed after the name.`, { span: body.name.span }));
-    }
-    const statedStall =
-      stall?.ias && stallValue !== null ? calibratedStall(lowering, placed, stall.speed, stallValue, ias, referenceMass) : stallValue;
-    const load = attribute(body, "load");
-    const vfe = attribute(body, "vfe");
-    const at = (span: { start: number; end: number }): Origin => ({ ...originOf(site, placed), span });
-    const liftMach = configTable(named, "lift-mach", { argument: "mach", value: "factor", unit: null });
-    const buffet = configTable(named, "buffet", { argument: "mach", value: "liftCoefficient", unit: null });
-    return {
-      name: body.name.text,
-      origin: at(body.name.span),
-      statedStall,
-      stallSpeed: statedStall !== null && basis ? statedStall / basis.factor : null,
-      load: load ? { value: interval(lowering, placed, load.range, "load"), origin: at(load.span) } : null,
-      vfe: vfe ? { value: cardSpeed(lowering, placed, vfe.speed, vfe.ias, ias !== null), origin: at(vfe.span) } : null,
-      takeoff: attribute(body, "takeoff") !== null,
-      landing: attribute(body, "landing") !== null,
-      liftMach: liftMach && { value: liftMach.value, origin: liftMach.origin },
-      buffet: buffet && { value: buffet.value, origin: buffet.origin, cg: buffet.cg },
-      ias,
-      published: { vref: published(named, "vref"), v2min: published(named, "v2min"), vfto: published(named, "vfto") },
-    };
+function lowerConfiguration(
+  lowering: Lowering,
+  placed: PlacedClause,
+  body: Of<"config">,
+  basis: Basis | null,
+  referenceMass: number | null,
+): Configuration {
+  const { site } = lowering;
+  const named = { lowering, name: body.name.text };
+  const ias = configTable(named, "ias", { argument: "speed", value: "speed", unit: "rising" });
+  const stall = attribute(body, "stall");
+  const stallValue = stall ? value(lowering, placed, stall.speed, "speed") : null;
+  if (!stall) {
+    lowering.findings.push(
+      findingAt(
+        "missing-value",
+        placed,
+        `${body.name.text} needs its stall speed: write \`stall\` and the speed after the name.`,
+        { span: body.name.span },
+      ),
+    );
+  }
+  const statedStall =
+    stall?.ias && stallValue !== null
+      ? calibratedStall(lowering, placed, stall.speed, stallValue, ias, referenceMass)
+      : stallValue;
+  const load = attribute(body, "load");
+  const vfe = attribute(body, "vfe");
+  const at = (span: { start: number; end: number }): Origin => ({ ...originOf(site, placed), span });
+  const liftMach = configTable(named, "lift-mach", { argument: "mach", value: "factor", unit: null });
+  const buffet = configTable(named, "buffet", { argument: "mach", value: "liftCoefficient", unit: null });
+  return {
+    name: body.name.text,
+    origin: at(body.name.span),
+    statedStall,
+    stallSpeed: statedStall !== null && basis ? statedStall / basis.factor : null,
+    load: load ? { value: interval(lowering, placed, load.range, "load"), origin: at(load.span) } : null,
+    vfe: vfe
+      ? { value: cardSpeed(lowering, placed, vfe.speed, vfe.ias, ias !== null), origin: at(vfe.span) }
+      : null,
+    takeoff: attribute(body, "takeoff") !== null,
+    landing: attribute(body, "landing") !== null,
+    liftMach: liftMach && { value: liftMach.value, origin: liftMach.origin },
+    buffet: buffet && { value: buffet.value, origin: buffet.origin, cg: buffet.cg },
+    ias,
+    published: {
+      vref: published(named, "vref"),
+      v2min: published(named, "v2min"),
+      vfto: published(named, "vfto"),
+    },
+  };
 }
 
 function attribute<K extends ConfigAttribute["kind"]>(body: Of<"config">, kind: K) {
-  return (body.attributes.find((one) => one.kind === kind) ?? null) as Extract<ConfigAttribute, { kind: K }> | null;
+  return (body.attributes.find((one) => one.kind === kind) ?? null) as Extract<
+    ConfigAttribute,
+    { kind: K }
+  > | null;
 }
 
 interface Named {
@@ -271,7 +381,9 @@ function configTable({ lowering, name }: Named, kind: "ias" | "lift-mach" | "buf
     return { value: placed.counts ? lowerTable(lowering, placed, body.table, pairs) : null, origin, cg };
   }
   // A table that was not understood names no configuration, so it may be this one's.
-  const lost = site.block.clauses.find((placed) => !placed.counts && placed.clause.keyword === kind && !placed.clause.body);
+  const lost = site.block.clauses.find(
+    (placed) => !placed.counts && placed.clause.keyword === kind && !placed.clause.body,
+  );
   return lost ? { value: null, origin: originOf(site, lost), cg: null } : null;
 }
 
@@ -279,11 +391,21 @@ function published({ lowering, name }: Named, speed: "vref" | "v2min" | "vfto") 
   const { site } = lowering;
   for (const placed of site.block.clauses) {
     const body = placed.clause.body;
-    if (body?.kind !== "published" || body.speed !== speed || body.config.text.toLowerCase() !== name.toLowerCase()) continue;
+    if (
+      body?.kind !== "published" ||
+      body.speed !== speed ||
+      body.config.text.toLowerCase() !== name.toLowerCase()
+    )
+      continue;
     const pairs: PairKinds = { argument: "mass", value: "speed", unit: null };
-    return { value: placed.counts ? lowerTable(lowering, placed, body.table, pairs) : null, origin: originOf(site, placed) };
+    return {
+      value: placed.counts ? lowerTable(lowering, placed, body.table, pairs) : null,
+      origin: originOf(site, placed),
+    };
   }
-  const lost = site.block.clauses.find((placed) => !placed.counts && placed.clause.keyword === "published" && !placed.clause.body);
+  const lost = site.block.clauses.find(
+    (placed) => !placed.counts && placed.clause.keyword === "published" && !placed.clause.body,
+  );
   return lost ? { value: null, origin: originOf(site, lost) } : null;
 }
 
@@ -301,10 +423,15 @@ function whyWithheld(lowering: Lowering, card: Card): Card["withheld"] {
   if (card.configurations.length === 0 && !spoiltConfig) missing.push("config");
   if (missing.length > 0) {
     findings.push(
-      findingAt("missing-value", head, `The card ${card.name} needs ${listed(missing.map((one) => `\`${one}\``))}, and does not state ${missing.length === 1 ? "it" : "them"}.`, {
-        span: card.origin.span,
-        fixes: missing.map((one) => stateFix(site.block, one, `Write ${one}`)),
-      }),
+      findingAt(
+        "missing-value",
+        head,
+        `The card ${card.name} needs ${listed(missing.map((one) => `\`${one}\``))}, and does not state ${missing.length === 1 ? "it" : "them"}.`,
+        {
+          span: card.origin.span,
+          fixes: missing.map((one) => stateFix(site.block, one, `Write ${one}`)),
+        },
+      ),
     );
     return { origin: card.origin, code: "missing-value" };
   }
@@ -313,4 +440,3 @@ function whyWithheld(lowering: Lowering, card: Card): Card["withheld"] {
   }
   return null;
 }
-

@@ -38,7 +38,14 @@ export function lowerLimits(block: Block, uri: string): LimitsDraft {
     return lowered ? [lowered] : [];
   });
   if (name.toLowerCase() === BUILT_IN_NAME && uri !== BUILT_IN_URI) {
-    findings.push(findingAt("duplicate-name", head, `${BUILT_IN_NAME} is the name of the built-in limits: give these another name; \`from ${BUILT_IN_NAME}\` takes its rows.`, { span: origin.span }));
+    findings.push(
+      findingAt(
+        "duplicate-name",
+        head,
+        `${BUILT_IN_NAME} is the name of the built-in limits: give these another name; \`from ${BUILT_IN_NAME}\` takes its rows.`,
+        { span: origin.span },
+      ),
+    );
   }
   const unknown = block.clauses.find((placed) => placed.clause.keyword === null);
   return {
@@ -47,8 +54,14 @@ export function lowerLimits(block: Block, uri: string): LimitsDraft {
     origin,
     block,
     source: lowerSource(block),
-    from: body?.from ? { name: body.from.text, placed: head, origin: { ...origin, span: body.from.span } } : null,
-    withheld: unknown ? { origin: originOf(site, unknown), code: "unknown-keyword" } : body ? null : { origin, code: "missing-argument" },
+    from: body?.from
+      ? { name: body.from.text, placed: head, origin: { ...origin, span: body.from.span } }
+      : null,
+    withheld: unknown
+      ? { origin: originOf(site, unknown), code: "unknown-keyword" }
+      : body
+        ? null
+        : { origin, code: "missing-argument" },
     rows,
     findings,
   };
@@ -64,7 +77,13 @@ const measuredAs: Readonly<Record<Subject, Measured>> = {
   buffet: "factor",
 };
 
-function lowerRow(site: Site, placed: PlacedClause, body: BodyOf<"row">, limitsName: string, findings: Finding[]): Row | null {
+function lowerRow(
+  site: Site,
+  placed: PlacedClause,
+  body: BodyOf<"row">,
+  limitsName: string,
+  findings: Finding[],
+): Row | null {
   const inside = (quantity: Parameters<typeof measure>[0], what: Measured): number | null => {
     const { value, problem } = measure(quantity, what);
     if (problem === null) return value;
@@ -99,14 +118,22 @@ function lowerRow(site: Site, placed: PlacedClause, body: BodyOf<"row">, limitsN
   };
 }
 
-function isWhen(condition: RowCondition): condition is Extract<RowCondition, { kind: "ifr" | "vfr" | "engine-out" | "after-shear" }> & { kind: "ifr" | "vfr" | "engine-out" } {
+function isWhen(
+  condition: RowCondition,
+): condition is Extract<RowCondition, { kind: "ifr" | "vfr" | "engine-out" | "after-shear" }> & {
+  kind: "ifr" | "vfr" | "engine-out";
+} {
   return condition.kind === "ifr" || condition.kind === "vfr" || condition.kind === "engine-out";
 }
 
 /** The row as messages quote it, with single blanks and no remark; and the remark behind it, which names its source. */
 function quoted(block: Block, { line, clause }: PlacedClause): { text: string; remark: string | null } {
   const whole = block.lines[line]?.text ?? "";
-  const text = whole.slice(clause.span.start, clause.span.end).replace(/\([^()]*\)/g, " ").replace(/\s+/g, " ").trim();
+  const text = whole
+    .slice(clause.span.start, clause.span.end)
+    .replace(/\([^()]*\)/g, " ")
+    .replace(/\s+/g, " ")
+    .trim();
   const behind = /^\s*\((.*?)\)\s*(;|$)/.exec(whole.slice(clause.span.end));
   return { text, remark: behind?.[1]?.trim() ?? null };
 }
@@ -119,27 +146,55 @@ export function resolveLimits(draft: LimitsDraft, drafts: readonly LimitsDraft[]
 function resolve(draft: LimitsDraft, drafts: readonly LimitsDraft[], chain: readonly LimitsDraft[]): Limits {
   const { name, title, origin, block, source } = draft;
   const base = { name, title, origin, block, source, builtIn: origin.uri === BUILT_IN_URI };
-  if (!draft.from || draft.withheld) return { ...base, withheld: draft.withheld, rows: draft.rows, findings: draft.findings };
+  if (!draft.from || draft.withheld)
+    return { ...base, withheld: draft.withheld, rows: draft.rows, findings: draft.findings };
   const taken = takenFrom(draft, drafts, chain);
   if ("finding" in taken) {
     const withheld = { origin: draft.from.origin, code: taken.finding.code };
     return { ...base, withheld, rows: [], findings: [...draft.findings, taken.finding] };
   }
   const own = new Set(draft.rows.map(rowKey));
-  return { ...base, withheld: null, rows: [...taken.rows.filter((row) => !own.has(rowKey(row))), ...draft.rows], findings: draft.findings };
+  return {
+    ...base,
+    withheld: null,
+    rows: [...taken.rows.filter((row) => !own.has(rowKey(row))), ...draft.rows],
+    findings: draft.findings,
+  };
 }
 
-function takenFrom(draft: LimitsDraft, drafts: readonly LimitsDraft[], chain: readonly LimitsDraft[]): { rows: readonly Row[] } | { finding: Finding } {
+function takenFrom(
+  draft: LimitsDraft,
+  drafts: readonly LimitsDraft[],
+  chain: readonly LimitsDraft[],
+): { rows: readonly Row[] } | { finding: Finding } {
   const from = draft.from as NonNullable<LimitsDraft["from"]>;
-  const tell = (code: "unknown-limits" | "duplicate-name" | "broken-definition", message: string) => ({ finding: findingAt(code, from.placed, message, { span: from.origin.span }) });
+  const tell = (code: "unknown-limits" | "duplicate-name" | "broken-definition", message: string) => ({
+    finding: findingAt(code, from.placed, message, { span: from.origin.span }),
+  });
   const wanted = from.name.toLowerCase();
   const found = drafts.filter((one) => one.name.toLowerCase() === wanted);
   const first = found[0];
-  if (!first) return tell("unknown-limits", `No limits in this folder are called ${from.name}, so none of these rows is held: check the name after \`from\`.`);
-  if (found.length > 1) return tell("duplicate-name", `${from.name} is the name of ${found.length} sets of limits, so none of these rows is held: keep one, or rename the others.`);
-  if (first === draft || chain.includes(first)) return tell("broken-definition", `${draft.name} takes its rows from ${from.name}, which takes them from ${draft.name}: let one of them stand by itself.`);
+  if (!first)
+    return tell(
+      "unknown-limits",
+      `No limits in this folder are called ${from.name}, so none of these rows is held: check the name after \`from\`.`,
+    );
+  if (found.length > 1)
+    return tell(
+      "duplicate-name",
+      `${from.name} is the name of ${found.length} sets of limits, so none of these rows is held: keep one, or rename the others.`,
+    );
+  if (first === draft || chain.includes(first))
+    return tell(
+      "broken-definition",
+      `${draft.name} takes its rows from ${from.name}, which takes them from ${draft.name}: let one of them stand by itself.`,
+    );
   const limits = resolve(first, drafts, [...chain, draft]);
-  if (limits.withheld) return tell("broken-definition", `${from.name} has an error, so its rows cannot be taken and none of these is held: mend it first.`);
+  if (limits.withheld)
+    return tell(
+      "broken-definition",
+      `${from.name} has an error, so its rows cannot be taken and none of these is held: mend it first.`,
+    );
   return { rows: limits.rows };
 }
 
@@ -150,6 +205,8 @@ function rowKey(row: Row): string {
 
 /** The conditions of a row, in one spelling. */
 export function conditionsKey(row: Row): string {
-  const levels = row.levels.map((one) => `${one.kind} ${one.flightLevel ? "FL" : "alt"} ${one.altitude}`).sort();
+  const levels = row.levels
+    .map((one) => `${one.kind} ${one.flightLevel ? "FL" : "alt"} ${one.altitude}`)
+    .sort();
   return [...levels, ...[...row.when].sort(), row.afterShear ? "after shear" : ""].join(",");
 }

@@ -13,12 +13,18 @@ export interface PairKinds {
 }
 
 /** A table in SI. Null, after a finding, where a pair is out of range or the arguments do not rise. */
-export function lowerTable(lowering: Lowering, placed: PlacedClause, table: PairTable, kinds: PairKinds): Table | null {
+export function lowerTable(
+  lowering: Lowering,
+  placed: PlacedClause,
+  table: PairTable,
+  kinds: PairKinds,
+): Table | null {
   const bad = (message: string, span = table.span) => {
     lowering.findings.push(findingAt("bad-table", placed, message, { span }));
     return null;
   };
-  if (table.pairs.length < 2) return bad("A table needs two pairs or more, since nothing is extrapolated: add a pair after a comma.");
+  if (table.pairs.length < 2)
+    return bad("A table needs two pairs or more, since nothing is extrapolated: add a pair after a comma.");
   const xs: number[] = [];
   const values: number[] = [];
   for (const pair of table.pairs) {
@@ -27,10 +33,16 @@ export function lowerTable(lowering: Lowering, placed: PlacedClause, table: Pair
     if (x === null || y === null) return null;
     const last = xs.length - 1;
     if (last >= 0 && !((xs[last] as number) < x)) {
-      return bad("The first number of each pair must be greater than the one before it: put the pairs in order.", pair.span);
+      return bad(
+        "The first number of each pair must be greater than the one before it: put the pairs in order.",
+        pair.span,
+      );
     }
     if (kinds.unit === "rising" && last >= 0 && !((values[last] as number) < y)) {
-      return bad("Both columns of this table must rise, for it is read both ways: check the pair.", pair.span);
+      return bad(
+        "Both columns of this table must rise, for it is read both ways: check the pair.",
+        pair.span,
+      );
     }
     xs.push(x);
     values.push(y);
@@ -38,7 +50,12 @@ export function lowerTable(lowering: Lowering, placed: PlacedClause, table: Pair
   return { arguments: xs, values };
 }
 
-function convert(lowering: Lowering, placed: PlacedClause, quantity: Quantity, what: PairKinds["argument"]): number | null {
+function convert(
+  lowering: Lowering,
+  placed: PlacedClause,
+  quantity: Quantity,
+  what: PairKinds["argument"],
+): number | null {
   // A table against Mach number may begin at 0, where no aeroplane flies.
   if (what === "machFromZero") return quantity.value === 0 ? 0 : convert(lowering, placed, quantity, "mach");
   const { value, problem } = measure(quantity, what);

@@ -1,4 +1,5 @@
 import type { PlacedClause } from "../notation/block.ts";
+import { nearestWord } from "../notation/spelling.ts";
 import type { Name } from "../notation/tree.ts";
 import type { Card } from "./card.ts";
 import type { Applying } from "./carry.ts";
@@ -8,9 +9,8 @@ import { catalogue } from "./findings.ts";
 import type { Limits } from "./limits.ts";
 import { lineOf, type Origin } from "./origin.ts";
 import { findingAt, listed } from "./site.ts";
-import { nearestWord } from "../notation/spelling.ts";
-import type { AppliedLimits, Contamination, FlownAircraft } from "./state.ts";
 import { exactly } from "./spread.ts";
+import type { AppliedLimits, Contamination, FlownAircraft } from "./state.ts";
 
 /** What `fly NAME` names. `code` is the finding that keeps the card from giving figures. */
 export function flyCard(
@@ -71,7 +71,9 @@ export function underLimits(
     return { name: name.text, limits: null };
   }
   const nearest = found.nearest;
-  const hint = nearest ? `did you mean ${nearest.name} (${place(nearest.origin, site.uri)})?` : "limits begin with `limits`.";
+  const hint = nearest
+    ? `did you mean ${nearest.name} (${place(nearest.origin, site.uri)})?`
+    : "limits begin with `limits`.";
   findings.push(
     findingAt(
       "unknown-limits",
@@ -129,12 +131,19 @@ const harmless = new Set(["separator", "unclosed-remark", "unclosed-title"]);
 
 /** The first finding that costs a definition something. */
 function firstError({ block, findings }: Card | Limits): Pick<Finding, "line" | "span" | "message"> | null {
-  const text = block.findings.filter((one) => catalogue[one.code].severity === "error" && !harmless.has(one.code));
+  const text = block.findings.filter(
+    (one) => catalogue[one.code].severity === "error" && !harmless.has(one.code),
+  );
   const errors = [...text, ...findings.filter((one) => one.severity === "error")];
   return errors.sort((a, b) => a.line - b.line || a.span.start - b.span.start)[0] ?? null;
 }
 
-function givenTwice(placed: PlacedClause, name: Name, what: "card" | "limits", places: readonly Origin[]): Finding {
+function givenTwice(
+  placed: PlacedClause,
+  name: Name,
+  what: "card" | "limits",
+  places: readonly Origin[],
+): Finding {
   return findingAt(
     "duplicate-name",
     placed,
@@ -168,7 +177,9 @@ export function useContaminant(
   }
   const found = card.contaminants.find((one) => one.name.toLowerCase() === name.text.toLowerCase());
   if (found) {
-    return found.loss === null ? null : { loss: exactly(found.loss), contaminant: found.name, rain: found.rain };
+    return found.loss === null
+      ? null
+      : { loss: exactly(found.loss), contaminant: found.name, rain: found.rain };
   }
   const names = card.contaminants.map((one) => one.name);
   const nearest = nearestWord(name.text, names);
@@ -204,7 +215,13 @@ export function unknownConfiguration(card: Card, placed: PlacedClause, name: str
       related: [{ origin: card.origin, message: `The card ${card.name}.` }],
       fixes:
         nearest && body?.kind === "config"
-          ? [{ title: `Write ${nearest}`, preferred: true, edits: [{ line: placed.line, ...span, newText: nearest }] }]
+          ? [
+              {
+                title: `Write ${nearest}`,
+                preferred: true,
+                edits: [{ line: placed.line, ...span, newText: nearest }],
+              },
+            ]
           : [],
     },
   );

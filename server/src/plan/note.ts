@@ -9,10 +9,31 @@ import type { State } from "./state.ts";
 
 /** What one block came to. */
 export type BlockResult =
-  | { readonly kind: "point"; readonly block: Block; readonly point: PointResult; readonly after: State; readonly findings: readonly Finding[] }
-  | { readonly kind: "setting"; readonly block: Block; readonly after: State; readonly findings: readonly Finding[] }
-  | { readonly kind: "card"; readonly block: Block; readonly card: Card; readonly findings: readonly Finding[] }
-  | { readonly kind: "limits"; readonly block: Block; readonly limits: Limits; readonly findings: readonly Finding[] };
+  | {
+      readonly kind: "point";
+      readonly block: Block;
+      readonly point: PointResult;
+      readonly after: State;
+      readonly findings: readonly Finding[];
+    }
+  | {
+      readonly kind: "setting";
+      readonly block: Block;
+      readonly after: State;
+      readonly findings: readonly Finding[];
+    }
+  | {
+      readonly kind: "card";
+      readonly block: Block;
+      readonly card: Card;
+      readonly findings: readonly Finding[];
+    }
+  | {
+      readonly kind: "limits";
+      readonly block: Block;
+      readonly limits: Limits;
+      readonly findings: readonly Finding[];
+    };
 
 /** A finding with its line in the file, from 0. */
 export interface PlacedFinding {

@@ -1,19 +1,19 @@
 import type { Block } from "../notation/block.ts";
 import type { BlockChange, Flavour, Position } from "../notation/document.ts";
 import { openDocument } from "../notation/openDocument.ts";
-import type { Definitions } from "./definitions.ts";
+import type { Card } from "./card.ts";
 import { type Clauses, sortClauses } from "./clauses.ts";
+import type { Definitions } from "./definitions.ts";
 import { evaluateBlock, textFindings } from "./evaluateBlock.ts";
 import type { Finding } from "./finding.ts";
 import { catalogue } from "./findings.ts";
+import type { Limits } from "./limits.ts";
 import { lowerCard } from "./lowerCard.ts";
 import { type LimitsDraft, lowerLimits } from "./lowerLimits.ts";
 import type { BlockResult, Note, PlacedFinding } from "./note.ts";
 import type { Anchor } from "./origin.ts";
 import type { Site } from "./site.ts";
-import { sameState, startState, type State } from "./state.ts";
-import type { Card } from "./card.ts";
-import type { Limits } from "./limits.ts";
+import { type State, sameState, startState } from "./state.ts";
 
 /** What a folder gives its notes: everything that one note cannot know of itself. */
 export interface Surroundings {
@@ -161,7 +161,12 @@ class OpenNote implements FolderNote {
       come.push(old?.block === block ? old : this.#entry(block, placeFor(block, old)));
     }
     spliceAll(this.#entries, from, removed, come);
-    spliceAll(this.#results, from, removed, come.map((entry) => entry.result as BlockResult));
+    spliceAll(
+      this.#results,
+      from,
+      removed,
+      come.map((entry) => entry.result as BlockResult),
+    );
     this.#dirtyFrom = Math.min(this.#dirtyFrom, from);
     this.#dirtyTo = Math.max(from + added, this.#dirtyTo + added - removed);
     if (gone.some(tells)) this.#telling = null;
@@ -222,7 +227,11 @@ class OpenNote implements FolderNote {
     if (told || tells(entry)) this.#telling = null;
   }
 
-  #resultOf({ block, card, draft, place, clauses }: Entry, definitions: Definitions, before: State): BlockResult {
+  #resultOf(
+    { block, card, draft, place, clauses }: Entry,
+    definitions: Definitions,
+    before: State,
+  ): BlockResult {
     if (card) return { kind: "card", block, card, findings: [...textFindings(block), ...card.findings] };
     if (draft) {
       const limits = this.#around.resolved(draft);

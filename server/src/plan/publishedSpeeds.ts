@@ -13,7 +13,12 @@ export function publishedFindings(card: Card, site: Site): readonly Finding[] {
   );
 }
 
-function belowLeast(card: Card, configuration: Configuration, name: "v2min" | "vfto" | "vref", site: Site): Finding[] {
+function belowLeast(
+  card: Card,
+  configuration: Configuration,
+  name: "v2min" | "vfto" | "vref",
+  site: Site,
+): Finding[] {
   const stated = configuration.published[name];
   const table = stated?.value;
   const referenceMass = card.referenceMass?.value;
@@ -27,7 +32,9 @@ function belowLeast(card: Card, configuration: Configuration, name: "v2min" | "v
     const least = leastOf(card, name, own, basis.kind);
     if (least * (1 - ALLOWANCE) <= published) continue;
     const [written, lowest] = formatDistinct(published, least, (mps, more) => formatSpeed(mps, more));
-    const placed = site.block.clauses.find((one) => one.line === stated.origin.line && one.clause.span.start === stated.origin.span.start) as PlacedClause;
+    const placed = site.block.clauses.find(
+      (one) => one.line === stated.origin.line && one.clause.span.start === stated.origin.span.start,
+    ) as PlacedClause;
     return [
       findingAt(
         "published-below-least",
@@ -39,7 +46,12 @@ function belowLeast(card: Card, configuration: Configuration, name: "v2min" | "v
   return [];
 }
 
-function leastOf(card: Card, name: "v2min" | "vfto" | "vref", stall: number, basis: "vsr" | "vs1g" | "vs"): number {
+function leastOf(
+  card: Card,
+  name: "v2min" | "vfto" | "vref",
+  stall: number,
+  basis: "vsr" | "vs1g" | "vs",
+): number {
   switch (name) {
     case "v2min": {
       const vmca = card.vmca?.value;

@@ -41,7 +41,13 @@ interface Measure {
   readonly noun: string;
 }
 
-function span(noun: string, least: number, most: number, open: Measure["open"] = null, bare: Unit | null = null): Measure {
+function span(
+  noun: string,
+  least: number,
+  most: number,
+  open: Measure["open"] = null,
+  bare: Unit | null = null,
+): Measure {
   return { noun, least, most, open, bare };
 }
 
@@ -121,7 +127,8 @@ function outOfRange(quantity: Quantity, rule: Measure, unit: Unit | null, what: 
 /** An end of a range in the author's own unit, to as many digits as say it. */
 function shown(si: number, unit: Unit | null, what: Measured): string {
   if (unit === "FL") return `FL${String(Math.max(0, Math.round(fromSI(si, "FL")))).padStart(3, "0")}`;
-  const value = unit === null ? si : what === "oat" ? (unit === "C" ? si - 273.15 : si) : fromSI(si, unit as UnitName);
+  const value =
+    unit === null ? si : what === "oat" ? (unit === "C" ? si - 273.15 : si) : fromSI(si, unit as UnitName);
   return String(Number(value.toPrecision(4)));
 }
 
@@ -132,4 +139,3 @@ export function measureTolerance(tolerance: Tolerance, unit: Unit | null, what: 
   // A tolerance on a temperature is a difference, which toSI gives.
   return toSI(tolerance.value, own);
 }
-

@@ -22,7 +22,9 @@ export function referenceConfiguration(
 ): Configuration | { readonly why: string } {
   switch (name) {
     case "v2min":
-      return configuration.takeoff ? configuration : { why: `${configuration.name} is not marked takeoff in the card.` };
+      return configuration.takeoff
+        ? configuration
+        : { why: `${configuration.name} is not marked takeoff in the card.` };
     case "vfto":
       return (
         card.configurations.find((one) => one.name.toLowerCase() === "clean") ?? {
@@ -115,6 +117,7 @@ export function manoeuvringCas(
     { mass, load: limit.value.high, liftLoss: 0, cgFactor: factors.least },
     air,
   );
-  if (stall.kind !== "speed") return { why: "At this altitude the limit load factor is not reached before the lift table ends." };
+  if (stall.kind !== "speed")
+    return { why: "At this altitude the limit load factor is not reached before the lift table ends." };
   return { cas: stall.cas };
 }

@@ -4,8 +4,8 @@ import type { FindingCode } from "./findings.ts";
 import { formatBank, formatDistinct, formatRadius, formatResultValue, formatSpeed } from "./format.ts";
 import type { Row } from "./limits.ts";
 import type { HeldRow } from "./point.ts";
-import { holdRow, strictest } from "./rules.ts";
 import { ratioFix } from "./ratioFix.ts";
+import { holdRow, strictest } from "./rules.ts";
 import { rowsInForce } from "./selectRows.ts";
 import { oneStepLower } from "./site.ts";
 
@@ -22,7 +22,11 @@ export function checkRules(checking: Checking): RuleOutcome {
   const { point, evaluated } = checking;
   const { limits, name } = point.limits;
   if (!limits) {
-    return { rows: [], off: [], notEvaluated: [{ rule: `limits ${name}`, why: "They cannot be used, so no row is held." }] };
+    return {
+      rows: [],
+      off: [],
+      notEvaluated: [{ rule: `limits ${name}`, why: "They cannot be used, so no row is held." }],
+    };
   }
   if (!point.phase) return { rows: [], off: [], notEvaluated: [] };
   const { conditions, ready, corners } = evaluated;
@@ -70,7 +74,9 @@ function notApplicable(subject: Subject, { evaluated }: Checking): boolean {
   if (subject === "radius") return all.every((one) => one.bank === 0);
   if (subject === "margin") return nominal.stall === 0;
   // Where the warning has come already there is no bank left to count: that is told as an error of its own.
-  return subject === "overshoot" && all.some((one) => one.cas <= one.warning && Number.isNaN(one.warningBank));
+  return (
+    subject === "overshoot" && all.some((one) => one.cas <= one.warning && Number.isNaN(one.warningBank))
+  );
 }
 
 const codes: Readonly<Record<Subject, FindingCode>> = {
@@ -92,7 +98,12 @@ function tellBroken(checking: Checking, held: HeldRow): void {
   const { point } = checking;
   const { row } = held;
   const code = row.subject === "bank" && row.verb === "should" ? "bank-over-advice" : codes[row.subject];
-  const keyword = row.subject === "bank" || row.subject === "radius" || row.subject === "overshoot" ? "bank" : row.subject === "load" ? "load" : "speed";
+  const keyword =
+    row.subject === "bank" || row.subject === "radius" || row.subject === "overshoot"
+      ? "bank"
+      : row.subject === "load"
+        ? "load"
+        : "speed";
   const fix = row.subject === "ratio" ? ratioFix(checking, held) : null;
   tell(checking, code, clauseFor(point, keyword), message(checking, held), {
     severity: severityOf(checking, row),
@@ -118,7 +129,9 @@ function message(checking: Checking, held: HeldRow): string {
       return `${lead}Bank ${flown} exceeds the ${most} that ${rule}${why}; ${warningAt(checking)}.`;
     }
     case "load": {
-      const [flown, most] = formatDistinct(figure, bound, (value, more) => formatResultValue("load", value, more));
+      const [flown, most] = formatDistinct(figure, bound, (value, more) =>
+        formatResultValue("load", value, more),
+      );
       return `${lead}The load factor ${flown} exceeds the ${most} that ${rule}: bank or pull less.`;
     }
     case "radius": {
@@ -127,19 +140,27 @@ function message(checking: Checking, held: HeldRow): string {
     }
     case "ratio": {
       const of = checking.evaluated.ready.card.basis?.value?.kind === "vs" && row.vs !== null ? "vs" : "vs1g";
-      const [flown, least] = formatDistinct(figure, bound, (value, more) => formatResultValue("ratio", value, more));
+      const [flown, least] = formatDistinct(figure, bound, (value, more) =>
+        formatResultValue("ratio", value, more),
+      );
       return `${lead}The speed is ${flown} times ${of} and ${asks} ${least}: fly ${knotsMissing(checking, held)} faster, or lighter.`;
     }
     case "margin": {
-      const [flown, least] = formatDistinct(figure, bound, (value, more) => formatResultValue("margin", value, more));
+      const [flown, least] = formatDistinct(figure, bound, (value, more) =>
+        formatResultValue("margin", value, more),
+      );
       return `${lead}The margin over the stall is ${flown} and ${asks} ${least}: fly faster or bank less.`;
     }
     case "overshoot": {
-      const [left, least] = formatDistinct(figure, bound, (value, more) => formatResultValue("overshoot", value, more));
+      const [left, least] = formatDistinct(figure, bound, (value, more) =>
+        formatResultValue("overshoot", value, more),
+      );
       return `${lead}Only ${left} of bank are left to the warning and ${asks} ${least}: bank less or fly faster.`;
     }
     case "buffet": {
-      const [onset, least] = formatDistinct(figure, bound, (value, more) => formatResultValue("buffet-load", value, more));
+      const [onset, least] = formatDistinct(figure, bound, (value, more) =>
+        formatResultValue("buffet-load", value, more),
+      );
       return `${lead}Buffet begins at a load factor of ${onset} and ${asks} ${least}: fly lower or lighter.`;
     }
   }

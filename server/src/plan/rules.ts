@@ -26,7 +26,13 @@ export function holdRow(row: Row, situation: RowSituation): HeldRow {
   if (bound === null || figure === null) {
     return { row, bound: bound?.value ?? Number.NaN, figure: null, holds: null, byRateOne: false };
   }
-  return { row, bound: bound.value, figure, holds: keeps(row, bound.value, figure), byRateOne: bound.byRateOne };
+  return {
+    row,
+    bound: bound.value,
+    figure,
+    holds: keeps(row, bound.value, figure),
+    byRateOne: bound.byRateOne,
+  };
 }
 
 function keeps(row: Row, bound: number, figure: number): boolean {
@@ -37,7 +43,10 @@ function keeps(row: Row, bound: number, figure: number): boolean {
  * The bound in force. `or rate-one` is a ceiling: whichever bank is less, at the corner where the
  * bank flown is furthest above it.
  */
-function boundOf(row: Row, { corners, vsFactor }: RowSituation): { value: number; byRateOne: boolean } | null {
+function boundOf(
+  row: Row,
+  { corners, vsFactor }: RowSituation,
+): { value: number; byRateOne: boolean } | null {
   if (row.value === null) return null;
   if (vsFactor !== null && row.vs !== null) return { value: row.vs, byRateOne: false };
   if (!row.rateOne) return { value: row.value, byRateOne: false };
@@ -92,4 +101,3 @@ function stricter(one: HeldRow, other: HeldRow): boolean {
   if (one.holds !== other.holds) return one.holds === false || (one.holds === null && other.holds === true);
   return atMost(one.row.subject) ? one.bound < other.bound : other.bound < one.bound;
 }
-

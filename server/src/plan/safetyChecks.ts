@@ -1,7 +1,14 @@
+import { loadFactor } from "../flight/turn.ts";
 import { type Checking, carriedFrom, clauseFor, exerciseSeverity, leastAt, tell } from "./checks.ts";
 import type { Corner } from "./corner.ts";
-import { formatBank, formatDistinct, formatLoad, formatPercent, formatResultValue, formatSpeed } from "./format.ts";
-import { loadFactor } from "../flight/turn.ts";
+import {
+  formatBank,
+  formatDistinct,
+  formatLoad,
+  formatPercent,
+  formatResultValue,
+  formatSpeed,
+} from "./format.ts";
 import { ALLOWANCE } from "./rules.ts";
 import { findingAt } from "./site.ts";
 
@@ -20,7 +27,9 @@ function checkLift(checking: Checking): boolean {
   const { point, evaluated } = checking;
   const { corners, ready } = evaluated;
   const related = carriedFrom(point, ["mass", "altitude"]);
-  const never = corners.all.find((one) => one.stallKind === "no-level-flight" || one.vs1gKind === "no-level-flight");
+  const never = corners.all.find(
+    (one) => one.stallKind === "no-level-flight" || one.vs1gKind === "no-level-flight",
+  );
   if (never) {
     const turning = never.vs1gKind !== "no-level-flight";
     checking.findings.push(
@@ -36,7 +45,8 @@ function checkLift(checking: Checking): boolean {
     return !Number.isNaN(never.stallLoad);
   }
   const outside = corners.all.some(
-    (one) => one.stallKind === "outside-table" || one.vs1gKind === "outside-table" || Number.isNaN(one.stallLoad),
+    (one) =>
+      one.stallKind === "outside-table" || one.vs1gKind === "outside-table" || Number.isNaN(one.stallLoad),
   );
   if (outside) {
     const table = ready.configuration.liftMach;
@@ -68,13 +78,19 @@ function checkStalled(checking: Checking): boolean {
   if (!isStalled(worst)) return false;
   const lead = isStalled(corners.nominal) ? "Stalled: " : "Stalled at the worst of the tolerances: ";
   const [has, needs] = formatDistinct(worst.stallLoad, worst.load, formatLoad);
-  const speed = Number.isNaN(worst.stall) || worst.stall === 0 ? "" : `; the stall comes at ${formatResultValue("stall", worst.stall)}`;
+  const speed =
+    Number.isNaN(worst.stall) || worst.stall === 0
+      ? ""
+      : `; the stall comes at ${formatResultValue("stall", worst.stall)}`;
   tell(
     checking,
     "stalled",
     clauseFor(point, "speed"),
     `${lead}at ${formatSpeed(worst.cas)} the wing carries ${has} g and the point needs ${needs} g${speed}. Fly faster, bank less or fly lighter.`,
-    { severity: exerciseSeverity(point, "stalled"), related: carriedFrom(point, ["speed", "mass", "config"]) },
+    {
+      severity: exerciseSeverity(point, "stalled"),
+      related: carriedFrom(point, ["speed", "mass", "config"]),
+    },
   );
   return true;
 }
@@ -101,7 +117,10 @@ function checkWarning(checking: Checking): void {
     "warning-in-turn",
     clauseFor(point, "speed"),
     `${lead ? lead + text.charAt(0).toLowerCase() + text.slice(1) : text}, at a load factor of ${formatLoad(worst.load)}: fly faster or bank less.`,
-    { severity: exerciseSeverity(point, "warning-in-turn"), related: carriedFrom(point, ["speed", "mass", "config"]) },
+    {
+      severity: exerciseSeverity(point, "warning-in-turn"),
+      related: carriedFrom(point, ["speed", "mass", "config"]),
+    },
   );
 }
 

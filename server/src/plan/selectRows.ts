@@ -55,7 +55,8 @@ export function rowsInForce(limits: Limits, situation: Situation): Selection {
       const name = `${row.verb} ${row.subject} ${row.afterShear}`;
       const group = groups.get(name);
       if (group) group.rows.push(row);
-      else groups.set(name, { verb: row.verb, subject: row.subject, afterShear: row.afterShear, rows: [row] });
+      else
+        groups.set(name, { verb: row.verb, subject: row.subject, afterShear: row.afterShear, rows: [row] });
     }
   }
   return { groups: [...groups.values()], off };
@@ -83,7 +84,8 @@ function rankOf(row: Row, { phase, emergency }: Situation): number {
 function applies(row: Row, situation: Situation): boolean {
   if (row.afterShear && !situation.shear) return false;
   for (const when of row.when) {
-    if (when === "engine-out" ? !situation.engineOut : situation.rules !== null && situation.rules !== when) return false;
+    if (when === "engine-out" ? !situation.engineOut : situation.rules !== null && situation.rules !== when)
+      return false;
   }
   return row.levels.every((level) => reaches(level, situation));
 }

@@ -1,6 +1,6 @@
 import { type Atmosphere, atmosphere, pressureAltitudeOffset } from "../flight/atmosphere.ts";
-import type { Carried, CarriedState, StatedAltitude } from "./state.ts";
 import { exactly, type Spread } from "./spread.ts";
+import type { Carried, CarriedState, StatedAltitude } from "./state.ts";
 
 /** Pressure altitude of a stated altitude: a flight level is one; feet are on the qnh, or taken as one where none is stated. */
 export function pressureAltitudeOf(stated: StatedAltitude, qnh: number | null): Spread {

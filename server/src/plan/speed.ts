@@ -9,9 +9,9 @@ import type { Read } from "./clauses.ts";
 import type { Airframe, SpeedInput } from "./corner.ts";
 import type { Finding } from "./finding.ts";
 import { measureTolerance } from "./quantity.ts";
-import { type ReferenceName, manoeuvringCas, referenceConfiguration, referenceSpeed } from "./reference.ts";
-import type { Air } from "./situation.ts";
+import { manoeuvringCas, type ReferenceName, referenceConfiguration, referenceSpeed } from "./reference.ts";
 import { findingAt } from "./site.ts";
+import type { Air } from "./situation.ts";
 import { exactly, type Spread } from "./spread.ts";
 
 /** What a speed expression is reckoned with: the nominal state, and the load of the turn. */
@@ -100,7 +100,11 @@ function namedSpeed(
     case "vs": {
       const basis = setting.card.basis?.value;
       if (basis?.kind !== "vs") {
-        return lacking(findings, placed, `vs is the stall speed of a card on the vs basis, and ${setting.card.name} states ${basis?.kind ?? "none"}: write vs1g.`);
+        return lacking(
+          findings,
+          placed,
+          `vs is the stall speed of a card on the vs basis, and ${setting.card.name} states ${basis?.kind ?? "none"}: write vs1g.`,
+        );
       }
       const vs1g = stallCas(name, 1, setting.liftLoss, placed, setting, findings);
       return vs1g === null ? null : vs1g * basis.factor;
@@ -118,7 +122,11 @@ function namedSpeed(
       const stall = stallCas(name, setting.load, loss, placed, setting, findings);
       if (name === "stall" || stall === null) return stall;
       if (setting.frame.warning === null) {
-        return lacking(findings, placed, `${setting.card.name} states no warning, so the warning speed is not known: state the speed in knots.`);
+        return lacking(
+          findings,
+          placed,
+          `${setting.card.name} states no warning, so the warning speed is not known: state the speed in knots.`,
+        );
       }
       return stall * setting.frame.warning;
     }
@@ -144,15 +152,24 @@ function stallCas(
   const { frame, mass, cgFactor, air } = setting;
   const stall = stallSpeed(frame.lift, { mass, load, liftLoss, cgFactor }, air.nominal);
   if (stall.kind === "speed") return stall.cas;
-  if (stall.kind === "zero") return lacking(findings, placed, `At no load there is no stall, so ${name} is no speed here.`);
+  if (stall.kind === "zero")
+    return lacking(findings, placed, `At no load there is no stall, so ${name} is no speed here.`);
   if (stall.kind === "no-level-flight") {
     findings.push(
-      findingAt("no-level-flight", placed, "At this weight and altitude the wing carries the load at no speed: fly lower or lighter."),
+      findingAt(
+        "no-level-flight",
+        placed,
+        "At this weight and altitude the wing carries the load at no speed: fly lower or lighter.",
+      ),
     );
     return null;
   }
   findings.push(
-    findingAt("outside-table", placed, `${name} lies outside the card's lift-mach table for ${setting.configuration.name}, so it is not known here.`),
+    findingAt(
+      "outside-table",
+      placed,
+      `${name} lies outside the card's lift-mach table for ${setting.configuration.name}, so it is not known here.`,
+    ),
   );
   return null;
 }
@@ -167,7 +184,11 @@ function referenceCas(
   const belongs = referenceConfiguration(name, card, configuration);
   if ("why" in belongs) {
     findings.push(
-      findingAt("reference-config", placed, `${name} is not known in ${configuration.name}. ${belongs.why} State the speed in knots or change the configuration.`),
+      findingAt(
+        "reference-config",
+        placed,
+        `${name} is not known in ${configuration.name}. ${belongs.why} State the speed in knots or change the configuration.`,
+      ),
     );
     return null;
   }
@@ -183,7 +204,9 @@ function referenceCas(
     );
   }
   const reference = referenceSpeed(name, card, configuration, mass, air.nominal);
-  return "why" in reference ? lacking(findings, placed, `${name} is not known here. ${reference.why}`) : reference.speed.cas;
+  return "why" in reference
+    ? lacking(findings, placed, `${name} is not known here. ${reference.why}`)
+    : reference.speed.cas;
 }
 
 function lacking(findings: Finding[], placed: PlacedClause, message: string): null {

@@ -55,7 +55,8 @@ function checkContaminatedTakeoff(point: Point, findings: Finding[]): void {
   if (point.phase !== "takeoff" || !contamination || contamination.rain) return;
   if (contamination.loss.high <= 0) return;
   const placed = point.clauses.contamination?.placed ?? point.phaseClause;
-  const what = contamination.contaminant ?? `a loss of ${formatPercent(contamination.loss.high)} of maximum lift`;
+  const what =
+    contamination.contaminant ?? `a loss of ${formatPercent(contamination.loss.high)} of maximum lift`;
   findings.push(
     findingAt(
       "contaminated-takeoff",
@@ -79,4 +80,3 @@ function checkDeadEngine(point: Point, findings: Finding[]): void {
     ),
   );
 }
-

@@ -1,4 +1,5 @@
 import { liftCoefficientAtStall } from "../flight/buffet.ts";
+import { A0 } from "../flight/constants.ts";
 import { checkLiftMach } from "../flight/stall.ts";
 import { interpolate, type Table } from "../flight/table.ts";
 import type { PlacedClause } from "../notation/block.ts";
@@ -7,18 +8,20 @@ import type { Card, Configuration } from "./card.ts";
 import { formatMach } from "./format.ts";
 import type { Lowering } from "./lowerCard.ts";
 import { findingAt, listed } from "./site.ts";
-import { A0 } from "../flight/constants.ts";
 
 /** Checks what only the card as a whole shows: tables that contradict the stall speed, and names that are none of its own. */
 export function checkTables(lowering: Lowering, card: Card): Card {
   checkConfigurationNames(lowering, card);
-  const configurations = card.configurations.map((one) => checkBuffet(lowering, card, checkLift(lowering, one)));
+  const configurations = card.configurations.map((one) =>
+    checkBuffet(lowering, card, checkLift(lowering, one)),
+  );
   return { ...checkCgEffect(lowering, card), configurations };
 }
 
 function clauseAt(lowering: Lowering, line: number, start: number): PlacedClause {
   const { clauses } = lowering.site.block;
-  return (clauses.find((placed) => placed.line === line && placed.clause.span.start === start) ?? clauses[0]) as PlacedClause;
+  return (clauses.find((placed) => placed.line === line && placed.clause.span.start === start) ??
+    clauses[0]) as PlacedClause;
 }
 
 function checkConfigurationNames(lowering: Lowering, card: Card): void {
@@ -29,10 +32,23 @@ function checkConfigurationNames(lowering: Lowering, card: Card): void {
     if (names.some((name) => name.toLowerCase() === body.config.text.toLowerCase())) continue;
     const nearest = nearestWord(body.config.text, names);
     lowering.findings.push(
-      findingAt("unknown-config", placed, `${card.name} has no configuration ${body.config.text}; it has ${listed(names) || "none"}.`, {
-        span: body.config.span,
-        fixes: nearest ? [{ title: `Write ${nearest}`, preferred: true, edits: [{ line: placed.line, ...body.config.span, newText: nearest }] }] : [],
-      }),
+      findingAt(
+        "unknown-config",
+        placed,
+        `${card.name} has no configuration ${body.config.text}; it has ${listed(names) || "none"}.`,
+        {
+          span: body.config.span,
+          fixes: nearest
+            ? [
+                {
+                  title: `Write ${nearest}`,
+                  preferred: true,
+                  edits: [{ line: placed.line, ...body.config.span, newText: nearest }],
+                },
+              ]
+            : [],
+        },
+      ),
     );
   }
 }
@@ -43,7 +59,11 @@ function checkCgEffect(lowering: Lowering, card: Card): Card {
   if (card.basis?.value?.kind !== "vsr" || !effect?.value) return card;
   if (effect.value.values.every((factor) => factor <= 1 + 1e-9)) return card;
   lowering.findings.push(
-    findingAt("bad-table", clauseAt(lowering, effect.origin.line, effect.origin.span.start), "VSR holds at the most adverse cg by definition (14 CFR 25.103), so no factor may exceed 1.000: check the table or the basis."),
+    findingAt(
+      "bad-table",
+      clauseAt(lowering, effect.origin.line, effect.origin.span.start),
+      "VSR holds at the most adverse cg by definition (14 CFR 25.103), so no factor may exceed 1.000: check the table or the basis.",
+    ),
   );
   return { ...card, cgEffect: { ...effect, value: null } };
 }
@@ -93,4 +113,3 @@ function liftFactor(table: Table | null, mach: number): number | null {
   if (!table || mach <= (table.arguments[0] as number)) return 1;
   return interpolate(table, mach);
 }
-

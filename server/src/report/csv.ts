@@ -6,7 +6,10 @@ export function pointsCsv(files: readonly FileJson[], caution: string): string {
     points.map((point) => new Map<string, JsonValue>([["path", path], ...flat(point, "")])),
   );
   const columns = [...new Set(rows.flatMap((row) => [...row.keys()]))];
-  const lines = [[...columns, "caution"], ...rows.map((row) => [...columns.map((column) => row.get(column) ?? null), caution])];
+  const lines = [
+    [...columns, "caution"],
+    ...rows.map((row) => [...columns.map((column) => row.get(column) ?? null), caution]),
+  ];
   return lines.map((line) => `${line.map(cell).join(",")}\r\n`).join("");
 }
 

@@ -30,7 +30,9 @@ export function summaryText(files: readonly CheckedFile[]): string {
   const summary = summarize(files);
   const parts = (["error", "warning", "information", "hint"] as const)
     .filter((severity) => summary[severity] > 0)
-    .map((severity) => counted(summary[severity], severity === "information" ? "piece of information" : severity));
+    .map((severity) =>
+      counted(summary[severity], severity === "information" ? "piece of information" : severity),
+    );
   const where = counted(files.length, "note");
   return parts.length === 0 ? `Nothing found in ${where}.\n` : `${parts.join(", ")} in ${where}.\n`;
 }

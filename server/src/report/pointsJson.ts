@@ -5,7 +5,13 @@ import type { Conditions, PointResult } from "../plan/point.ts";
 import type { Spread } from "../plan/spread.ts";
 import { type FindingJson, findingsJson } from "./findingsJson.ts";
 
-export type JsonValue = string | number | boolean | null | readonly JsonValue[] | { readonly [key: string]: JsonValue };
+export type JsonValue =
+  | string
+  | number
+  | boolean
+  | null
+  | readonly JsonValue[]
+  | { readonly [key: string]: JsonValue };
 
 export type PointJson = { readonly [key: string]: JsonValue };
 
@@ -99,9 +105,7 @@ export function pointJson(point: PointResult): PointJson {
     not_evaluated: point.notEvaluated.map(({ rule, why }) => ({ rule, why })),
     assumed: [...point.assumed],
     inherited: inheritedJson(point),
-    withheld: point.withheld
-      ? { line: lineOf(point.withheld.origin) + 1, code: point.withheld.code }
-      : null,
+    withheld: point.withheld ? { line: lineOf(point.withheld.origin) + 1, code: point.withheld.code } : null,
   };
 }
 

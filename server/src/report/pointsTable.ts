@@ -1,5 +1,12 @@
 import type { ResultName } from "../notation/vocabulary.ts";
-import { formatAltitude, formatBank, formatFlightLevel, formatMass, formatResult, formatSpeed } from "../plan/format.ts";
+import {
+  formatAltitude,
+  formatBank,
+  formatFlightLevel,
+  formatMass,
+  formatResult,
+  formatSpeed,
+} from "../plan/format.ts";
 import type { Note } from "../plan/note.ts";
 import { lineOf } from "../plan/origin.ts";
 import type { PointResult } from "../plan/point.ts";
@@ -35,7 +42,9 @@ function row(point: PointResult): TableRow {
   const phase = `${point.phase ?? "?"}${point.title ? ` "${point.title}"` : ""}${point.aside ? " (aside)" : ""}`;
   const { conditions } = point;
   if (!conditions) {
-    const why = point.withheld ? `no figures: ${point.withheld.code}, line ${lineOf(point.withheld.origin) + 1}` : "no figures";
+    const why = point.withheld
+      ? `no figures: ${point.withheld.code}, line ${lineOf(point.withheld.origin) + 1}`
+      : "no figures";
     return [line, phase, why, ...tableHead.slice(3).map(() => "")];
   }
   const result = (name: ResultName) => {
@@ -48,7 +57,9 @@ function row(point: PointResult): TableRow {
     phase,
     formatMass(conditions.mass.nominal, reference),
     point.configuration?.name ?? "",
-    conditions.flightLevel ? formatFlightLevel(conditions.altitude.nominal) : formatAltitude(conditions.altitude.nominal),
+    conditions.flightLevel
+      ? formatFlightLevel(conditions.altitude.nominal)
+      : formatAltitude(conditions.altitude.nominal),
     formatSpeed(conditions.cas.nominal),
     `${formatBank(conditions.bank.nominal)}${conditions.bankSide ? ` ${conditions.bankSide}` : ""}`,
     result("vs1g"),
@@ -67,13 +78,19 @@ export function plainTable(rows: readonly TableRow[]): string {
   const all = [tableHead, ...rows];
   const widths = tableHead.map((_, column) => Math.max(...all.map((one) => one[column]?.length ?? 0)));
   return all
-    .map((one) => one.map((text, column) => text.padEnd(widths[column] ?? 0)).join("  ").trimEnd())
+    .map((one) =>
+      one
+        .map((text, column) => text.padEnd(widths[column] ?? 0))
+        .join("  ")
+        .trimEnd(),
+    )
     .map((text) => `${text}\n`)
     .join("");
 }
 
 /** The same rows as a Markdown table. */
 export function markdownTable(rows: readonly TableRow[]): string {
-  const line = (cells: readonly string[]) => `| ${cells.map((text) => text.replaceAll("|", "\\|")).join(" | ")} |\n`;
+  const line = (cells: readonly string[]) =>
+    `| ${cells.map((text) => text.replaceAll("|", "\\|")).join(" | ")} |\n`;
   return line(tableHead) + line(tableHead.map(() => "---")) + rows.map(line).join("");
 }

@@ -1,6 +1,6 @@
 import type { Log, ReportingDescriptor, Result } from "sarif";
-import { catalogue, type FindingCode } from "../plan/findings.ts";
 import type { Severity } from "../plan/finding.ts";
+import { catalogue, type FindingCode } from "../plan/findings.ts";
 import type { FindingJson } from "./findingsJson.ts";
 
 /** What `check` found in one file. */
@@ -18,13 +18,22 @@ const levels: Readonly<Record<Severity, "error" | "warning" | "note" | "none">> 
 
 /** Findings as SARIF 2.1.0 (OASIS), positions in UTF-16 code units. */
 export function sarifLog(files: readonly CheckedFile[], version: string, caution: string): Log {
-  const codes = [...new Set(files.flatMap((file) => file.findings.map((one) => one.code)))].sort() as FindingCode[];
+  const codes = [
+    ...new Set(files.flatMap((file) => file.findings.map((one) => one.code))),
+  ].sort() as FindingCode[];
   return {
     $schema: "https://docs.oasis-open.org/sarif/sarif/v2.1.0/errata01/os/schemas/sarif-schema-2.1.0.json",
     version: "2.1.0",
     runs: [
       {
-        tool: { driver: { name: "plumbline", semanticVersion: version, fullDescription: { text: caution }, rules: codes.map(descriptor) } },
+        tool: {
+          driver: {
+            name: "plumbline",
+            semanticVersion: version,
+            fullDescription: { text: caution },
+            rules: codes.map(descriptor),
+          },
+        },
         columnKind: "utf16CodeUnits",
         results: files.flatMap((file) => file.findings.map((one) => resultOf(file.path, one, codes))),
       },
