@@ -25,9 +25,9 @@ function written(notes: readonly LoadedNote[], { format }: PointsOptions): strin
     case "csv":
       return pointsCsv(files(), caution);
     case "table":
-      return tables(notes, ({ path }) => `${path}\n`, plainTable) + `${caution}\n`;
+      return `${tables(notes, ({ path }) => `${path}\n`, plainTable)}${caution}\n`;
     case "markdown":
-      return tables(notes, ({ path }) => `## ${path}\n\n`, markdownTable) + `${caution}\n`;
+      return `${tables(notes, ({ path }) => `## ${path}\n\n`, markdownTable)}${caution}\n`;
   }
 }
 

@@ -30,7 +30,9 @@ export async function run(argv: readonly string[]): Promise<number> {
     .exitOverride()
     .configureOutput({ outputError: (text, write) => write(text.replace(/^error: /, "plumbline: ")) })
     .showHelpAfterError("(plumbline --help lists the commands)");
-  const settle = (result: Promise<number>) => result.then((value) => void (code = value));
+  const settle = async (result: Promise<number>) => {
+    code = await result;
+  };
 
   overNotes(
     program

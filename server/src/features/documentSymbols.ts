@@ -2,7 +2,7 @@ import type { Span } from "../notation/span.ts";
 import type { BlockResult, Note } from "../plan/note.ts";
 
 /** An entry of the outline. */
-export interface Symbol {
+export interface OutlineEntry {
   readonly name: string;
   readonly detail: string;
   readonly kind: "point" | "setting" | "card" | "limits" | "configuration";
@@ -10,15 +10,15 @@ export interface Symbol {
   readonly lastLine: number;
   readonly nameLine: number;
   readonly nameSpan: Span;
-  readonly children: readonly Symbol[];
+  readonly children: readonly OutlineEntry[];
 }
 
 /** The points, settings, cards and limits of a note, in the order of their lines. */
-export function documentSymbols(note: Note): readonly Symbol[] {
+export function documentSymbols(note: Note): readonly OutlineEntry[] {
   return note.results().map(symbolOf);
 }
 
-function symbolOf(result: BlockResult): Symbol {
+function symbolOf(result: BlockResult): OutlineEntry {
   const { block } = result;
   const first = block.clauses[0];
   const base = {
@@ -26,7 +26,7 @@ function symbolOf(result: BlockResult): Symbol {
     lastLine: block.start + block.lines.length - 1,
     nameLine: block.start + (first?.line ?? 0),
     nameSpan: first?.clause.span ?? { start: 0, end: block.lines[0]?.text.length ?? 0 },
-    children: [] as readonly Symbol[],
+    children: [] as readonly OutlineEntry[],
   };
   switch (result.kind) {
     case "point": {

@@ -18,7 +18,7 @@ import {
 } from "vscode-languageserver";
 import type { CodeAction } from "../features/codeActions.ts";
 import type { Completion } from "../features/completion.ts";
-import type { Symbol } from "../features/documentSymbols.ts";
+import type { OutlineEntry } from "../features/documentSymbols.ts";
 import type { Fold } from "../features/folding.ts";
 import type { Hover } from "../features/hover.ts";
 import type { Hint } from "../features/inlayHints.ts";
@@ -145,7 +145,7 @@ export function codeActionOf(
   };
 }
 
-const symbolKinds: Readonly<Record<Symbol["kind"], SymbolKind>> = {
+const symbolKinds: Readonly<Record<OutlineEntry["kind"], SymbolKind>> = {
   point: SymbolKind.Event,
   setting: SymbolKind.Property,
   card: SymbolKind.Class,
@@ -153,7 +153,7 @@ const symbolKinds: Readonly<Record<Symbol["kind"], SymbolKind>> = {
   configuration: SymbolKind.Field,
 };
 
-export function symbolOf(symbol: Symbol, note: Note): DocumentSymbol {
+export function symbolOf(symbol: OutlineEntry, note: Note): DocumentSymbol {
   const end = note.document.lineText(symbol.lastLine).length;
   return {
     name: symbol.name,

@@ -35,6 +35,8 @@ const readers = new Map<string, ClauseReader>([
 // A card's contamination and configuration take both shapes.
 readers.set("contamination", planClauses.contamination as ClauseReader);
 
+const LONGEST_KEYWORD = Math.max(...keywords.map((keyword) => keyword.length));
+
 /** More findings than this on one line are told as a number. */
 const MOST_FINDINGS = 20;
 
@@ -131,7 +133,8 @@ function keywordAt(cursor: Cursor): { readonly end: number; readonly keyword: Ke
   const run = text.slice(at, end);
   const whole = keywordOf(run);
   if (whole) return { end, keyword: whole };
-  for (let i = at + 1; i < end; i++) {
+  // No keyword is longer than this, however long the run.
+  for (let i = at + 1; i < Math.min(end, at + LONGEST_KEYWORD + 1); i++) {
     const code = text.charCodeAt(i);
     const touches =
       isDigit(code) || (isMinus(code) && (isDigit(text.charCodeAt(i + 1)) || text.charCodeAt(i + 1) === 46));

@@ -282,7 +282,8 @@ export const planClauses: Readonly<Record<string, ClauseReader>> = {
   aside: () => ({ kind: "aside" }),
   phase: (cursor) => {
     const phase = readWord(cursor, phases, "unknown-phase", "phase", synonyms);
-    const title = phase ? readTitle(cursor) : (readTitle(cursor), null);
+    // The title is read all the same, so that an unknown phase spoils nothing behind it.
+    const title = readTitle(cursor);
     return phase && { kind: "phase", phase: phase.word, title };
   },
   weight: (cursor) => {

@@ -193,8 +193,7 @@ export class Corner {
     const { lift, warning } = this.#frame;
     if (warning === null) return Number.NaN;
     const sensed = warningBank(lift, this.input, this.cas, warning, this.path, this.air) ?? Number.NaN;
-    const stalled = this.stallBank;
-    return stalled < sensed ? stalled : sensed;
+    return Math.min(this.stallBank, sensed);
   }
 
   get overshoot(): number {

@@ -118,9 +118,10 @@ function lowerRow(
   };
 }
 
-function isWhen(
-  condition: RowCondition,
-): condition is Extract<RowCondition, { kind: "ifr" | "vfr" | "engine-out" | "after-shear" }> & {
+function isWhen(condition: RowCondition): condition is Extract<
+  RowCondition,
+  { kind: "ifr" | "vfr" | "engine-out" | "after-shear" }
+> & {
   kind: "ifr" | "vfr" | "engine-out";
 } {
   return condition.kind === "ifr" || condition.kind === "vfr" || condition.kind === "engine-out";
