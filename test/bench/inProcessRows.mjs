@@ -8,7 +8,7 @@ export async function inProcessRows({ lengths, smoke, standIn }) {
   if (standIn) return [];
   const subject = createRequire(import.meta.url)(await bundle("subject.ts"));
   return lengths.flatMap((lines) => {
-    const ms = measureInProcess(lines, subject, smoke ? 5 : lines < 10_000 ? 30 : 7);
+    const ms = measureInProcess(lines, subject, smoke ? 5 : Math.max(7, Math.round(40_000 / lines)));
     const rate = (lines / ms.check) * 1000;
     return [
       { measure: `${lines.toLocaleString("en-US")} lines in one process, warm` },

@@ -23,6 +23,7 @@ export function installPeers({ mayInstall }) {
     "--no-audit",
     "--no-fund",
     "--ignore-scripts",
+    "--fetch-retries=0",
     ...known.map(({ install }) => install),
   ];
   const { status, stderr, error } = spawnSync(npm, args, {

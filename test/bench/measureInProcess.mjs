@@ -9,7 +9,7 @@ import { scan } from "./scan.mjs";
 export function measureInProcess(lines, { parse, check }, repetitions) {
   const text = generateNote(lines);
   const timings = { scan: [], parse: [], check: [] };
-  for (let turn = -2; turn < repetitions; turn++) {
+  for (let turn = -Math.ceil(repetitions / 2); turn < repetitions; turn++) {
     let found = 0;
     const scanned = timed(() => scan(text));
     const parsed = timed(() => parse(text));
