@@ -160,9 +160,7 @@ class OpenDocument implements Document {
     let last = to;
     while (last + 1 < this.#lines.length && (this.#lines[last + 1] as Line).raw === "bar") last++;
     const head = this.#firstBlockFrom(first);
-    let tail = this.#blocks.length;
-    const oldLast = last - delta;
-    while (tail > head && (this.#blocks[tail - 1] as Block).start > oldLast) tail--;
+    const tail = Math.max(head, this.#firstBlockFrom(last - delta + 1));
     const gone = this.#blocks.slice(head, tail);
     if (delta !== 0)
       for (let i = tail; i < this.#blocks.length; i++) (this.#blocks[i] as Block).start += delta;
