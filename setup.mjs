@@ -8,6 +8,9 @@ const fresh = existsSync(stamp) && statSync(stamp).mtimeMs >= statSync("package-
 if (!fresh) {
   console.error("Installing the locked dependencies …");
   const npm = process.platform === "win32" ? "npm.cmd" : "npm";
-  const { status } = spawnSync(npm, ["ci"], { stdio: ["ignore", "ignore", "inherit"], shell: npm.endsWith(".cmd") });
+  const { status } = spawnSync(npm, ["ci"], {
+    stdio: ["ignore", "ignore", "inherit"],
+    shell: npm.endsWith(".cmd"),
+  });
   if (status !== 0) process.exit(status ?? 1);
 }

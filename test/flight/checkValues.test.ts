@@ -1,8 +1,13 @@
 import { describe, expect, it } from "vitest";
-import { checkValues, type CheckValue, uncovered } from "./checkValues.ts";
+import { type CheckValue, checkValues, uncovered } from "./checkValues.ts";
 import { computations } from "./compute.ts";
 
-function within(actual: number, wanted: number, tolerance: CheckValue["tolerance"][string] | undefined, what: string): void {
+function within(
+  actual: number,
+  wanted: number,
+  tolerance: CheckValue["tolerance"][string] | undefined,
+  what: string,
+): void {
   const { abs = 0, rel = 0 } = typeof tolerance === "object" ? tolerance : {};
   // A printed figure cannot be held tighter than half its last digit.
   const decimals = /\.(\d+)$/.exec(String(wanted))?.[1]?.length ?? 0;
@@ -12,28 +17,35 @@ function within(actual: number, wanted: number, tolerance: CheckValue["tolerance
 }
 
 describe("published and computed values", () => {
-  it.each(checkValues.map((value) => [`${value.id}: ${value.statement} [${value.source.title}, ${value.source.section}, ${value.source.edition}; ${value.verified}]`, value] as const))(
-    "%s",
-    (_, value) => {
-      const computed = computations[value.id]?.(value) ?? {};
-      let compared = 0;
-      for (const [key, wanted] of Object.entries(value.expected)) {
-        const tolerance = value.tolerance[key] ?? value.tolerance.all;
-        const actual = computed[key];
-        if (tolerance === "quote only") {
-          // A published figure that is wrong is not to be reproduced.
-          for (const one of Object.values(computed)) expect(one).not.toBe(wanted);
-          continue;
-        }
-        if (actual === undefined) continue;
-        compared++;
-        if (Array.isArray(wanted)) wanted.forEach((one, i) => within((actual as number[])[i] as number, one, tolerance, key));
-        else if (typeof wanted === "boolean") expect(actual).toBe(wanted);
-        else within(actual as number, wanted as number, tolerance, key);
+  it.each(
+    checkValues.map(
+      (value) =>
+        [
+          `${value.id}: ${value.statement} [${value.source.title}, ${value.source.section}, ${value.source.edition}; ${value.verified}]`,
+          value,
+        ] as const,
+    ),
+  )("%s", (_, value) => {
+    const computed = computations[value.id]?.(value) ?? {};
+    let compared = 0;
+    for (const [key, wanted] of Object.entries(value.expected)) {
+      const tolerance = value.tolerance[key] ?? value.tolerance.all;
+      const actual = computed[key];
+      if (tolerance === "quote only") {
+        // A published figure that is wrong is not to be reproduced.
+        for (const one of Object.values(computed)) expect(one).not.toBe(wanted);
+        continue;
       }
-      expect(compared).toBeGreaterThan(0);
-    },
-  );
+      if (actual === undefined) continue;
+      compared++;
+      if (Array.isArray(wanted))
+        for (const [i, one] of wanted.entries())
+          within((actual as number[])[i] as number, one, tolerance, key);
+      else if (typeof wanted === "boolean") expect(actual).toBe(wanted);
+      else within(actual as number, wanted as number, tolerance, key);
+    }
+    expect(compared).toBeGreaterThan(0);
+  });
 
   it("are 120 or more, and each of the others has its reason", () => {
     expect(checkValues.length).toBeGreaterThanOrEqual(120);

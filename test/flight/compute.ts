@@ -1,7 +1,13 @@
-import { casFromMach, easFromCas, impactPressureOfCas, machFromCas, tasFromMach } from "../../server/src/flight/airspeed.ts";
-import { type Atmosphere, altitudeOfPressure, atmosphere } from "../../server/src/flight/atmosphere.ts";
-import { G0, P0, RHO0 } from "../../server/src/flight/constants.ts";
+import {
+  casFromMach,
+  easFromCas,
+  impactPressureOfCas,
+  machFromCas,
+  tasFromMach,
+} from "../../server/src/flight/airspeed.ts";
+import { type Atmosphere, atmosphere } from "../../server/src/flight/atmosphere.ts";
 import { liftCoefficientAtStall } from "../../server/src/flight/buffet.ts";
+import { G0, P0, RHO0 } from "../../server/src/flight/constants.ts";
 import { leastV2min, leastVfto, leastVref } from "../../server/src/flight/referenceSpeeds.ts";
 import { type Lift, loadAtStall, stallBank, stallSpeed } from "../../server/src/flight/stall.ts";
 import { loadFactor, rateOneBank, turnRadius, turnRate } from "../../server/src/flight/turn.ts";
@@ -31,8 +37,15 @@ function lift(stall = 1, referenceMass = 1): Lift {
   return { stallSpeed: stall, referenceMass, liftMach: null };
 }
 
-function stallEas(one: Lift, state: { mass?: number; load?: number; liftLoss?: number; cgFactor?: number }): number {
-  const stall = stallSpeed(one, { mass: one.referenceMass, load: 1, liftLoss: 0, cgFactor: 1, ...state }, seaLevel);
+function stallEas(
+  one: Lift,
+  state: { mass?: number; load?: number; liftLoss?: number; cgFactor?: number },
+): number {
+  const stall = stallSpeed(
+    one,
+    { mass: one.referenceMass, load: 1, liftLoss: 0, cgFactor: 1, ...state },
+    seaLevel,
+  );
   if (stall.kind !== "speed") throw new Error(stall.kind);
   return stall.eas;
 }
@@ -102,7 +115,8 @@ const standard = (value: CheckValue): Computed => {
     const h = geopotential(inputs.geometric_m);
     return { ...atmosphereValues(air(h)), geopotential_m_rounded: h, geopotential_m: h };
   }
-  if (typeof inputs.geometric_ft === "number") return atmosphereValues(air(geopotential(inputs.geometric_ft * FOOT)));
+  if (typeof inputs.geometric_ft === "number")
+    return atmosphereValues(air(geopotential(inputs.geometric_ft * FOOT)));
   const feet = inputs.geopotential_ft ?? inputs.pressure_altitude_ft;
   const deviation = (inputs.isa_dev_k as number | undefined) ?? 0;
   if (typeof feet === "number") return atmosphereValues(air(feet * FOOT, deviation));
@@ -110,7 +124,10 @@ const standard = (value: CheckValue): Computed => {
 };
 
 const airspeeds = (value: CheckValue): Computed => {
-  const at = air(num(value, "pressure_altitude_ft") * FOOT, (value.inputs.isa_dev_k as number | undefined) ?? 0);
+  const at = air(
+    num(value, "pressure_altitude_ft") * FOOT,
+    (value.inputs.isa_dev_k as number | undefined) ?? 0,
+  );
   const cas = num(value, "cas_kt") * KNOT;
   const mach = known(machFromCas(cas, at));
   const eas = known(easFromCas(cas, at));
@@ -158,29 +175,44 @@ const each = (from: string, to: string, ids: readonly number[], compute: (value:
 /** How each value is computed, by its id. */
 export const computations: Readonly<Record<string, (value: CheckValue) => Computed>> = {
   ...each("A", "", [2, 3, 4, 6, 7, 10, 11, 13, 15, 25, 33, 36], bankValues),
-  "A-026": (value) => ({ stall_speed_kt: stallEas(lift(num(value, "vs1g_kt")), { load: num(value, "load_factor") }) }),
+  "A-026": (value) => ({
+    stall_speed_kt: stallEas(lift(num(value, "vs1g_kt")), { load: num(value, "load_factor") }),
+  }),
   "A-028": (value) => {
     const speed = num(value, "vs1g_kt") * num(value, "speed_ratio");
-    const load = known(loadAtStall(lift(num(value, "vs1g_kt")), { mass: 1, liftLoss: 0, cgFactor: 1 }, speed, seaLevel));
+    const load = known(
+      loadAtStall(lift(num(value, "vs1g_kt")), { mass: 1, liftLoss: 0, cgFactor: 1 }, speed, seaLevel),
+    );
     return { load_factor: load, speed_kt: stallEas(lift(num(value, "vs1g_kt")), { load }) };
   },
-  "A-029": (value) => ({ stall_speed_kt: stallEas(lift(num(value, "vs1g_kt")), { load: known(loadFactor(deg(num(value, "bank_deg")), 0)) }) }),
+  "A-029": (value) => ({
+    stall_speed_kt: stallEas(lift(num(value, "vs1g_kt")), {
+      load: known(loadFactor(deg(num(value, "bank_deg")), 0)),
+    }),
+  }),
   "A-031": (value) => ({
     formula_stall_speed_kt: stallEas(lift(num(value, "vs1g_kt")), { load: num(value, "load_factor_stated") }),
     formula_load_factor_at_72_deg: known(loadFactor(deg(num(value, "bank_deg")), 0)),
   }),
-  "A-032": (value) => ({ formula_stall_speed_kt: stallEas(lift(num(value, "vs1g_kt")), { load: num(value, "load_factor") }) }),
+  "A-032": (value) => ({
+    formula_stall_speed_kt: stallEas(lift(num(value, "vs1g_kt")), { load: num(value, "load_factor") }),
+  }),
   "A-035": (value) => ({
     speed_ratio: stallEas(lift(), { load: num(value, "load_factor") }),
     formula_bank_deg: fromSI(known(stallBank(num(value, "load_factor"), 0)), "deg"),
   }),
   ...each("A", "", [38, 39, 40, 41, 42, 43], reached),
   ...each("B", "", [1, 2, 7, 9], scaled),
-  "B-006": (value) => ({ stall_speed_change_pct: (stallEas(lift(), { mass: 1 + num(value, "weight_change_pct") / 100 }) - 1) * 100 }),
+  "B-006": (value) => ({
+    stall_speed_change_pct: (stallEas(lift(), { mass: 1 + num(value, "weight_change_pct") / 100 }) - 1) * 100,
+  }),
   "B-014": (value) => {
     const one = lift(num(value, "vs1_keas_w1"), num(value, "w1"));
     const load = num(value, "limit_load_factor");
-    return { va_min_w1_keas: stallEas(one, { load }), va_min_w2_keas: stallEas(one, { load, mass: num(value, "w2") }) };
+    return {
+      va_min_w1_keas: stallEas(one, { load }),
+      va_min_w2_keas: stallEas(one, { load, mass: num(value, "w2") }),
+    };
   },
   "B-017": (value) => {
     const mass = num(value, "weight_lbf") * POUND;
@@ -191,7 +223,11 @@ export const computations: Readonly<Record<string, (value: CheckValue) => Comput
   },
   "B-019": (value) => {
     const at = air(num(value, "pressure_altitude_ft") * FOOT);
-    const stall = stallSpeed(lift(num(value, "vs_keas") * KNOT), { mass: 1, load: 1, liftLoss: 0, cgFactor: 1 }, at);
+    const stall = stallSpeed(
+      lift(num(value, "vs_keas") * KNOT),
+      { mass: 1, load: 1, liftLoss: 0, cgFactor: 1 },
+      at,
+    );
     if (stall.kind !== "speed") throw new Error(stall.kind);
     return { vs_ktas: known(tasFromMach(stall.mach, at)) / KNOT };
   },
@@ -202,10 +238,14 @@ export const computations: Readonly<Record<string, (value: CheckValue) => Comput
   "C-034": (value) => ({
     vfto_1p18_kcas: leastVfto(num(value, "vsr_kcas"), "vsr"),
     pure_40deg_speed_kcas: stallEas(lift(num(value, "vsw_kcas")), { load: known(loadFactor(deg(40), 0)) }),
-    pure_40deg_met: stallEas(lift(num(value, "vsw_kcas")), { load: known(loadFactor(deg(40), 0)) }) <= leastVfto(num(value, "vsr_kcas"), "vsr"),
+    pure_40deg_met:
+      stallEas(lift(num(value, "vsw_kcas")), { load: known(loadFactor(deg(40), 0)) }) <=
+      leastVfto(num(value, "vsr_kcas"), "vsr"),
   }),
   "C-044": (value) => ({ va_min_keas: stallEas(lift(num(value, "vs1_keas")), { load: num(value, "n") }) }),
-  "C-071": (value) => ({ vref_min_kcas: Math.max(leastVref(num(value, "vs1_kcas"), "vs"), num(value, "vmc_kcas")) }),
+  "C-071": (value) => ({
+    vref_min_kcas: Math.max(leastVref(num(value, "vs1_kcas"), "vs"), num(value, "vmc_kcas")),
+  }),
   ...each("D", "", [28, 29, 30, 31, 32, 34], turn),
   "D-038": (value) => ({ uncapped_rate_deg_s: turn(value).uncapped_rate_deg_s as number }),
   ...each("E", "", [1, 2, 5, 11, 12, 13, 16, 17, 19], turn),
@@ -224,22 +264,42 @@ export const computations: Readonly<Record<string, (value: CheckValue) => Comput
   },
   "E-027": () => {
     const rate = known(turnRate(100, rateOneBank(100), 0, null));
-    return { time_360_s: Math.round(((2 * Math.PI) / rate) * 1e9) / 1e9, deg_per_min: Math.round(fromSI(rate, "deg/s") * 60 * 1e9) / 1e9 };
+    return {
+      time_360_s: Math.round(((2 * Math.PI) / rate) * 1e9) / 1e9,
+      deg_per_min: Math.round(fromSI(rate, "deg/s") * 60 * 1e9) / 1e9,
+    };
   },
   "E-029": (value) => {
     const bank = known(stallBank(num(value, "load_factor"), 0));
     const speeds = value.inputs.tas_kt as readonly number[];
-    return { bank_deg: fromSI(bank, "deg"), radius_m: speeds.map((tas) => known(turnRadius(tas * KNOT, bank, 0, null))) };
+    return {
+      bank_deg: fromSI(bank, "deg"),
+      radius_m: speeds.map((tas) => known(turnRadius(tas * KNOT, bank, 0, null))),
+    };
   },
-  ...each("F", "", [2, 3, 6, 7, 8, 9, 10, 11, 12, 15, 17, 18, 23, 24, 26, 28, 29, 30, 31, 32, 34, 35, 37, 39, 40, 43, 44, 46], standard),
-  "F-005": (value) => ({ delta: (value.inputs.geopotential_ft as readonly number[]).map((feet) => air(feet * FOOT).delta) }),
-  "F-045": (value) => ({ dry_isa_sigma: (value.inputs.altitude_ft as readonly number[]).map((feet) => air(feet * FOOT).sigma) }),
+  ...each(
+    "F",
+    "",
+    [
+      2, 3, 6, 7, 8, 9, 10, 11, 12, 15, 17, 18, 23, 24, 26, 28, 29, 30, 31, 32, 34, 35, 37, 39, 40, 43, 44,
+      46,
+    ],
+    standard,
+  ),
+  "F-005": (value) => ({
+    delta: (value.inputs.geopotential_ft as readonly number[]).map((feet) => air(feet * FOOT).delta),
+  }),
+  "F-045": (value) => ({
+    dry_isa_sigma: (value.inputs.altitude_ft as readonly number[]).map((feet) => air(feet * FOOT).sigma),
+  }),
   ...each("G", "", [2, 3, 4, 5, 8, 9, 10, 11, 13, 16, 18, 19, 31, 32, 34, 36, 40], airspeeds),
   ...each("G", "", [22, 23, 25, 26, 27], impact),
   ...each("G", "", [28, 29, 30], fromMach),
   "G-041": (value) => {
     const at = air(num(value, "altitude_ft") * FOOT, num(value, "isa_dev_c"));
-    return { tas_compressible_kt: known(tasFromMach(known(machFromCas(num(value, "ias_kt") * KNOT, at)), at)) / KNOT };
+    return {
+      tas_compressible_kt: known(tasFromMach(known(machFromCas(num(value, "ias_kt") * KNOT, at)), at)) / KNOT,
+    };
   },
   ...each("H", "", [9, 10, 12], dirty),
   "H-005": (value) => {
@@ -253,22 +313,33 @@ export const computations: Readonly<Record<string, (value: CheckValue) => Comput
       return (1 - 1 / whole) * 100;
     }),
   }),
-  "I-006": (value) => ({ stall_speed_factor: stallEas(lift(), { cgFactor: Math.sqrt(value.expected.wing_lift_over_weight as number) }) }),
+  "I-006": (value) => ({
+    stall_speed_factor: stallEas(lift(), {
+      cgFactor: Math.sqrt(value.expected.wing_lift_over_weight as number),
+    }),
+  }),
   "K-001": () => ({ m_s: toSI(1, "kt") }),
   "K-002": () => ({ ft: toSI(1, "nm") / FOOT }),
   "K-003": () => ({ ft_s2: G0 / FOOT }),
   "K-004": () => ({ slug_ft3: (RHO0 * FOOT ** 3) / ((POUND * G0) / FOOT) }),
   "K-006": () => ({ pa_per_inhg: INCH_OF_MERCURY, inhg: P0 / INCH_OF_MERCURY }),
   "K-008": (value) => {
-    const all = (value.inputs.altitude_ft as readonly number[]).map((feet) => atmosphereValues(air(feet * FOOT)));
-    return { temperature_f: all.map((one) => one.temperature_f as number), pressure_psia: all.map((one) => one.pressure_psia as number) };
+    const all = (value.inputs.altitude_ft as readonly number[]).map((feet) =>
+      atmosphereValues(air(feet * FOOT)),
+    );
+    return {
+      temperature_f: all.map((one) => one.temperature_f as number),
+      pressure_psia: all.map((one) => one.pressure_psia as number),
+    };
   },
 };
 
 /** The load of a demonstrated bank, and the speed over the 1-g warning that it needs. */
 function manoeuvre(bank: number): Computed {
   const load = known(loadFactor(deg(bank), 0));
-  return { bank_deg: Math.round(fromSI(known(stallBank(load, 0)), "deg")), load_factor: load, speed_over_stall_warning_needed: stallEas(lift(), { load }) };
+  return {
+    bank_deg: Math.round(fromSI(known(stallBank(load, 0)), "deg")),
+    load_factor: load,
+    speed_over_stall_warning_needed: stallEas(lift(), { load }),
+  };
 }
-
-export const roundTrip = (h: number): number => known(altitudeOfPressure(air(h).pressure));

@@ -36,19 +36,29 @@ describe("a bar line", () => {
     fc.assert(
       fc.property(anyLine, (text) => {
         const { clauses, findings } = parseLine(text);
-        const spans = [...clauses.flatMap((one) => [one.span, one.keywordSpan]), ...findings.map((one) => one.span)];
+        const spans = [
+          ...clauses.flatMap((one) => [one.span, one.keywordSpan]),
+          ...findings.map((one) => one.span),
+        ];
         for (const { start, end } of spans) {
           expect(0 <= start && start <= end && end <= text.length).toBe(true);
         }
         expect(findings.length).toBeLessThanOrEqual(20);
-        for (const clause of clauses) if (clause.faulty || !clause.body) expect(findings.length).toBeGreaterThan(0);
+        for (const clause of clauses)
+          if (clause.faulty || !clause.body) expect(findings.length).toBeGreaterThan(0);
       }),
       { numRuns: 2000 },
     );
   });
 
   it("of a million characters is read in linear time", () => {
-    for (const text of [`| ${"bank 25; ".repeat(110_000)}`, `| ${"(".repeat(1_000_000)}`, `| "${"x".repeat(1_000_000)}`, `| ${"9".repeat(1_000_000)}`, `| ${",".repeat(1_000_000)}`]) {
+    for (const text of [
+      `| ${"bank 25; ".repeat(110_000)}`,
+      `| ${"(".repeat(1_000_000)}`,
+      `| "${"x".repeat(1_000_000)}`,
+      `| ${"9".repeat(1_000_000)}`,
+      `| ${",".repeat(1_000_000)}`,
+    ]) {
       expect(parseLine(text).text).toHaveLength(text.length);
     }
   });
@@ -85,13 +95,20 @@ describe("a document", () => {
       to: fc.nat({ max: 20 }),
       fromCharacter: fc.nat({ max: 40 }),
       toCharacter: fc.nat({ max: 40 }),
-      text: fc.oneof(noteText, fc.constantFrom("", "\n", "|", "```", "```plumb\n", "---\n", "x", "\r", "\r\n")),
+      text: fc.oneof(
+        noteText,
+        fc.constantFrom("", "\n", "|", "```", "```plumb\n", "---\n", "x", "\r", "\r\n"),
+      ),
     });
     fc.assert(
       fc.property(noteText, flavour, fc.array(edit, { minLength: 1, maxLength: 5 }), (text, kind, edits) => {
         const document = openDocument(text, kind);
         for (const { from, to, fromCharacter, toCharacter, text: newText } of edits) {
-          document.edit({ line: from, character: fromCharacter }, { line: to, character: toCharacter }, newText);
+          document.edit(
+            { line: from, character: fromCharacter },
+            { line: to, character: toCharacter },
+            newText,
+          );
           expect(described(document)).toEqual(described(openDocument(document.text(), kind)));
         }
       }),
@@ -119,8 +136,12 @@ describe("the formatter", () => {
   };
   /** A document's clauses as they are understood, without where they stand. */
   const meaning = (text: string, kind: Flavour) =>
-    JSON.stringify(openDocument(text, kind).blocks.map((block) => [block.kind, block.clauses.map(({ clause }) => clause.body)]), (key, value) =>
-      /[sS]pan$/.test(key) ? undefined : value,
+    JSON.stringify(
+      openDocument(text, kind).blocks.map((block) => [
+        block.kind,
+        block.clauses.map(({ clause }) => clause.body),
+      ]),
+      (key, value) => (/[sS]pan$/.test(key) ? undefined : value),
     );
 
   it("changes nothing the second time, and never the meaning", () => {
@@ -139,7 +160,7 @@ describe("the formatter", () => {
   });
 
   it.each([
-    ["|  fly  x ;;phase departure\"T\"( r )", '| fly x; phase departure "T" ( r )'],
+    ['|  fly  x ;;phase departure"T"( r )', '| fly x; phase departure "T" ( r )'],
     ["| weight 61.4t+-.5 t;isa-3", "| weight 61.4 t +- .5 t; isa -3"],
     ["| speed vref-5kt+-3 kt;phase hold ; ", "| speed vref - 5 kt +- 3 kt; phase hold"],
     ["| bank 25°left;phase hold;altitude FL350", "| bank 25° left; phase hold; altitude FL350"],

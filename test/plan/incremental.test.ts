@@ -13,39 +13,87 @@ function demo() {
 }
 
 const pieces = [
-  "", "Prose.", "| phase departure", "| phase landing; aside", "| phase takeoff", "| weight 55 t +- 0.3 t", "| burn 400 kg", "| altitude 3000 ft", "| altitude FL350",
-  "| config flaps-5; speed 190 kt", "| config flaps-30; speed vref + 5 kt", "| config clean; speed M 0.74 +- 0.02", "| bank 25 left", "| bank rate-one", "| isa +5", "| oat -5 C",
-  "| fly gorsechat-2", "| fly brambling-37; under shuttle-rules", "| fly nobody", "| wieght 5 t", "| engine-out left", "| contamination frost", "| claim stall 120 kt", "| load 0.5",
-  '| aircraft kestrel-9 "invented"; basis vsr; reference 9 t', "| config clean stall 90 kt", "| limits own-rules, from common-practice", "| must any bank 20", "| fly kestrel-9; under own-rules",
+  "",
+  "Prose.",
+  "| phase departure",
+  "| phase landing; aside",
+  "| phase takeoff",
+  "| weight 55 t +- 0.3 t",
+  "| burn 400 kg",
+  "| altitude 3000 ft",
+  "| altitude FL350",
+  "| config flaps-5; speed 190 kt",
+  "| config flaps-30; speed vref + 5 kt",
+  "| config clean; speed M 0.74 +- 0.02",
+  "| bank 25 left",
+  "| bank rate-one",
+  "| isa +5",
+  "| oat -5 C",
+  "| fly gorsechat-2",
+  "| fly brambling-37; under shuttle-rules",
+  "| fly nobody",
+  "| wieght 5 t",
+  "| engine-out left",
+  "| contamination frost",
+  "| claim stall 120 kt",
+  "| load 0.5",
+  '| aircraft kestrel-9 "invented"; basis vsr; reference 9 t',
+  "| config clean stall 90 kt",
+  "| limits own-rules, from common-practice",
+  "| must any bank 20",
+  "| fly kestrel-9; under own-rules",
 ];
 
 describe("an edited note", () => {
   it("says what it would say if it were opened anew", () => {
-    const line = fc.oneof({ weight: 8, arbitrary: fc.constantFrom(...pieces) }, { weight: 1, arbitrary: notationLine });
-    const edit = fc.record({ from: fc.nat({ max: 24 }), count: fc.nat({ max: 3 }), lines: fc.array(line, { maxLength: 3 }) });
+    const line = fc.oneof(
+      { weight: 8, arbitrary: fc.constantFrom(...pieces) },
+      { weight: 1, arbitrary: notationLine },
+    );
+    const edit = fc.record({
+      from: fc.nat({ max: 24 }),
+      count: fc.nat({ max: 3 }),
+      lines: fc.array(line, { maxLength: 3 }),
+    });
     fc.assert(
-      fc.property(fc.array(line, { maxLength: 24 }), fc.array(edit, { minLength: 1, maxLength: 6 }), (start, edits) => {
-        const folder = demo();
-        const note = folder.open(uri, `| fly brambling-37\n${start.join("\n")}\n`, "plumb");
-        for (const { from, count, lines } of edits) {
-          note.edit({ line: from, character: 0 }, { line: from + count, character: 0 }, lines.map((one) => `${one}\n`).join(""));
-          const fresh = demo();
-          const anew = fresh.open(uri, note.document.text(), "plumb");
-          expect(fileJson(note, "note")).toEqual(fileJson(anew, "note"));
-        }
-      }),
+      fc.property(
+        fc.array(line, { maxLength: 24 }),
+        fc.array(edit, { minLength: 1, maxLength: 6 }),
+        (start, edits) => {
+          const folder = demo();
+          const note = folder.open(uri, `| fly brambling-37\n${start.join("\n")}\n`, "plumb");
+          for (const { from, count, lines } of edits) {
+            note.edit(
+              { line: from, character: 0 },
+              { line: from + count, character: 0 },
+              lines.map((one) => `${one}\n`).join(""),
+            );
+            const fresh = demo();
+            const anew = fresh.open(uri, note.document.text(), "plumb");
+            expect(fileJson(note, "note")).toEqual(fileJson(anew, "note"));
+          }
+        },
+      ),
       { numRuns: 250 },
     );
   });
 
   it("shows no figure that is not a number, whatever it says", () => {
-    const line = fc.oneof({ weight: 3, arbitrary: fc.constantFrom(...pieces) }, { weight: 2, arbitrary: notationLine });
+    const line = fc.oneof(
+      { weight: 3, arbitrary: fc.constantFrom(...pieces) },
+      { weight: 2, arbitrary: notationLine },
+    );
     fc.assert(
       fc.property(fc.array(line, { maxLength: 24 }), (lines) => {
-        const note = demo().open(uri, `| fly brambling-37; weight 50 t; config clean; altitude FL100; speed 220 kt\n\n${lines.join("\n")}`, "plumb");
+        const note = demo().open(
+          uri,
+          `| fly brambling-37; weight 50 t; config clean; altitude FL100; speed 220 kt\n\n${lines.join("\n")}`,
+          "plumb",
+        );
         const text = JSON.stringify(fileJson(note, "note"), (_, value) => {
           if (typeof value === "number") expect(Number.isFinite(value)).toBe(true);
-          if (typeof value === "string") expect(value).not.toMatch(/NaN|Infinity|undefined|unknown (?:kt|t|nm)/);
+          if (typeof value === "string")
+            expect(value).not.toMatch(/NaN|Infinity|undefined|unknown (?:kt|t|nm)/);
           return value;
         });
         expect(text).not.toBe("");

@@ -87,7 +87,8 @@ export function secondOpinion(question: Question): Answer {
   const density = pressure / (R_AIR * temperature);
   const sound = Math.sqrt(GAMMA * R_AIR * temperature);
   const { kind, value } = question.speed;
-  const machOfCas = (cas: number) => bisect((mach) => impact(mach, pressure) - impact(cas / SOUND, SEA_PRESSURE), 0, 1);
+  const machOfCas = (cas: number) =>
+    bisect((mach) => impact(mach, pressure) - impact(cas / SOUND, SEA_PRESSURE), 0, 1);
   const mach =
     kind === "mach"
       ? value
@@ -117,7 +118,15 @@ export function secondOpinion(question: Question): Answer {
     }
     return null;
   };
-  return { cas: kind === "cas" ? value : casOf(mach), eas, tas, mach, stall: stallAt(question.load), vs1g: stallAt(1), stallLoad: carries(eas) };
+  return {
+    cas: kind === "cas" ? value : casOf(mach),
+    eas,
+    tas,
+    mach,
+    stall: stallAt(question.load),
+    vs1g: stallAt(1),
+    stallLoad: carries(eas),
+  };
 }
 
 function factorAt(table: readonly (readonly [number, number])[], mach: number): number | null {

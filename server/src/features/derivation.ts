@@ -11,6 +11,7 @@ import {
   formatMach,
   formatMass,
   formatPercent,
+  formatQnh,
   formatResult,
   formatResultValue,
   formatSpeed,
@@ -18,7 +19,7 @@ import {
 import { fileName } from "../plan/names.ts";
 import { lineOf, type Origin } from "../plan/origin.ts";
 import type { Conditions, HeldRow, PointResult } from "../plan/point.ts";
-import { resultEntry } from "../plan/results.ts";
+import { resultEntry, resultNames } from "../plan/results.ts";
 import { atMost } from "../plan/rules.ts";
 
 /** The result of a point, then how it came about with this note's values, as Markdown. */
@@ -70,34 +71,13 @@ function headline(point: PointResult, { clause }: PlacedClause): string {
   }
 }
 
-const shownResults: readonly ResultName[] = [
-  "vs1g",
-  "stall",
-  "warning",
-  "ratio",
-  "margin",
-  "load",
-  "stall-load",
-  "stall-bank",
-  "warning-bank",
-  "overshoot",
-  "buffet-load",
-  "buffet-bank",
-  "radius",
-  "rate",
-  "rate-one-bank",
-  "v2min",
-  "vfto",
-  "vref",
-  "va",
-];
-
 function resultsTable(point: PointResult): string {
-  const rows = shownResults.flatMap((name) => {
+  const rows = resultNames.flatMap((name) => {
     const spread = point.results?.[name];
     if (!spread) return [];
+    const least = name === "v2min" || name === "vfto" || name === "vref" ? "at least " : "";
     return [
-      `| ${name} | ${formatResult(name, spread, { spread: true })} | ${resultEntry(name).label}${referenceNote(point, name)} |`,
+      `| ${name} | ${least}${formatResult(name, spread, { spread: true })} | ${resultEntry(name).label}${referenceNote(point, name)} |`,
     ];
   });
   return ["| result | value | |", "| --- | --- | --- |", ...rows].join("\n");
@@ -109,7 +89,7 @@ function referenceNote(point: PointResult, name: ResultName): string {
   if (name !== "v2min" && name !== "vfto" && name !== "vref") return "";
   const reference = point.reference[name];
   if (!reference) return "";
-  return `, at least, in ${reference.configuration} (${reference.published ? "published" : "least value of the rule"})`;
+  return `: in ${reference.configuration} (${reference.published ? "published" : "least value of the rule"})`;
 }
 
 /** The formulas with this note's values in them. */
@@ -161,7 +141,7 @@ function inputsText(point: PointResult, conditions: Conditions, uri: string): st
     "altitude",
     conditions.flightLevel
       ? formatFlightLevel(conditions.altitude.nominal)
-      : formatAltitude(conditions.altitude.nominal),
+      : `${formatAltitude(conditions.altitude.nominal)}${conditions.qnh === null ? " of pressure altitude" : ` on ${formatQnh(conditions.qnh)}`}`,
   );
   add("isa", `ISA ${formatDeviation(conditions.deviation.nominal)}`);
   const speeds = [

@@ -21,5 +21,3 @@ export function guardWith(connection: Connection) {
     };
   };
 }
-
-export type Guard = ReturnType<typeof guardWith>;

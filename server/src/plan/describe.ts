@@ -9,6 +9,7 @@ import { type References, type Results, referenceSpeeds, referencesOf, resultsOf
 import type { Finding } from "./finding.ts";
 import type { Origin } from "./origin.ts";
 import type { Assumption, Conditions, PointResult, Withheld } from "./point.ts";
+import { resultNames } from "./results.ts";
 import { originOf } from "./site.ts";
 import { type CarriedKey, keywordOf } from "./state.ts";
 
@@ -205,28 +206,7 @@ class DescribedPoint implements PointResult {
   }
 }
 
-const everyResult: readonly (ResultName | "ias")[] = [
-  "vs1g",
-  "overshoot",
-  "stall",
-  "warning",
-  "ratio",
-  "margin",
-  "load",
-  "stall-load",
-  "stall-bank",
-  "warning-bank",
-  "buffet-bank",
-  "buffet-load",
-  "radius",
-  "rate",
-  "rate-one-bank",
-  "v2min",
-  "vfto",
-  "vref",
-  "va",
-  "ias",
-];
+const everyResult: readonly (ResultName | "ias")[] = [...resultNames, "ias"];
 
 /** What was taken without being stated, in the order it is read out. */
 function assumptions(point: Point, evaluated: Evaluated | null): readonly Assumption[] {

@@ -29,12 +29,6 @@ export function formatResult(
   return low === high ? shown : `${shown} (${low} to ${high})`;
 }
 
-/** The figure of {@link formatResult} alone, in the unit it is shown in; NaN where it is none. */
-export function shownResult(name: ResultName, spread: Spread, decimals = results[name].decimals): number {
-  const { worst, rounding } = results[name];
-  return roundShown(inShownUnit(name, spread[worst]), clipped(decimals), rounding);
-}
-
 /** One value of a result, SI, with its unit. */
 export function formatResultValue(name: ResultName, si: number, more = 0): string {
   const { decimals, unit } = results[name];
@@ -138,11 +132,6 @@ export function formatDeviation(kelvin: number, more = 0): string {
   return Number(text) > 0 ? `+${text}` : text;
 }
 
-/** An absolute temperature: "-42 °C". */
-export function formatTemperature(kelvin: number, more = 0): string {
-  return withUnit(rounded(kelvin - 273.15, more, "nearest"), "C");
-}
-
 /** A share: "8 %", "7.5 %". */
 export function formatPercent(fraction: number, more = 0): string {
   return withUnit(trimmed(fromSI(fraction, "%"), 1 + more), "%");
@@ -151,11 +140,6 @@ export function formatPercent(fraction: number, more = 0): string {
 /** "1013 hPa". */
 export function formatQnh(pascal: number, more = 0): string {
   return inUnit(pascal, "hPa", more, "nearest");
-}
-
-/** "12 s": time that is left, cut. */
-export function formatSeconds(seconds: number, more = 0): string {
-  return inUnit(seconds, "s", more, "down");
 }
 
 function resultFigure(name: ResultName, si: number, decimals: number): string {

@@ -1,0 +1,132 @@
+// Runs the extension in the real editor: the workbench of code-server with its Node extension host, in
+// headless Chromium. `--pictures FOLDER` says where the screenshots go.
+import { spawn } from "node:child_process";
+import { cpSync, mkdirSync, mkdtempSync, rmSync, writeFileSync } from "node:fs";
+import { createServer } from "node:net";
+import { tmpdir } from "node:os";
+import { join, resolve } from "node:path";
+import { build } from "esbuild";
+import { chromium } from "playwright-core";
+import { editorEntry, installEditor } from "./installEditor.mjs";
+import { servePage } from "./page.mjs";
+
+const LONGEST = 8 * 60_000;
+const at = process.argv.indexOf("--pictures");
+const pictures = resolve(at < 0 ? "out/pictures" : process.argv[at + 1]);
+
+function freePort() {
+  return new Promise((done) => {
+    const server = createServer();
+    server.listen(0, "127.0.0.1", () => {
+      const { port } = server.address();
+      server.close(() => done(port));
+    });
+  });
+}
+
+async function answers(port) {
+  for (let i = 0; i < 200; i++) {
+    const ok = await fetch(`http://127.0.0.1:${port}/healthz`).then(
+      (response) => response.ok,
+      () => false,
+    );
+    if (ok) return;
+    await new Promise((done) => setTimeout(done, 300));
+  }
+  throw new Error("The editor's server did not start.");
+}
+
+/** A copy of the demo and fresh settings, so that a run changes nothing and finds nothing of the last one. */
+function freshFolders() {
+  const root = mkdtempSync(join(tmpdir(), "plumbline-editor-"));
+  cpSync("demo", join(root, "demo"), { recursive: true });
+  for (const name of ["user/User", "extensions"]) mkdirSync(join(root, name), { recursive: true });
+  const settings = {
+    "workbench.colorTheme": "Default Light Modern",
+    "window.autoDetectColorScheme": false,
+    "workbench.startupEditor": "none",
+    "workbench.secondarySideBar.defaultVisibility": "hidden",
+    "chat.commandCenter.enabled": false,
+    "editor.minimap.enabled": false,
+    "files.watcherExclude": {},
+  };
+  writeFileSync(join(root, "user/User/settings.json"), JSON.stringify(settings));
+  return root;
+}
+
+installEditor();
+mkdirSync(pictures, { recursive: true });
+mkdirSync("out/editor", { recursive: true });
+await build({
+  entryPoints: ["test/editor/suite/index.ts"],
+  outfile: "out/editor/suite.cjs",
+  bundle: true,
+  platform: "node",
+  format: "cjs",
+  target: "node20",
+  external: ["vscode"],
+  logLevel: "warning",
+});
+const root = freshFolders();
+const port = await freePort();
+const browser = await chromium.launch({
+  executablePath: process.env.CHROMIUM ?? "/usr/bin/chromium",
+  args: [
+    "--no-sandbox",
+    "--disable-gpu",
+    "--disable-quic",
+    "--no-first-run",
+    "--disable-background-networking",
+    "--disable-component-update",
+    "--disable-sync",
+  ],
+});
+const page = await browser.newPage({ viewport: { width: 1360, height: 860 } });
+const bridge = await servePage(page, pictures);
+const server = spawn(
+  process.execPath,
+  [
+    editorEntry,
+    ...["--auth", "none", "--bind-addr", `127.0.0.1:${port}`],
+    ...["--user-data-dir", join(root, "user"), "--extensions-dir", join(root, "extensions")],
+    ...["--disable-telemetry", "--disable-update-check", "--disable-workspace-trust", join(root, "demo")],
+  ],
+  {
+    stdio: "ignore",
+    env: { ...process.env, PLUMBLINE_BRIDGE: String(bridge.port), PLUMBLINE_REPOSITORY: resolve(".") },
+  },
+);
+
+let code = 1;
+try {
+  await answers(port);
+  const ended = new Promise((done) => {
+    page.exposeFunction("codeAutomationExit", (value) => done(value));
+  });
+  // The workbench logs here too; only the suite's own lines are of use.
+  await page.exposeFunction("codeAutomationLog", (_type, args) => {
+    const text = args.join(" ");
+    if (/^( {2}ok| {2}FAIL|editor:)/.test(text)) console.log(text);
+  });
+  const base = `vscode-remote://127.0.0.1:${port}`;
+  const payload = JSON.stringify([
+    ["extensionDevelopmentPath", base + resolve(".")],
+    ["extensionTestsPath", base + resolve("out/editor/suite.cjs")],
+    ["skipWelcome", "true"],
+  ]);
+  await page.goto(
+    `http://127.0.0.1:${port}/?folder=${encodeURIComponent(join(root, "demo"))}&payload=${encodeURIComponent(payload)}`,
+  );
+  const overdue = new Promise((done) => setTimeout(() => done("overdue"), LONGEST).unref());
+  const outcome = await Promise.race([ended, overdue]);
+  if (outcome === "overdue") {
+    console.error("The suite did not end in time.");
+    await page.screenshot({ path: join(pictures, "overdue.png") });
+  } else code = Number(outcome);
+} finally {
+  bridge.close();
+  await browser.close();
+  server.kill();
+  rmSync(root, { recursive: true, force: true });
+}
+process.exit(code);
