@@ -6,6 +6,8 @@ import { keywordOf } from "./vocabulary.ts";
 
 const noFindings: readonly TextFinding[] = [];
 
+const LONGEST_QUOTE = 60;
+
 /** Findings that cost only their report: the clause they stand in reads one way all the same. */
 const harmless = new Set<TextCode>(["separator", "unclosed-remark", "unclosed-title"]);
 
@@ -56,7 +58,11 @@ export class Cursor {
 
   report(code: TextCode, span: Span, message: string, fixes: readonly Fix[] = []): void {
     this.#findings ??= [];
-    this.#findings.push({ code, line: 0, span, message, fixes });
+    const said = this.text.slice(span.start, span.end);
+    // What is quoted of a very long line is cut: nobody reads a message of a million characters.
+    const short =
+      said.length > LONGEST_QUOTE ? message.replaceAll(said, `${said.slice(0, LONGEST_QUOTE)}…`) : message;
+    this.#findings.push({ code, line: 0, span, message: short, fixes });
     if (!harmless.has(code)) this.faulty = true;
   }
 

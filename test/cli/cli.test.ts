@@ -1,0 +1,261 @@
+import { spawnSync } from "node:child_process";
+import { mkdtempSync, readFileSync, rmSync, writeFileSync } from "node:fs";
+import { tmpdir } from "node:os";
+import { join } from "node:path";
+import { fileURLToPath } from "node:url";
+import { afterAll, beforeAll, describe, expect, it } from "vitest";
+
+const root = fileURLToPath(new URL("../..", import.meta.url));
+const bin = JSON.parse(readFileSync(join(root, "package.json"), "utf8")).bin.plumbline as string;
+
+function plumbline(args: readonly string[], options: { input?: string | Buffer; cwd?: string } = {}) {
+  const { status, stdout, stderr } = spawnSync(process.execPath, [join(root, bin), ...args], {
+    cwd: options.cwd ?? root,
+    input: options.input ?? "",
+    encoding: "utf8",
+    env: { ...process.env, NO_COLOR: "1" },
+  });
+  return { status, stdout, stderr };
+}
+
+let folder = "";
+beforeAll(() => {
+  folder = mkdtempSync(join(tmpdir(), "plumbline-cli-"));
+});
+afterAll(() => rmSync(folder, { recursive: true }));
+
+const card = "| aircraft kestrel-9; basis vsr; reference 9 t\n| config clean stall 95 kt\n";
+const point = "| fly kestrel-9; weight 8 t; config clean; altitude FL100; speed 180 kt\n\n| phase cruise\n";
+
+describe("plumbline check", () => {
+  it("finds in the demo what was put there, and nothing else", () => {
+    const { status, stdout, stderr } = plumbline(["check", "demo"]);
+    expect(stdout).toBe(readFileSync(join(root, "test/examples/demo.check.txt"), "utf8"));
+    expect(status).toBe(1);
+    expect(stderr).toContain("not approved data");
+  });
+
+  it("is the default command, and takes a file, a folder and a glob", () => {
+    const whole = plumbline(["demo", "--quiet"]).stdout;
+    expect(plumbline(["check", "demo/*", "--quiet"]).stdout).toBe(whole);
+    expect(plumbline(["check", "demo/winter-shuttle.plumb", "--quiet"]).stdout).toBe(
+      whole
+        .split("\n")
+        .filter((line) => line.startsWith("demo/winter-shuttle.plumb"))
+        .join("\n")
+        .concat("\n"),
+    );
+  });
+
+  it.each([
+    ["error", point + card.replace("stall 95 kt", ""), 1],
+    ["error", card + "\n" + point, 0],
+    ["warning", `${card}\n${point.trimEnd()}; claim v2min 100 kt\n`, 1],
+    ["never", "| wieght 5", 0],
+  ])("with --fail-on %s ends with the right code", (failOn, input, status) => {
+    expect(plumbline(["check", "-", "--fail-on", failOn], { input, cwd: folder }).status).toBe(status);
+  });
+
+  it("prints JSON with the caution, positions from 1 and a summary", () => {
+    const { stdout } = plumbline(["check", "-", "--format", "json", "--stdin-path", "x/note.plumb"], {
+      input: "\n| weight 61.4",
+      cwd: folder,
+    });
+    const printed = JSON.parse(stdout);
+    expect(printed).toMatchObject({ schema: 1, summary: { error: 1, warning: 0, information: 0, hint: 0 } });
+    expect(printed.caution).toContain("Not for use in flight");
+    expect(printed.files).toEqual([
+      {
+        path: "x/note.plumb",
+        findings: [
+          expect.objectContaining({
+            code: "missing-unit",
+            severity: "error",
+            line: 2,
+            column: 10,
+            endLine: 2,
+            endColumn: 14,
+            accepted: null,
+          }),
+        ],
+      },
+    ]);
+  });
+
+  it("prints SARIF 2.1.0 in which every result has its rule and its place", () => {
+    const log = JSON.parse(plumbline(["check", "demo", "--format", "sarif"]).stdout);
+    expect(log.version).toBe("2.1.0");
+    const [run] = log.runs;
+    expect(run.columnKind).toBe("utf16CodeUnits");
+    expect(run.results.length).toBeGreaterThan(5);
+    for (const result of run.results) {
+      expect(run.tool.driver.rules[result.ruleIndex].id).toBe(result.ruleId);
+      expect(["error", "warning", "note", "none"]).toContain(result.level);
+      const { artifactLocation, region } = result.locations[0].physicalLocation;
+      expect(artifactLocation.uri).toMatch(/^demo\/[\w.-]+$/);
+      expect(region.startColumn).toBeGreaterThan(0);
+      expect(region.endColumn).toBeGreaterThanOrEqual(region.startColumn);
+    }
+  });
+
+  it("writes where it is told, and reads cards under --root", () => {
+    writeFileSync(join(folder, "cards.plumb"), card);
+    const out = join(folder, "out.txt");
+    const { status, stdout } = plumbline(["check", "-", "--root", folder, "-o", out], { input: point });
+    expect([status, stdout]).toEqual([0, ""]);
+    expect(readFileSync(out, "utf8")).toContain("built-in-limits");
+  });
+});
+
+describe("plumbline points", () => {
+  it("prints the demo's table as it is kept", () => {
+    expect(plumbline(["points", "demo"]).stdout).toBe(
+      readFileSync(join(root, "test/examples/demo.points.txt"), "utf8"),
+    );
+  });
+
+  it("prints JSON with every field of the format", () => {
+    const { files } = JSON.parse(
+      plumbline(["points", "demo/winter-shuttle.plumb", "--format", "json"]).stdout,
+    );
+    const turn = files[0].points.find((one: { title: string }) => one.title === "Noise turn");
+    const fields =
+      `line endLine phase title aside aircraft limits rules config mass_kg altitude_ft pressure_altitude_ft isa_deviation_c cg_percent
+      lift_loss_percent bank_deg bank_side path_deg load engine_out speed vs1g_kt stall_kt stall_high_kt warning_kt warning_high_kt ratio margin
+      margin_low margin_high ratio_low ratio_high stall_load stall_bank_deg warning_bank_deg overshoot_deg buffet_load buffet_bank_deg
+      low_buffet_mach high_buffet_mach buffet_altitude_ft gust_load gust_load_down margin_after_shear ratio_after_shear va_kt v2min_kt vfto_kt
+      vref_kt power_on_stall_kt radius_nm rate_deg_s rate_one_bank_deg bank_limit_deg bank_advice_deg seconds_to_warning seconds_to_stall
+      approach_category solved sweep claims expected accepted not_evaluated assumed inherited withheld`.split(
+        /\s+/,
+      );
+    for (const field of fields) expect(turn, field).toHaveProperty(field);
+    expect(Object.keys(turn.speed)).toEqual(["cas_kt", "eas_kt", "tas_kt", "mach", "ias_kt"]);
+    expect(turn.claims[0]).toMatchObject({ name: "stall", claimed: 132, holds: false });
+    expect(turn.inherited).toMatchObject({ aircraft: 6, limits: 6 });
+  });
+
+  it("gives null for what cannot be known, and says what it waits for", () => {
+    const { files } = JSON.parse(
+      plumbline(["points", "-", "--format", "json"], {
+        input: `${card}\n${point.replace("8 t", "8")}`.replaceAll("kestrel-9", "plover-4"),
+        cwd: folder,
+      }).stdout,
+    );
+    const [first] = files[0].points;
+    expect(first).toMatchObject({
+      mass_kg: null,
+      stall_kt: null,
+      speed: null,
+      withheld: { line: 4, code: "missing-unit" },
+    });
+  });
+
+  it("prints CSV with one row a point and the caution last", () => {
+    const lines = plumbline(["points", "demo", "--format", "csv"]).stdout.trimEnd().split("\r\n");
+    expect(lines[0]).toMatch(/^path,line,.*speed\.cas_kt.*,caution$/);
+    expect(lines).toHaveLength(1 + 14);
+    for (const line of lines.slice(1)) expect(line).toContain("planning aid");
+  });
+
+  it("prints a Markdown table", () => {
+    expect(plumbline(["points", "demo/winter-shuttle.plumb", "--format", "markdown"]).stdout).toMatch(
+      /^## demo\/winter-shuttle\.plumb\n\n\| line \| phase \|/,
+    );
+  });
+});
+
+describe("plumbline format", () => {
+  it("lays out files in place, tells with --check, and touches no error", () => {
+    const file = join(folder, "loose.plumb");
+    writeFileSync(file, "|weight 5t ;\r\n\r\n| weight  5\r\n");
+    expect(plumbline(["format", file, "--check"]).status).toBe(1);
+    expect(readFileSync(file, "utf8")).toBe("|weight 5t ;\r\n\r\n| weight  5\r\n");
+    expect(plumbline(["format", file]).status).toBe(0);
+    expect(readFileSync(file, "utf8")).toBe("| weight 5 t\r\n\r\n| weight  5\r\n");
+    expect(plumbline(["format", file, "--check"]).status).toBe(0);
+  });
+
+  it("reads standard input and writes standard output", () => {
+    expect(plumbline(["format", "-"], { input: "|isa+3;", cwd: folder }).stdout).toBe("| isa +3");
+  });
+});
+
+describe("plumbline explain", () => {
+  it("prints the page of a finding, and the nearest of one that is none", () => {
+    expect(plumbline(["explain", "stalled"]).stdout).toMatch(/^# stalled: stalled\n/);
+    const { status, stderr } = plumbline(["explain", "bank-over-limits"]);
+    expect([status, stderr]).toEqual([
+      2,
+      "plumbline: There is no finding bank-over-limits; did you mean bank-over-limit?\n",
+    ]);
+  });
+});
+
+describe("bad input ends with code 2 and one clear line", () => {
+  it.each([
+    [["check", "no-such-file.plumb"], /^plumbline: There is no file or folder no-such-file\.plumb\.\n$/],
+    [["check", "--format", "yaml"], /Allowed choices are text, json, sarif/],
+    [["--nonsense"], /unknown option '--nonsense'/],
+    [["check", "demo", "--today", "2026-02-30"], /It is a day such as 2026-03-01/],
+    [["check", "demo", "-o", "/no/such/folder/x"], /cannot be written/],
+  ])("%j", (args, message) => {
+    const { status, stderr } = plumbline(args as string[]);
+    expect(stderr).toMatch(message as RegExp);
+    expect(status).toBe(2);
+  });
+
+  it("a folder without notes, a file that is not UTF-8, and standard input that is not", () => {
+    const empty = mkdtempSync(join(tmpdir(), "plumbline-empty-"));
+    expect(plumbline(["check", "."], { cwd: empty })).toMatchObject({
+      status: 2,
+      stderr: expect.stringContaining("There is no note in ."),
+    });
+    writeFileSync(join(empty, "bytes.plumb"), Buffer.from([0x7c, 0xff, 0xfe]));
+    expect(plumbline(["check", "."], { cwd: empty })).toMatchObject({
+      status: 2,
+      stderr: expect.stringContaining("is not UTF-8"),
+    });
+    expect(plumbline(["check", "-"], { cwd: folder, input: Buffer.from([0x7c, 0xff]) })).toMatchObject({
+      status: 2,
+      stderr: expect.stringContaining("not UTF-8"),
+    });
+    rmSync(empty, { recursive: true });
+  });
+
+  it("a million characters on one line are a finding, not a crash", () => {
+    const { status } = plumbline(["check", "-", "--quiet"], {
+      input: `| ${"bank 25; ".repeat(1000)}${"x".repeat(1_000_000)}`,
+      cwd: folder,
+    });
+    expect(status).toBe(1);
+  });
+});
+
+describe("discovery", () => {
+  it("leaves out what .gitignore leaves out, nested too, and reads what is named", () => {
+    const place = mkdtempSync(join(tmpdir(), "plumbline-git-"));
+    const put = (name: string, text: string) => writeFileSync(join(place, name), text);
+    spawnSync("mkdir", ["-p", join(place, "sub"), join(place, "node_modules"), join(place, ".git")]);
+    put(".gitignore", "secret.plumb\n");
+    put("sub/.gitignore", "*.plumb\n!kept.plumb\n");
+    for (const name of ["a.plumb", "secret.plumb", "sub/b.plumb", "sub/kept.plumb", "node_modules/c.plumb"])
+      put(name, "| weight 5 t\n");
+    const paths = (args: string[]) =>
+      JSON.parse(plumbline(["check", ...args, "--format", "json"], { cwd: place }).stdout).files.map(
+        (one: { path: string }) => one.path,
+      );
+    expect(paths(["."])).toEqual(["a.plumb", "sub/kept.plumb"]);
+    expect(paths(["secret.plumb"])).toEqual(["secret.plumb"]);
+    rmSync(place, { recursive: true });
+  });
+});
+
+describe("npm start's tour", () => {
+  it("shows each note with its hints beside the lines, the findings, and what to do next", () => {
+    const { status, stdout } = plumbline(["tour", "demo"]);
+    expect(status).toBe(0);
+    expect(stdout).toMatch(/\| phase departure "Noise turn" ≈ margin 1\.\d\d, ratio 1\.\d\d/);
+    expect(stdout).toContain("What to do next");
+    expect(stdout).toContain("Not for use in flight");
+  });
+});
