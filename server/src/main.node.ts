@@ -1,4 +1,4 @@
-import "./smallYoungSpace.ts";
+import "./cli/smallYoungSpace.ts";
 import { existsSync } from "node:fs";
 import { join } from "node:path";
 import { fileURLToPath, pathToFileURL } from "node:url";

@@ -49,7 +49,7 @@ describe("plumbline check", () => {
 
   it.each([
     ["error", point + card.replace("stall 95 kt", ""), 1],
-    ["error", card + "\n" + point, 0],
+    ["error", `${card}\n${point}`, 0],
     ["warning", `${card}\n${point.trimEnd()}; claim v2min 100 kt\n`, 1],
     ["never", "| wieght 5", 0],
   ])("with --fail-on %s ends with the right code", (failOn, input, status) => {

@@ -1,5 +1,5 @@
 // Runs the extension in the real editor: the workbench of code-server with its Node extension host, in
-// headless Chromium. `--pictures FOLDER` says where the screenshots go.
+// headless Chromium. Screenshots go to out/pictures; `--readme` copies those that the README shows.
 import { spawn } from "node:child_process";
 import { cpSync, mkdirSync, mkdtempSync, rmSync, writeFileSync } from "node:fs";
 import { createServer } from "node:net";
@@ -11,8 +11,8 @@ import { editorEntry, installEditor } from "./installEditor.mjs";
 import { servePage } from "./page.mjs";
 
 const LONGEST = 8 * 60_000;
-const at = process.argv.indexOf("--pictures");
-const pictures = resolve(at < 0 ? "out/pictures" : process.argv[at + 1]);
+const pictures = resolve("out/pictures");
+const inReadme = ["screenshot-light", "screenshot-dark", "screenshot-contrast", "hover"];
 
 function freePort() {
   return new Promise((done) => {
@@ -128,5 +128,8 @@ try {
   await browser.close();
   server.kill();
   rmSync(root, { recursive: true, force: true });
+}
+if (code === 0 && process.argv.includes("--readme")) {
+  for (const name of inReadme) cpSync(join(pictures, `${name}.png`), `client/media/${name}.png`);
 }
 process.exit(code);

@@ -157,7 +157,7 @@ describe("definition", () => {
 function offered(marked: string): string[] {
   const { text, line, character } = atCursor(marked);
   return completion(open(text), line, character)
-    .sort((a, b) => a.rank - b.rank)
+    .toSorted((a, b) => a.rank - b.rank)
     .map((one) => one.label);
 }
 

@@ -1,4 +1,4 @@
-import "../smallYoungSpace.ts";
+import "./smallYoungSpace.ts";
 import { run } from "./run.ts";
 
 // A reader that closes the pipe early (`| head`) has seen enough: that is no failure.
