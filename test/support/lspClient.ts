@@ -1,12 +1,12 @@
 import { spawn } from "node:child_process";
 import { fileURLToPath } from "node:url";
+import type { ClientCapabilities, Diagnostic, InitializeResult } from "vscode-languageserver";
 import {
   createMessageConnection,
   type MessageConnection,
   StreamMessageReader,
   StreamMessageWriter,
-} from "vscode-jsonrpc/node";
-import type { ClientCapabilities, Diagnostic, InitializeResult } from "vscode-languageserver";
+} from "vscode-languageserver/node";
 
 export const serverPath = fileURLToPath(new URL("../../dist/server/main.node.cjs", import.meta.url));
 
