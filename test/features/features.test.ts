@@ -213,6 +213,13 @@ describe("code actions", () => {
     expect(note.findings().map(({ finding }) => finding.code)).not.toContain("ratio-short");
   });
 
+  it("offer the unit first that brings a weight within the card's masses", () => {
+    const titles = (text: string) => codeActions(open(text), 0, 0).map((one) => one.title);
+    expect(titles("| fly gorsechat-2; weight 690")[0]).toBe("Write 690 kg");
+    expect(titles("| fly brambling-37; weight 110000")[0]).toBe("Write 110000 lb");
+    expect(titles("| weight 690")[0]).toBe("Write 690 t");
+  });
+
   it("join a block without a phase to the point above", () => {
     const note = open("| phase hold\n\n| bank 25\n");
     const join = codeActions(note, 2, 2).find((one) => one.title.startsWith("Join"));

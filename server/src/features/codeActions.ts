@@ -1,6 +1,11 @@
-import type { Edit } from "../notation/finding.ts";
+import type { Edit, Fix } from "../notation/finding.ts";
+import { unitOf } from "../notation/units.ts";
 import type { Finding } from "../plan/finding.ts";
 import type { Note } from "../plan/note.ts";
+import { measure } from "../plan/quantity.ts";
+import { blockAt } from "./blocksBetween.ts";
+import { clauseAt } from "./hover.ts";
+import { cardInUse } from "./target.ts";
 
 /** A way out of a finding, with its edits on lines of the document. */
 export interface CodeAction {
@@ -17,7 +22,8 @@ export function codeActions(note: Note, from: number, to: number): readonly Code
     if (line < from || to < line) return [];
     // A finding of a block counts its lines from the block's first, one of the whole note from the note's.
     const base = line - finding.line;
-    const fixes = [...finding.fixes.map((fix) => ({ ...fix, base })), ...joinFix(note, line, finding)];
+    const own = inOrder(note, line, finding);
+    const fixes = [...own.map((fix) => ({ ...fix, base })), ...joinFix(note, line, finding)];
     return fixes.map(
       ({ title, edits, preferred, base: first }): CodeAction => ({
         title,
@@ -28,6 +34,25 @@ export function codeActions(note: Note, from: number, to: number): readonly Code
       }),
     );
   });
+}
+
+/** Where a weight lacks its unit, the units that bring it within the card's masses come first. */
+function inOrder(note: Note, line: number, finding: Finding): readonly Fix[] {
+  const result = finding.code === "missing-unit" ? blockAt(note, line) : null;
+  const masses = result ? cardInUse(result)?.mass?.value : null;
+  const placed = result && clauseAt(result, line, finding.span.start);
+  const body = placed?.clause.body;
+  if (!masses || body?.kind !== "weight" || body.value.kind !== "scalar") return finding.fixes;
+  const { quantity } = body.value;
+  const fits = (fix: Fix) => {
+    const unit = unitOf(fix.edits[0]?.newText.trim() ?? "");
+    const kilograms = unit ? measure({ ...quantity, unit }, "mass").value : Number.NaN;
+    return masses.low <= kilograms && kilograms <= masses.high;
+  };
+  return [
+    ...finding.fixes.filter(fits).map((fix) => ({ ...fix, preferred: true })),
+    ...finding.fixes.filter((fix) => !fits(fix)),
+  ];
 }
 
 /** A block without a phase may belong to the point above: one blank line between them is all that parts them. */

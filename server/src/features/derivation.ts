@@ -16,6 +16,7 @@ import {
   formatResultValue,
   formatSpeed,
 } from "../plan/format.ts";
+import type { Limits } from "../plan/limits.ts";
 import { fileName } from "../plan/names.ts";
 import { lineOf, type Origin } from "../plan/origin.ts";
 import type { Conditions, HeldRow, PointResult } from "../plan/point.ts";
@@ -107,9 +108,32 @@ function formulas(point: PointResult, conditions: Conditions): string {
     `V_c = ${formatSpeed(configuration.stallSpeed)} (${configuration.name}, ${basis.kind}${basis.kind === "vs" ? ` / ${basis.factor}` : ""}, at ${formatMass(reference, reference)})`,
     `stall: V² f(M) = V_c² k² (n m / m_ref) / (1 - loss), with m = ${mass}, k = ${conditions.cgFactor.nominal.toFixed(3)}, loss = ${formatPercent(conditions.liftLoss.nominal)}: ${formatResultValue("stall", stall.nominal)}`,
   ];
+  lines.push(...loadLines(point, conditions));
   const check = weightCheck(point, conditions, reference);
   if (check) lines.push(check);
   return lines.map((line) => `- ${line}`).join("\n");
+}
+
+/** Which comes first as the load grows: the stall, buffet, or the limit load factor. */
+function loadLines(point: PointResult, conditions: Conditions): readonly string[] {
+  const { configuration, results } = point;
+  const stall = results?.["stall-load"];
+  const buffet = results?.["buffet-load"];
+  const lines: string[] = [];
+  if (stall && buffet) {
+    const usable = buffet.low < stall.low ? buffet : stall;
+    lines.push(
+      `usable load factor: ${formatResultValue("stall-load", usable.low)}, where ${usable === buffet ? "buffet begins" : "the wing stalls"}${configuration?.buffet?.cg === null ? " (buffet table: cg not stated)" : ""}`,
+    );
+  }
+  const limit = configuration?.load?.value;
+  if (stall && limit && conditions.loadStated) {
+    const first = stall.low < limit.high ? "the stall" : "the limit load";
+    lines.push(
+      `at this speed ${first} comes first: stall at ${formatResultValue("stall-load", stall.low)}, limit ${formatLoad(limit.high)}`,
+    );
+  }
+  return lines;
 }
 
 /** The rule of thumb stands beside the exact figure, never instead of it. */
@@ -163,7 +187,8 @@ function rulesText(point: PointResult, uri: string): string {
     (held) => `- ${heldText(held)} *(${held.row.remark ?? "no source stated"}; ${rowPlace(held, uri)})*`,
   );
   if (rows.length === 0) return point.limits ? "" : `No rule is held: ${point.limitsName} cannot be used.`;
-  return `Held against ${point.limitsName}:\n\n${rows.join("\n")}`;
+  const off = point.rowsOff.map((row) => `- ${row.text}: switched off`);
+  return `Held against ${point.limitsName}:\n\n${[...rows, ...off].join("\n")}`;
 }
 
 function rowPlace({ row }: HeldRow, uri: string): string {
@@ -196,10 +221,7 @@ function absentText(point: PointResult): string {
 
 /** The cautions that belong beside these numbers. */
 function remarksText(point: PointResult, conditions: Conditions): string {
-  const { card } = point;
-  const source = card?.source
-    ? `${card.name}: ${card.source.title}${card.source.issue ? `, issue ${card.source.issue}` : ""}.`
-    : `${card?.name}: no source stated.`;
+  const { card, limits } = point;
   const shown = [
     conditions.ias ? null : remarks.cas,
     remarks.steady,
@@ -207,5 +229,11 @@ function remarksText(point: PointResult, conditions: Conditions): string {
     remarks.stillAir,
     0 < conditions.liftLoss.high ? remarks.contamination : null,
   ].filter((one) => one !== null);
-  return `*${shown.join(" ")} ${source}*`;
+  const sources = [card, limits].flatMap((one) => (one ? [sourceText(one)] : []));
+  return `*${[...shown, ...sources].join(" ")}*`;
+}
+
+function sourceText({ name, source }: Pick<Limits, "name" | "source">): string {
+  if (!source) return `${name}: no source stated.`;
+  return `${name}: ${source.title}${source.issue ? `, issue ${source.issue}` : ""}.`;
 }

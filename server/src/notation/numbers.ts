@@ -473,8 +473,19 @@ export function readValue(cursor: Cursor, kind: QuantityKind): Value | Range | n
   if (cursor.isWord("to")) return readSweep(cursor, kind, first);
   const tolerance = atTolerance(cursor) ? readTolerance(cursor, kind) : null;
   const own = first.unit ? first : needUnit(cursor, kind, first, tolerance ? [tolerance.unit] : []);
+  if (tolerance && !tolerance.unit && own.unit === "FL") levelTolerance(cursor, tolerance);
   const span = tolerance ? { start: own.span.start, end: tolerance.span.end } : own.span;
   return { kind: "scalar", quantity: own, tolerance, span };
+}
+
+/** A flight level counts hundreds of feet, so a bare tolerance on one may mean either. */
+function levelTolerance(cursor: Cursor, { value, span }: Tolerance): void {
+  cursor.report("missing-unit", span, `The tolerance ${value} of what? Write ${value} ft.`, [
+    {
+      title: `Write ${value} ft`,
+      edits: [{ line: 0, start: span.end, end: span.end, newText: " ft" }],
+    },
+  ]);
 }
 
 /** The quantity with its unit, which another part of the value may have stated; told where none did. */

@@ -180,6 +180,9 @@ class DescribedPoint implements PointResult {
   get rows() {
     return this.#held.rows;
   }
+  get rowsOff() {
+    return this.#held.off;
+  }
   get bankLimit() {
     return this.#bankRow("must");
   }

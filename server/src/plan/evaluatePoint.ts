@@ -71,10 +71,40 @@ export function evaluatePoint(
   const evaluated = corners && !("withheld" in ready) ? evaluate(point, ready, corners) : null;
   const stopped = evaluated ? null : (withheld ?? blame(site, phaseClause, findings));
   const held = checkPoint(point, evaluated, findings);
+  const told = onePerCode(findings);
   return {
-    point: describePoint(point, evaluated?.ready ?? null, held, stopped, findings),
+    point: describePoint(point, evaluated?.ready ?? null, held, stopped, told),
     after: clauses.aside ? before : stateAfter(point, before, missing.told, evaluated, ready),
   };
+}
+
+/** Codes whose cases stand at clauses of their own and are mended one by one. */
+const apart = new Set<string>(["claim-stale", "claim-unchecked", "missing-value", "out-of-range"]);
+
+const gravest = ["error", "warning", "information", "hint"] as const;
+
+/** A point has at most one finding of a code, whose message names every case: what is accepted is accepted once. */
+function onePerCode(findings: readonly Finding[]): readonly Finding[] {
+  const first = new Map<string, Finding>();
+  const told: Finding[] = [];
+  for (const finding of findings) {
+    const before = apart.has(finding.code) ? undefined : first.get(finding.code);
+    if (!before) {
+      first.set(finding.code, finding);
+      told.push(finding);
+      continue;
+    }
+    const both: Finding = {
+      ...before,
+      severity: gravest.find((one) => one === before.severity || one === finding.severity) ?? before.severity,
+      message: `${before.message} ${finding.message}`,
+      related: [...before.related, ...finding.related],
+      fixes: [...before.fixes, ...finding.fixes],
+    };
+    first.set(finding.code, both);
+    told[told.indexOf(before)] = both;
+  }
+  return told;
 }
 
 /** A point whose phase is not understood is still one; its block has the clause. */

@@ -107,6 +107,8 @@ export interface PointResult {
   readonly reference: Readonly<Record<"v2min" | "vfto" | "vref", ReferenceSpeed | null>>;
   readonly absent: Readonly<Partial<Record<ResultName | "ias", string>>>;
   readonly rows: readonly HeldRow[];
+  /** Rows that `none` switched off here. */
+  readonly rowsOff: readonly Row[];
   /** The strictest `must` and `should` bank rows in force, rad. */
   readonly bankLimit: HeldRow | null;
   readonly bankAdvice: HeldRow | null;

@@ -1,0 +1,256 @@
+import { describe, expect, it } from "vitest";
+import { createFolder } from "../../server/src/plan/createFolder.ts";
+import { fileJson, type PointJson } from "../../server/src/report/pointsJson.ts";
+
+const card = `| aircraft testbed-1; basis vsr; reference 55 t; warning 1.03
+| config clean stall 138 kt
+| config flaps-30 stall 106 kt, landing, takeoff
+`;
+
+function file(rows: string, points: string, more = "") {
+  const folder = createFolder({ today: "2026-12-01" });
+  const text = `${card}${more}\n| limits own${rows}\n\n| fly testbed-1; under own; weight 55 t; config clean; altitude FL100; speed 220 kt\n\n${points}\n`;
+  return fileJson(folder.open("file:///note.plumb", text, "plumb"), "note");
+}
+
+/** The plan's findings, `code severity`, without those about definitions. */
+function told(rows: string, points: string, more = ""): string[] {
+  return file(rows, points, more).findings.map(({ code, severity }) => `${code} ${severity}`);
+}
+
+/** Name, rows after `limits own`, points, what is told, more definitions. */
+type Case = readonly [string, string, string, readonly string[], string?];
+
+describe("rows of limits", () => {
+  const cases: readonly Case[] = [
+    ["a phase replaces `any`", "\n| must any bank 20\n| must cruise bank 30", "| phase cruise; bank 25", []],
+    [
+      "and nothing else",
+      "\n| must any bank 20\n| must cruise bank 30",
+      "| phase climb; bank 25",
+      ["bank-over-limit error"],
+    ],
+    [
+      "of several the strictest counts",
+      "\n| must any bank 30\n| must any bank 20\n| must any bank 25",
+      "| phase cruise; bank 22",
+      ["bank-over-limit error"],
+    ],
+    ["`none` switches off", "\n| must any bank 20\n| must cruise bank none", "| phase cruise; bank 25", []],
+    [
+      "a condition makes it another row",
+      "\n| must any bank 30\n| must any bank 20 when engine-out",
+      "| phase cruise; bank 25; engine-out left",
+      ["bank-over-limit error"],
+    ],
+    [
+      "a row for ifr and one for vfr both hold without rules",
+      "\n| must any bank 30 when ifr\n| must any bank 20 when vfr",
+      "| phase cruise; bank 25",
+      ["bank-over-limit error"],
+    ],
+    [
+      "and one of them with rules",
+      "\n| must any bank 30 when ifr\n| must any bank 20 when vfr",
+      "| phase cruise; bank 25; rules ifr",
+      [],
+    ],
+    ["the level itself is excluded", "\n| must any bank 20 above FL100", "| phase cruise; bank 25", []],
+    [
+      "above it holds",
+      "\n| must any bank 20 above FL099",
+      "| phase cruise; bank 25",
+      ["bank-over-limit error"],
+    ],
+    [
+      "feet are compared with the altitude as stated",
+      "\n| must any bank 20 below 10000 ft",
+      "| phase cruise; bank 25; qnh 980 hPa; altitude 9900 ft",
+      ["bank-over-limit error"],
+    ],
+    [
+      "a tolerance reaches over the level",
+      "\n| must any bank 20 above FL100",
+      "| phase cruise; bank 25; altitude FL099 +- 300 ft",
+      ["bank-over-limit error"],
+    ],
+    [
+      "an emergency row replaces the phase's",
+      "\n| must any bank 20\n| must cruise bank 20\n| must emergency bank 40",
+      "| phase cruise; bank 35; emergency",
+      [],
+    ],
+    [
+      "advice is a step lower in an emergency",
+      "\n| should any bank 20",
+      "| phase cruise; bank 25; emergency",
+      ["bank-over-advice information"],
+    ],
+    ["the bank exactly at its limit keeps it", "\n| must any bank 30", "| phase cruise; bank 30", []],
+    [
+      "the speed exactly at its ratio keeps it",
+      "\n| must any ratio 1.23",
+      "| phase landing; config flaps-30; altitude 500 ft; speed 1.23 vs1g",
+      [],
+    ],
+    [
+      "rows taken with `from` are replaced by own ones",
+      ", from base\n| must any bank 40",
+      "| phase cruise; bank 35",
+      [],
+      "\n| limits base\n| must any bank 20\n",
+    ],
+    [
+      "and held where they are not",
+      ", from base\n| must any load 3",
+      "| phase cruise; bank 35",
+      ["bank-over-limit error"],
+      "\n| limits base\n| must any bank 20\n",
+    ],
+    [
+      "rate one is a ceiling",
+      "\n| should any bank 30 or rate-one",
+      "| phase cruise; speed 120 kt tas; config flaps-30; bank 25",
+      ["bank-over-advice warning", "stalled error"].slice(0, 1),
+    ],
+    [
+      "a turn at rate one keeps it, with any tolerance",
+      "\n| should any bank 60 or rate-one",
+      "| phase cruise; speed 220 kt +- 20 kt; bank rate-one",
+      [],
+    ],
+    [
+      "advice and rule of one subject are told once",
+      "\n| must any overshoot 41\n| should any overshoot 45",
+      "| phase cruise; bank 25",
+      ["overshoot-short error"],
+    ],
+  ];
+  it.each(cases.map(([name, ...rest]) => [name, rest] as const))(
+    "%s",
+    (_, [rows, points, wanted, more = ""]) => {
+      const own = told(rows, points, more).filter(
+        (one) => !/unused|ratio|stall-before/.test(one) || wanted.includes(one),
+      );
+      expect(own.filter((one) => !/^(stalled|warning-in-turn|carried-over)/.test(one))).toEqual(wanted);
+    },
+  );
+
+  it("hold a ratio on the vs basis against vs", () => {
+    const vs = card.replace("vsr", "vs 0.94");
+    const text = (speed: string) =>
+      `${vs}\n| limits own\n| must any ratio 1.23, vs 1.3\n\n| fly testbed-1; under own; weight 55 t; config clean; altitude FL050\n\n| phase cruise; speed ${speed} vs\n`;
+    const codes = (speed: string) => {
+      const note = createFolder({ today: "2026-12-01" }).open("file:///note.plumb", text(speed), "plumb");
+      return note.findings().map(({ finding }) => finding.code);
+    };
+    expect(codes("1.3")).toEqual([]);
+    expect(codes("1.29")).toEqual(["ratio-short"]);
+  });
+
+  it("that take from one another in a circle are told, and hold nothing", () => {
+    const findings = told(
+      ", from base\n| must any bank 10",
+      "| phase cruise; bank 20",
+      "\n| limits base, from own\n| must any bank 5\n",
+    );
+    expect(findings.filter((one) => one.startsWith("broken-definition")).length).toBeGreaterThan(1);
+    expect(findings).not.toContain("bank-over-limit error");
+  });
+});
+
+function speedOf(point: PointJson | undefined): { cas_kt: number; mach: number } {
+  return point?.speed as unknown as { cas_kt: number; mach: number };
+}
+
+describe("the state that carries on", () => {
+  const points = (text: string) => file("\n| must any bank 60", text).points;
+
+  it("goes on for what is not stated, and an aside passes nothing on", () => {
+    const [first, aside, last] = points(
+      "| phase climb; burn 1 t; isa +5; bank 20\n\n| phase climb; aside; burn 5 t; altitude FL200\n\n| phase cruise; burn 1 t",
+    );
+    expect(first).toMatchObject({ mass_kg: 54_000, isa_deviation_c: 5, bank_deg: 20 });
+    expect(aside).toMatchObject({ mass_kg: 49_000, bank_deg: 0, isa_deviation_c: 5 });
+    expect(last).toMatchObject({ mass_kg: 53_000, pressure_altitude_ft: expect.closeTo(10_000, 6) });
+    expect(Object.keys(last?.inherited as object).sort()).toEqual([
+      "aircraft",
+      "altitude",
+      "config",
+      "isa",
+      "limits",
+      "speed",
+    ]);
+  });
+
+  it("carries a temperature as the deviation it is at its own altitude", () => {
+    const [low, high] = points("| phase climb; altitude FL100; oat 5 C\n\n| phase cruise; altitude FL200");
+    expect(low?.isa_deviation_c).toBeCloseTo(278.15 - 268.338, 6);
+    expect(high?.isa_deviation_c).toBeCloseTo(low?.isa_deviation_c as number, 9);
+  });
+
+  it("carries a speed as it was flown, not the expression that gave it", () => {
+    const [first, second] = points("| phase climb; speed 1.5 vs1g\n\n| phase cruise; burn 5 t");
+    expect(speedOf(second).cas_kt).toBeCloseTo(speedOf(first).cas_kt, 9);
+    const [, mach] = points("| phase cruise; altitude FL300; speed M 0.7\n\n| phase descent; altitude FL280");
+    expect(speedOf(mach).mach).toBeCloseTo(0.7, 12);
+  });
+
+  it("adds the tolerances of burns to that of the weight", () => {
+    const result = file(
+      "\n| must any bank 60",
+      "| phase climb; weight 50 t +- 1 t\n\n| phase cruise; burn 2 t +- 0.5 t",
+    );
+    const ratio = result.points[1] as { vs1g_kt: number; vs1g_high_kt: number };
+    expect(ratio.vs1g_high_kt / ratio.vs1g_kt).toBeCloseTo(Math.sqrt(49.5 / 48), 3);
+  });
+
+  it("begins a new sector at a takeoff after a landing", () => {
+    const { findings, points: all } = file(
+      "\n| must any bank 60",
+      "| phase landing; config flaps-30; altitude 500 ft; speed 150 kt; contamination 5 %; engine-out left\n\n| phase takeoff; config flaps-30; altitude 600 ft; speed 160 kt",
+    );
+    expect(findings.map((one) => one.code)).toContain("missing-value");
+    expect(findings.find((one) => one.code === "missing-value")?.message).toContain(
+      "a new sector begins here",
+    );
+    expect(all[1]).toMatchObject({
+      mass_kg: null,
+      assumed: expect.arrayContaining(["no contamination", "all engines"]),
+    });
+  });
+
+  it("starts afresh with another aeroplane; limits and rules go on", () => {
+    const { points: all, findings } = file(
+      "\n| must any bank 60",
+      "| fly testbed-2; rules ifr\n\n| phase cruise",
+      `\n${card.replaceAll("testbed-1", "testbed-2")}`,
+    );
+    expect(all[0]).toMatchObject({ aircraft: "testbed-2", limits: "own", rules: "ifr", mass_kg: null });
+    expect(findings.map((one) => one.code)).toContain("missing-value");
+  });
+
+  it("never falls back on an older value after an error", () => {
+    const { points: all } = file(
+      "\n| must any bank 60",
+      "| phase climb; weight 50\n\n| phase cruise\n\n| phase descent; weight 50 t",
+    );
+    expect(all.map((one) => one.mass_kg)).toEqual([null, null, expect.closeTo(50_000, 6)]);
+    expect(all[1]?.withheld).toMatchObject({ code: "missing-unit" });
+  });
+
+  it("tells what is missing once, where it is", () => {
+    const folder = createFolder({ today: "2026-12-01" });
+    const note = folder.open(
+      "file:///n.plumb",
+      `${card}\n| fly testbed-1; config clean; altitude FL100\n\n| phase climb; speed 200 kt\n\n| phase cruise\n\n| phase descent; weight 50 t\n`,
+      "plumb",
+    );
+    expect(
+      note
+        .findings()
+        .filter(({ finding }) => finding.code === "missing-value")
+        .map(({ line }) => line),
+    ).toEqual([6]);
+  });
+});
