@@ -25,10 +25,7 @@ export function calibratedFromIndicated(
   mass: number,
   referenceMass: number,
 ): number | null {
-  if (!(0 < load)) return null;
-  const factor = scale(load, mass, referenceMass);
-  const calibrated = interpolate(table, ias / factor);
-  return calibrated === null ? null : calibrated * factor;
+  return scaled(table, ias, scale(load, mass, referenceMass));
 }
 
 /** The inverse of {@link calibratedFromIndicated}. */
@@ -39,8 +36,12 @@ export function indicatedFromCalibrated(
   mass: number,
   referenceMass: number,
 ): number | null {
-  if (!(0 < load)) return null;
-  const factor = scale(load, mass, referenceMass);
-  const indicated = interpolate({ arguments: table.values, values: table.arguments }, cas / factor);
-  return indicated === null ? null : indicated * factor;
+  const inverse = { arguments: table.values, values: table.arguments };
+  return scaled(inverse, cas, scale(load, mass, referenceMass));
+}
+
+function scaled(table: Table, speed: number, factor: number): number | null {
+  if (!(0 < factor)) return null;
+  const found = interpolate(table, speed / factor);
+  return found === null ? null : found * factor;
 }

@@ -1,9 +1,11 @@
 import { isBlank, isDigit, isMinus } from "./characters.ts";
 import type { Cursor } from "./cursor.ts";
-import { atNumber, isRange, readQuantity, readUnknown, readValue } from "./numbers.ts";
+import { atNumber } from "./numbers.ts";
 import type { ClauseReader } from "./planClauses.ts";
+import { readQuantity } from "./quantities.ts";
 import type { ClauseBody, ConfigAttribute, Name, Pair, PairTable, Quantity, Range } from "./tree.ts";
 import type { QuantityKind } from "./units.ts";
+import { isRange, readUnknown, readValue } from "./values.ts";
 import { readDate, readName, readTitle, takeComma, wordAfterComma } from "./words.ts";
 
 /** Two or more pairs `ARGUMENT VALUE`, separated by commas. */

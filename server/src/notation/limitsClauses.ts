@@ -1,6 +1,6 @@
 import type { Cursor } from "./cursor.ts";
-import { readQuantity } from "./numbers.ts";
 import type { ClauseReader } from "./planClauses.ts";
+import { readQuantity } from "./quantities.ts";
 import { nearestWord } from "./spelling.ts";
 import type { ClauseBody, Name, Quantity, RowCondition, RowPhase } from "./tree.ts";
 import type { QuantityKind } from "./units.ts";

@@ -1,9 +1,11 @@
 import { findingCodes } from "./codes.ts";
 import type { Cursor } from "./cursor.ts";
-import { atNumber, isRange, readQuantity, readUnknown, readValue } from "./numbers.ts";
+import { atNumber } from "./numbers.ts";
+import { readQuantity } from "./quantities.ts";
 import { readSpeed } from "./speeds.ts";
 import type { ClauseBody, Quantity, Title, Unknown, Value } from "./tree.ts";
 import type { QuantityKind } from "./units.ts";
+import { isRange, readUnknown, readValue } from "./values.ts";
 import { phases, type ResultName, results, synonyms } from "./vocabulary.ts";
 import { readDate, readName, readTitle, readWord } from "./words.ts";
 

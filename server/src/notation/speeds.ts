@@ -1,16 +1,10 @@
 import { isBlank, isDigit, isMinus } from "./characters.ts";
 import type { Cursor } from "./cursor.ts";
-import {
-  atNumber,
-  atTolerance,
-  isRange,
-  readQuantity,
-  readTolerance,
-  readUnknown,
-  readValue,
-} from "./numbers.ts";
+import { atNumber, atTolerance } from "./numbers.ts";
+import { readQuantity } from "./quantities.ts";
 import type { AirspeedKind, ClauseBody, Quantity, Speed, Sweep } from "./tree.ts";
 import { unitOf } from "./units.ts";
+import { isRange, readTolerance, readUnknown, readValue } from "./values.ts";
 import { type SpeedName, speedNames } from "./vocabulary.ts";
 
 const airspeedKinds: readonly string[] = ["cas", "eas", "tas", "ias"] satisfies AirspeedKind[];

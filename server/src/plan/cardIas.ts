@@ -3,7 +3,7 @@ import type { Table } from "../flight/table.ts";
 import type { PlacedClause } from "../notation/block.ts";
 import type { Quantity } from "../notation/tree.ts";
 import type { Stated } from "./card.ts";
-import type { Lowering } from "./lowerCard.ts";
+import type { Lowering } from "./lowering.ts";
 import { findingAt } from "./site.ts";
 
 /** The calibrated stall speed of one that a card states as indicated: at 1 g and the reference mass, where the table holds. */

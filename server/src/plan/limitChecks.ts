@@ -219,33 +219,19 @@ function checkLoad(checking: Checking): void {
   const limit = configuration.load?.value;
   const { load } = checking.evaluated.conditions;
   if (!configuration.load || !limit) return;
-  const related = [{ origin: configuration.load.origin, message: "The card states the load factors here." }];
-  const at = clauseFor(checking.point, "load");
-  if (above(load.high, limit.high)) {
-    const [flown, most] = formatDistinct(load.high, limit.high, formatLoad);
-    const lead = byTolerance(!above(load.nominal, limit.high));
-    tell(
-      checking,
-      "over-load-limit",
-      at,
-      sentence(
-        lead,
-        `The load factor ${flown} exceeds the limit of ${configuration.name}, ${most}: bank or pull less.`,
-      ),
-      { related },
-    );
-  } else if (above(limit.low, load.low)) {
-    const [flown, least] = formatDistinct(load.low, limit.low, formatLoad);
-    const lead = byTolerance(!above(limit.low, load.nominal));
-    tell(
-      checking,
-      "over-load-limit",
-      at,
-      sentence(
-        lead,
-        `The load factor ${flown} is below the limit of ${configuration.name}, ${least}: unload less.`,
-      ),
-      { related },
-    );
-  }
+  const over = above(load.high, limit.high);
+  if (!over && !above(limit.low, load.low)) return;
+  const [worst, bound, way] = over
+    ? [load.high, limit.high, "bank or pull less"]
+    : [load.low, limit.low, "unload less"];
+  const nominalPasses = over ? !above(load.nominal, limit.high) : !above(limit.low, load.nominal);
+  const [flown, allowed] = formatDistinct(worst, bound, formatLoad);
+  const text = `The load factor ${flown} ${over ? "exceeds" : "is below"} the limit of ${configuration.name}, ${allowed}: ${way}.`;
+  tell(
+    checking,
+    "over-load-limit",
+    clauseFor(checking.point, "load"),
+    sentence(byTolerance(nominalPasses), text),
+    { related: [{ origin: configuration.load.origin, message: "The card states the load factors here." }] },
+  );
 }

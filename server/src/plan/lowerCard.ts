@@ -1,23 +1,15 @@
 import type { Block, PlacedClause } from "../notation/block.ts";
-import type { BodyOf, ClauseBody, ConfigAttribute, Quantity, Range } from "../notation/tree.ts";
-import type { Basis, Card, CardSpeed, Configuration, Contaminant, Interval, Source, Stated } from "./card.ts";
-import { calibratedStall } from "./cardIas.ts";
+import type { ClauseBody, Quantity } from "../notation/tree.ts";
+import type { Basis, Card, CardSpeed, Configuration, Contaminant, Stated } from "./card.ts";
 import { intendedKeyword } from "./clauses.ts";
-import type { Finding } from "./finding.ts";
+import { lowerConfigurations } from "./lowerConfigurations.ts";
+import { all, cardSpeed, interval, type Lowering, lowerSource, type Of, value } from "./lowering.ts";
 import { lowerTable, type PairKinds } from "./lowerTable.ts";
 import type { Origin } from "./origin.ts";
 import { publishedFindings } from "./publishedSpeeds.ts";
-import { type Measured, measure } from "./quantity.ts";
+import type { Measured } from "./quantity.ts";
 import { findingAt, listed, originOf, type Site, stateFix } from "./site.ts";
 import { checkTables } from "./tableChecks.ts";
-
-type Of<K extends ClauseBody["kind"]> = BodyOf<K>;
-
-/** What the steps below share while one card is read. */
-export interface Lowering {
-  readonly site: Site;
-  readonly findings: Finding[];
-}
 
 /**
  * Reads a card, in SI. A clause in error gives a value of null, from which nothing may be computed;
@@ -105,14 +97,6 @@ function cardName({ clause }: PlacedClause) {
   return { name: "", title: null, span: clause.span };
 }
 
-/** The clauses of one kind that count. */
-function all<K extends ClauseBody["kind"]>(block: Block, kind: K): { placed: PlacedClause; body: Of<K> }[] {
-  return block.clauses.flatMap((placed) => {
-    const body = placed.clause.body;
-    return placed.counts && body?.kind === kind ? [{ placed, body: body as Of<K> }] : [];
-  });
-}
-
 /** True where a clause of the keyword stands in the card but gives no value. */
 function spoiltClause(block: Block, keyword: string): PlacedClause | null {
   return block.clauses.find((placed) => !placed.counts && placed.clause.keyword === keyword) ?? null;
@@ -161,42 +145,6 @@ function bounded(
   });
 }
 
-/** The SI value of a quantity; out of its range it is told and gives none. */
-export function value(
-  lowering: Lowering,
-  placed: PlacedClause,
-  quantity: Quantity,
-  what: Measured,
-): number | null {
-  const measured = measure(quantity, what);
-  if (measured.problem === null) return measured.value;
-  lowering.findings.push(findingAt("out-of-range", placed, measured.problem, { span: quantity.span }));
-  return null;
-}
-
-function interval(lowering: Lowering, placed: PlacedClause, range: Range, what: Measured): Interval | null {
-  const low = value(lowering, placed, range.from, what);
-  const high = value(lowering, placed, range.to, what);
-  if (low === null || high === null) return null;
-  if (low < high) return { low, high };
-  lowering.findings.push(
-    findingAt(
-      "out-of-range",
-      placed,
-      "A range goes from the lower figure to the higher one: turn them round.",
-      { span: range.span },
-    ),
-  );
-  return null;
-}
-
-export function lowerSource(block: Block): Source | null {
-  const source = all(block, "source")[0];
-  if (!source) return null;
-  const { title, issue, from } = source.body;
-  return { title: title.text, issue: issue?.text ?? null, from: from?.text ?? null };
-}
-
 function lowerWing(lowering: Lowering, placed: PlacedClause, body: Of<"wing">) {
   const area = value(lowering, placed, body.area, "area");
   const chord = body.chord ? value(lowering, placed, body.chord, "length") : null;
@@ -225,27 +173,6 @@ function limitSpeed(
   );
 }
 
-function cardSpeed(
-  lowering: Lowering,
-  placed: PlacedClause,
-  quantity: Quantity,
-  ias: boolean,
-  hasTable: boolean,
-): CardSpeed | null {
-  const speed = value(lowering, placed, quantity, "speed");
-  if (speed === null) return null;
-  if (!ias || hasTable) return { speed, ias };
-  lowering.findings.push(
-    findingAt(
-      "missing-value",
-      placed,
-      "An indicated speed needs an ias table in this card: write one with `ias`, or the calibrated speed.",
-      { span: quantity.span },
-    ),
-  );
-  return null;
-}
-
 function lowerContaminants(lowering: Lowering): readonly Contaminant[] {
   const { site } = lowering;
   const found = all(site.block, "contaminant").map(
@@ -263,150 +190,6 @@ function lowerContaminants(lowering: Lowering): readonly Contaminant[] {
       : [];
   });
   return [...found, ...spoilt];
-}
-
-function lowerConfigurations(
-  lowering: Lowering,
-  basis: Basis | null,
-  referenceMass: number | null,
-): readonly Configuration[] {
-  const { site } = lowering;
-  return [
-    ...all(site.block, "config").map(({ placed, body }) =>
-      lowerConfiguration(lowering, placed, body, basis, referenceMass),
-    ),
-    ...spoiltConfigurations(lowering),
-  ];
-}
-
-/** A configuration in error keeps its name, so that a plan that flies it waits for it, and gives no figure. */
-function spoiltConfigurations({ site }: Lowering): readonly Configuration[] {
-  const spoilt = new Map<string, Configuration>();
-  for (const placed of site.block.clauses) {
-    const body = placed.clause.body;
-    if (placed.counts || body?.kind !== "config") continue;
-    const origin: Origin = { ...originOf(site, placed), span: body.name.span };
-    spoilt.set(body.name.text.toLowerCase(), {
-      name: body.name.text,
-      origin,
-      statedStall: null,
-      stallSpeed: null,
-      load: null,
-      vfe: null,
-      takeoff: false,
-      landing: false,
-      liftMach: null,
-      buffet: null,
-      ias: null,
-      published: { vref: null, v2min: null, vfto: null },
-    });
-  }
-  return [...spoilt.values()];
-}
-
-function lowerConfiguration(
-  lowering: Lowering,
-  placed: PlacedClause,
-  body: Of<"config">,
-  basis: Basis | null,
-  referenceMass: number | null,
-): Configuration {
-  const { site } = lowering;
-  const named = { lowering, name: body.name.text };
-  const ias = configTable(named, "ias", { argument: "speed", value: "speed", unit: "rising" });
-  const stall = attribute(body, "stall");
-  const stallValue = stall ? value(lowering, placed, stall.speed, "speed") : null;
-  if (!stall) {
-    lowering.findings.push(
-      findingAt(
-        "missing-value",
-        placed,
-        `${body.name.text} needs its stall speed: write \`stall\` and the speed after the name.`,
-        { span: body.name.span },
-      ),
-    );
-  }
-  const statedStall =
-    stall?.ias && stallValue !== null
-      ? calibratedStall(lowering, placed, stall.speed, stallValue, ias, referenceMass)
-      : stallValue;
-  const load = attribute(body, "load");
-  const vfe = attribute(body, "vfe");
-  const at = (span: { start: number; end: number }): Origin => ({ ...originOf(site, placed), span });
-  const liftMach = configTable(named, "lift-mach", { argument: "mach", value: "factor", unit: null });
-  const buffet = configTable(named, "buffet", { argument: "mach", value: "liftCoefficient", unit: null });
-  return {
-    name: body.name.text,
-    origin: at(body.name.span),
-    statedStall,
-    stallSpeed: statedStall !== null && basis ? statedStall / basis.factor : null,
-    load: load ? { value: interval(lowering, placed, load.range, "load"), origin: at(load.span) } : null,
-    vfe: vfe
-      ? { value: cardSpeed(lowering, placed, vfe.speed, vfe.ias, ias !== null), origin: at(vfe.span) }
-      : null,
-    takeoff: attribute(body, "takeoff") !== null,
-    landing: attribute(body, "landing") !== null,
-    liftMach: liftMach && { value: liftMach.value, origin: liftMach.origin },
-    buffet: buffet && { value: buffet.value, origin: buffet.origin, cg: buffet.cg },
-    ias,
-    published: {
-      vref: published(named, "vref"),
-      v2min: published(named, "v2min"),
-      vfto: published(named, "vfto"),
-    },
-  };
-}
-
-function attribute<K extends ConfigAttribute["kind"]>(body: Of<"config">, kind: K) {
-  return (body.attributes.find((one) => one.kind === kind) ?? null) as Extract<
-    ConfigAttribute,
-    { kind: K }
-  > | null;
-}
-
-interface Named {
-  readonly lowering: Lowering;
-  readonly name: string;
-}
-
-/** The table of one configuration; a value of null where it is in error. */
-function configTable({ lowering, name }: Named, kind: "ias" | "lift-mach" | "buffet", pairs: PairKinds) {
-  const { site } = lowering;
-  for (const placed of site.block.clauses) {
-    const body = placed.clause.body;
-    if (body?.kind !== kind || body.config.text.toLowerCase() !== name.toLowerCase()) continue;
-    const origin = originOf(site, placed);
-    const stated = "cg" in body ? body.cg : null;
-    const cg = placed.counts && stated ? value(lowering, placed, stated, "cg") : null;
-    return { value: placed.counts ? lowerTable(lowering, placed, body.table, pairs) : null, origin, cg };
-  }
-  // A table that was not understood names no configuration, so it may be this one's.
-  const lost = site.block.clauses.find(
-    (placed) => !placed.counts && placed.clause.keyword === kind && !placed.clause.body,
-  );
-  return lost ? { value: null, origin: originOf(site, lost), cg: null } : null;
-}
-
-function published({ lowering, name }: Named, speed: "vref" | "v2min" | "vfto") {
-  const { site } = lowering;
-  for (const placed of site.block.clauses) {
-    const body = placed.clause.body;
-    if (
-      body?.kind !== "published" ||
-      body.speed !== speed ||
-      body.config.text.toLowerCase() !== name.toLowerCase()
-    )
-      continue;
-    const pairs: PairKinds = { argument: "mass", value: "speed", unit: null };
-    return {
-      value: placed.counts ? lowerTable(lowering, placed, body.table, pairs) : null,
-      origin: originOf(site, placed),
-    };
-  }
-  const lost = site.block.clauses.find(
-    (placed) => !placed.counts && placed.clause.keyword === "published" && !placed.clause.body,
-  );
-  return lost ? { value: null, origin: originOf(site, lost) } : null;
 }
 
 /** Why the card gives no figures at all: an unknown keyword, or a required clause that is missing or in error. */

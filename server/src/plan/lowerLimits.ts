@@ -5,7 +5,7 @@ import { BUILT_IN_NAME, BUILT_IN_URI } from "./builtIn.ts";
 import type { Source } from "./card.ts";
 import type { Finding } from "./finding.ts";
 import type { Level, Limits, Row } from "./limits.ts";
-import { lowerSource } from "./lowerCard.ts";
+import { lowerSource } from "./lowering.ts";
 import type { Origin } from "./origin.ts";
 import { type Measured, measure } from "./quantity.ts";
 import { findingAt, originOf, type Site } from "./site.ts";

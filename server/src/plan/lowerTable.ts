@@ -1,7 +1,7 @@
 import type { Table } from "../flight/table.ts";
 import type { PlacedClause } from "../notation/block.ts";
 import type { PairTable, Quantity } from "../notation/tree.ts";
-import type { Lowering } from "./lowerCard.ts";
+import type { Lowering } from "./lowering.ts";
 import { type Measured, measure } from "./quantity.ts";
 import { findingAt } from "./site.ts";
 

@@ -6,7 +6,7 @@ import type { PlacedClause } from "../notation/block.ts";
 import { nearestWord } from "../notation/spelling.ts";
 import type { Card, Configuration } from "./card.ts";
 import { formatMach } from "./format.ts";
-import type { Lowering } from "./lowerCard.ts";
+import type { Lowering } from "./lowering.ts";
 import { findingAt, listed } from "./site.ts";
 
 /** Checks what only the card as a whole shows: tables that contradict the stall speed, and names that are none of its own. */

@@ -1,0 +1,65 @@
+import type { Cursor } from "./cursor.ts";
+import type { Fix } from "./finding.ts";
+import { type ReadNumber, replace } from "./numbers.ts";
+import type { Span } from "./span.ts";
+import { type QuantityKind, unitRule } from "./units.ts";
+import type { Unit } from "./vocabulary.ts";
+
+export function wrongUnit(kind: QuantityKind, word: string, unit: Unit): string {
+  if (kind === "gust" && unit === "kt") {
+    return "A gust here is the derived gust velocity of the load rules, in ft/s or m/s; a reported wind gust in knots is another thing and gives no load factor.";
+  }
+  if (unit === "FL") return "A flight level is written FL and three digits, such as FL350.";
+  const { units, noun } = unitRule(kind);
+  if (units.length === 0) return `${word} does not belong here: this is a plain number.`;
+  return `${word} is no unit of ${noun}: write ${orList(units)}.`;
+}
+
+export function unknownUnit(kind: QuantityKind, word: string): string {
+  if (kind === "mass" && word.toLowerCase().startsWith("ton")) {
+    return `A ${word} may be 1000 kg, 2000 lb or 2240 lb: write t, kg or lb.`;
+  }
+  const { units, noun } = unitRule(kind);
+  return `${word} is no unit of ${noun}: write ${orList(units)}.`;
+}
+
+export function tonFixes(span: Span): Fix[] {
+  return [{ title: "Write t (1000 kg)", edits: [{ line: 0, ...span, newText: "t" }] }];
+}
+
+export function wrongUnitFixes(kind: QuantityKind, span: Span, unit: Unit): Fix[] {
+  if (kind === "gust" && unit === "kt") return [];
+  return unitFixes(kind, span);
+}
+
+export function unitFixes(kind: QuantityKind, span: Span): Fix[] {
+  return unitRule(kind)
+    .units.filter((unit) => unit !== "FL")
+    .map((unit) => replace(span, unit));
+}
+
+export function missingUnit(cursor: Cursor, kind: QuantityKind, number: ReadNumber, at: number): void {
+  const { units, noun } = unitRule(kind);
+  const written = cursor.text.slice(number.span.start, number.span.end);
+  const choices = units.filter((unit) => unit !== "FL");
+  const readings = choices.slice(0, 3).map((unit) => `${written} ${unit}`);
+  const subject = noun.replace(/^an? /, "");
+  const name = subject.charAt(0).toUpperCase() + subject.slice(1);
+  cursor.report(
+    "missing-unit",
+    number.span,
+    `${name} ${written} of what? Write ${orList(readings)}.`,
+    choices.map(
+      (unit): Fix => ({
+        title: `Write ${written} ${unit}`,
+        edits: [{ line: 0, start: at, end: at, newText: ` ${unit}` }],
+      }),
+    ),
+  );
+}
+
+function orList(items: readonly string[]): string {
+  return items.length < 2
+    ? (items[0] ?? "")
+    : `${items.slice(0, -1).join(", ")} or ${items[items.length - 1]}`;
+}
