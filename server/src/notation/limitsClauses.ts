@@ -20,6 +20,17 @@ const subjectKinds: Readonly<Record<Subject, QuantityKind>> = {
   buffet: "number",
 };
 
+/** A bound of each subject, for a message. */
+const bounds: Readonly<Record<Subject, string>> = {
+  bank: "30",
+  load: "2.0",
+  radius: "1.5 nm",
+  ratio: "1.23",
+  margin: "1.10",
+  overshoot: "15",
+  buffet: "1.3",
+};
+
 function readRow(verb: "must" | "should"): ClauseReader {
   return (cursor) => {
     const named = readPhases(cursor);
@@ -105,10 +116,29 @@ function readBound(cursor: Cursor, subject: Subject) {
   cursor.skip();
   if (cursor.takeWord("none")) return { value: null, vs: null, rateOne: false };
   const value = readQuantity(cursor, subjectKinds[subject]);
-  if (!value) return null;
+  if (!value) {
+    const at = cursor.lastEnd;
+    const span = { start: at - subject.length, end: at };
+    cursor.report(
+      "missing-argument",
+      span,
+      `After \`${subject}\` comes its bound, a figure such as ${bounds[subject]}, or \`none\`: write it.`,
+    );
+    return null;
+  }
   let vs: Quantity | null = null;
   let rateOne = false;
   cursor.skip();
+  if (subject === "ratio" && cursor.isWord("vs")) {
+    const at = cursor.lastEnd;
+    const span = { start: cursor.at, end: cursor.at + 2 };
+    cursor.report(
+      "unexpected-text",
+      span,
+      "The figure for cards on the vs basis stands behind a comma: write `, vs`.",
+      [{ title: "Write a comma", preferred: true, edits: [{ line: 0, start: at, end: at, newText: "," }] }],
+    );
+  }
   if (wordAfterComma(cursor) === "vs") {
     takeComma(cursor);
     const at = cursor.takeWord("vs");

@@ -5,6 +5,11 @@ import type { Span } from "./span.ts";
 import { type QuantityKind, unitRule } from "./units.ts";
 import type { Unit } from "./vocabulary.ts";
 
+/** The units to write; a flight level is no unit behind a number. */
+function choicesOf(kind: QuantityKind): readonly Unit[] {
+  return unitRule(kind).units.filter((unit) => unit !== "FL");
+}
+
 export function wrongUnit(kind: QuantityKind, word: string, unit: Unit): string {
   if (kind === "gust" && unit === "kt") {
     return "A gust here is the derived gust velocity of the load rules, in ft/s or m/s; a reported wind gust in knots is another thing and gives no load factor.";
@@ -12,15 +17,15 @@ export function wrongUnit(kind: QuantityKind, word: string, unit: Unit): string 
   if (unit === "FL") return "A flight level is written FL and three digits, such as FL350.";
   const { units, noun } = unitRule(kind);
   if (units.length === 0) return `${word} does not belong here: this is a plain number.`;
-  return `${word} is no unit of ${noun}: write ${orList(units)}.`;
+  return `${word} is no unit of ${noun}: write ${orList(choicesOf(kind))}.`;
 }
 
 export function unknownUnit(kind: QuantityKind, word: string): string {
   if (kind === "mass" && word.toLowerCase().startsWith("ton")) {
     return `A ${word} may be 1000 kg, 2000 lb or 2240 lb: write t, kg or lb.`;
   }
-  const { units, noun } = unitRule(kind);
-  return `${word} is no unit of ${noun}: write ${orList(units)}.`;
+  const { noun } = unitRule(kind);
+  return `${word} is no unit of ${noun}: write ${orList(choicesOf(kind))}.`;
 }
 
 export function tonFixes(span: Span): Fix[] {
@@ -33,15 +38,13 @@ export function wrongUnitFixes(kind: QuantityKind, span: Span, unit: Unit): Fix[
 }
 
 export function unitFixes(kind: QuantityKind, span: Span): Fix[] {
-  return unitRule(kind)
-    .units.filter((unit) => unit !== "FL")
-    .map((unit) => replace(span, unit));
+  return choicesOf(kind).map((unit) => replace(span, unit));
 }
 
 export function missingUnit(cursor: Cursor, kind: QuantityKind, number: ReadNumber, at: number): void {
-  const { units, noun } = unitRule(kind);
+  const { noun } = unitRule(kind);
   const written = cursor.text.slice(number.span.start, number.span.end);
-  const choices = units.filter((unit) => unit !== "FL");
+  const choices = choicesOf(kind);
   const readings = choices.slice(0, 3).map((unit) => `${written} ${unit}`);
   const subject = noun.replace(/^an? /, "");
   const name = subject.charAt(0).toUpperCase() + subject.slice(1);

@@ -89,9 +89,14 @@ function set<K extends CarriedKey>(
 }
 
 /** The code of the finding that keeps a clause from giving a value. */
-function codeAt(findings: readonly Finding[], placed: PlacedClause): string {
-  const own = findings.find((one) => one.line === placed.line && one.span.start >= placed.clause.span.start);
-  return own?.code ?? "not-in-this-version";
+export function codeAt(
+  findings: readonly Finding[],
+  { line, clause }: PlacedClause,
+  otherwise = "not-in-this-version",
+): string {
+  const { start, end } = clause.span;
+  const own = findings.find((one) => one.line === line && start <= one.span.start && one.span.start <= end);
+  return own?.code ?? otherwise;
 }
 
 /** Another aeroplane starts afresh; only limits and rules go on. */
@@ -283,7 +288,9 @@ export function textCode(site: Site, placed: PlacedClause): string | null {
   const own = site.block.findings.find(
     (one) => one.line === placed.line && span.start <= one.span.start && one.span.start <= span.end,
   );
-  return own?.code ?? null;
+  if (own) return own.code;
+  // A clause that was read and does not count was given twice; the finding stands at the second.
+  return placed.clause.faulty || !placed.clause.body ? null : "duplicate-clause";
 }
 
 function single(

@@ -2,7 +2,7 @@ import type { PlacedClause } from "../notation/block.ts";
 import type { Phase } from "../notation/vocabulary.ts";
 import { airframeOf, cgFactorAt } from "./airframe.ts";
 import type { Card, Configuration } from "./card.ts";
-import { type Applied, applyClauses, textCode } from "./carry.ts";
+import { type Applied, applyClauses, codeAt, textCode } from "./carry.ts";
 import { checkPoint } from "./checks.ts";
 import { type Clauses, intendedKeyword, isOpen } from "./clauses.ts";
 import { commonPractice } from "./commonPractice.ts";
@@ -74,7 +74,7 @@ export function evaluatePoint(
   const told = onePerCode(findings);
   return {
     point: describePoint(point, evaluated?.ready ?? null, held, stopped, told),
-    after: clauses.aside ? before : stateAfter(point, before, missing.told, evaluated, ready),
+    after: clauses.aside ? before : stateAfter(point, before, missing.told, evaluated, ready, findings),
   };
 }
 
@@ -305,6 +305,7 @@ function stateAfter(
   told: State["told"],
   evaluated: Evaluated | null,
   ready: Ready | { readonly speed: ResolvedSpeed | null },
+  findings: readonly Finding[],
 ): State {
   const { applied, clauses, phase, site } = point;
   let carried = applied.carried;
@@ -314,7 +315,13 @@ function stateAfter(
     const speed: Carried<FlownSpeed> = {
       value: flown,
       origin,
-      unknown: flown ? null : "missing-value",
+      unknown: flown
+        ? null
+        : codeAt(
+            findings,
+            clauses.speed.placed,
+            isOpen(clauses.speed.body) ? "not-in-this-version" : "missing-value",
+          ),
       phase,
     };
     carried = { ...carried, speed };

@@ -121,8 +121,17 @@ function outOfRange(quantity: Quantity, rule: Measure, unit: Unit | null, what: 
   const ends = [rule.least, rule.most].map((end) => shown(end, unit, what));
   const shownUnit = unit === null || unit === "FL" ? "" : unit === "deg" ? "°" : ` ${unit}`;
   const [least, most] = ends;
-  return `A ${rule.noun} of ${written} is outside ${least} to ${most}${shownUnit}: check the number and its unit.`;
+  const article = /^[aeiou]/.test(rule.noun) ? "An" : "A";
+  const exclusive = leftOut[rule.open ?? "none"];
+  return `${article} ${rule.noun} of ${written} is outside ${least} to ${most}${shownUnit}${exclusive}: check the number and its unit.`;
 }
+
+const leftOut = {
+  none: "",
+  least: " (the first left out)",
+  most: " (the last left out)",
+  both: " (both left out)",
+} as const;
 
 /** An end of a range in the author's own unit, to as many digits as say it. */
 function shown(si: number, unit: Unit | null, what: Measured): string {
