@@ -3,7 +3,16 @@ import type { ClauseBody, Quantity } from "../notation/tree.ts";
 import type { Basis, Card, CardSpeed, Configuration, Contaminant, Stated } from "./card.ts";
 import { intendedKeyword } from "./clauses.ts";
 import { lowerConfigurations } from "./lowerConfigurations.ts";
-import { all, cardSpeed, interval, type Lowering, lowerSource, type Of, value } from "./lowering.ts";
+import {
+  all,
+  cardSpeed,
+  codeAtClause,
+  interval,
+  type Lowering,
+  lowerSource,
+  type Of,
+  value,
+} from "./lowering.ts";
 import { lowerTable, type PairKinds } from "./lowerTable.ts";
 import type { Origin } from "./origin.ts";
 import { publishedFindings } from "./publishedSpeeds.ts";
@@ -219,7 +228,8 @@ function whyWithheld(lowering: Lowering, card: Card): Card["withheld"] {
     return { origin: card.origin, code: "missing-value" };
   }
   for (const one of [card.basis, card.referenceMass]) {
-    if (one && one.value === null) return { origin: one.origin, code: "bad-quantity" };
+    if (one && one.value === null)
+      return { origin: one.origin, code: codeAtClause(site.block, findings, one.origin) };
   }
   return null;
 }

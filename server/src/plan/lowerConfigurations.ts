@@ -36,8 +36,9 @@ function spoiltConfigurations({ site }: Lowering): readonly Configuration[] {
       stallSpeed: null,
       load: null,
       vfe: null,
-      takeoff: false,
-      landing: false,
+      // What it is marked stays, lest another pass for the card's only landing configuration.
+      takeoff: attribute(body, "takeoff") !== null,
+      landing: attribute(body, "landing") !== null,
       liftMach: null,
       buffet: null,
       ias: null,
@@ -121,13 +122,32 @@ function configTable({ lowering, name }: Named, kind: "ias" | "lift-mach" | "buf
     const origin = originOf(site, placed);
     const stated = "cg" in body ? body.cg : null;
     const cg = placed.counts && stated ? value(lowering, placed, stated, "cg") : null;
-    return { value: placed.counts ? lowerTable(lowering, placed, body.table, pairs) : null, origin, cg };
+    const table = placed.counts ? lowerTable(lowering, placed, body.table, pairs) : null;
+    return { value: stated && cg === null ? null : table, origin, cg };
   }
-  // A table that was not understood names no configuration, so it may be this one's.
-  const lost = site.block.clauses.find(
-    (placed) => !placed.counts && placed.clause.keyword === kind && !placed.clause.body,
-  );
+  const lost = lostTable(lowering, kind, () => true);
   return lost ? { value: null, origin: originOf(site, lost), cg: null } : null;
+}
+
+/**
+ * A table that may be any configuration's: one that was not understood, or that names none of the
+ * card's. Without it a configuration would pass for one that states no table.
+ */
+function lostTable(
+  { site }: Lowering,
+  kind: "ias" | "lift-mach" | "buffet" | "published",
+  isMeant: (body: Of<"ias" | "lift-mach" | "buffet" | "published">) => boolean,
+): PlacedClause | null {
+  const names = new Set<string>();
+  for (const { clause } of site.block.clauses)
+    if (clause.body?.kind === "config") names.add(clause.body.name.text.toLowerCase());
+  const lost = site.block.clauses.find(({ clause, counts }) => {
+    if (clause.keyword !== kind) return false;
+    const { body } = clause;
+    if (!body) return !counts;
+    return "config" in body && isMeant(body) && !names.has(body.config.text.toLowerCase());
+  });
+  return lost ?? null;
 }
 
 function published({ lowering, name }: Named, speed: "vref" | "v2min" | "vfto") {
@@ -146,8 +166,6 @@ function published({ lowering, name }: Named, speed: "vref" | "v2min" | "vfto") 
       origin: originOf(site, placed),
     };
   }
-  const lost = site.block.clauses.find(
-    (placed) => !placed.counts && placed.clause.keyword === "published" && !placed.clause.body,
-  );
+  const lost = lostTable(lowering, "published", (body) => body.kind === "published" && body.speed === speed);
   return lost ? { value: null, origin: originOf(site, lost) } : null;
 }

@@ -2,6 +2,7 @@ import type { Block, PlacedClause } from "../notation/block.ts";
 import type { BodyOf, ClauseBody, Quantity, Range } from "../notation/tree.ts";
 import type { CardSpeed, Interval, Source } from "./card.ts";
 import type { Finding } from "./finding.ts";
+import type { Origin } from "./origin.ts";
 import { type Measured, measure } from "./quantity.ts";
 import { findingAt, type Site } from "./site.ts";
 
@@ -35,6 +36,14 @@ export function value(
   if (measured.problem === null) return measured.value;
   lowering.findings.push(findingAt("out-of-range", placed, measured.problem, { span: quantity.span }));
   return null;
+}
+
+/** The code of the finding at a clause that gives no value. A clause given twice is told at its second place alone. */
+export function codeAtClause(block: Block, findings: readonly Finding[], { line, span }: Origin): string {
+  const own = [...block.findings, ...findings].find(
+    (one) => one.line === line && span.start <= one.span.start && one.span.start <= span.end,
+  );
+  return own?.code ?? "duplicate-clause";
 }
 
 export function interval(

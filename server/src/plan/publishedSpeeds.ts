@@ -25,6 +25,13 @@ function belowLeast(
   const basis = card.basis?.value;
   const stall = configuration.statedStall;
   if (!stated || !table || !referenceMass || !basis || stall === null) return [];
+  // Where a clause that the least value depends on is in error, it is not known.
+  const needed = [
+    card.cgEffect,
+    configuration.liftMach,
+    ...(name === "v2min" ? [card.v2min, card.vmca] : []),
+  ];
+  if (needed.some((one) => one?.value === null)) return [];
   const cg = card.cgEffect?.value ? Math.max(...card.cgEffect.value.values) : 1;
   for (const [i, mass] of table.arguments.entries()) {
     const published = table.values[i] as number;

@@ -138,7 +138,7 @@ function shown(si: number, unit: Unit | null, what: Measured): string {
   if (unit === "FL") return `FL${String(Math.max(0, Math.round(fromSI(si, "FL")))).padStart(3, "0")}`;
   const value =
     unit === null ? si : what === "oat" ? (unit === "C" ? si - 273.15 : si) : fromSI(si, unit as UnitName);
-  return String(Number(value.toPrecision(4)));
+  return String(Number(value.toPrecision(5)));
 }
 
 /** The half-width of a tolerance, SI. Without a unit of its own it has the quantity's. */

@@ -93,10 +93,15 @@ function checkBuffet(lowering: Lowering, card: Card, configuration: Configuratio
   const referenceMass = card.referenceMass?.value;
   if (!buffet?.value || stallSpeed === null || !area || !referenceMass) return configuration;
   const atStall = liftCoefficientAtStall(stallSpeed, referenceMass, area);
+  // Without its lift table nothing is known of the stall at these Mach numbers.
+  if (liftMach && !liftMach.value) return configuration;
   const table: Table = buffet.value;
-  const over = table.arguments.find((mach, i) => {
+  // Both tables are straight between their pairs, so a contradiction shows at a pair of one of them.
+  const machs = [...table.arguments, ...(liftMach?.value?.arguments ?? [])].sort((a, b) => a - b);
+  const over = machs.find((mach) => {
+    const onset = interpolate(table, mach);
     const factor = liftFactor(liftMach?.value ?? null, mach);
-    return factor !== null && atStall * factor * (1 + 1e-9) < (table.values[i] as number);
+    return onset !== null && factor !== null && atStall * factor * (1 + 1e-9) < onset;
   });
   if (over === undefined) return configuration;
   lowering.findings.push(
