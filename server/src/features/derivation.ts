@@ -6,6 +6,7 @@ import {
   formatAngle,
   formatBank,
   formatDeviation,
+  formatDistinct,
   formatFlightLevel,
   formatLoad,
   formatMach,
@@ -197,19 +198,23 @@ function rowPlace({ row }: HeldRow, uri: string): string {
 
 function heldText({ row, bound, figure, holds }: HeldRow): string {
   if (figure === null) return `${row.text}: not evaluated`;
-  const show = (value: number) => {
+  const show = (value: number, more: number) => {
     switch (row.subject) {
       case "bank":
-        return formatBank(value);
+        return formatBank(value, more);
       case "buffet":
-        return formatResultValue("buffet-load", value);
+        return formatResultValue("buffet-load", value, more);
       case "load":
-        return formatLoad(value);
+        return formatLoad(value, more);
       default:
-        return formatResultValue(row.subject, value);
+        return formatResultValue(row.subject, value, more);
     }
   };
-  return `${row.text}: ${show(figure)}, ${atMost(row.subject) ? "at most" : "at least"} ${show(bound)}, ${holds ? "kept" : "broken"}`;
+  const [has, asked] = holds
+    ? [show(figure, 0), show(bound, 0)]
+    : // What is broken never reads as kept.
+      formatDistinct(figure, bound, show);
+  return `${row.text}: ${has}, ${atMost(row.subject) ? "at most" : "at least"} ${asked}, ${holds ? "kept" : "broken"}`;
 }
 
 function absentText(point: PointResult): string {

@@ -3,7 +3,7 @@ import type { ResultName } from "../notation/vocabulary.ts";
 import type { Evaluated } from "./describe.ts";
 import type { Point } from "./evaluatePoint.ts";
 import type { Finding } from "./finding.ts";
-import { formatClaim, shownClaim } from "./format.ts";
+import { formatClaim, formatDistinct, shownClaim } from "./format.ts";
 import type { ClaimResult } from "./point.ts";
 import { fromShownUnit, resultEntry, results } from "./results.ts";
 import { ALLOWANCE } from "./rules.ts";
@@ -37,12 +37,18 @@ export function checkClaims(
       : shown === body.value.value;
     if (!holds) {
       const unsafe = resultEntry(body.result).unsafeWhenClaimed === (claimed < computed ? "lower" : "higher");
-      const now = formatClaim(body.result, spread, body.value);
+      // A narrow `within` can fail where both read alike at the claim's decimals.
+      const [was, now] = formatDistinct(
+        claimed,
+        computed,
+        () => formatClaim(body.result, null, body.value),
+        (_, more) => formatClaim(body.result, spread, body.value, more),
+      );
       findings.push(
         findingAt(
           "claim-stale",
           placed,
-          `The note claims ${body.result} ${formatClaim(body.result, null, body.value)} and it is ${now} now: check the point and write the new figure.`,
+          `The note claims ${body.result} ${was} and it is ${now} now: check the point and write the new figure.`,
           { severity: unsafe ? "error" : "warning" },
         ),
       );

@@ -110,7 +110,9 @@ function maximumSpeed(
   if (!worst || !above(worst.corner.cas, worst.cas)) return;
   const nominalLimit = limitCas(checking, limit, corners.nominal);
   const nominalPasses = nominalLimit !== null && !above(corners.nominal.cas, nominalLimit);
-  const [flown, most] = formatDistinct(worst.corner.cas, worst.cas, (mps, more) => formatSpeed(mps, more));
+  const [flown, most] = formatDistinct(worst.corner.cas, worst.cas, flownSpeed, (mps, more) =>
+    formatSpeed(mps, more, { rounding: "down" }),
+  );
   tell(
     checking,
     code,
@@ -126,6 +128,10 @@ function maximumSpeed(
       ],
     },
   );
+}
+
+function flownSpeed(mps: number, more: number): string {
+  return formatSpeed(mps, more);
 }
 
 function worstExcess(checking: Checking, limit: CardSpeed, corners: readonly Corner[]) {
@@ -150,7 +156,9 @@ function checkMinimumControl(checking: Checking): void {
   for (const corner of evaluated.corners.all) {
     const least = limitCas(checking, limit, corner);
     if (least === null || !above(least, corner.cas)) continue;
-    const [flown, minimum] = formatDistinct(corner.cas, least, (mps, more) => formatSpeed(mps, more));
+    const [flown, minimum] = formatDistinct(corner.cas, least, flownSpeed, (mps, more) =>
+      formatSpeed(mps, more, { rounding: "up" }),
+    );
     tell(
       checking,
       "below-vmca",

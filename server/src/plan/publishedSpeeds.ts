@@ -2,7 +2,7 @@ import { leastV2min, leastVfto, leastVref } from "../flight/referenceSpeeds.ts";
 import type { PlacedClause } from "../notation/block.ts";
 import type { Card, Configuration } from "./card.ts";
 import type { Finding } from "./finding.ts";
-import { formatDistinct, formatMass, formatSpeed } from "./format.ts";
+import { formatDistinct, formatMass, formatResultValue, formatSpeed } from "./format.ts";
 import { ALLOWANCE } from "./rules.ts";
 import { findingAt, type Site } from "./site.ts";
 
@@ -38,7 +38,12 @@ function belowLeast(
     const own = stall * cg * Math.sqrt(mass / referenceMass);
     const least = leastOf(card, name, own, basis.kind);
     if (least * (1 - ALLOWANCE) <= published) continue;
-    const [written, lowest] = formatDistinct(published, least, (mps, more) => formatSpeed(mps, more));
+    const [written, lowest] = formatDistinct(
+      published,
+      least,
+      (mps, more) => formatSpeed(mps, more),
+      (mps, more) => formatResultValue(name, mps, more),
+    );
     const placed = site.block.clauses.find(
       (one) => one.line === stated.origin.line && one.clause.span.start === stated.origin.span.start,
     ) as PlacedClause;

@@ -1,4 +1,5 @@
 import { loadFactor } from "../flight/turn.ts";
+import type { ResultName } from "../notation/vocabulary.ts";
 import { type Checking, carriedFrom, clauseFor, exerciseSeverity, leastAt, tell } from "./checks.ts";
 import type { Corner } from "./corner.ts";
 import {
@@ -67,6 +68,11 @@ function checkLift(checking: Checking): boolean {
   return corners.all.every((one) => !Number.isNaN(one.stallLoad));
 }
 
+/** As the result is written everywhere: what the wing carries is cut, its warning is rounded up. */
+function result(name: ResultName): (value: number, more: number) => string {
+  return (value, more) => formatResultValue(name, value, more);
+}
+
 function isStalled(corner: Corner): boolean {
   return corner.stallLoad < corner.load * (1 - ALLOWANCE);
 }
@@ -77,7 +83,7 @@ function checkStalled(checking: Checking): boolean {
   const worst = leastAt(corners.all, (one) => one.stallLoad - one.load);
   if (!isStalled(worst)) return false;
   const lead = isStalled(corners.nominal) ? "Stalled: " : "Stalled at the worst of the tolerances: ";
-  const [has, needs] = formatDistinct(worst.stallLoad, worst.load, formatLoad);
+  const [has, needs] = formatDistinct(worst.stallLoad, worst.load, result("stall-load"), formatLoad);
   const speed =
     Number.isNaN(worst.stall) || worst.stall === 0
       ? ""
@@ -130,7 +136,7 @@ function checkStallBeforeWarning(checking: Checking): void {
   const { corners } = evaluated;
   const worst = leastAt(corners.all, (one) => one.warning - one.stall);
   if (!(worst.warning <= worst.stall * (1 + ALLOWANCE)) || worst.stall === 0) return;
-  const [stall, warning] = formatDistinct(worst.stall, worst.warning, (mps, more) => formatSpeed(mps, more));
+  const [stall, warning] = formatDistinct(worst.stall, worst.warning, result("stall"), result("warning"));
   tell(
     checking,
     "stall-before-warning",
@@ -146,7 +152,7 @@ function checkBuffet(checking: Checking): void {
   if (Number.isNaN(corners.nominal.buffetLoad)) return;
   const worst = leastAt(corners.all, (one) => one.buffetLoad - one.load);
   if (!(worst.buffetLoad < worst.load * (1 - ALLOWANCE))) return;
-  const [onset, load] = formatDistinct(worst.buffetLoad, worst.load, formatLoad);
+  const [onset, load] = formatDistinct(worst.buffetLoad, worst.load, result("buffet-load"), formatLoad);
   tell(
     checking,
     "buffet-in-turn",

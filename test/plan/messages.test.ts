@@ -1,0 +1,65 @@
+import { expect, it } from "vitest";
+import type { ResultName } from "../../server/src/notation/vocabulary.ts";
+import { createFolder } from "../../server/src/plan/createFolder.ts";
+import { formatResult } from "../../server/src/plan/format.ts";
+
+const card = `| aircraft wheatear-9; basis vsr; reference 9 t; mass 5 t to 9 t; warning 1.05
+| config clean stall 95 kt, load -1 to 3, vfe 331.6 km/h
+| wing 32 m2; buffet clean 0.30 0.90, 0.70 0.45; mmo 0.70; vmca 199 km/h
+
+| fly wheatear-9; weight 8 t; config clean; altitude FL100; speed 170 kt
+`;
+
+function evaluated(point: string) {
+  const note = createFolder({ today: "2026-12-01" }).open(
+    "file:///n.plumb",
+    `${card}\n| ${point}\n`,
+    "plumb",
+  );
+  const result = note.results().at(-1);
+  if (result?.kind !== "point" || !result.point.results) throw new Error("the point has no figures");
+  const { results } = result.point;
+  const message = (code: string) =>
+    note.findings().find(({ finding }) => finding.code === code)?.finding.message;
+  const shown = (name: ResultName) => {
+    const spread = results[name];
+    return spread ? formatResult(name, spread) : "none";
+  };
+  return { message, shown };
+}
+
+it("a message says the load at the stall as every table does", () => {
+  const { message, shown } = evaluated("phase cruise; speed 95 kt; bank 30");
+  expect(shown("stall-load")).toBe("1.12");
+  expect(message("stalled")).toContain("carries 1.12 g and the point needs 1.16 g");
+  expect(shown("load")).toBe("1.16");
+});
+
+it("a message says the load at buffet onset as every table does", () => {
+  const { message, shown } = evaluated("phase cruise; altitude FL390; speed M 0.68; bank 40");
+  expect(shown("buffet-load")).toBe("1.22");
+  expect(message("buffet-in-turn")).toContain("load factor of 1.22 and 1.31");
+  expect(message("buffet-short")).toContain("load factor of 1.22");
+});
+
+it("a message says the warning as every table does", () => {
+  const { message, shown } = evaluated("phase cruise; contamination 15 %");
+  expect(shown("warning")).toBe("95 kt");
+  expect(message("stall-before-warning")).toContain("stall comes at 97 kt and the warning at 95 kt");
+});
+
+it("a greatest speed is said rounded down, a least one up", () => {
+  // 331.6 km/h is 179.05 kt, 199 km/h is 107.45 kt.
+  expect(evaluated("phase cruise; speed 190 kt").message("over-vfe")).toContain(
+    "190 kt exceeds the vfe of clean, 179 kt",
+  );
+  expect(evaluated("phase cruise; speed 179.4 kt").message("over-vfe")).toContain(
+    "179.4 kt exceeds the vfe of clean, 179.0 kt",
+  );
+  expect(evaluated("phase departure; speed 105 kt").message("below-vmca")).toContain("air, 108 kt");
+});
+
+it("a claim that a narrow `within` finds stale never reads as what it is now", () => {
+  const { message } = evaluated("phase cruise; claim margin 1.89 within 0.0001");
+  expect(message("claim-stale")).toMatch(/claims margin 1\.89 and it is 1\.89\d+ now/);
+});
