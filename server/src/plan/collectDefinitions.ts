@@ -15,11 +15,7 @@ export function collectDefinitions(
 ): { readonly definitions: Definitions; readonly findings: ReadonlyMap<Block, Finding[]> } {
   const findings = new Map<Block, Finding[]>();
   const cardsByName = byName(cards);
-  // A user's limits of the reserved name are told at their own place and never found.
-  const limitsByName = byName([
-    commonPractice(),
-    ...limits.filter((one) => one.name.toLowerCase() !== BUILT_IN_NAME),
-  ]);
+  const limitsByName = byName([commonPractice(), ...limits]);
   tellTwice(cardsByName, "card", findings);
   tellTwice(limitsByName, "set of limits", findings);
   const definitions: Definitions = {
@@ -62,8 +58,9 @@ function tellTwice<T extends Named>(
   what: string,
   findings: Map<Block, Finding[]>,
 ): void {
-  for (const same of definitions.values()) {
-    if (same.length < 2) continue;
+  for (const [name, same] of definitions) {
+    // Limits of the reserved name are told where they are read, whether they are alone or not.
+    if (same.length < 2 || (what === "set of limits" && name === BUILT_IN_NAME)) continue;
     for (const one of same) {
       const others = same.filter((other) => other !== one);
       const head = one.block.clauses[0] as PlacedClause;

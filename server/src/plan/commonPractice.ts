@@ -22,9 +22,9 @@ takes these rows, and a row there replaces the one here that it is about.
 | should any overshoot 15 (common practice; 14 CFR 25.143(h) asks no warning to 30 degrees at V2 and to 40 at VFTO and VREF)
 | should any buffet 1.3 above FL250 (advisory practice to 14 CFR 25.251(e))
 | must manoeuvre bank 60 (14 CFR 91.307(c), in flight)
-| should manoeuvre overshoot none
-| should manoeuvre bank none when ifr
-| should manoeuvre bank none above FL300
+| should manoeuvre overshoot none (common practice: such an exercise goes to the warning and beyond)
+| should manoeuvre bank none when ifr (common practice: the bank is the exercise)
+| should manoeuvre bank none above FL300 (common practice: the bank is the exercise)
 `;
 
 let draft: LimitsDraft | null = null;

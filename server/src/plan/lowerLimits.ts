@@ -1,14 +1,15 @@
 import type { Block, PlacedClause } from "../notation/block.ts";
-import type { BodyOf, RowCondition } from "../notation/tree.ts";
+import { nearestWord } from "../notation/spelling.ts";
+import type { BarLine, BodyOf, RowCondition } from "../notation/tree.ts";
 import type { Subject } from "../notation/vocabulary.ts";
 import { BUILT_IN_NAME, BUILT_IN_URI } from "./builtIn.ts";
 import type { Source } from "./card.ts";
 import type { Finding } from "./finding.ts";
 import type { Level, Limits, Row } from "./limits.ts";
-import { lowerSource } from "./lowering.ts";
+import { codeAtClause, lowerSource } from "./lowering.ts";
 import type { Origin } from "./origin.ts";
 import { type Measured, measure } from "./quantity.ts";
-import { findingAt, originOf, type Site } from "./site.ts";
+import { type Details, findingAt, originOf, type Site } from "./site.ts";
 
 /** Limits as they are written, before the rows of `from` are taken in. */
 export interface LimitsDraft {
@@ -23,7 +24,10 @@ export interface LimitsDraft {
   readonly findings: readonly Finding[];
 }
 
-/** Reads limits, in SI. A row in error is not held, and said so where the limits are used. */
+/**
+ * Reads limits, in SI. A row in error is not held, and said so where the limits are used; an error in
+ * the first clause withholds them all, for `from` may have been meant there.
+ */
 export function lowerLimits(block: Block, uri: string): LimitsDraft {
   const site: Site = { uri, block, anchor: block };
   const findings: Finding[] = [];
@@ -59,9 +63,9 @@ export function lowerLimits(block: Block, uri: string): LimitsDraft {
       : null,
     withheld: unknown
       ? { origin: originOf(site, unknown), code: "unknown-keyword" }
-      : body
+      : head.counts && body
         ? null
-        : { origin, code: "missing-argument" },
+        : { origin, code: codeAtClause(block, findings, originOf(site, head)) },
     rows,
     findings,
   };
@@ -129,27 +133,31 @@ function isWhen(condition: RowCondition): condition is Extract<
 
 /** The row as messages quote it, with single blanks and no remark; and the remark behind it, which names its source. */
 function quoted(block: Block, { line, clause }: PlacedClause): { text: string; remark: string | null } {
-  const whole = block.lines[line]?.text ?? "";
-  const text = whole
-    .slice(clause.span.start, clause.span.end)
-    .replace(/\([^()]*\)/g, " ")
-    .replace(/\s+/g, " ")
-    .trim();
-  const behind = /^\s*\((.*?)\)\s*(;|$)/.exec(whole.slice(clause.span.end));
-  return { text, remark: behind?.[1]?.trim() ?? null };
+  const { text: whole, tokens } = block.lines[line] as BarLine;
+  let text = "";
+  const remarks: string[] = [];
+  for (const { kind, start, end } of tokens) {
+    if (start < clause.span.start) continue;
+    if (start < clause.span.end) text += kind === "remark" ? " " : whole.slice(start, end);
+    else if (kind === "remark")
+      remarks.push(
+        whole
+          .slice(start + 1, end)
+          .replace(/\)$/, "")
+          .trim(),
+      );
+    else if (kind !== "blank") break;
+  }
+  return { text: text.replace(/\s+/g, " ").trim(), remark: remarks.join("; ") || null };
 }
 
 /** The limits with the rows of `from` taken first; a row here replaces a taken one of the same verb, phases, subject and conditions. */
 export function resolveLimits(draft: LimitsDraft, drafts: readonly LimitsDraft[]): Limits {
-  return resolve(draft, drafts, []);
-}
-
-function resolve(draft: LimitsDraft, drafts: readonly LimitsDraft[], chain: readonly LimitsDraft[]): Limits {
   const { name, title, origin, block, source } = draft;
   const base = { name, title, origin, block, source, builtIn: origin.uri === BUILT_IN_URI };
   if (!draft.from || draft.withheld)
     return { ...base, withheld: draft.withheld, rows: draft.rows, findings: draft.findings };
-  const taken = takenFrom(draft, drafts, chain);
+  const taken = takenFrom(draft, drafts);
   if ("finding" in taken) {
     const withheld = { origin: draft.from.origin, code: taken.finding.code };
     return { ...base, withheld, rows: [], findings: [...draft.findings, taken.finding] };
@@ -166,37 +174,73 @@ function resolve(draft: LimitsDraft, drafts: readonly LimitsDraft[], chain: read
 function takenFrom(
   draft: LimitsDraft,
   drafts: readonly LimitsDraft[],
-  chain: readonly LimitsDraft[],
 ): { rows: readonly Row[] } | { finding: Finding } {
   const from = draft.from as NonNullable<LimitsDraft["from"]>;
-  const tell = (code: "unknown-limits" | "duplicate-name" | "broken-definition", message: string) => ({
-    finding: findingAt(code, from.placed, message, { span: from.origin.span }),
+  const tell = (
+    code: "unknown-limits" | "duplicate-name" | "broken-definition",
+    message: string,
+    details: Details = {},
+  ) => ({
+    finding: findingAt(code, from.placed, message, { span: from.origin.span, ...details }),
   });
-  const wanted = from.name.toLowerCase();
-  const found = drafts.filter((one) => one.name.toLowerCase() === wanted);
+  const found = namedBy(from.name, drafts);
   const first = found[0];
-  if (!first)
+  if (!first) {
+    const others = drafts.filter((one) => one !== draft).map((one) => one.name);
+    const nearest = nearestWord(from.name, others);
     return tell(
       "unknown-limits",
-      `No limits in this folder are called ${from.name}, so none of these rows is held: check the name after \`from\`.`,
+      `No limits in this folder are called ${from.name}, so none of these rows is held: ${nearest ? `did you mean ${nearest}?` : "check the name after `from`."}`,
+      nearest
+        ? {
+            fixes: [
+              {
+                title: `Write ${nearest}`,
+                preferred: true,
+                edits: [{ line: from.placed.line, ...from.origin.span, newText: nearest }],
+              },
+            ],
+          }
+        : {},
     );
+  }
   if (found.length > 1)
     return tell(
       "duplicate-name",
       `${from.name} is the name of ${found.length} sets of limits, so none of these rows is held: keep one, or rename the others.`,
     );
-  if (first === draft || chain.includes(first))
+  if (leadsBack(draft, drafts))
     return tell(
       "broken-definition",
-      `${draft.name} takes its rows from ${from.name}, which takes them from ${draft.name}: let one of them stand by itself.`,
+      first === draft
+        ? `${draft.name} takes its rows from itself, so none of them is held: name other limits, or leave \`from\` out.`
+        : `${draft.name} takes its rows from ${from.name}, which leads back to ${draft.name}, so none of them is held: let one of them stand by itself.`,
+      // Nothing else is wrong here, and limits that hold nothing must not pass for kept ones.
+      { severity: "error" },
     );
-  const limits = resolve(first, drafts, [...chain, draft]);
+  const limits = resolveLimits(first, drafts);
   if (limits.withheld)
     return tell(
       "broken-definition",
       `${from.name} has an error, so its rows cannot be taken and none of these is held: mend it first.`,
     );
   return { rows: limits.rows };
+}
+
+function namedBy(name: string, drafts: readonly LimitsDraft[]): readonly LimitsDraft[] {
+  const wanted = name.toLowerCase();
+  return drafts.filter((one) => one.name.toLowerCase() === wanted);
+}
+
+/** True where limits take their rows, through others or at once, from themselves. */
+function leadsBack(draft: LimitsDraft, drafts: readonly LimitsDraft[]): boolean {
+  const seen = new Set<LimitsDraft>();
+  let at: LimitsDraft | undefined = draft;
+  while (at?.from && !seen.has(at)) {
+    seen.add(at);
+    at = namedBy(at.from.name, drafts)[0];
+  }
+  return at === draft && seen.size > 0;
 }
 
 /** Rows of one key are about the same thing. */
