@@ -64,6 +64,8 @@ export function clauseFor(point: Point, keyword: Keyword): PlacedClause {
 export function carriedFrom(point: Point, keys: readonly CarriedKey[]): Related[] {
   const related: Related[] = [];
   for (const key of keys) {
+    // The block's own speed is applied only after the point: until then the state holds the one before it.
+    if (key === "speed" && point.clauses.speed) continue;
     const origin: Origin | undefined = point.applied.carried[key]?.origin;
     if (origin && origin.block !== point.site.anchor) {
       related.push({ origin, message: `The ${keywordOf[key]} was stated here.` });
