@@ -24,8 +24,8 @@ beforeAll(() => {
 });
 afterAll(() => rmSync(folder, { recursive: true }));
 
-const card = "| aircraft kestrel-9; basis vsr; reference 9 t\n| config clean stall 95 kt\n";
-const point = "| fly kestrel-9; weight 8 t; config clean; altitude FL100; speed 180 kt\n\n| phase cruise\n";
+const card = "| aircraft wheatear-9; basis vsr; reference 9 t\n| config clean stall 95 kt\n";
+const point = "| fly wheatear-9; weight 8 t; config clean; altitude FL100; speed 180 kt\n\n| phase cruise\n";
 
 describe("plumbline check", () => {
   it("finds in the demo what was put there, and nothing else", () => {
@@ -137,7 +137,7 @@ describe("plumbline points", () => {
   it("gives null for what cannot be known, and says what it waits for", () => {
     const { files } = JSON.parse(
       plumbline(["points", "-", "--format", "json"], {
-        input: `${card}\n${point.replace("8 t", "8")}`.replaceAll("kestrel-9", "plover-4"),
+        input: `${card}\n${point.replace("8 t", "8")}`.replaceAll("wheatear-9", "twite-4"),
         cwd: folder,
       }).stdout,
     );

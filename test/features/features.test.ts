@@ -64,7 +64,7 @@ describe("hints", () => {
   });
 
   it("show each configuration's 1-g stall speed in a card", () => {
-    expect(hints("| aircraft plover-4; basis vs 0.94; reference 4 t\n| config clean stall 94 kt")).toEqual([
+    expect(hints("| aircraft twite-4; basis vs 0.94; reference 4 t\n| config clean stall 94 kt")).toEqual([
       "1:26 ≈ vs1g 100 kt at 4000 kg",
     ]);
   });

@@ -37,11 +37,11 @@ const pieces = [
   "| contamination frost",
   "| claim stall 120 kt",
   "| load 0.5",
-  '| aircraft kestrel-9 "invented"; basis vsr; reference 9 t',
+  '| aircraft wheatear-9 "invented"; basis vsr; reference 9 t',
   "| config clean stall 90 kt",
   "| limits own-rules, from common-practice",
   "| must any bank 20",
-  "| fly kestrel-9; under own-rules",
+  "| fly wheatear-9; under own-rules",
 ];
 
 describe("an edited note", () => {

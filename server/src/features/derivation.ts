@@ -7,6 +7,7 @@ import {
   formatBank,
   formatDeviation,
   formatDistinct,
+  formatFactor,
   formatFlightLevel,
   formatLoad,
   formatMach,
@@ -107,7 +108,7 @@ function formulas(point: PointResult, conditions: Conditions): string {
       ? `n = ${formatLoad(conditions.load.nominal)}, as stated`
       : `n = cos ${formatAngle(conditions.path.nominal)} / cos ${formatBank(conditions.bank.nominal)} = ${formatLoad(conditions.load.nominal)}`,
     `V_c = ${formatSpeed(configuration.stallSpeed)} (${configuration.name}, ${basis.kind}${basis.kind === "vs" ? ` / ${basis.factor}` : ""}, at ${formatMass(reference, reference)})`,
-    `stall: V² f(M) = V_c² k² (n m / m_ref) / (1 - loss), with m = ${mass}, k = ${conditions.cgFactor.nominal.toFixed(3)}, loss = ${formatPercent(conditions.liftLoss.nominal)}: ${formatResultValue("stall", stall.nominal)}`,
+    `stall: V² f(M) = V_c² k² (n m / m_ref) / (1 - loss), with m = ${mass}, k = ${formatFactor(conditions.cgFactor.nominal)}, loss = ${formatPercent(conditions.liftLoss.nominal)}: ${formatResultValue("stall", stall.nominal)}`,
   ];
   lines.push(...loadLines(point, conditions));
   const check = weightCheck(point, conditions, reference);

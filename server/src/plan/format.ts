@@ -132,6 +132,11 @@ export function formatDeviation(kelvin: number, more = 0): string {
   return Number(text) > 0 ? `+${text}` : text;
 }
 
+/** A plain factor of a table: "0.992". */
+export function formatFactor(factor: number, more = 0): string {
+  return rounded(factor, 3 + more, "nearest");
+}
+
 /** A share: "8 %", "7.5 %". */
 export function formatPercent(fraction: number, more = 0): string {
   return withUnit(trimmed(fromSI(fraction, "%"), 1 + more), "%");

@@ -120,7 +120,8 @@ function message(checking: Checking, held: HeldRow): string {
   const { row, bound } = held;
   const figure = held.figure ?? Number.NaN;
   const rule = `${point.limits.name} ${row.verb === "must" ? "allows" : "advises"} in ${point.phase}`;
-  const asks = `${point.limits.name} ${row.verb === "must" ? "requires" : "advises"} in ${point.phase}`;
+  const asks = (least: string) =>
+    `${point.limits.name} ${row.verb === "must" ? "requires" : "advises"} ${least} in ${point.phase}`;
   const lead = byTolerances(checking, held);
   switch (row.subject) {
     case "bank": {
@@ -143,25 +144,27 @@ function message(checking: Checking, held: HeldRow): string {
       const [flown, least] = formatDistinct(figure, bound, (value, more) =>
         formatResultValue("ratio", value, more),
       );
-      return `${lead}The speed is ${flown} times ${of} and ${asks} ${least}: fly ${knotsMissing(checking, held)} faster, or lighter.`;
+      return `${lead}The speed is ${flown} times ${of} and ${asks(least)}: fly ${knotsMissing(checking, held)} faster, or lighter.`;
     }
     case "margin": {
       const [flown, least] = formatDistinct(figure, bound, (value, more) =>
         formatResultValue("margin", value, more),
       );
-      return `${lead}The margin over the stall is ${flown} and ${asks} ${least}: fly faster or bank less.`;
+      return `${lead}The margin over the stall is ${flown} and ${asks(least)}: fly faster or bank less.`;
     }
     case "overshoot": {
       const [left, least] = formatDistinct(figure, bound, (value, more) =>
         formatResultValue("overshoot", value, more),
       );
-      return `${lead}Only ${left} of bank are left to the warning and ${asks} ${least}: bank less or fly faster.`;
+      if (figure < 0)
+        return `${lead}The warning comes before this bank is reached, and ${asks(`${least} of bank beyond it`)}: bank less or fly faster.`;
+      return `${lead}Only ${left} of bank are left to the warning and ${asks(least)}: bank less or fly faster.`;
     }
     case "buffet": {
       const [onset, least] = formatDistinct(figure, bound, (value, more) =>
         formatResultValue("buffet-load", value, more),
       );
-      return `${lead}Buffet begins at a load factor of ${onset} and ${asks} ${least}: fly lower or lighter.`;
+      return `${lead}Buffet begins at a load factor of ${onset} and ${asks(least)}: fly lower or lighter.`;
     }
   }
 }

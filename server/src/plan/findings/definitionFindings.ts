@@ -1,4 +1,4 @@
-import { entry, flown, kestrel, ruled } from "./entry.ts";
+import { entry, flown, wheatear, ruled } from "./entry.ts";
 
 /** Findings about cards, limits, names and values. */
 export const definitionFindings = {
@@ -20,8 +20,8 @@ export const definitionFindings = {
     "error",
     "no card of this name",
     "Cards are looked for in the notes of the folder that holds this one. Without its card a point gives no figures. Mend the name, or write the card: a block that begins with `aircraft`.",
-    "| fly kestrel-8\n",
-    `${kestrel}\n| fly kestrel-9\n`,
+    "| fly wheatear-8\n",
+    `${wheatear}\n| fly wheatear-9\n`,
   ),
   "unknown-limits": entry(
     "error",
@@ -41,8 +41,8 @@ export const definitionFindings = {
     "error",
     "a name is given twice",
     "Two cards, or two sets of limits, of one name in a folder are an error at each place and at each use, and neither is used, for nobody can say which holds. Keep one, or rename the other.",
-    `${kestrel}\n${kestrel}`,
-    kestrel,
+    `${wheatear}\n${wheatear}`,
+    wheatear,
   ),
   "out-of-range": entry(
     "error",
@@ -55,14 +55,14 @@ export const definitionFindings = {
     "warning",
     "a card or limits in error are used",
     "The card or the limits in use have an error of their own, at the line that the message names. Nothing is computed from what is in error, and a row in error is not held: mend it there.",
-    `${kestrel}| vmo 260\n\n| fly kestrel-9\n`,
-    `${kestrel}| vmo 260 kt\n\n| fly kestrel-9\n`,
+    `${wheatear}| vmo 260\n\n| fly wheatear-9\n`,
+    `${wheatear}| vmo 260 kt\n\n| fly wheatear-9\n`,
   ),
   "missing-value": entry(
     "error",
     "a value is needed that nobody stated",
     "Weight, configuration, altitude and speed are never assumed, and a card needs its basis, its reference mass and its stall speeds. What is missing is told once; later points that wait for it show no figures and name the line.",
-    `${kestrel}\n| fly kestrel-9; config clean; altitude FL100; speed 180 kt\n\n| phase cruise\n`,
+    `${wheatear}\n| fly wheatear-9; config clean; altitude FL100; speed 180 kt\n\n| phase cruise\n`,
     flown("| phase cruise"),
   ),
   "outside-table": entry(
@@ -76,14 +76,14 @@ export const definitionFindings = {
     "warning",
     "a published speed below the least value",
     "The card publishes a reference speed that is lower than 1.13, 1.18 or 1.23 times its own stall speed (14 CFR 25.107, 25.125). One of the two is probably mistyped.",
-    `${kestrel}| published vref flaps 8 t 85 kt, 9 t 95 kt\n`,
-    `${kestrel}| published vref flaps 8 t 94 kt, 9 t 99 kt\n`,
+    `${wheatear}| published vref flaps 8 t 85 kt, 9 t 95 kt\n`,
+    `${wheatear}| published vref flaps 8 t 94 kt, 9 t 99 kt\n`,
   ),
   "unused-definition": entry(
     "hint",
     "nobody uses it",
     "No note of the folder flies this card or is under these limits. It costs nothing; a name that was mistyped where it is used shows so, too.",
-    flown("| phase cruise", "\n| aircraft plover-4; basis vsr; reference 4 t\n| config clean stall 70 kt\n"),
+    flown("| phase cruise", "\n| aircraft twite-4; basis vsr; reference 4 t\n| config clean stall 70 kt\n"),
     flown("| phase cruise"),
   ),
   "built-in-limits": entry(

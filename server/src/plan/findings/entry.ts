@@ -26,20 +26,20 @@ export function entry(
 }
 
 /** The card that the examples fly. */
-export const kestrel = `| aircraft kestrel-9 "invented for the examples"
+export const wheatear = `| aircraft wheatear-9 "invented for the examples"
 | basis vsr; reference 9 t; mass 5 t to 9 t; warning 1.05
 | config clean stall 95 kt, load -1 to 3
 | config flaps stall 80 kt, load 0 to 2, vfe 150 kt, takeoff, landing
 `;
 
-const cruising = "| fly kestrel-9; weight 8 t; config clean; altitude FL100; speed 180 kt\n";
+const cruising = "| fly wheatear-9; weight 8 t; config clean; altitude FL100; speed 180 kt\n";
 
 /** The example's card and setting, then the point. */
 export function flown(point: string, more = ""): string {
-  return `${kestrel}${more}\n${cruising}\n${point}\n`;
+  return `${wheatear}${more}\n${cruising}\n${point}\n`;
 }
 
 /** The same under limits that hold one row. */
 export function ruled(row: string, point: string, more = ""): string {
-  return `${kestrel}${more}\n| limits own-rules\n| ${row}\n\n| under own-rules\n${cruising}\n${point}\n`;
+  return `${wheatear}${more}\n| limits own-rules\n| ${row}\n\n| under own-rules\n${cruising}\n${point}\n`;
 }

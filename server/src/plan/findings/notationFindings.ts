@@ -1,5 +1,5 @@
 import type { TextCode } from "../../notation/finding.ts";
-import { entry, type FindingEntry, flown, kestrel } from "./entry.ts";
+import { entry, type FindingEntry, flown, wheatear } from "./entry.ts";
 
 /** Findings that the text alone gives. */
 export const notationFindings: Readonly<Record<TextCode, FindingEntry>> = {
@@ -119,8 +119,8 @@ export const notationFindings: Readonly<Record<TextCode, FindingEntry>> = {
     "error",
     "a table that cannot hold",
     "A table has two pairs or more with rising first numbers. A lift-mach table begins with the factor 1.00 at or above the card's own stall Mach number, a cg-effect on VSR has no factor above 1 (14 CFR 25.103), and buffet cannot begin beyond the stall. Nothing is computed from a table in error.",
-    `${kestrel}| lift-mach clean 0.50 1.00, 0.30 0.90\n`,
-    `${kestrel}| lift-mach clean 0.30 1.00, 0.50 0.90\n`,
+    `${wheatear}| lift-mach clean 0.50 1.00, 0.30 0.90\n`,
+    `${wheatear}| lift-mach clean 0.30 1.00, 0.50 0.90\n`,
   ),
   "two-unknowns": entry(
     "error",
