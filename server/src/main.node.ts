@@ -1,5 +1,6 @@
 import "./cli/smallYoungSpace.ts";
 import { existsSync } from "node:fs";
+import { stat } from "node:fs/promises";
 import { join } from "node:path";
 import { fileURLToPath, pathToFileURL } from "node:url";
 import { createConnection } from "vscode-languageserver/node";
@@ -19,6 +20,11 @@ const runtime: Runtime = {
     if (!folderUri.startsWith("file:")) return [];
     const { walk } = await import("./disk/discover.ts");
     return (await walk(fileURLToPath(folderUri))).map((path) => pathToFileURL(path).href);
+  },
+  async isFolder(uri) {
+    if (!uri.startsWith("file:")) return false;
+    const found = await stat(fileURLToPath(uri)).catch(() => null);
+    return found?.isDirectory() === true;
   },
   async readNote(uri, log) {
     if (!uri.startsWith("file:")) return null;

@@ -15,6 +15,7 @@ import type {
 } from "vscode-languageserver";
 import { createFolder } from "../../server/src/plan/createFolder.ts";
 import { fileJson } from "../../server/src/report/pointsJson.ts";
+import { eventually } from "../support/eventually.ts";
 import { type Client, startClient } from "../support/lspClient.ts";
 import { demoFiles, demoFolder } from "../support/sampleText.ts";
 
@@ -39,19 +40,6 @@ afterEach(async () => {
 function after(text: string, part: string) {
   const before = text.slice(0, text.indexOf(part) + part.length).split("\n");
   return { line: before.length - 1, character: before[before.length - 1]?.length ?? 0 };
-}
-
-async function eventually(check: () => void): Promise<void> {
-  const until = Date.now() + 10_000;
-  for (;;) {
-    try {
-      check();
-      return;
-    } catch (error) {
-      if (until < Date.now()) throw error;
-      await new Promise((done) => setTimeout(done, 20));
-    }
-  }
 }
 
 describe("the server over stdio", () => {
@@ -293,12 +281,12 @@ describe("the server over stdio", () => {
     try {
       const uriOf = (folder: string, name: string) => pathToFileURL(join(folder, name)).href;
       const card = (stall: number) =>
-        `| aircraft kestrel-9; basis vsr; reference 9 t\n| config clean stall ${stall} kt\n`;
+        `| aircraft wheatear-9; basis vsr; reference 9 t\n| config clean stall ${stall} kt\n`;
       writeFileSync(join(one, "cards.plumb"), card(90));
       writeFileSync(join(two, "cards.plumb"), card(95));
       const client = await start([pathToFileURL(one).href, pathToFileURL(two).href]);
       const text =
-        "| phase cruise; fly kestrel-9; weight 9 t; config clean; altitude 3000 ft; speed 150 kt; claim vs1g 90 kt\n";
+        "| phase cruise; fly wheatear-9; weight 9 t; config clean; altitude 3000 ft; speed 150 kt; claim vs1g 90 kt\n";
       const note = uriOf(one, "note.plumb");
       const other = uriOf(two, "note.plumb");
       client.open(note, text);

@@ -16,6 +16,7 @@ export const able: ClientCapabilities = {
     diagnostic: {},
     inlayHint: { resolveSupport: { properties: ["tooltip", "label.tooltip", "label.location"] } },
     completion: { completionItem: { snippetSupport: true } },
+    documentSymbol: { hierarchicalDocumentSymbolSupport: true },
   },
   workspace: {
     configuration: true,
@@ -40,13 +41,19 @@ export interface Client {
   change(uri: string, version: number, ...changes: readonly object[]): void;
   request<T>(method: string, params: object): Promise<T>;
   diagnostics(uri: string): Promise<Diagnostic[]>;
+  /** Writes notifications in one piece, so that the server finds them all in its queue. */
+  notifyTogether(method: string, params: readonly object[]): void;
   stop(): Promise<number | null>;
 }
 
-/** Starts the built server over standard input and output, as any editor does. */
+/**
+ * Starts the built server over standard input and output, as any editor does. `answer` replaces what
+ * the client says to the server's own requests.
+ */
 export async function startClient(
   folders: readonly string[] = [],
   capabilities: ClientCapabilities = able,
+  answer: ((method: string) => unknown) | null = null,
 ): Promise<Client> {
   const child = spawn(process.execPath, [serverPath, "--stdio"], { stdio: ["pipe", "pipe", "inherit"] });
   const ended = new Promise<number | null>((done) => child.once("exit", done));
@@ -59,6 +66,7 @@ export async function startClient(
   const client = { settings: null as unknown };
   connection.onRequest((method: string, params: unknown) => {
     received.push(method);
+    if (answer) return answer(method);
     if (method === "workspace/configuration")
       return (params as { items: unknown[] }).items.map(() => client.settings);
     return null;
@@ -100,6 +108,12 @@ export async function startClient(
         textDocument: { uri },
       });
       return report.items;
+    },
+    notifyTogether(method: string, params: readonly object[]) {
+      const messages = params.map((one) => JSON.stringify({ jsonrpc: "2.0", method, params: one }));
+      child.stdin.write(
+        messages.map((text) => `Content-Length: ${Buffer.byteLength(text)}\r\n\r\n${text}`).join(""),
+      );
     },
     async stop() {
       await connection.sendRequest("shutdown");

@@ -13,10 +13,15 @@ export interface Client {
   readonly registersConfiguration: boolean;
   readonly changesFolders: boolean;
   readonly snippets: boolean;
+  /** It asks for tooltips and places of a hint when it shows them; else they are sent with the hint. */
+  readonly resolvesHints: boolean;
+  /** It shows an outline as a tree; else it gets a list. */
+  readonly nestsSymbols: boolean;
 }
 
 export function clientOf({ capabilities, workspaceFolders, rootUri }: InitializeParams): Client {
   const { workspace, textDocument } = capabilities;
+  const lazily = textDocument?.inlayHint?.resolveSupport?.properties ?? [];
   const folders = workspaceFolders?.map(({ uri }) => uri) ?? (rootUri ? [rootUri] : []);
   return {
     folders,
@@ -28,5 +33,7 @@ export function clientOf({ capabilities, workspaceFolders, rootUri }: Initialize
     registersConfiguration: workspace?.didChangeConfiguration?.dynamicRegistration === true,
     changesFolders: workspace?.workspaceFolders === true,
     snippets: textDocument?.completion?.completionItem?.snippetSupport === true,
+    resolvesHints: ["label.tooltip", "label.location"].every((one) => lazily.includes(one)),
+    nestsSymbols: textDocument?.documentSymbol?.hierarchicalDocumentSymbolSupport === true,
   };
 }

@@ -13,6 +13,7 @@ import {
   type CodeAction as LspCodeAction,
   type Hover as LspHover,
   type Range,
+  type SymbolInformation,
   SymbolKind,
   type TextEdit,
 } from "vscode-languageserver";
@@ -67,27 +68,38 @@ export function diagnosticOf({ line, finding }: PlacedFinding, pageUri: PageUri)
   };
 }
 
-/** What a hint is resolved by: its note and its place in it. */
+/** What a hint is resolved by, beside its place. */
 export interface HintData {
   readonly uri: string;
 }
 
 /** A hint without its tooltips and locations, which few are asked for. */
-export function hintOf(hint: Hint, uri: string): InlayHint {
-  return {
-    position: { line: hint.line, character: hint.character },
-    label: hint.parts.map(({ text }) => ({ value: text })),
-    paddingLeft: true,
-    data: { uri } satisfies HintData,
-  };
+export function plainHint(hint: Hint, uri: string): InlayHint {
+  return { ...shortHint(hint), data: { uri } satisfies HintData };
 }
 
-export function resolvedHint(plain: InlayHint, hint: Hint, pageUri: PageUri): InlayHint {
+/** A hint with all that stands behind it. */
+export function wholeHint(hint: Hint, pageUri: PageUri): InlayHint {
   const label = hint.parts.map(({ text, tooltip, origin }) => {
     const location = origin && locationOf(origin, pageUri);
     return { value: text, ...(tooltip ? { tooltip } : {}), ...(location ? { location } : {}) };
   });
-  return { ...plain, label };
+  return { ...shortHint(hint), label };
+}
+
+function shortHint(hint: Hint): InlayHint {
+  return {
+    position: { line: hint.line, character: hint.character },
+    label: hint.parts.map(({ text }) => ({ value: text })),
+    paddingLeft: true,
+  };
+}
+
+/** True where the note still says what the client shows: after an edit another figure may stand there. */
+export function saysTheSame(shown: InlayHint, hint: Hint): boolean {
+  const { label } = shown;
+  const text = typeof label === "string" ? label : label.map(({ value }) => value).join("");
+  return text === hint.parts.map((part) => part.text).join("");
 }
 
 export function hoverOf({ line, span, text }: Hover): LspHover {
@@ -166,6 +178,16 @@ export function symbolOf(symbol: OutlineEntry, note: Note): DocumentSymbol {
     selectionRange: rangeOf(symbol.nameLine, symbol.nameSpan),
     children: symbol.children.map((child) => symbolOf(child, note)),
   };
+}
+
+/** The same as a list, for a client that shows no tree. */
+export function flatSymbolsOf(symbol: OutlineEntry, note: Note, container = ""): SymbolInformation[] {
+  const { name, kind, range } = symbolOf(symbol, note);
+  const own = { name, kind, location: { uri: note.uri, range } };
+  return [
+    container ? { ...own, containerName: container } : own,
+    ...symbol.children.flatMap((child) => flatSymbolsOf(child, note, name)),
+  ];
 }
 
 export function foldOf({ firstLine, lastLine }: Fold): FoldingRange {

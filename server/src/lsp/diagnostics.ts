@@ -31,12 +31,12 @@ export function workspaceReport(
   const known = new Map(previous.map(({ uri, value }) => [uri, value]));
   const items: WorkspaceDiagnosticReport["items"] = [];
   const seen = new Set<string>();
-  for (const { note } of workspace.notes) {
+  for (const note of workspace.notes) {
     if (token.isCancellationRequested) break;
     seen.add(note.uri);
     const diagnostics = diagnosticsOf(note, pageUri);
     const id = resultId(diagnostics);
-    const version = workspace.openNotes.get(note.uri)?.version ?? null;
+    const version = workspace.openNote(note.uri)?.version ?? null;
     if (known.get(note.uri) === id)
       items.push({ uri: note.uri, version, kind: DocumentDiagnosticReportKind.Unchanged, resultId: id });
     else
@@ -56,34 +56,50 @@ export function workspaceReport(
   return { items };
 }
 
+/** So many turns of the event loop let in what lies in the queue already: a burst of edits is told once. */
+const TURNS = 3;
+
 /** Sends diagnostics to clients that cannot ask for them: once for however many changes came together. */
 export class Pusher {
   readonly #connection: Connection;
   readonly #workspace: Workspace;
   readonly #pageUri: PageUri;
+  /** Resolves once the folders are read: no card is told as missing that is only not read yet. */
+  readonly #ready: () => Promise<unknown>;
   readonly #waiting = new Set<string>();
+  #turns = 0;
   #scheduled = false;
 
-  constructor(connection: Connection, workspace: Workspace, pageUri: PageUri) {
+  constructor(connection: Connection, workspace: Workspace, pageUri: PageUri, ready: () => Promise<unknown>) {
     this.#connection = connection;
     this.#workspace = workspace;
     this.#pageUri = pageUri;
+    this.#ready = ready;
   }
 
   push(uri: string): void {
     this.#waiting.add(uri);
+    this.#turns = TURNS;
     if (this.#scheduled) return;
     this.#scheduled = true;
-    setImmediate(() => this.#flush());
+    void this.#ready().then(() => this.#turn());
   }
 
   pushAll(): void {
-    for (const uri of this.#workspace.openNotes.keys()) this.push(uri);
+    for (const { note } of this.#workspace.openNotes) this.push(note.uri);
   }
 
   clear(uri: string): void {
     this.#waiting.delete(uri);
-    void this.#connection.sendDiagnostics({ uri, diagnostics: [] });
+    this.#send(uri, {}, []);
+  }
+
+  #turn(): void {
+    setImmediate(() => {
+      this.#turns--;
+      if (0 < this.#turns) this.#turn();
+      else this.#flush();
+    });
   }
 
   #flush(): void {
@@ -91,11 +107,13 @@ export class Pusher {
     const uris = [...this.#waiting];
     this.#waiting.clear();
     for (const uri of uris) {
-      const open = this.#workspace.openNotes.get(uri);
-      if (!open) continue;
-      const diagnostics = diagnosticsOf(open.note, this.#pageUri);
-      const version = open.version === null ? {} : { version: open.version };
-      void this.#connection.sendDiagnostics({ uri, ...version, diagnostics });
+      const open = this.#workspace.openNote(uri);
+      if (open) this.#send(uri, { version: open.version }, diagnosticsOf(open.note, this.#pageUri));
     }
+  }
+
+  #send(uri: string, version: { readonly version?: number }, diagnostics: Diagnostic[]): void {
+    // A client that went away is told nothing more, and that is no error of ours.
+    this.#connection.sendDiagnostics({ uri, ...version, diagnostics }).catch(() => undefined);
   }
 }

@@ -4,6 +4,7 @@ export interface Runtime {
   today(): string;
   /** The notes below a folder, as URIs. */
   listNotes(folderUri: string): Promise<readonly string[]>;
+  isFolder(uri: string): Promise<boolean>;
   /** The text of a note; null where it cannot be read, which is logged. */
   readNote(uri: string, log: (message: string) => void): Promise<string | null>;
   /** Where a page ships, by its file name; null where none does. */

@@ -4,26 +4,47 @@ import { createFolder } from "../plan/createFolder.ts";
 import type { Folder } from "../plan/folder.ts";
 import type { Note } from "../plan/note.ts";
 import type { Runtime } from "./runtime.ts";
+import { uriKey } from "./uriKey.ts";
 
-/** A note as the editor has it open, or as the disk has it. */
+/** A note that an editor has open. */
 export interface OpenNote {
   readonly folder: Folder;
   readonly note: Note;
-  /** The editor's version; null for a note that is only on the disk. */
-  version: number | null;
+  version: number;
 }
 
+/** What a client tells of files on the disk. */
+export interface FileChange {
+  readonly uri: string;
+  readonly kind: "created" | "changed" | "deleted";
+}
+
+/** A folder of the window, or the one that a note outside all folders has for itself. */
+interface Root {
+  /** As the client wrote it; null for the folder of one note. */
+  readonly uri: string | null;
+  readonly folder: Folder;
+  /** The URI that each note is held by, by its key. */
+  readonly held: Map<string, string>;
+  /** Keys of notes that are there and cannot be read: they may be mended. */
+  readonly refused: Set<string>;
+}
+
+/** So many notes are read at once: every one holds a file open. */
+const READ_AT_ONCE = 32;
+
 /**
- * The folders of the editor's window. Each sees its own cards and limits only; a note outside all
- * folders sees itself. An open editor's text counts before the disk's.
+ * The folders of the editor's window. Each sees its own cards and limits only; a note belongs to the
+ * innermost folder that holds it, and one outside all folders sees itself. An open editor's text
+ * counts before the disk's.
  */
 export class Workspace {
   readonly #runtime: Runtime;
   readonly #log: (message: string) => void;
-  /** By folder URI, each ending with `/`. */
-  readonly #folders = new Map<string, Folder>();
-  /** Folders of their own for notes outside all others, by note. */
-  readonly #strays = new Map<string, Folder>();
+  /** By key, each ending with `/`. */
+  readonly #roots = new Map<string, Root>();
+  /** By the key of the note. */
+  readonly #strays = new Map<string, Root>();
   readonly #open = new Map<string, OpenNote>();
 
   constructor(runtime: Runtime, log: (message: string) => void) {
@@ -31,122 +52,229 @@ export class Workspace {
     this.#log = log;
   }
 
-  get openNotes(): ReadonlyMap<string, OpenNote> {
-    return this.#open;
+  get openNotes(): Iterable<OpenNote> {
+    return this.#open.values();
+  }
+
+  openNote(uri: string): OpenNote | null {
+    return this.#open.get(uriKey(uri)) ?? null;
   }
 
   /** Every note of every folder, and the open ones outside. */
-  get notes(): readonly { readonly folder: Folder; readonly note: Note }[] {
-    const all = [...this.#folders.values(), ...this.#strays.values()];
-    return all.flatMap((folder) => folder.notes.map((note) => ({ folder, note })));
+  get notes(): readonly Note[] {
+    return [...this.#roots.values(), ...this.#strays.values()].flatMap(({ folder }) => folder.notes);
   }
 
-  find(uri: string): { readonly folder: Folder; readonly note: Note } | null {
-    const open = this.#open.get(uri);
-    if (open) return open;
-    const folder = this.#folderOf(uri);
-    const note = folder?.note(uri);
-    return folder && note ? { folder, note } : null;
+  note(uri: string): Note | null {
+    const key = uriKey(uri);
+    const root = this.#rootOf(key);
+    return this.#open.get(key)?.note ?? root?.folder.note(root.held.get(key) ?? "") ?? null;
+  }
+
+  /** The folder that a note is in, or would be in. */
+  folderOf(uri: string): Folder | null {
+    const key = uriKey(uri);
+    return (this.#rootOf(key) ?? this.#strays.get(key))?.folder ?? null;
   }
 
   /** Adds a folder and reads its notes; those that are open keep the editor's text. */
   async addFolder(uri: string): Promise<void> {
-    const base = uri.endsWith("/") ? uri : `${uri}/`;
-    if (this.#folders.has(base)) return;
-    const folder = createFolder({ today: this.#runtime.today() });
-    this.#folders.set(base, folder);
-    for (const [open, { note, version }] of [...this.#open]) {
-      if (this.#folderOf(open) !== folder) continue;
-      this.#leave(open);
-      this.#put(folder, open, note.document.text(), note.flavour, version);
-    }
-    const found = await this.#runtime.listNotes(base).catch((error: unknown) => {
-      this.#log(`${base} cannot be read: ${String(error)}`);
-      return [];
-    });
-    await Promise.all(found.map((note) => this.#readInto(folder, note)));
+    const base = baseOf(uri);
+    if (this.#roots.has(base)) return;
+    const outer = this.#rootOf(base);
+    const root = this.#newRoot(uri);
+    this.#roots.set(base, root);
+    this.#moveOpenNotes();
+    // What lies in the new folder is the outer one's no longer.
+    if (outer) for (const key of [...outer.held.keys()]) if (key.startsWith(base)) this.#drop(outer, key);
+    await this.#synchronise(root);
   }
 
-  removeFolder(uri: string): void {
-    const base = uri.endsWith("/") ? uri : `${uri}/`;
-    const folder = this.#folders.get(base);
-    if (!folder) return;
-    this.#folders.delete(base);
-    for (const [open, { note, version, folder: own }] of [...this.#open]) {
-      if (own === folder) this.#put(this.#home(open), open, note.document.text(), note.flavour, version);
-    }
+  /** Takes a folder away; what an outer folder now holds again is read there. */
+  async removeFolder(uri: string): Promise<void> {
+    const base = baseOf(uri);
+    if (!this.#roots.delete(base)) return;
+    this.#moveOpenNotes();
+    const outer = this.#rootOf(base);
+    if (outer) await this.#synchronise(outer);
   }
 
   open(uri: string, text: string, flavour: Flavour, version: number): void {
-    this.#put(this.#home(uri), uri, text, flavour, version);
+    const key = uriKey(uri);
+    this.#putOpen(key, uri, text, flavour, version);
   }
 
   change(uri: string, changes: readonly TextDocumentContentChangeEvent[], version: number): void {
-    const open = this.#open.get(uri);
+    const key = uriKey(uri);
+    const open = this.#open.get(key);
     if (!open) return;
     for (const change of changes) {
-      if ("range" in change) open.note.edit(change.range.start, change.range.end, change.text);
-      else this.#put(open.folder, uri, change.text, open.note.flavour, version);
+      const { note } = this.#open.get(key) as OpenNote;
+      if ("range" in change) note.edit(change.range.start, change.range.end, change.text);
+      else this.#putOpen(key, note.uri, change.text, note.flavour, version);
     }
-    const now = this.#open.get(uri);
-    if (now) now.version = version;
+    (this.#open.get(key) as OpenNote).version = version;
   }
 
-  /** The disk's text counts again, if there is any. */
-  async close(uri: string): Promise<void> {
-    const open = this.#open.get(uri);
-    if (!open) return;
-    this.#open.delete(uri);
-    if (this.#strays.delete(uri)) return;
-    await this.refresh(uri);
+  /** From now on the disk's text counts, which {@link filesChanged} then brings. */
+  close(uri: string): void {
+    const key = uriKey(uri);
+    this.#open.delete(key);
+    this.#strays.delete(key);
   }
 
-  /** Reads a note from the disk again, unless an editor has it open. */
-  async refresh(uri: string): Promise<void> {
-    if (this.#open.has(uri)) return;
-    const folder = this.#folderOf(uri);
-    if (folder) await this.#readInto(folder, uri);
+  /**
+   * Takes in what happened on the disk. Where something came, or a `.gitignore` says something else
+   * now, the folder is looked through again: only that tells what its notes are. True where a note
+   * is another one now.
+   */
+  async filesChanged(changes: readonly FileChange[]): Promise<boolean> {
+    let changed = false;
+    const looked = new Set<Root>();
+    for (const { uri, kind } of changes) {
+      const key = uriKey(uri);
+      const root = this.#rootOf(key);
+      if (!root || isNeverEntered(root, key)) continue;
+      if (kind === "deleted") changed = this.#dropBelow(root, key) || changed;
+      if (root.held.has(key) || root.refused.has(key))
+        changed = (await this.#read(root, key, uri)) || changed;
+      else if (key.endsWith("/.gitignore") || (kind === "created" && (await this.#mayHoldNotes(uri))))
+        looked.add(root);
+    }
+    for (const root of looked) changed = (await this.#synchronise(root)) || changed;
+    return changed;
   }
 
-  removed(uri: string): void {
-    if (!this.#open.has(uri)) this.#folderOf(uri)?.remove(uri);
+  async #mayHoldNotes(uri: string): Promise<boolean> {
+    return flavourOrNull(uri) !== null || (await this.#runtime.isFolder(uri));
   }
 
-  async #readInto(folder: Folder, uri: string): Promise<void> {
+  /** Brings a folder in step with the disk. */
+  async #synchronise(root: Root): Promise<boolean> {
+    if (root.uri === null) return false;
+    const found = await this.#runtime.listNotes(root.uri).catch((error: unknown) => {
+      this.#log(`${root.uri} cannot be read: ${String(error)}`);
+      return [];
+    });
+    const there = new Map<string, string>();
+    for (const uri of found) {
+      const key = uriKey(uri);
+      if (this.#rootOf(key) === root) there.set(key, uri);
+    }
+    let changed = false;
+    for (const key of [...root.held.keys()]) {
+      if (!there.has(key) && !this.#open.has(key)) changed = this.#drop(root, key) || changed;
+    }
+    const fresh = [...there].filter(([key]) => !root.held.has(key));
+    for (let i = 0; i < fresh.length; i += READ_AT_ONCE) {
+      const batch = fresh.slice(i, i + READ_AT_ONCE);
+      const read = await Promise.all(batch.map(([key, uri]) => this.#read(root, key, uri)));
+      changed = read.includes(true) || changed;
+    }
+    return changed;
+  }
+
+  /** Reads a note from the disk, unless an editor has it open. True where it is another one now. */
+  async #read(root: Root, key: string, uri: string): Promise<boolean> {
+    if (this.#open.has(key)) return false;
     const text = await this.#runtime.readNote(uri, this.#log);
-    // While the disk was read, an editor may have opened it.
-    if (this.#open.has(uri)) return;
-    if (text === null) folder.remove(uri);
-    else folder.open(uri, text, flavourOf(uri));
+    // While the disk was read, an editor may have opened it, or the folder may have gone.
+    if (this.#open.has(key) || this.#rootOf(key) !== root) return false;
+    if (text === null) {
+      root.refused.add(key);
+      return this.#drop(root, key);
+    }
+    root.refused.delete(key);
+    const before = root.folder.note(root.held.get(key) ?? "");
+    if (before?.document.text() === text) return false;
+    this.#hold(root, key, uri, text, flavourOf(uri));
+    return true;
   }
 
-  #put(folder: Folder, uri: string, text: string, flavour: Flavour, version: number | null): void {
-    this.#open.set(uri, { folder, note: folder.open(uri, text, flavour), version });
+  /** Puts a note into a folder, in the place of one that was held by another spelling of its URI. */
+  #hold(root: Root, key: string, uri: string, text: string, flavour: Flavour): Note {
+    const before = root.held.get(key);
+    const same = before === uri ? root.folder.note(uri) : null;
+    if (same?.flavour === flavour && same.document.text() === text) return same;
+    if (before !== undefined && before !== uri) root.folder.remove(before);
+    root.held.set(key, uri);
+    return root.folder.open(uri, text, flavour);
   }
 
-  #leave(uri: string): void {
-    const open = this.#open.get(uri);
-    if (!this.#strays.delete(uri)) open?.folder.remove(uri);
+  #drop(root: Root, key: string): boolean {
+    const uri = root.held.get(key);
+    if (uri === undefined) return false;
+    root.held.delete(key);
+    root.folder.remove(uri);
+    return true;
+  }
+
+  /** A note that is gone, or all notes of a folder that is: clients tell of the folder alone. */
+  #dropBelow(root: Root, key: string): boolean {
+    let changed = false;
+    for (const held of [...root.held.keys()]) {
+      const gone = held === key || held.startsWith(`${key}/`);
+      if (gone && !this.#open.has(held)) changed = this.#drop(root, held) || changed;
+    }
+    return changed;
+  }
+
+  #putOpen(key: string, uri: string, text: string, flavour: Flavour, version: number): void {
+    const root = this.#home(key);
+    this.#open.set(key, { folder: root.folder, note: this.#hold(root, key, uri, text, flavour), version });
+  }
+
+  /** After folders came or went, open notes live where they belong now. */
+  #moveOpenNotes(): void {
+    for (const [key, { note, version, folder }] of [...this.#open]) {
+      const stray = this.#strays.get(key);
+      const old = [...this.#roots.values(), ...(stray ? [stray] : [])].find((one) => one.folder === folder);
+      const root = this.#rootOf(key);
+      if (root ? root === old : stray && stray === old) continue;
+      if (old) this.#drop(old, key);
+      this.#strays.delete(key);
+      this.#putOpen(key, note.uri, note.document.text(), note.flavour, version);
+    }
   }
 
   /** The folder of a note, made for it alone where none holds it. */
-  #home(uri: string): Folder {
-    const folder = this.#folderOf(uri) ?? this.#strays.get(uri);
-    if (folder) return folder;
-    const own = createFolder({ today: this.#runtime.today() });
-    this.#strays.set(uri, own);
+  #home(key: string): Root {
+    const root = this.#rootOf(key) ?? this.#strays.get(key);
+    if (root) return root;
+    const own = this.#newRoot(null);
+    this.#strays.set(key, own);
     return own;
   }
 
+  #newRoot(uri: string | null): Root {
+    const folder = createFolder({ today: this.#runtime.today() });
+    return { uri, folder, held: new Map(), refused: new Set() };
+  }
+
   /** The innermost folder that holds the note. */
-  #folderOf(uri: string): Folder | null {
+  #rootOf(key: string): Root | null {
     let best = "";
-    for (const base of this.#folders.keys())
-      if (uri.startsWith(base) && best.length < base.length) best = base;
-    return this.#folders.get(best) ?? null;
+    for (const base of this.#roots.keys()) if (key.startsWith(base) && best.length < base.length) best = base;
+    return this.#roots.get(best) ?? null;
   }
 }
 
+function baseOf(uri: string): string {
+  const key = uriKey(uri);
+  return key.endsWith("/") ? key : `${key}/`;
+}
+
+/** What is never looked into, as on the command line. */
+function isNeverEntered({ uri }: Root, key: string): boolean {
+  const inside = uri === null ? "" : key.slice(baseOf(uri).length - 1);
+  return /\/(\.git|node_modules)(\/|$)/.test(inside);
+}
+
 export function flavourOf(uri: string): Flavour {
-  return /\.(md|markdown)$/i.test(uri) ? "markdown" : "plumb";
+  return flavourOrNull(uri) ?? "plumb";
+}
+
+function flavourOrNull(uri: string): Flavour | null {
+  if (/\.(md|markdown)$/i.test(uri)) return "markdown";
+  return /\.plumb$/i.test(uri) ? "plumb" : null;
 }

@@ -1,0 +1,29 @@
+import { CodeActionKind, type ServerCapabilities, TextDocumentSyncKind } from "vscode-languageserver";
+import type { Client } from "./client.ts";
+
+/** What the server says it can do, to this client. */
+export function capabilities(client: Client): ServerCapabilities {
+  return {
+    positionEncoding: "utf-16",
+    textDocumentSync: { openClose: true, change: TextDocumentSyncKind.Incremental },
+    ...(client.pulls
+      ? {
+          diagnosticProvider: {
+            identifier: "plumbline",
+            interFileDependencies: true,
+            workspaceDiagnostics: true,
+          },
+        }
+      : {}),
+    inlayHintProvider: { resolveProvider: true },
+    hoverProvider: true,
+    completionProvider: { triggerCharacters: ["|", ";", " "] },
+    definitionProvider: true,
+    codeActionProvider: { codeActionKinds: [CodeActionKind.QuickFix] },
+    documentSymbolProvider: true,
+    foldingRangeProvider: true,
+    documentFormattingProvider: true,
+    documentRangeFormattingProvider: true,
+    workspace: { workspaceFolders: { supported: true, changeNotifications: client.changesFolders } },
+  };
+}
