@@ -117,13 +117,19 @@ function isInside(value: number, { least, most, open }: Measure): boolean {
 }
 
 function outOfRange(quantity: Quantity, rule: Measure, unit: Unit | null, what: Measured): string {
-  const written = `${quantity.value}${unit ? (unit === "deg" ? "°" : ` ${unit}`) : ""}`;
+  const written = withUnit(quantity.value, unit);
   const ends = [rule.least, rule.most].map((end) => shown(end, unit, what));
   const shownUnit = unit === null || unit === "FL" ? "" : unit === "deg" ? "°" : ` ${unit}`;
   const [least, most] = ends;
   const article = /^[aeiou]/.test(rule.noun) ? "An" : "A";
   const exclusive = leftOut[rule.open ?? "none"];
   return `${article} ${rule.noun} of ${written} is outside ${least} to ${most}${shownUnit}${exclusive}: check the number and its unit.`;
+}
+
+function withUnit(value: number, unit: Unit | null): string {
+  if (unit === null) return String(value);
+  if (unit === "FL") return `FL${String(value).padStart(3, "0")}`;
+  return unit === "deg" ? `${value}°` : `${value} ${unit}`;
 }
 
 const leftOut = {
