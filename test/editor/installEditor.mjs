@@ -1,7 +1,7 @@
 // Installs the browser-hosted editor from the npm registry into a cache folder of its own, once.
 // It is built beside and renamed into place, so that an interrupted install leaves no half an editor.
 import { execFileSync } from "node:child_process";
-import { existsSync, mkdirSync, renameSync, rmSync, symlinkSync, writeFileSync } from "node:fs";
+import { existsSync, mkdirSync, mkdtempSync, renameSync, rmSync, symlinkSync, writeFileSync } from "node:fs";
 import { homedir } from "node:os";
 import { join } from "node:path";
 
@@ -14,8 +14,10 @@ export const editorEntry = join(home, "node_modules/code-server/out/node/entry.j
 
 export function installEditor() {
   if (existsSync(editorEntry)) return;
-  const building = `${home}.${process.pid}`;
-  mkdirSync(building, { recursive: true });
+  mkdirSync(cache, { recursive: true });
+  const building = mkdtempSync(`${home}.`);
+  // An install that is interrupted takes its part with it where it can.
+  process.once("exit", () => rmSync(building, { recursive: true, force: true }));
   const npm = (folder, ...args) =>
     execFileSync("npm", [...args, "--no-audit", "--no-fund", "--loglevel=error"], {
       cwd: folder,
@@ -30,6 +32,8 @@ export function installEditor() {
   npm(workbench, "rebuild", "@vscode/spdlog", "native-watchdog", "@parcel/watcher", "--ignore-scripts=false");
   symlinkSync("node_modules", join(workbench, "node_modules.asar"));
   npm(join(workbench, "extensions"), "install", "--omit=dev", "--ignore-scripts");
+  // Another run may have been quicker; its editor is as good and in use.
+  if (existsSync(editorEntry)) return;
   rmSync(home, { recursive: true, force: true });
   renameSync(building, home);
 }

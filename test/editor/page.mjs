@@ -22,8 +22,34 @@ export function servePage(page, pictures) {
     async appears({ selector }) {
       await page.waitForSelector(selector, { state: "visible", timeout: 15_000 });
     },
+    /** Rests the pointer on the first thing a selector finds whose whole text this is. */
     async hover({ selector, text }) {
-      await page.locator(selector, { hasText: text }).first().hover({ timeout: 15_000 });
+      const whole = new RegExp(`^\\s*${text.replace(/[.*+?^${}()|[\]\\]/g, "\\$&")}\\s*$`);
+      await page.locator(selector, { hasText: whole }).first().hover({ timeout: 15_000 });
+    },
+    /** Pulls something that can be dragged, as the edge of a box, upwards. */
+    async pullUp({ selector, pixels }) {
+      const { x, y, width, height } = await page.locator(selector).first().boundingBox({ timeout: 15_000 });
+      await page.mouse.move(x + width / 2, y + height / 2);
+      await page.mouse.down();
+      await page.mouse.move(x + width / 2, y + height / 2 - pixels, { steps: 10 });
+      await page.mouse.up();
+    },
+    /** Turns the wheel over something. */
+    async scroll({ selector, notches }) {
+      await page.locator(selector).first().hover({ timeout: 15_000 });
+      for (let i = 0; i < notches; i++) await page.mouse.wheel(0, 120);
+    },
+    /** Waits for the page that the workbench opened beside this one, closes it and gives its address. */
+    async opened() {
+      const context = page.context();
+      const beside = context.pages().find((one) => one !== page);
+      const other = beside ?? (await context.waitForEvent("page", { timeout: 15_000 }));
+      await other.waitForURL(/^http/, { waitUntil: "commit" });
+      const address = other.url();
+      await other.close();
+      await page.bringToFront();
+      return address;
     },
     async away() {
       await page.mouse.move(5, 5);

@@ -12,6 +12,7 @@ import { servePage } from "./page.mjs";
 
 const LONGEST = 8 * 60_000;
 const pictures = resolve("out/pictures");
+const counts = resolve("out/editor/counts.json");
 const inReadme = ["screenshot-light", "screenshot-dark", "screenshot-contrast", "hover"];
 
 function freePort() {
@@ -24,8 +25,9 @@ function freePort() {
   });
 }
 
-async function answers(port) {
+async function answers(port, server) {
   for (let i = 0; i < 200; i++) {
+    if (server.exitCode !== null) throw new Error(`The editor's server ended with ${server.exitCode}.`);
     const ok = await fetch(`http://127.0.0.1:${port}/healthz`).then(
       (response) => response.ok,
       () => false,
@@ -34,6 +36,21 @@ async function answers(port) {
     await new Promise((done) => setTimeout(done, 300));
   }
   throw new Error("The editor's server did not start.");
+}
+
+/** Ends the server by its own id and waits for it, so that nothing writes into the folders any more. */
+async function end(server) {
+  if (server.exitCode !== null || server.signalCode !== null) return;
+  const ended = new Promise((done) => server.once("exit", done));
+  server.kill();
+  const stubborn = setTimeout(() => server.kill("SIGKILL"), 10_000);
+  await ended;
+  clearTimeout(stubborn);
+}
+
+/** Without what an editor leaves to the programs of its terminal: the server would open the folder there. */
+function ownEnvironment() {
+  return Object.fromEntries(Object.entries(process.env).filter(([name]) => !name.startsWith("VSCODE_")));
 }
 
 /** A copy of the demo and fresh settings, so that a run changes nothing and finds nothing of the last one. */
@@ -55,8 +72,9 @@ function freshFolders() {
 }
 
 installEditor();
+// What an earlier run left must not pass for this one's.
+for (const old of [pictures, counts]) rmSync(old, { recursive: true, force: true });
 mkdirSync(pictures, { recursive: true });
-mkdirSync("out/editor", { recursive: true });
 await build({
   entryPoints: ["test/editor/suite/index.ts"],
   outfile: "out/editor/suite.cjs",
@@ -93,13 +111,20 @@ const server = spawn(
   ],
   {
     stdio: "ignore",
-    env: { ...process.env, PLUMBLINE_BRIDGE: String(bridge.port), PLUMBLINE_REPOSITORY: resolve(".") },
+    env: { ...ownEnvironment(), PLUMBLINE_BRIDGE: String(bridge.port), PLUMBLINE_REPOSITORY: resolve(".") },
   },
 );
 
+for (const signal of ["SIGINT", "SIGTERM"]) {
+  process.once(signal, () => {
+    server.kill();
+    process.exit(1);
+  });
+}
+
 let code = 1;
 try {
-  await answers(port);
+  await answers(port, server);
   const ended = new Promise((done) => {
     page.exposeFunction("codeAutomationExit", (value) => done(value));
   });
@@ -107,6 +132,8 @@ try {
   await page.exposeFunction("codeAutomationLog", (_type, args) => {
     const text = args.join(" ");
     if (/^( {2}ok| {2}FAIL|editor:)/.test(text)) console.log(text);
+    const [, passed, failed] = /^editor: (\d+) passed, (\d+) failed/.exec(text) ?? [];
+    if (failed !== undefined) writeFileSync(counts, JSON.stringify({ passed: +passed, failed: +failed }));
   });
   const base = `vscode-remote://127.0.0.1:${port}`;
   const payload = JSON.stringify([
@@ -126,8 +153,8 @@ try {
 } finally {
   bridge.close();
   await browser.close();
-  server.kill();
-  rmSync(root, { recursive: true, force: true });
+  await end(server);
+  rmSync(root, { recursive: true, force: true, maxRetries: 5, retryDelay: 200 });
 }
 if (code === 0 && process.argv.includes("--readme")) {
   for (const name of inReadme) cpSync(join(pictures, `${name}.png`), `client/media/${name}.png`);

@@ -20,5 +20,8 @@ export const page = {
   texts: (selector: string) => ask<string[]>("texts", { selector }),
   appears: (selector: string) => ask<null>("appears", { selector }),
   hover: (selector: string, text: string) => ask<null>("hover", { selector, text }),
+  pullUp: (selector: string, pixels: number) => ask<null>("pullUp", { selector, pixels }),
+  scroll: (selector: string, notches: number) => ask<null>("scroll", { selector, notches }),
+  opened: () => ask<string>("opened"),
   away: () => ask<null>("away"),
 };

@@ -1,6 +1,9 @@
 import assert from "node:assert/strict";
 import * as vscode from "vscode";
 
+/** A sentence that the editor must make true, and what tries it. */
+export type Test = readonly [name: string, run: () => Promise<void>];
+
 export const pause = (milliseconds: number) => new Promise<void>((done) => setTimeout(done, milliseconds));
 
 /** Tries until it does not throw any more; what it threw last is the failure. */
@@ -33,26 +36,40 @@ export async function edited(document: vscode.TextDocument, change: () => Promis
   try {
     await change();
   } finally {
-    const edit = new vscode.WorkspaceEdit();
-    edit.replace(document.uri, new vscode.Range(0, 0, document.lineCount, 0), before);
-    await vscode.workspace.applyEdit(edit);
+    // An edit is refused where the text has moved on meanwhile.
+    await eventually("the text as it was", async () => {
+      const edit = new vscode.WorkspaceEdit();
+      edit.replace(document.uri, new vscode.Range(0, 0, document.lineCount, 0), before);
+      await vscode.workspace.applyEdit(edit);
+      assert.equal(document.getText(), before);
+    });
   }
 }
 
 export async function hintLabels(document: vscode.TextDocument): Promise<string[]> {
+  return (await hints(document)).map(({ text }) => text);
+}
+
+/** The hints of a whole note, with the lines they stand in. */
+export async function hints(document: vscode.TextDocument): Promise<{ line: number; text: string }[]> {
   const whole = new vscode.Range(0, 0, document.lineCount, 0);
-  const hints = await vscode.commands.executeCommand<vscode.InlayHint[]>(
+  const found = await vscode.commands.executeCommand<vscode.InlayHint[]>(
     "vscode.executeInlayHintProvider",
     document.uri,
     whole,
   );
-  return hints.map(({ label }) =>
-    typeof label === "string" ? label : label.map((part) => part.value).join(""),
-  );
+  return found.map(({ label, position }) => ({
+    line: position.line,
+    text: typeof label === "string" ? label : label.map((part) => part.value).join(""),
+  }));
 }
 
 export function problems(uri: vscode.Uri): vscode.Diagnostic[] {
   return vscode.languages.getDiagnostics(uri).filter((one) => one.source === "plumbline");
+}
+
+export function codeOf({ code }: vscode.Diagnostic): string {
+  return String(typeof code === "object" ? code.value : code);
 }
 
 export function startOf(document: vscode.TextDocument, text: string): vscode.Position {
