@@ -254,3 +254,32 @@ describe("the state that carries on", () => {
     ).toEqual([6]);
   });
 });
+
+describe("what cannot be checked does not pass for checked", () => {
+  it("a row in error is an error where the limits are used, and listed at every point", () => {
+    const result = file(
+      ", from base\n| must any bank 2O",
+      "| phase cruise; bank 35",
+      "\n| limits base\n| must any bank 40\n",
+    );
+    expect(result.findings).toContainEqual(
+      expect.objectContaining({ code: "broken-definition", severity: "error" }),
+    );
+    expect(result.points[0]?.not_evaluated).toContainEqual({
+      rule: "must any bank 2O",
+      why: "The row is in error, so it is not held.",
+    });
+  });
+
+  it("a tolerance that leaves what a value can be gives no figures", () => {
+    const result = file(
+      "\n| must any bank 60",
+      "| phase cruise; weight 55 t +- 70 t\n\n| phase climb; weight 55 t; speed 1.2 vs1g; bank 2 +- 5",
+    );
+    expect(result.points[0]).toMatchObject({ mass_kg: null, withheld: { code: "out-of-range" } });
+    expect(result.points[1]?.stall_kt).toBeGreaterThan(100);
+    expect(told("\n| must any bank 60", "| phase cruise; speed vref - 290 kt")).toContain(
+      "out-of-range error",
+    );
+  });
+});

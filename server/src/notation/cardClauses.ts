@@ -269,7 +269,15 @@ function configTable(kind: "lift-mach" | "buffet" | "ias"): ClauseReader {
     }
     let cg: Quantity | null = null;
     cursor.skip();
-    if (cursor.takeWord("cg")) {
+    const at = cursor.takeWord("cg");
+    if (at) {
+      if (kind !== "buffet") {
+        cursor.report(
+          "unexpected-text",
+          at,
+          "Only a buffet table states its cg; the cg's effect on the stall is `cg-effect`: leave it out here.",
+        );
+      }
       cg = readQuantity(cursor, "per cent");
       if (!cg) return null;
       takeComma(cursor);

@@ -139,12 +139,20 @@ function misplacedMessage(kind: BlockKind, keyword: Keyword, clause: Clause): st
     if (keyword === "config")
       return "A stall speed, a load range or a flap speed belongs to the card's `config`; here only the name stands.";
   }
+  if (kind === "card" && keyword === "weight" && isMass(clause)) {
+    return "In a card `mass` states a range: write `to` and the greatest mass, as in `mass 33 t to 59 t`.";
+  }
   if (kind === "card" && keyword === "phase")
     return "A card has no phase: leave a blank line before it, and it begins a point.";
   const home = blocksOf(clause).map((one) => blockNames[one]);
   const places =
     home.length < 2 ? (home[0] ?? "") : `${home.slice(0, -1).join(", ")} or ${home[home.length - 1]}`;
   return `\`${keyword}\` belongs to ${places}, and this block is ${blockNames[kind]}: move it there, or leave a blank line before it.`;
+}
+
+/** A weight that was written `mass`. */
+function isMass({ keywordSpan }: Clause): boolean {
+  return keywordSpan.end - keywordSpan.start === "mass".length;
 }
 
 function misplacedFixes(kind: BlockKind, line: number, clause: Clause): Fix[] {

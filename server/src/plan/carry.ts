@@ -9,7 +9,7 @@ import type { Finding } from "./finding.ts";
 import { formatMass } from "./format.ts";
 import { flyCard, underLimits, useContaminant } from "./names.ts";
 import type { Origin } from "./origin.ts";
-import { type Measured, measure, measureTolerance } from "./quantity.ts";
+import { canBe, type Measured, measure, measureTolerance } from "./quantity.ts";
 import { findingAt, originOf, type Site } from "./site.ts";
 import { pressureAltitudeOf } from "./situation.ts";
 import { exactly, type Spread } from "./spread.ts";
@@ -326,5 +326,16 @@ export function spreadIn(
   if (nominal === null) return null;
   if (!value.tolerance) return exactly(nominal);
   const half = measureTolerance(value.tolerance, value.quantity.unit, what);
-  return { nominal, low: nominal - half, high: nominal + half };
+  const spread = { nominal, low: nominal - half, high: nominal + half };
+  // A bank about wings level banks either way; nothing else may leave its range.
+  if ((what === "bank" || canBe(spread.low, what)) && canBe(spread.high, what)) return spread;
+  applying.findings.push(
+    findingAt(
+      "out-of-range",
+      placed,
+      "With its tolerance this value leaves what it can be: check the figure and the tolerance.",
+      { span: value.span },
+    ),
+  );
+  return null;
 }

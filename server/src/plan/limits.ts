@@ -45,5 +45,7 @@ export interface Limits {
   /** Why no row of this set is held. */
   readonly withheld: { readonly origin: Origin; readonly code: string } | null;
   readonly rows: readonly Row[];
+  /** Rows in error, as they are written: they are not held, and a point says so. */
+  readonly lost: readonly string[];
   readonly findings: readonly Finding[];
 }

@@ -21,6 +21,7 @@ export interface LimitsDraft {
   readonly from: { readonly name: string; readonly placed: PlacedClause; readonly origin: Origin } | null;
   readonly withheld: Limits["withheld"];
   readonly rows: readonly Row[];
+  readonly lost: readonly string[];
   readonly findings: readonly Finding[];
 }
 
@@ -35,12 +36,15 @@ export function lowerLimits(block: Block, uri: string): LimitsDraft {
   const body = head.clause.body?.kind === "limits" ? head.clause.body : null;
   const origin: Origin = { ...originOf(site, head), span: body?.name.span ?? head.clause.span };
   const name = body?.name.text ?? "";
-  const rows = block.clauses.flatMap((placed) => {
-    const row = placed.clause.body;
-    if (!placed.counts || row?.kind !== "row") return [];
-    const lowered = lowerRow(site, placed, row, name, findings);
-    return lowered ? [lowered] : [];
-  });
+  const rows: Row[] = [];
+  const lost: string[] = [];
+  for (const placed of block.clauses) {
+    const { keyword, body: row } = placed.clause;
+    if (keyword !== "must" && keyword !== "should") continue;
+    const lowered = placed.counts && row?.kind === "row" ? lowerRow(site, placed, row, name, findings) : null;
+    if (lowered) rows.push(lowered);
+    else lost.push(quoted(block, placed).text);
+  }
   if (name.toLowerCase() === BUILT_IN_NAME && uri !== BUILT_IN_URI) {
     findings.push(
       findingAt(
@@ -67,6 +71,7 @@ export function lowerLimits(block: Block, uri: string): LimitsDraft {
         ? null
         : { origin, code: codeAtClause(block, findings, originOf(site, head)) },
     rows,
+    lost,
     findings,
   };
 }
@@ -156,17 +161,24 @@ export function resolveLimits(draft: LimitsDraft, drafts: readonly LimitsDraft[]
   const { name, title, origin, block, source } = draft;
   const base = { name, title, origin, block, source, builtIn: origin.uri === BUILT_IN_URI };
   if (!draft.from || draft.withheld)
-    return { ...base, withheld: draft.withheld, rows: draft.rows, findings: draft.findings };
+    return {
+      ...base,
+      withheld: draft.withheld,
+      rows: draft.rows,
+      lost: draft.lost,
+      findings: draft.findings,
+    };
   const taken = takenFrom(draft, drafts);
   if ("finding" in taken) {
     const withheld = { origin: draft.from.origin, code: taken.finding.code };
-    return { ...base, withheld, rows: [], findings: [...draft.findings, taken.finding] };
+    return { ...base, withheld, rows: [], lost: [], findings: [...draft.findings, taken.finding] };
   }
   const own = new Set(draft.rows.map(rowKey));
   return {
     ...base,
     withheld: null,
     rows: [...taken.rows.filter((row) => !own.has(rowKey(row))), ...draft.rows],
+    lost: [...taken.lost, ...draft.lost],
     findings: draft.findings,
   };
 }
@@ -174,7 +186,7 @@ export function resolveLimits(draft: LimitsDraft, drafts: readonly LimitsDraft[]
 function takenFrom(
   draft: LimitsDraft,
   drafts: readonly LimitsDraft[],
-): { rows: readonly Row[] } | { finding: Finding } {
+): Pick<Limits, "rows" | "lost"> | { finding: Finding } {
   const from = draft.from as NonNullable<LimitsDraft["from"]>;
   const tell = (
     code: "unknown-limits" | "duplicate-name" | "broken-definition",
@@ -224,7 +236,7 @@ function takenFrom(
       "broken-definition",
       `${from.name} has an error, so its rows cannot be taken and none of these is held: mend it first.`,
     );
-  return { rows: limits.rows };
+  return limits;
 }
 
 function namedBy(name: string, drafts: readonly LimitsDraft[]): readonly LimitsDraft[] {

@@ -115,6 +115,8 @@ function brokenDefinition(
       : withheld
         ? "no figure is computed from it"
         : "nothing is computed from what is in error";
+  // What is then not computed or not held at all must not pass for checked.
+  const grave = withheld || ("lost" in definition && definition.lost.length > 0);
   const related: Related[] = first
     ? [{ origin: { ...origin, line: first.line, span: first.span }, message: first.message }]
     : [{ origin, message: `${name.text} is defined here.` }];
@@ -122,7 +124,7 @@ function brokenDefinition(
     "broken-definition",
     placed,
     `The ${what} ${name.text} ${what === "card" ? "has" : "have"} an error on line ${line}, and ${cost}: mend it there.`,
-    { span: name.span, related },
+    { span: name.span, related, ...(grave ? { severity: "error" } : {}) },
   );
 }
 

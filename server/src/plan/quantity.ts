@@ -102,6 +102,11 @@ export function measure(quantity: Quantity, what: Measured): Measurement {
   return { value, problem: isInside(value, rule) ? null : outOfRange(quantity, rule, unit, what) };
 }
 
+/** True where an SI value is one that the quantity can have: the ends of a tolerance are held to it too. */
+export function canBe(value: number, what: Measured): boolean {
+  return isInside(value, measures[what]);
+}
+
 function convert(value: number, unit: Unit | null, what: Measured): number {
   if (unit === null) return value;
   if (what === "oat") return unit === "C" ? celsiusToKelvin(value) : value;

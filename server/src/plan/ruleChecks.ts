@@ -42,7 +42,7 @@ export function checkRules(checking: Checking): RuleOutcome {
   const basis = ready.card.basis?.value;
   const situation = { corners, vsFactor: basis?.kind === "vs" ? basis.factor : null };
   const rows: HeldRow[] = [];
-  const notEvaluated: { rule: string; why: string }[] = [];
+  const notEvaluated = limits.lost.map((rule) => ({ rule, why: "The row is in error, so it is not held." }));
   for (const group of selected.groups) {
     if (notApplicable(group.subject, checking)) continue;
     const held = strictest(group.rows.map((row) => holdRow(row, situation)));

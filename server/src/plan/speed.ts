@@ -8,7 +8,7 @@ import { measured, spreadIn } from "./carry.ts";
 import type { Read } from "./clauses.ts";
 import type { Airframe, SpeedInput } from "./corner.ts";
 import type { Finding } from "./finding.ts";
-import { measureTolerance } from "./quantity.ts";
+import { canBe, measureTolerance } from "./quantity.ts";
 import { manoeuvringCas, type ReferenceName, referenceConfiguration, referenceSpeed } from "./reference.ts";
 import { findingAt } from "./site.ts";
 import type { Air } from "./situation.ts";
@@ -82,8 +82,18 @@ function offsetSpeed(
     cas += speed.offset.value < 0 ? -added : added;
     unit = speed.offset.unit;
   }
-  if (!speed.tolerance) return { kind: "cas", value: exactly(cas) };
-  const half = measureTolerance(speed.tolerance, unit, "speed");
+  const half = speed.tolerance ? measureTolerance(speed.tolerance, unit, "speed") : 0;
+  if (!canBe(cas - half, "speed") || !canBe(cas + half, "speed")) {
+    findings.push(
+      findingAt(
+        "out-of-range",
+        placed,
+        "With what is added or taken away this is no speed that can be flown: check the figures.",
+        { span: speed.span },
+      ),
+    );
+    return null;
+  }
   return { kind: "cas", value: { nominal: cas, low: cas - half, high: cas + half } };
 }
 

@@ -1,4 +1,4 @@
-import { entry, flown, wheatear, ruled } from "./entry.ts";
+import { entry, flown, ruled, wheatear } from "./entry.ts";
 
 /** Findings about cards, limits, names and values. */
 export const definitionFindings = {
