@@ -47,13 +47,27 @@ export function argumentCompletions(place: CompletionPlace): readonly Completion
     case "basis":
       return done.length === 0 ? words(place, ["vsr", "vs1g", "vs"]) : [];
     case "contamination":
-      return done.length === 0 ? contaminants(place) : unitsAfterNumber(place, "per cent");
+      return done.length === 0
+        ? contaminants(place)
+        : [...unitsAfterNumber(place, "per cent"), ...tolerance(place)];
     case "speed":
       return speedCompletions(place, done);
     case "bank":
       return done.length === 0 && place.word === ""
         ? words(place, ["rate-one"])
-        : [...unitsAfterNumber(place, "angle"), ...words(place, ["left", "right"])];
+        : [
+            ...unitsAfterNumber(place, "angle"),
+            ...tolerance(place, "optional"),
+            ...words(place, ["left", "right"]),
+          ];
+    case "burn":
+      return last === "for"
+        ? []
+        : [
+            ...unitsAfterNumber(place, done.includes("for") ? "time" : "mass"),
+            ...(done.includes("for") ? [] : unitsAfterNumber(place, "flow")),
+            ...(isFlow(last) ? words(place, ["for"]) : tolerance(place)),
+          ];
     case "claim":
       return done.length === 0 ? claims(place) : [];
     case "expect":
@@ -68,7 +82,11 @@ export function argumentCompletions(place: CompletionPlace): readonly Completion
       return rowCompletions(place, done);
     default: {
       const kind = quantityKinds[keyword];
-      return kind ? unitsAfterNumber(place, kind) : [];
+      if (!kind) return [];
+      return [
+        ...unitsAfterNumber(place, kind),
+        ...(tolerated.has(keyword) ? tolerance(place, unitRule(kind).optional ? "optional" : "due") : []),
+      ];
     }
   }
 }
@@ -76,7 +94,6 @@ export function argumentCompletions(place: CompletionPlace): readonly Completion
 const quantityKinds: Readonly<Record<string, QuantityKind>> = {
   weight: "mass",
   mass: "mass",
-  burn: "mass",
   reference: "mass",
   altitude: "altitude",
   ceiling: "altitude",
@@ -85,6 +102,7 @@ const quantityKinds: Readonly<Record<string, QuantityKind>> = {
   isa: "deviation",
   path: "slope",
   cg: "per cent",
+  load: "number",
   power: "per cent",
   gust: "gust",
   shear: "speed",
@@ -95,6 +113,20 @@ const quantityKinds: Readonly<Record<string, QuantityKind>> = {
   vno: "speed",
   wing: "area",
 };
+
+/** What a note knows only so far. A card's figures and the qnh are stated as they are. */
+const tolerated: ReadonlySet<string> = new Set(["weight", "altitude", "isa", "oat", "path", "load", "cg"]);
+
+function isFlow(word: string): boolean {
+  return (unitRule("flow").units as readonly string[]).includes(word);
+}
+
+/** `+-` behind a quantity that is complete, once. */
+function tolerance(place: CompletionPlace, unit: "due" | "optional" = "due"): readonly Completion[] {
+  const complete = unit === "due" ? /\d\s*(?!FL)[\p{L}°%/]+\s+$|FL\d{3}\s+$/iu : /\d\s*[\p{L}°%/]*\s+$/iu;
+  if (!complete.test(place.before) || /\+-|±|\+\/-/.test(place.before)) return [];
+  return [{ ...item(place, "+-", "value", "a tolerance", 50), insertText: "+- " }];
+}
 
 function item(
   place: CompletionPlace,
@@ -163,7 +195,8 @@ function configAttributes(place: CompletionPlace, done: readonly string[]): read
 
 /** Units once a number stands there, then `+-` and a sweep. */
 function unitsAfterNumber(place: CompletionPlace, kind: QuantityKind): readonly Completion[] {
-  if (!/\d\s*[\p{L}°%/]*$/u.test(place.before)) return [];
+  // A flight level has its unit before it.
+  if (!/\d\s*[\p{L}°%/]*$/u.test(place.before) || /FL\d+\s*$/i.test(place.before)) return [];
   const span = unitSpan(place);
   const units = unitRule(kind).units.filter((unit) => unit !== "FL");
   return units.map((unit, i): Completion => ({ ...item(place, unit, "unit", "unit", i), span }));
@@ -197,7 +230,7 @@ function speedCompletions(place: CompletionPlace, done: readonly string[]): read
   const kinds = /(kt|kts|km\/h|m\/s|mph)$/.test(done[done.length - 1] ?? "")
     ? words(place, ["cas", "tas", "eas", "ias"])
     : [];
-  return [...units, ...kinds, ...(number ? words(place, speedNames) : [])];
+  return [...units, ...kinds, ...(number ? words(place, speedNames) : []), ...tolerance(place)];
 }
 
 function resultLabel(name: (typeof speedNames)[number]): string {

@@ -6,6 +6,7 @@ import type { BlockResult, Note } from "../plan/note.ts";
 import { argumentCompletions } from "./argumentCompletions.ts";
 import { blockAt } from "./blocksBetween.ts";
 import { keywordText } from "./hover.ts";
+import { lastUnit } from "./lastUnit.ts";
 
 export interface Completion {
   readonly label: string;
@@ -68,7 +69,7 @@ function inRemarkOrTitle(text: string, character: number): boolean {
 
 /** What a point still lacks comes first, and never a clause that is there already. */
 function keywordCompletions(place: CompletionPlace): readonly Completion[] {
-  const { result, span } = place;
+  const { note, result, line, span } = place;
   const kind = blockKindAt(place);
   const there = new Set<Keyword>();
   for (const { clause } of result?.block.clauses ?? []) {
@@ -81,31 +82,35 @@ function keywordCompletions(place: CompletionPlace): readonly Completion[] {
     (entry) => isOffered(entry, kind, start) && (!there.has(entry.keyword) || lists(entry.keyword)),
   );
   return offered.map((entry): Completion => {
-    const rank =
-      start && (entry.keyword === "phase" || entry.keyword === "fly")
-        ? 0
-        : lacking.has(entry.keyword)
-          ? 1
-          : 2;
+    const insertText = snippetOf(entry, note, line);
     return {
       label: entry.keyword,
       kind: "keyword",
       detail: entry.pattern,
       documentation: keywordText(entry.keyword),
-      insertText: snippetOf(entry),
-      snippet: entry.pattern !== "",
-      rank,
+      insertText,
+      snippet: insertText.includes("$"),
+      rank: rankOf(entry.keyword, start, lacking),
       span,
     };
   });
 }
 
-function snippetOf(entry: KeywordEntry): string {
+/** At a block's start a point, then a card and limits; inside one what it still lacks. */
+function rankOf(keyword: Keyword, start: boolean, lacking: ReadonlySet<Keyword>): number {
+  if (start && (keyword === "phase" || keyword === "fly")) return 0;
+  if (lacking.has(keyword) || (start && (keyword === "aircraft" || keyword === "limits"))) return 1;
+  return 2;
+}
+
+function snippetOf(entry: KeywordEntry, note: Note, line: number): string {
   if (entry.keyword === "aircraft") {
     return 'aircraft ${1:name}\n| source "${2:flight manual}" issue ${3:1}\n| basis ${4|vsr,vs1g,vs|}; reference ${5}\n| config ${6:clean} stall $0';
   }
   if (entry.keyword === "limits") return "limits ${1:name}, from common-practice\n| must any bank $0";
-  return entry.snippet;
+  const unit = lastUnit(note, line, entry.keyword);
+  if (unit === null) return entry.snippet;
+  return unit === "FL" ? `${entry.keyword} FL$0` : `${entry.keyword} $1 ${unit}$0`;
 }
 
 /** Clauses that may stand more than once. */

@@ -1,38 +1,37 @@
 import type { PlacedClause } from "../notation/block.ts";
-import type { ResultName } from "../notation/vocabulary.ts";
+import type { Keyword, ResultName } from "../notation/vocabulary.ts";
 import { remarks } from "../plan/caution.ts";
 import {
   formatAltitude,
   formatAngle,
   formatBank,
-  formatDeviation,
+  formatClaim,
   formatDistinct,
   formatFactor,
   formatFlightLevel,
   formatLoad,
-  formatMach,
   formatMass,
   formatPercent,
-  formatQnh,
   formatResult,
   formatResultValue,
   formatSpeed,
 } from "../plan/format.ts";
 import type { Limits } from "../plan/limits.ts";
-import { fileName } from "../plan/names.ts";
-import { lineOf, type Origin } from "../plan/origin.ts";
 import type { Conditions, HeldRow, PointResult } from "../plan/point.ts";
 import { resultEntry, resultNames } from "../plan/results.ts";
 import { atMost } from "../plan/rules.ts";
+import { inputsText, speedText } from "./inputsText.ts";
+import { place } from "./place.ts";
+import { plainMarkdown } from "./plainMarkdown.ts";
 
 /** The result of a point, then how it came about with this note's values, as Markdown. */
 export function derivation(point: PointResult, placed: PlacedClause, uri: string): string {
   const { conditions } = point;
   if (!conditions) return withheldText(point, uri);
   return [
-    headline(point, placed),
+    headline(point, conditions, placed),
     resultsTable(point),
-    formulas(point, conditions),
+    formulas(point, conditions, placed),
     inputsText(point, conditions, uri),
     rulesText(point, uri),
     absentText(point),
@@ -48,13 +47,8 @@ function withheldText(point: PointResult, uri: string): string {
   return `No figures: ${place(withheld.origin, uri)} has to be mended first (\`${withheld.code}\`).`;
 }
 
-function place(origin: Origin, uri: string): string {
-  const line = `line ${lineOf(origin) + 1}`;
-  return origin.uri === uri ? line : `${fileName(origin.uri)}, ${line}`;
-}
-
 /** What the clause under the cursor is about comes first. */
-function headline(point: PointResult, { clause }: PlacedClause): string {
+function headline(point: PointResult, conditions: Conditions, placed: PlacedClause): string {
   const show = (names: readonly ResultName[]) =>
     names
       .flatMap((name) => {
@@ -62,16 +56,41 @@ function headline(point: PointResult, { clause }: PlacedClause): string {
         return spread ? [`${name} ${formatResult(name, spread, { spread: true })}`] : [];
       })
       .join(", ");
-  switch (clause.keyword) {
+  const { keyword } = placed.clause;
+  switch (keyword) {
     case "bank":
     case "load":
+    case "path":
       return `**${show(["warning-bank", "stall-bank", "load", "radius", "rate"])}**`;
     case "weight":
     case "burn":
       return `**${show(["vs1g", "stall"])}**`;
+    case "speed":
+      return `**${speedText(conditions)}, ${show(["margin", "ratio"])}**`;
+    case "altitude":
+      return `**${levelText(conditions)}**`;
+    case "claim":
+      return `**${claimText(point, placed)}**`;
     default:
       return `**${show(["margin", "ratio", "stall", "warning"])}**`;
   }
+}
+
+/** The pressure altitude that the figures hold for. */
+function levelText({ pressureAltitude }: Conditions): string {
+  const level = formatFlightLevel(pressureAltitude.nominal);
+  return level.startsWith("FL")
+    ? `pressure altitude ${formatAltitude(pressureAltitude.nominal)}, ${level}`
+    : level;
+}
+
+/** The figure as the finding of a stale claim says it. */
+function claimText({ claims, results }: PointResult, placed: PlacedClause): string {
+  const { body } = placed.clause;
+  const claim = claims.find((one) => one.clause === placed);
+  const spread = claim && results?.[claim.name];
+  if (!spread || body?.kind !== "claim") return "This claim cannot be checked here.";
+  return `${claim.name} ${formatClaim(claim.name, spread, body.value)} now: the claim ${claim.holds ? "holds" : "is stale"}`;
 }
 
 function resultsTable(point: PointResult): string {
@@ -95,8 +114,8 @@ function referenceNote(point: PointResult, name: ResultName): string {
   return `: in ${reference.configuration} (${reference.published ? "published" : "least value of the rule"})`;
 }
 
-/** The formulas with this note's values in them. */
-function formulas(point: PointResult, conditions: Conditions): string {
+/** The formulas with this note's values in them. They show the nominal values; what is shown elsewhere is the worst corner. */
+function formulas(point: PointResult, conditions: Conditions, { clause }: PlacedClause): string {
   const { configuration, card, results } = point;
   const reference = card?.referenceMass?.value;
   const basis = card?.basis?.value;
@@ -108,12 +127,64 @@ function formulas(point: PointResult, conditions: Conditions): string {
       ? `n = ${formatLoad(conditions.load.nominal)}, as stated`
       : `n = cos ${formatAngle(conditions.path.nominal)} / cos ${formatBank(conditions.bank.nominal)} = ${formatLoad(conditions.load.nominal)}`,
     `V_c = ${formatSpeed(configuration.stallSpeed)} (${configuration.name}, ${basis.kind}${basis.kind === "vs" ? ` / ${basis.factor}` : ""}, at ${formatMass(reference, reference)})`,
-    `stall: V² f(M) = V_c² k² (n m / m_ref) / (1 - loss), with m = ${mass}, k = ${formatFactor(conditions.cgFactor.nominal)}, loss = ${formatPercent(conditions.liftLoss.nominal)}: ${formatResultValue("stall", stall.nominal)}`,
+    `stall: V² f(M) = V_c² k² (n m / m_ref) / (1 - loss), V in eas, with m = ${mass}, k = ${formatFactor(conditions.cgFactor.nominal)}, loss = ${formatPercent(conditions.liftLoss.nominal)}: ${formatResultValue("stall", stall.nominal)}`,
   ];
+  if (isAboutTheTurn(clause.keyword)) lines.push(...turnFormulas(point, conditions));
+  else lines.push(...marginFormulas(point, conditions));
   lines.push(...loadLines(point, conditions));
   const check = weightCheck(point, conditions, reference);
   if (check) lines.push(check);
-  return lines.map((line) => `- ${line}`).join("\n");
+  return `At the nominal values:\n\n${lines.map((line) => `- ${line}`).join("\n")}`;
+}
+
+function isAboutTheTurn(keyword: Keyword | null): boolean {
+  return keyword === "bank" || keyword === "load" || keyword === "path";
+}
+
+/** Writes a result at its nominal value; null where it is not known. */
+function nominal(results: PointResult["results"]) {
+  return (name: ResultName): string | null => {
+    const spread = results?.[name];
+    return spread ? formatResultValue(name, spread.nominal) : null;
+  };
+}
+
+/** How ratio and margin, and the warning they are kept clear of, come about. */
+function marginFormulas({ card, results }: PointResult, { cas }: Conditions): readonly string[] {
+  const at = nominal(results);
+  const [vs1g, stall, warning] = [at("vs1g"), at("stall"), at("warning")];
+  const [ratio, margin] = [at("ratio"), at("margin")];
+  const flown = formatSpeed(cas.nominal);
+  const factor = card?.warning?.value;
+  return [
+    vs1g && `vs1g: the same with n = 1: ${vs1g}`,
+    warning && factor && `warning = ${formatFactor(factor)} times the stall speed with loss = 0: ${warning}`,
+    ratio && `ratio = V / vs1g = ${flown} / ${vs1g} = ${ratio}`,
+    margin && `margin = V / stall = ${flown} / ${stall} = ${margin}`,
+  ].filter((line) => typeof line === "string");
+}
+
+/** How the banks of stall and warning, and the turn itself, come about. */
+function turnFormulas({ card, results }: PointResult, conditions: Conditions): readonly string[] {
+  const at = nominal(results);
+  const [load, stallBank, warningBank] = [at("stall-load"), at("stall-bank"), at("warning-bank")];
+  const radius = at("radius");
+  const path = formatAngle(conditions.path.nominal);
+  const tas = formatSpeed(conditions.tas.nominal, 0, { type: "tas" });
+  const eas = formatSpeed(conditions.eas.nominal, 0, { type: "eas" });
+  const bank = formatBank(conditions.bank.nominal);
+  const factor = card?.warning?.value;
+  return [
+    load && `stall-load = (m_ref / m) (V / V_c)² f(M) (1 - loss) / k², V = ${eas}: ${load}`,
+    stallBank && `stall-bank = arccos(cos ${path} / ${load}) = ${stallBank}`,
+    warningBank &&
+      factor &&
+      `warning-bank: the same at V / ${formatFactor(factor)} with loss = 0, never beyond the stall: ${warningBank}`,
+    radius &&
+      (conditions.loadStated
+        ? `radius = TAS² cos² ${path} / (n g sin ${bank}), TAS = ${tas}: ${radius}`
+        : `radius = TAS² cos ${path} / (g tan ${bank}), TAS = ${tas}: ${radius}`),
+  ].filter((line) => typeof line === "string");
 }
 
 /** Which comes first as the load grows: the stall, buffet, or the limit load factor. */
@@ -153,43 +224,14 @@ function signedPercent(fraction: number): string {
   return `${fraction < 0 ? "" : "+"}${formatPercent(fraction)}`;
 }
 
-/** Each input, with the line it came from. */
-function inputsText(point: PointResult, conditions: Conditions, uri: string): string {
-  const reference = point.card?.referenceMass?.value ?? conditions.mass.nominal;
-  const parts: string[] = [];
-  const add = (keyword: Parameters<typeof point.inputs.get>[0], text: string) => {
-    const origin = point.inputs.get(keyword);
-    parts.push(origin ? `${text} (${place(origin, uri)})` : `${text} (assumed)`);
-  };
-  add("weight", formatMass(conditions.mass.nominal, reference));
-  add("config", point.configuration?.name ?? "");
-  add(
-    "altitude",
-    conditions.flightLevel
-      ? formatFlightLevel(conditions.altitude.nominal)
-      : `${formatAltitude(conditions.altitude.nominal)}${conditions.qnh === null ? " of pressure altitude" : ` on ${formatQnh(conditions.qnh)}`}`,
-  );
-  add("isa", `ISA ${formatDeviation(conditions.deviation.nominal)}`);
-  const speeds = [
-    formatSpeed(conditions.cas.nominal),
-    formatSpeed(conditions.tas.nominal, 0, { type: "tas" }),
-    formatMach(conditions.mach.nominal),
-    ...(conditions.ias ? [formatSpeed(conditions.ias.nominal, 0, { type: "ias" })] : []),
-  ];
-  add("speed", speeds.join(" = "));
-  add("bank", `bank ${formatBank(conditions.bank.nominal)}`);
-  add("path", `path ${formatAngle(conditions.path.nominal)}`);
-  if (conditions.cg) add("cg", `cg ${formatPercent(conditions.cg.nominal)}`);
-  const assumed = point.assumed.length > 0 ? `\n\nAssumed: ${point.assumed.join(", ")}.` : "";
-  return `From: ${parts.join("; ")}.${assumed}`;
-}
-
 function rulesText(point: PointResult, uri: string): string {
   const rows = point.rows.map(
-    (held) => `- ${heldText(held)} *(${held.row.remark ?? "no source stated"}; ${rowPlace(held, uri)})*`,
+    (held) =>
+      `- ${heldText(held)} *(${held.row.remark === null ? "no source stated" : plainMarkdown(held.row.remark)}; ${rowPlace(held, uri)})*`,
   );
-  if (rows.length === 0) return point.limits ? "" : `No rule is held: ${point.limitsName} cannot be used.`;
-  const off = point.rowsOff.map((row) => `- ${row.text}: switched off`);
+  if (!point.limits) return `No rule is held: ${point.limitsName} cannot be used.`;
+  const off = point.rowsOff.map((row) => `- ${plainMarkdown(row.text)}: switched off`);
+  if (rows.length + off.length === 0) return `No row of ${point.limitsName} applies here.`;
   return `Held against ${point.limitsName}:\n\n${[...rows, ...off].join("\n")}`;
 }
 
@@ -198,7 +240,7 @@ function rowPlace({ row }: HeldRow, uri: string): string {
 }
 
 function heldText({ row, bound, figure, holds }: HeldRow): string {
-  if (figure === null) return `${row.text}: not evaluated`;
+  if (figure === null) return `${plainMarkdown(row.text)}: not evaluated`;
   const show = (value: number, more: number) => {
     switch (row.subject) {
       case "bank":
@@ -241,5 +283,5 @@ function remarksText(point: PointResult, conditions: Conditions): string {
 
 function sourceText({ name, source }: Pick<Limits, "name" | "source">): string {
   if (!source) return `${name}: no source stated.`;
-  return `${name}: ${source.title}${source.issue ? `, issue ${source.issue}` : ""}.`;
+  return `${name}: ${plainMarkdown(source.title)}${source.issue ? `, issue ${source.issue}` : ""}.`;
 }

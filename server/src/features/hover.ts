@@ -5,11 +5,11 @@ import { type Keyword, keywordEntry } from "../notation/vocabulary.ts";
 import type { Card } from "../plan/card.ts";
 import { formatMass, formatSpeed } from "../plan/format.ts";
 import type { Limits } from "../plan/limits.ts";
-import { fileName } from "../plan/names.ts";
 import type { BlockResult, Note } from "../plan/note.ts";
-import { lineOf } from "../plan/origin.ts";
 import { blockAt } from "./blocksBetween.ts";
 import { derivation } from "./derivation.ts";
+import { place } from "./place.ts";
+import { plainMarkdown } from "./plainMarkdown.ts";
 import { targetAt } from "./target.ts";
 
 export interface Hover {
@@ -90,15 +90,18 @@ function definitionText(definition: Card | Limits, uri: string): string {
 }
 
 function where(definition: Card | Limits, uri: string): string {
-  if ("builtIn" in definition && definition.builtIn) return "built in";
-  const line = `line ${lineOf(definition.origin) + 1}`;
-  return definition.origin.uri === uri ? line : `${fileName(definition.origin.uri)}, ${line}`;
+  return "builtIn" in definition && definition.builtIn ? "built in" : place(definition.origin, uri);
+}
+
+/** The title behind a name, if there is one. */
+function titled({ name, title }: Card | Limits): string {
+  return `**${name}**${title ? ` - ${plainMarkdown(title)}` : ""}`;
 }
 
 function sourceText(definition: Card | Limits): string {
   const { source } = definition;
   if (!source) return "No source stated.";
-  return `Source: ${source.title}${source.issue ? `, issue ${source.issue}` : ""}${source.from ? `, from ${source.from}` : ""}.`;
+  return `Source: ${plainMarkdown(source.title)}${source.issue ? `, issue ${source.issue}` : ""}${source.from ? `, from ${source.from}` : ""}.`;
 }
 
 function cardText(card: Card, uri: string): string {
@@ -114,7 +117,7 @@ function cardText(card: Card, uri: string): string {
       ? `Stall speeds (${basis.kind}${basis.kind === "vs" ? ` ${basis.factor}` : ""}) at ${formatMass(reference, reference)}:`
       : "";
   return [
-    `**${card.name}**${card.title ? ` - ${card.title}` : ""} (${where(card, uri)})`,
+    `${titled(card)} (${where(card, uri)})`,
     held,
     ["| configuration | stall | marked |", "| --- | --- | --- |", ...rows].join("\n"),
     sourceText(card),
@@ -124,9 +127,11 @@ function cardText(card: Card, uri: string): string {
 }
 
 function limitsText(limits: Limits, uri: string): string {
-  const rows = limits.rows.map((row) => `- ${row.text}${row.remark ? ` *(${row.remark})*` : ""}`);
+  const rows = limits.rows.map(
+    (row) => `- ${plainMarkdown(row.text)}${row.remark ? ` *(${plainMarkdown(row.remark)})*` : ""}`,
+  );
   return [
-    `**${limits.name}**${limits.title ? ` - ${limits.title}` : ""} (${where(limits, uri)})`,
+    `${titled(limits)} (${where(limits, uri)})`,
     rows.join("\n"),
     sourceText(limits),
     limits.builtIn ? "Replace these by the operator's own." : "",

@@ -1,4 +1,5 @@
 import type { PlacedClause } from "../notation/block.ts";
+import type { Unknown, Value } from "../notation/tree.ts";
 import type { ResultName } from "../notation/vocabulary.ts";
 import type { Card } from "../plan/card.ts";
 import { formatFlightLevel, formatMass, formatResult, formatSpeed } from "../plan/format.ts";
@@ -49,10 +50,14 @@ function blockHints(note: Note, result: BlockResult, level: Exclude<HintLevel, "
     case "setting":
       return note.flavour === "markdown" ? [] : settingHints(result);
     case "card":
-      return cardHints(result.card);
+      return note.flavour === "markdown" ? onePerLine(cardHints(result.card)) : cardHints(result.card);
     case "limits":
       return [];
   }
+}
+
+function onePerLine(hints: readonly Hint[]): readonly Hint[] {
+  return hints.filter(({ line }, i) => hints.findIndex((other) => other.line === line) === i);
 }
 
 function hintAt(
@@ -112,7 +117,7 @@ function clauseParts(
   level: "full" | "brief",
 ): readonly HintPart[] | null {
   const body = placed.clause.body;
-  if (!body || !placed.counts) return placed.clause.keyword === "phase" ? phaseParts(point, level) : null;
+  if (!body || !placed.counts) return spoiltParts(point, placed, level);
   switch (body.kind) {
     case "phase":
       return phaseParts(point, level);
@@ -121,11 +126,30 @@ function clauseParts(
     case "burn-rate":
       return level === "full" ? massParts(point) : null;
     case "altitude":
-      return level === "full" ? altitudeParts(point) : null;
+      return level === "full" && !isFlightLevel(body.value) ? altitudeParts(point) : null;
     case "speed":
       return isPlainSpeed(body.speed) ? null : speedParts(point, level);
     case "bank":
       return bankParts(point, level);
+    default:
+      return null;
+  }
+}
+
+/** A clause in error, which is being typed as a rule, keeps the place of its hint. */
+function spoiltParts(
+  point: PointResult,
+  { clause }: PlacedClause,
+  level: "full" | "brief",
+): readonly HintPart[] | null {
+  switch (clause.keyword) {
+    case "phase":
+      return phaseParts(point, level);
+    case "weight":
+    case "burn":
+      return level === "full" ? waiting(point) : null;
+    case "bank":
+      return waiting(point);
     default:
       return null;
   }
@@ -156,8 +180,8 @@ function massParts(point: PointResult): readonly HintPart[] {
 
 function altitudeParts(point: PointResult): readonly HintPart[] | null {
   const { conditions } = point;
-  if (conditions?.flightLevel) return null;
-  if (!conditions) return [];
+  // Without a qnh no hint stands here, so none waits here.
+  if (!conditions) return point.inputs.has("qnh") ? waiting(point) : null;
   const differs =
     conditions.qnh !== null &&
     Math.abs(conditions.pressureAltitude.nominal - conditions.altitude.nominal) > 0.5;
@@ -169,6 +193,10 @@ function altitudeParts(point: PointResult): readonly HintPart[] | null {
       origin: point.inputs.get("qnh") ?? null,
     },
   ];
+}
+
+function isFlightLevel(value: Value | Unknown): boolean {
+  return value.kind === "scalar" && value.quantity.unit === "FL";
 }
 
 function isPlainSpeed(speed: { readonly kind: string }): boolean {

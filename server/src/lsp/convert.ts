@@ -116,7 +116,8 @@ const completionKinds: Readonly<Record<Completion["kind"], CompletionItemKind>> 
 
 export function completionOf(completion: Completion, line: number, snippets: boolean): CompletionItem {
   const { label, kind, detail, documentation, insertText, snippet, rank, span } = completion;
-  const plain = insertText.replace(/\$\{\d+[:|]([^,}|]*)[^}]*\}|\$\d+/g, "$1");
+  // Without snippets nothing stands behind the place where the author types on.
+  const plain = (insertText.split(/\$\d/)[0] ?? "").replace(/\$\{\d+[:|]([^,}|]*)[^}]*\}/g, "$1");
   return {
     label,
     kind: completionKinds[kind],

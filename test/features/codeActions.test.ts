@@ -1,0 +1,57 @@
+import { describe, expect, it } from "vitest";
+import { type CodeAction, codeActions } from "../../server/src/features/codeActions.ts";
+import { createFolder } from "../../server/src/plan/createFolder.ts";
+import { catalogue, type FindingCode } from "../../server/src/plan/findings.ts";
+import type { Note } from "../../server/src/plan/note.ts";
+
+function open(text: string): Note {
+  return createFolder({ today: "2026-12-01" }).open("file:///note.plumb", text, "plumb");
+}
+
+function count(note: Note, code: FindingCode): number {
+  return note.findings().filter(({ finding }) => finding.code === code).length;
+}
+
+/** As an editor does it: from the end, so that no edit moves another. */
+function apply(note: Note, { edits }: CodeAction): void {
+  for (const { line, start, end, newText, wholeLine } of [...edits].sort(
+    (a, b) => b.line - a.line || b.start - a.start,
+  )) {
+    const to = wholeLine ? { line: line + 1, character: 0 } : { line, character: end };
+    note.edit({ line, character: wholeLine ? 0 : start }, to, newText);
+  }
+}
+
+const offered = (Object.keys(catalogue) as FindingCode[]).flatMap((code) => {
+  const { breaks } = catalogue[code];
+  return codeActions(open(breaks), 0, Number.MAX_SAFE_INTEGER).map(
+    (action, i) => [action.finding.code, action.title, breaks, i] as const,
+  );
+});
+
+describe("quick fixes", () => {
+  it("are offered for a good part of the catalogue", () => {
+    expect(new Set(offered.map(([code]) => code)).size).toBeGreaterThan(10);
+  });
+
+  it.each(offered)("%s: %s takes the finding away", (code, _, breaks, i) => {
+    const note = open(breaks);
+    const before = count(note, code);
+    apply(note, codeActions(note, 0, Number.MAX_SAFE_INTEGER)[i] as CodeAction);
+    expect(count(note, code)).toBe(before - 1);
+  });
+
+  it.each(offered)("%s: %s writes no figure that the author did not give", (_code, _title, breaks, i) => {
+    const action = codeActions(open(breaks), 0, Number.MAX_SAFE_INTEGER)[i] as CodeAction;
+    // A comma is read as a mark between groups or as the decimal mark; both readings are the author's.
+    const readings = (text: string) =>
+      (text.match(/\d+(?:[., ]\d+)*/g) ?? []).flatMap((one) => [
+        Number(one.replace(/[., ]/g, "")),
+        Number(one.replace(/[, ]/g, ".")),
+      ]);
+    const given = new Set(readings(breaks));
+    for (const { newText } of action.edits) {
+      for (const figure of newText.match(/\d+(?:\.\d+)?/g) ?? []) expect(given).toContain(Number(figure));
+    }
+  });
+});
