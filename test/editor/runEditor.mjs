@@ -65,6 +65,8 @@ function freshFolders() {
     "workbench.secondarySideBar.defaultVisibility": "hidden",
     "chat.commandCenter.enabled": false,
     "editor.minimap.enabled": false,
+    // Else the pictures count the servers that happen to run on this machine.
+    "remote.autoForwardPorts": false,
     "files.watcherExclude": {},
   };
   writeFileSync(join(root, "user/User/settings.json"), JSON.stringify(settings));
