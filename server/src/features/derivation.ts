@@ -30,10 +30,11 @@ export function derivation(point: PointResult, placed: PlacedClause, uri: string
   if (!conditions) return withheldText(point, uri);
   return [
     headline(point, conditions, placed),
-    resultsTable(point),
+    // How it came about and what it was held against come before the long table: a hover opens small.
     formulas(point, conditions, placed),
     inputsText(point, conditions, uri),
     rulesText(point, uri),
+    resultsTable(point),
     absentText(point),
     remarksText(point, conditions),
   ]

@@ -223,13 +223,11 @@ function missingArgument(
   before: number,
 ): void {
   if (cursor.findings.length > before && cursor.faulty) return;
-  const { pattern, example } = keywordEntry(keyword);
-  const due = pattern || "nothing";
-  const end = cursor.atClauseEnd() ? span.end : span.end;
+  const { example } = keywordEntry(keyword);
   cursor.report(
     "missing-argument",
-    { start: span.start, end },
-    `After \`${keyword}\` comes ${due}: write it, as in \`${example}\`.`,
+    span,
+    `\`${keyword}\` says nothing yet: write what it states, as in \`${example}\`.`,
   );
 }
 

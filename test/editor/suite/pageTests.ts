@@ -65,7 +65,7 @@ export const pageTests: readonly Test[] = [
       await pointAt("205");
       await hoverText();
       await page.pullUp(".monaco-resizable-hover > .monaco-sash.horizontal:not(.disabled)", 270);
-      await page.scroll(".monaco-resizable-hover .monaco-hover-content", 9);
+      await page.scroll(".monaco-resizable-hover .monaco-hover-content", 1);
       await pause(600);
       await page.screenshot("hover");
       await page.press("Escape");
