@@ -339,12 +339,23 @@ function checkOpen(
   );
 }
 
+function openMark(body: ClauseBody | null): string {
+  if (isUnknown(body)) return " ?";
+  return isSweep(body) ? " … by …" : "";
+}
+
 function checkNeedsPhase(
   placed: { line: number; clause: Clause; counts: boolean }[],
   lines: readonly BarLine[],
   findings: TextFinding[],
 ): void {
-  const needing = placed.filter((one) => one.clause.keyword !== null && pointOnly.has(one.clause.keyword));
+  const needing = placed.filter(
+    ({ clause }) =>
+      (clause.keyword !== null && pointOnly.has(clause.keyword)) ||
+      // A value that is sought or varied is evaluated, which only a point is.
+      isUnknown(clause.body) ||
+      isSweep(clause.body),
+  );
   const first = needing[0];
   if (!first) return;
   for (const one of needing) one.counts = false;
@@ -354,7 +365,7 @@ function checkNeedsPhase(
     code: "point-needs-phase",
     line: first.line,
     span: first.clause.span,
-    message: `\`${first.clause.keyword}\` belongs to a point, and this block has no phase: write \`phase\` and the phase, or leave out the blank line above to join it to that block.`,
+    message: `\`${first.clause.keyword}${openMark(first.clause.body)}\` belongs to a point, and this block has no phase: write \`phase\` and the phase, or leave out the blank line above to join it to that block.`,
     fixes: [
       {
         title: "Write phase",

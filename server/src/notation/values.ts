@@ -106,7 +106,8 @@ export function readUnknown(cursor: Cursor, kind: QuantityKind): Unknown {
   cursor.skip();
   const { end, unit } = unitHere(cursor);
   let own: Unit | null = null;
-  if (unit && unitRule(kind).units.includes(unit)) {
+  // A flight level has its letters before the number, so that none can stand behind a `?`.
+  if (unit && unit !== "FL" && unitRule(kind).units.includes(unit)) {
     cursor.take(end, "unit");
     own = unit;
   }

@@ -1,5 +1,5 @@
 import type { ResultName } from "../notation/vocabulary.ts";
-import type { Evaluated } from "./describe.ts";
+import type { Evaluated } from "./evaluated.ts";
 
 /** Why a result is not known at this point, as a sentence; null where it is. */
 export function whyAbsent(evaluated: Evaluated, name: ResultName | "ias"): string | null {

@@ -22,6 +22,10 @@ export function airframeOf(card: Card, configuration: Configuration): Airframe |
     warning: card.warning?.value ?? null,
     ias: configuration.ias?.value ?? null,
     buffet: buffet && wing ? { table: buffet, wingArea: wing.area } : null,
+    wing:
+      wing && wing.chord !== null && wing.slope !== null
+        ? { area: wing.area, chord: wing.chord, slope: wing.slope }
+        : null,
   };
   frames.set(configuration, frame);
   return frame;

@@ -45,7 +45,7 @@ export interface Applying {
   readonly findings: Finding[];
 }
 
-/** Applies `fly`, `under`, `rules`, `qnh`, `weight`, `burn`, `config`, `altitude`, `isa`, `oat`, `cg`, `contamination` and `engine-out`. */
+/** Applies `fly`, `under`, `rules`, `qnh`, `weight`, `burn`, `config`, `altitude`, `isa`, `oat`, `cg`, `power`, `contamination` and `engine-out`. */
 export function applyClauses(site: Site, clauses: Clauses, definitions: Definitions, before: State): Applied {
   const phase = clauses.phase?.body.phase ?? null;
   const draft: Draft = { ...before.carried };
@@ -70,6 +70,13 @@ export function applyClauses(site: Site, clauses: Clauses, definitions: Definiti
       clauses.cg.placed,
       spreadIn(applying, clauses.cg.placed, clauses.cg.body.value, "cg"),
     );
+  if (clauses.power)
+    set(
+      applying,
+      "power",
+      clauses.power.placed,
+      spreadIn(applying, clauses.power.placed, clauses.power.body.value, "power"),
+    );
   applyContamination(applying);
   if (clauses.engineOut) set(applying, "engineOut", clauses.engineOut.placed, clauses.engineOut.body.engine);
   spoil(applying);
@@ -92,7 +99,7 @@ function set<K extends CarriedKey>(
 export function codeAt(
   findings: readonly Finding[],
   { line, clause }: PlacedClause,
-  otherwise = "not-in-this-version",
+  otherwise = "missing-value",
 ): string {
   const { start, end } = clause.span;
   const own = findings.find((one) => one.line === line && start <= one.span.start && one.span.start <= end);
@@ -277,6 +284,7 @@ const carriedBy: Readonly<Record<string, CarriedKey>> = {
   isa: "deviation",
   oat: "deviation",
   cg: "cg",
+  power: "power",
   contamination: "contamination",
   "engine-out": "engineOut",
   speed: "speed",

@@ -1,11 +1,12 @@
 import type { PlacedClause } from "../notation/block.ts";
 import type { Keyword } from "../notation/vocabulary.ts";
-import { type ClaimOutcome, checkClaims } from "./claims.ts";
 import type { Corner } from "./corner.ts";
-import type { Evaluated } from "./describe.ts";
-import type { Point } from "./evaluatePoint.ts";
+import type { Evaluated } from "./evaluated.ts";
+import type { Point } from "./evaluateStated.ts";
+import { checkDeceleration, checkHolding } from "./exerciseChecks.ts";
 import type { Finding, Related, Severity } from "./finding.ts";
 import { catalogue, type FindingCode } from "./findings.ts";
+import { checkGust } from "./gustChecks.ts";
 import { checkAirframeLimits } from "./limitChecks.ts";
 import type { Origin } from "./origin.ts";
 import { checkRules, type RuleOutcome } from "./ruleChecks.ts";
@@ -14,11 +15,6 @@ import { type Details, findingAt, oneStepLower } from "./site.ts";
 import { type CarriedKey, keywordOf } from "./state.ts";
 import { checkState } from "./stateChecks.ts";
 
-/** What the checks found beside their findings. */
-export interface Held extends RuleOutcome {
-  readonly claims: readonly ClaimOutcome[];
-}
-
 /** Everything a check reads, and where it puts what it finds. */
 export interface Checking {
   readonly point: Point;
@@ -26,15 +22,18 @@ export interface Checking {
   readonly findings: Finding[];
 }
 
-/** Holds a point against its checks, its limits and its claims. A point without figures is held against what needs none. */
-export function checkPoint(point: Point, evaluated: Evaluated | null, findings: Finding[]): Held {
+/** Holds a point against its checks and its limits. A point without figures is held against what needs none. */
+export function checkPoint(point: Point, evaluated: Evaluated | null, findings: Finding[]): RuleOutcome {
   checkState(point, findings);
-  if (!evaluated) return { rows: [], off: [], notEvaluated: [], claims: checkClaims(point, null, findings) };
+  if (!evaluated) return { rows: [], off: [], notEvaluated: [] };
   const checking: Checking = { point, evaluated, findings };
-  checkAirframeLimits(checking);
-  checkSafety(checking);
+  const skipped = checkAirframeLimits(checking);
+  skipped.push(...checkSafety(checking));
+  checkGust(checking);
+  checkDeceleration(checking);
+  checkHolding(checking);
   const rules = checkRules(checking);
-  return { ...rules, claims: checkClaims(point, evaluated, findings) };
+  return skipped.length > 0 ? { ...rules, notEvaluated: [...rules.notEvaluated, ...skipped] } : rules;
 }
 
 /** Where the quantity is stated: its clause in this block, else the phase clause. */
@@ -53,6 +52,8 @@ export function clauseFor(point: Point, keyword: Keyword): PlacedClause {
       return clauses.bank?.placed ?? phaseClause;
     case "load":
       return (clauses.load ?? clauses.bank)?.placed ?? phaseClause;
+    case "gust":
+      return clauses.gust?.placed ?? phaseClause;
     case "contamination":
       return clauses.contamination?.placed ?? phaseClause;
     default:

@@ -1,12 +1,16 @@
 import type { Block, PlacedClause } from "../notation/block.ts";
 import type { BodyOf, ClauseBody } from "../notation/tree.ts";
 import type { Keyword } from "../notation/vocabulary.ts";
+import { type OpenClause, openIn } from "./openClause.ts";
 
 /** A clause that counts, with its body at hand. */
 export interface Read<K extends ClauseBody["kind"]> {
   readonly placed: PlacedClause;
   readonly body: BodyOf<K>;
 }
+
+/** A clause that states one value and nothing else. */
+export type ReadValue = Read<"path" | "load" | "gust" | "cg" | "power" | "decel">;
 
 /** The clauses of a point or setting by what they state. */
 export interface Clauses {
@@ -23,20 +27,30 @@ export interface Clauses {
   readonly isa: Read<"isa" | "oat"> | null;
   readonly speed: Read<"speed"> | null;
   readonly bank: Read<"bank"> | null;
-  readonly path: Read<"path" | "load" | "gust" | "cg" | "power" | "decel"> | null;
-  readonly load: Read<"path" | "load" | "gust" | "cg" | "power" | "decel"> | null;
-  readonly cg: Read<"path" | "load" | "gust" | "cg" | "power" | "decel"> | null;
+  readonly path: ReadValue | null;
+  readonly load: ReadValue | null;
+  readonly gust: ReadValue | null;
+  readonly shear: Read<"shear"> | null;
+  readonly decel: ReadValue | null;
+  readonly cg: ReadValue | null;
+  readonly power: ReadValue | null;
   readonly contamination: Read<"contamination"> | null;
   readonly engineOut: Read<"engine-out"> | null;
   readonly emergency: Read<"emergency"> | null;
   readonly claims: readonly Read<"claim">[];
-  /** Clauses whose meaning this version does not compute. */
-  readonly later: readonly PlacedClause[];
+  readonly expects: readonly Read<"expect">[];
+  readonly accepts: readonly Read<"accept">[];
+  /** The clause whose value is sought (`?`), and the one whose value is varied. */
+  readonly unknown: OpenClause | null;
+  readonly sweep: OpenClause | null;
   /** Clauses that should have stated something and do not: in error, misplaced or given twice. */
   readonly spoiled: readonly PlacedClause[];
 }
 
-type Slot = Exclude<keyof Clauses, "aside" | "claims" | "later" | "spoiled">;
+export type Slot = Exclude<
+  keyof Clauses,
+  "aside" | "claims" | "expects" | "accepts" | "unknown" | "sweep" | "spoiled"
+>;
 
 const slots: Partial<Record<ClauseBody["kind"], Slot>> = {
   fly: "fly",
@@ -55,13 +69,15 @@ const slots: Partial<Record<ClauseBody["kind"], Slot>> = {
   bank: "bank",
   path: "path",
   load: "load",
+  gust: "gust",
+  shear: "shear",
+  decel: "decel",
   cg: "cg",
+  power: "power",
   contamination: "contamination",
   "engine-out": "engineOut",
   emergency: "emergency",
 };
-
-const laterKinds = new Set<ClauseBody["kind"]>(["expect", "accept", "shear", "decel", "gust", "power"]);
 
 /** Sorts a block's clauses by what they state, once for all evaluations of the block. */
 export function sortClauses(block: Block): Clauses {
@@ -81,12 +97,19 @@ export function sortClauses(block: Block): Clauses {
     bank: null,
     path: null,
     load: null,
+    gust: null,
+    shear: null,
+    decel: null,
     cg: null,
+    power: null,
     contamination: null,
     engineOut: null,
     emergency: null,
     claims: none,
-    later: none,
+    expects: none,
+    accepts: none,
+    unknown: null,
+    sweep: null,
     spoiled: none,
   };
   for (const placed of block.clauses) {
@@ -95,57 +118,22 @@ export function sortClauses(block: Block): Clauses {
       sorted.spoiled = [...sorted.spoiled, placed];
       continue;
     }
-    if (laterKinds.has(body.kind)) {
-      sorted.later = [...sorted.later, placed];
-      continue;
-    }
-    if (isOpen(body)) sorted.later = [...sorted.later, placed];
     if (body.kind === "aside") sorted.aside = true;
     else if (body.kind === "claim") sorted.claims = [...sorted.claims, { placed, body }];
+    else if (body.kind === "expect") sorted.expects = [...sorted.expects, { placed, body }];
+    else if (body.kind === "accept") sorted.accepts = [...sorted.accepts, { placed, body }];
     else {
       const slot = slots[body.kind];
-      if (slot) (sorted[slot] as Read<ClauseBody["kind"]> | null) = { placed, body };
+      if (!slot) continue;
+      (sorted[slot] as Read<ClauseBody["kind"]> | null) = { placed, body };
+      const open = openIn(placed, body, slot);
+      if (open) sorted[open.value.kind] = open;
     }
   }
   return sorted;
 }
 
 const none: readonly never[] = [];
-
-/** True for a clause that asks for a value (`?`) or gives many (a sweep). */
-export function isOpen(body: ClauseBody): boolean {
-  switch (body.kind) {
-    case "weight":
-    case "altitude":
-    case "isa":
-    case "oat":
-    case "path":
-    case "load":
-    case "cg":
-      return body.value.kind !== "scalar";
-    case "contamination":
-    case "bank":
-      return typeof body.value === "object" && "kind" in body.value && body.value.kind !== "scalar";
-    case "speed":
-      return isOpenSpeed(body.speed);
-    default:
-      return false;
-  }
-}
-
-function isOpenSpeed(speed: BodyOf<"speed">["speed"]): boolean {
-  switch (speed.kind) {
-    case "unknown":
-      return true;
-    case "mach":
-    case "airspeed":
-      return speed.value.kind !== "scalar";
-    case "multiple":
-      return speed.factor.kind === "sweep";
-    case "named":
-      return false;
-  }
-}
 
 /** The keyword a spoiled clause was, or was meant to be. */
 export function intendedKeyword(placed: PlacedClause): Keyword | null {

@@ -1,5 +1,5 @@
 import { type Corners, spreadOf } from "./corners.ts";
-import type { Point, Ready } from "./evaluatePoint.ts";
+import type { Point, Ready } from "./evaluateStated.ts";
 import type { Conditions } from "./point.ts";
 import { exactly, type Spread } from "./spread.ts";
 

@@ -9,6 +9,7 @@ import {
 } from "../flight/airspeed.ts";
 import { type Atmosphere, atmosphere } from "../flight/atmosphere.ts";
 import { buffetBank, buffetLoad } from "../flight/buffet.ts";
+import { gustLoad } from "../flight/gust.ts";
 import { calibratedFromIndicated, indicatedFromCalibrated } from "../flight/ias.ts";
 import {
   type Lift,
@@ -19,7 +20,7 @@ import {
   stallSpeed,
   warningBank,
 } from "../flight/stall.ts";
-import type { Table } from "../flight/table.ts";
+import { interpolate, type Table } from "../flight/table.ts";
 import {
   loadFactor,
   pathFromGradient,
@@ -61,7 +62,12 @@ export interface Airframe {
   readonly warning: number | null;
   readonly ias: Table | null;
   readonly buffet: { readonly table: Table; readonly wingArea: number } | null;
+  /** What a gust acts on; the lift-curve slope is one figure, or against Mach number. */
+  readonly wing: { readonly area: number; readonly chord: number; readonly slope: number | Table } | null;
 }
+
+/** A lift-curve slope that is one figure holds up to this Mach number. */
+const GREATEST_MACH_OF_ONE_SLOPE = 0.4;
 
 /** Why a corner gives no figures at all. */
 export type CornerProblem = "atmosphere" | "speed" | "ias" | "path" | "bank";
@@ -210,6 +216,20 @@ export class Corner {
     return buffetBank(this.buffetLoad, this.path) ?? Number.NaN;
   }
 
+  /** What a derived gust, m/s EAS, adds to the load factor. */
+  gustLoad(gust: number): number {
+    const { wing } = this.#frame;
+    const slope = wing && slopeAt(wing.slope, this.mach);
+    if (!wing || !slope) return Number.NaN;
+    return gustLoad(gust, this.eas, this.input.mass, { ...wing, slope }, this.air);
+  }
+
+  /** The stall in the turn with a factor on the stall speed, as power has one. */
+  stallWith(factor: number): number {
+    const cgFactor = this.input.cgFactor * factor;
+    return casOf(stallSpeed(this.#frame.lift, { ...this.#lift, cgFactor, load: this.load }, this.air));
+  }
+
   get radius(): number {
     return turnRadius(this.tas, this.bank, this.path, this.input.load) ?? Number.NaN;
   }
@@ -221,6 +241,11 @@ export class Corner {
   get rateOneBank(): number {
     return rateOneBank(this.tas);
   }
+}
+
+function slopeAt(slope: number | Table, mach: number): number | null {
+  if (typeof slope !== "number") return interpolate(slope, mach);
+  return mach <= GREATEST_MACH_OF_ONE_SLOPE ? slope : null;
 }
 
 function casOf(stall: StallSpeed): number {

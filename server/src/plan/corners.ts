@@ -3,7 +3,7 @@ import { type Atmosphere, altitudeOfPressure, atmosphere } from "../flight/atmos
 import { A0, P0 } from "../flight/constants.ts";
 import type { PathInput, SpeedInput } from "./corner.ts";
 import { type Airframe, type Corner, type CornerInput, type CornerProblem, corner } from "./corner.ts";
-import type { Spread } from "./spread.ts";
+import { exactly, type Spread } from "./spread.ts";
 
 /** The inputs of a point with their tolerances, SI. */
 export interface PointInputs {
@@ -45,6 +45,52 @@ export function evaluateCorners(frame: Airframe, inputs: PointInputs): Corners |
   for (const input of bends(frame, inputs, varied)) {
     const one = corner(frame, input);
     // A bend lies between corners that were evaluated; one that cannot be is no corner.
+    if (typeof one !== "string") all.push(one);
+  }
+  return { nominal, all };
+}
+
+/**
+ * The same corners after a sudden loss of airspeed, m/s CAS: bank, path and load stay as they were flown.
+ * Null where nothing is left of a speed.
+ */
+export function slowed(
+  frame: Airframe,
+  inputs: PointInputs,
+  corners: Corners,
+  loss: number,
+): Corners | CornerProblem {
+  const slow = (one: Corner): Corner | CornerProblem => {
+    if (one.cas <= loss) return "speed";
+    const input: CornerInput = {
+      ...one.input,
+      speed: { kind: "cas", value: one.cas - loss },
+      bank: one.bank,
+      path: { kind: "angle", value: one.path },
+    };
+    return corner(frame, input, one.air);
+  };
+  const nominal = slow(corners.nominal);
+  if (typeof nominal === "string") return nominal;
+  const all: Corner[] = [];
+  const flown = corners.all.map(slow);
+  for (const one of flown) {
+    if (typeof one === "string") return one;
+    all.push(one);
+  }
+  // The tables may bend elsewhere between the slower corners.
+  const slowest = all.map((one) => one.input);
+  const { value } = inputs.speed;
+  const spread = {
+    low: Math.min(...all.map((one) => one.cas)),
+    high: Math.max(...all.map((one) => one.cas)),
+  };
+  const speed = {
+    kind: "cas",
+    value: value.low < value.high ? { ...value, ...spread } : exactly(nominal.cas),
+  } as const;
+  for (const input of bends(frame, { ...inputs, speed }, slowest)) {
+    const one = corner(frame, input);
     if (typeof one !== "string") all.push(one);
   }
   return { nominal, all };

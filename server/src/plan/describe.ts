@@ -1,92 +1,33 @@
 import type { Keyword, ResultName } from "../notation/vocabulary.ts";
-import { whyAbsent } from "./absent.ts";
 import { absentChecks } from "./absentChecks.ts";
-import type { Held } from "./checks.ts";
-import { conditionsOf } from "./conditions.ts";
-import { type Corners, evaluateCorners, type PointInputs } from "./corners.ts";
-import type { Point, Ready } from "./evaluatePoint.ts";
-import { type References, type Results, referenceSpeeds, referencesOf, resultsOf } from "./figures.ts";
-import type { Finding } from "./finding.ts";
+import { evaluateCorners } from "./corners.ts";
+import { checksMade } from "./coverage.ts";
+import { type Evaluated, evaluated, pointInputs } from "./evaluated.ts";
+import type { Point, Ready, StatedPoint } from "./evaluateStated.ts";
+import { referenceSpeeds } from "./figures.ts";
+import { type FurtherFigures, furtherFigures } from "./further.ts";
 import type { Origin } from "./origin.ts";
-import type { Assumption, Conditions, PointResult, Withheld } from "./point.ts";
+import type { Assumption, ClaimResult, PointResult, Solved, SweepResult, Withheld } from "./point.ts";
 import { resultNames } from "./results.ts";
+import type { Reviewed } from "./review.ts";
+import type { RuleOutcome } from "./ruleChecks.ts";
 import { originOf } from "./site.ts";
 import { type CarriedKey, keywordOf } from "./state.ts";
 
-/** A point whose figures could be computed. */
-export interface Evaluated {
-  readonly ready: Ready;
-  readonly corners: Corners;
-  readonly conditions: Conditions;
-  readonly results: Results;
-  references(): References;
-  /** Why a result is not known, as a sentence; null where it is. */
-  absent(name: ResultName | "ias"): string | null;
-}
-
-export function evaluated(point: Point, ready: Ready, corners: Corners): Evaluated {
-  return new EvaluatedPoint(point, ready, corners);
-}
-
-class EvaluatedPoint implements Evaluated {
-  readonly #point: Point;
-  readonly ready: Ready;
-  readonly corners: Corners;
-  #conditions: Conditions | null = null;
-  #results: Results | null = null;
-  #references: References | null = null;
-
-  constructor(point: Point, ready: Ready, corners: Corners) {
-    this.#point = point;
-    this.ready = ready;
-    this.corners = corners;
-  }
-
-  get conditions(): Conditions {
-    this.#conditions ??= conditionsOf(this.#point, this.ready, this.corners);
-    return this.#conditions;
-  }
-
-  get results(): Results {
-    this.#results ??= resultsOf(this.corners, () => this.references());
-    return this.#results;
-  }
-
-  references(): References {
-    this.#references ??= referencesOf(this.ready);
-    return this.#references;
-  }
-
-  absent(name: ResultName | "ias"): string | null {
-    return whyAbsent(this, name);
-  }
-}
-
-/** The inputs of a point's corners. */
-export function pointInputs(ready: Ready): PointInputs {
-  return {
-    mass: ready.mass,
-    pressureAltitude: ready.air.pressureAltitude,
-    deviation: ready.air.deviation,
-    air: ready.air.nominal,
-    speed: ready.speed,
-    bank: ready.turn.bank,
-    path: ready.turn.path,
-    load: ready.turn.load,
-    liftLoss: ready.liftLoss,
-    cgFactor: ready.cgFactor,
-  };
+/** What a point asked for and got, beside its own figures. */
+export interface Open {
+  readonly solved: Solved | null;
+  readonly sweep: SweepResult | null;
 }
 
 /** Puts a point's result together. What only a hover or a table asks for is worked out when it is asked for. */
 export function describePoint(
-  point: Point,
-  ready: Ready | null,
-  held: Held,
-  withheld: Withheld | null,
-  findings: readonly Finding[],
+  stated: StatedPoint,
+  claims: readonly ClaimResult[],
+  reviewed: Reviewed,
+  open: Open,
 ): PointResult {
-  return new DescribedPoint(point, ready, held, withheld, findings);
+  return new DescribedPoint(stated, claims, reviewed, open);
 }
 
 const noReferences = { v2min: null, vfto: null, vref: null };
@@ -94,23 +35,23 @@ const noReferences = { v2min: null, vfto: null, vref: null };
 class DescribedPoint implements PointResult {
   readonly #point: Point;
   readonly #ready: Ready | null;
+  readonly #rules: RuleOutcome;
+  readonly #reviewed: Reviewed;
+  readonly #open: Open;
   #figures: Evaluated | null = null;
-  readonly #held: Held;
+  #further: FurtherFigures | null = null;
+  readonly claims: readonly ClaimResult[];
   readonly withheld: Withheld | null;
-  readonly findings: readonly Finding[];
 
-  constructor(
-    point: Point,
-    ready: Ready | null,
-    held: Held,
-    withheld: Withheld | null,
-    findings: readonly Finding[],
-  ) {
-    this.#point = point;
-    this.#ready = ready;
-    this.#held = held;
-    this.withheld = withheld;
-    this.findings = findings;
+  constructor(stated: StatedPoint, claims: readonly ClaimResult[], reviewed: Reviewed, open: Open) {
+    this.#point = stated.point;
+    // The figures themselves are let go: see below.
+    this.#ready = stated.evaluated?.ready ?? null;
+    this.#rules = stated.rules;
+    this.#reviewed = reviewed;
+    this.#open = open;
+    this.claims = claims;
+    this.withheld = stated.withheld;
   }
 
   /**
@@ -178,10 +119,10 @@ class DescribedPoint implements PointResult {
     return reasons;
   }
   get rows() {
-    return this.#held.rows;
+    return this.#rules.rows;
   }
   get rowsOff() {
-    return this.#held.off;
+    return this.#rules.off;
   }
   get bankLimit() {
     return this.#bankRow("must");
@@ -189,13 +130,35 @@ class DescribedPoint implements PointResult {
   get bankAdvice() {
     return this.#bankRow("should");
   }
-  get claims() {
-    return this.#held.claims;
-  }
   get notEvaluated() {
-    if (!this.#evaluated) return this.#held.notEvaluated;
-    const { card, configuration } = this.#evaluated.ready;
-    return [...this.#held.notEvaluated, ...absentChecks(card, configuration)];
+    if (!this.#ready) return this.#rules.notEvaluated;
+    const { card, configuration } = this.#ready;
+    return [...this.#rules.notEvaluated, ...absentChecks(card, configuration)];
+  }
+  get heldChecks() {
+    if (!this.#ready) return [];
+    const missed = new Set(this.notEvaluated.flatMap(({ rule }) => rule.split(", ")));
+    const found = new Set<string>(this.findings.map(({ code }) => code));
+    return checksMade(this.#point, this.#ready).filter((code) => !missed.has(code) && !found.has(code));
+  }
+  get further() {
+    if (this.#evaluated) this.#further ??= furtherFigures(this.#evaluated, this.rows);
+    return this.#further;
+  }
+  get findings() {
+    return this.#reviewed.findings;
+  }
+  get accepted() {
+    return this.#reviewed.accepted;
+  }
+  get expected() {
+    return this.#reviewed.expected;
+  }
+  get solved() {
+    return this.#open.solved;
+  }
+  get sweep() {
+    return this.#open.sweep;
   }
   get assumed() {
     return assumptions(this.#point, this.#evaluated);
@@ -205,7 +168,7 @@ class DescribedPoint implements PointResult {
   }
 
   #bankRow(verb: "must" | "should") {
-    return this.#held.rows.find((one) => one.row.subject === "bank" && one.row.verb === verb) ?? null;
+    return this.#rules.rows.find((one) => one.row.subject === "bank" && one.row.verb === verb) ?? null;
   }
 }
 
@@ -221,7 +184,7 @@ function assumptions(point: Point, evaluated: Evaluated | null): readonly Assump
   if (!carried.deviation) assumed.push("ISA");
   if (!carried.contamination) assumed.push("no contamination");
   if (!carried.cg && carried.aircraft?.value?.card?.cgEffect) assumed.push("worst cg");
-  assumed.push("power off");
+  if (!carried.power) assumed.push("power off");
   if (!carried.engineOut) assumed.push("all engines");
   const altitude = carried.altitude?.value;
   if (evaluated && altitude && !altitude.flightLevel && !carried.qnh) assumed.push("pressure altitude");
@@ -236,7 +199,7 @@ function inputOrigins(point: Point): ReadonlyMap<Keyword, Origin> {
     const carried = applied.carried[key];
     if (carried) origins.set(keywordOf[key], carried.origin);
   }
-  for (const keyword of ["speed", "bank", "path", "load"] as const) {
+  for (const keyword of ["speed", "bank", "path", "load", "gust", "shear", "decel"] as const) {
     const read = clauses[keyword];
     if (read) origins.set(keyword, originOf(site, read.placed));
   }

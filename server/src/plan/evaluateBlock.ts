@@ -6,19 +6,18 @@ import { evaluateSetting } from "./evaluateSetting.ts";
 import type { Finding } from "./finding.ts";
 import { catalogue } from "./findings.ts";
 import type { BlockResult } from "./note.ts";
-import { findingAt, type Site } from "./site.ts";
+import type { PlanSite } from "./site.ts";
 import type { State } from "./state.ts";
 
 /** Evaluates a point or a setting from the state that reaches it. */
 export function evaluateBlock(
-  site: Site,
+  site: PlanSite,
   clauses: Clauses,
   definitions: Definitions,
   before: State,
 ): Extract<BlockResult, { kind: "point" | "setting" }> {
   const { block } = site;
-  const written =
-    clauses.later.length > 0 ? [...textFindings(block), ...laterFindings(clauses)] : textFindings(block);
+  const written = textFindings(block);
   if (block.kind === "setting") {
     const { after, findings } = evaluateSetting(site, clauses, definitions, before);
     return {
@@ -47,14 +46,4 @@ export function textFindings(block: Block): readonly Finding[] {
     related: [],
     fixes: one.fixes,
   }));
-}
-
-function laterFindings(clauses: Clauses): readonly Finding[] {
-  return clauses.later.map((placed) =>
-    findingAt(
-      "not-in-this-version",
-      placed,
-      `This version reads \`${placed.clause.keyword}\` so, but does not compute it yet: the figures here do without it, or wait for a stated value.`,
-    ),
-  );
 }

@@ -1,7 +1,7 @@
 import type { ResultName } from "../notation/vocabulary.ts";
 import type { Corner } from "./corner.ts";
 import { type Corners, spreadOf } from "./corners.ts";
-import type { Ready } from "./evaluatePoint.ts";
+import type { Ready } from "./evaluateStated.ts";
 import type { ReferenceSpeed } from "./point.ts";
 import { manoeuvringCas, type Reference, type ReferenceName, referenceSpeed } from "./reference.ts";
 import { exactly, type Spread } from "./spread.ts";

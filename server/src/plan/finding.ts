@@ -20,4 +20,21 @@ export interface Finding {
   readonly message: string;
   readonly related: readonly Related[];
   readonly fixes: readonly Fix[];
+  /** What was held against a bound, at its worst corner, SI, where the code has a figure that can be accepted. */
+  readonly figure?: number;
+  /** The row that is broken, as it is written. */
+  readonly rule?: string;
+  /** Who took it, and why; null or absent where nobody did. */
+  readonly accepted?: Acceptance | null;
+  /** True where the note says that it is meant to come. */
+  readonly expected?: boolean;
+}
+
+/** What an `accept` clause says, with its figure as it is written. */
+export interface Acceptance {
+  readonly code: FindingCode;
+  readonly to: string | null;
+  readonly because: string;
+  readonly by: string | null;
+  readonly until: string | null;
 }

@@ -1,6 +1,8 @@
 import { fromSI, type UnitName } from "../flight/units.ts";
 import type { Quantity } from "../notation/tree.ts";
-import type { ResultName } from "../notation/vocabulary.ts";
+import type { Keyword, ResultName } from "../notation/vocabulary.ts";
+import type { FigureRule } from "./figureRules.ts";
+import type { Written } from "./openClause.ts";
 import { inShownUnit, type Rounding, results } from "./results.ts";
 import { MOST_DECIMALS, roundShown } from "./roundShown.ts";
 import type { Spread } from "./spread.ts";
@@ -98,6 +100,12 @@ export function formatAngle(rad: number, more = 0): string {
   return inUnit(rad, "deg", 1 + more, "nearest");
 }
 
+/** A claim's figure as it would be written now, without its unit. */
+export function formatClaimNumber(name: ResultName, spread: Spread, claimed: Quantity, more: number): string {
+  const decimals = claimed.decimals + more;
+  return fixed(shownClaim(name, spread, { ...claimed, decimals }), decimals);
+}
+
 /** A load factor that is flown or needed: "1.11". What is left of it is a result, and is cut. */
 export function formatLoad(load: number, more = 0): string {
   return formatResultValue("load", load, more);
@@ -145,6 +153,37 @@ export function formatPercent(fraction: number, more = 0): string {
 /** "1013 hPa". */
 export function formatQnh(pascal: number, more = 0): string {
   return inUnit(pascal, "hPa", more, "nearest");
+}
+
+/** A derived gust: "30 ft/s". */
+export function formatGust(mps: number, more = 0): string {
+  return inUnit(mps, "ft/s", more, "nearest");
+}
+
+/** A deceleration: "1.0 kt/s". */
+export function formatDecel(rate: number, more = 0): string {
+  return inUnit(rate, "kt/s", 1 + more, "nearest");
+}
+
+/** A time that is left, cut: "12 s". */
+export function formatSeconds(seconds: number, more = 0): string {
+  return withUnit(rounded(seconds, more, "down"), "s");
+}
+
+/** A figure of a finding as an `accept` writes it, rounded so that it covers the figure: "35", "1.21", "57.2 t". */
+export function writtenFigure({ what, worse, units, decimals }: FigureRule, si: number): string {
+  const unit = units[0] ?? null;
+  const shownIn = unit ?? (what === "bank" || what === "overshoot" ? "deg" : null);
+  const value = shownIn === null ? si : fromSI(si, shownIn);
+  return withUnit(rounded(value, decimals, worse === "more" ? "up" : "down"), unit);
+}
+
+/** A value as an author writes it after its keyword: "41", "56.4 t", "M 0.742", "FL310", "+8". */
+export function formatWritten({ value, unit, decimals }: Written, what: Keyword): string {
+  const figure = fixed(value, decimals);
+  if (unit === "FL") return `FL${figure.padStart(3, "0")}`;
+  if (what === "isa" && 0 < value) return `+${withUnit(figure, unit === "C" ? null : unit)}`;
+  return unit === null || unit === "deg" ? figure : `${figure} ${unit}`;
 }
 
 function resultFigure(name: ResultName, si: number, decimals: number): string {

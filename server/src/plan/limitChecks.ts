@@ -5,17 +5,42 @@ import type { Corner } from "./corner.ts";
 import type { FindingCode } from "./findings.ts";
 import { catalogue } from "./findings.ts";
 import { formatAltitude, formatDistinct, formatLoad, formatMach, formatMass, formatSpeed } from "./format.ts";
+import type { NotEvaluated } from "./point.ts";
 import { ALLOWANCE } from "./rules.ts";
 import { oneStepLower } from "./site.ts";
 
 /** The card's own limits: masses, speeds, ceiling, load factors. */
-export function checkAirframeLimits(checking: Checking): void {
+export function checkAirframeLimits(checking: Checking): NotEvaluated[] {
+  const skipped: NotEvaluated[] = [];
   checkMass(checking);
-  checkSpeeds(checking);
-  checkMinimumControl(checking);
+  checkSpeeds(checking, skipped);
+  checkMinimumControl(checking, skipped);
   checkMach(checking);
   checkCeiling(checking);
   checkLoad(checking);
+  return skipped;
+}
+
+/** A limit that only the indicator shows, where the ias table does not reach: it is said, never passed over. */
+function indicatedUnknown(
+  checking: Checking,
+  code: FindingCode,
+  name: string,
+  stated: Stated<CardSpeed>,
+  skipped: NotEvaluated[],
+): void {
+  const { ready } = checking.evaluated;
+  const why = ready.frame.ias
+    ? `The ias table of ${ready.configuration.name} does not reach ${name}, or the load here.`
+    : `${name} is an indicated speed, and the card has no ias table for ${ready.configuration.name}.`;
+  skipped.push({ rule: code, why });
+  tell(
+    checking,
+    "not-evaluated",
+    checking.point.phaseClause,
+    `The speed could not be held against ${name}. ${why}`,
+    { severity: "warning", related: [{ origin: stated.origin, message: `The card states ${name} here.` }] },
+  );
 }
 
 function above(value: number, limit: number): boolean {
@@ -43,6 +68,7 @@ function checkMass(checking: Checking): void {
       ),
       {
         severity,
+        figure: mass.high,
         related: [...related, { origin: origin.origin, message: `The masses of ${card.name}.` }],
       },
     );
@@ -68,18 +94,19 @@ function checkMass(checking: Checking): void {
         `The weight ${weight} is below the ${limit} least mass of ${card.name}: check the figure.`,
       ),
       {
+        figure: mass.low,
         related: [...related, { origin: masses.origin, message: `The masses of ${card.name}.` }],
       },
     );
   }
 }
 
-function checkSpeeds(checking: Checking): void {
+function checkSpeeds(checking: Checking, skipped: NotEvaluated[]): void {
   const { card, configuration } = checking.evaluated.ready;
-  maximumSpeed(checking, "over-vfe", "vfe", configuration.vfe, ` of ${configuration.name}`);
-  maximumSpeed(checking, "over-vmo", "vmo", card.vmo, "");
-  maximumSpeed(checking, "over-vne", "vne", card.vne, "");
-  maximumSpeed(checking, "over-vno", "vno", card.vno, "");
+  maximumSpeed(checking, skipped, "over-vfe", "vfe", configuration.vfe, ` of ${configuration.name}`);
+  maximumSpeed(checking, skipped, "over-vmo", "vmo", card.vmo, "");
+  maximumSpeed(checking, skipped, "over-vne", "vne", card.vne, "");
+  maximumSpeed(checking, skipped, "over-vno", "vno", card.vno, "");
 }
 
 /** The CAS of a limit at a corner: an indicated one goes through the configuration's table there. */
@@ -98,6 +125,7 @@ function limitCas(checking: Checking, limit: CardSpeed, corner: Corner): number 
 
 function maximumSpeed(
   checking: Checking,
+  skipped: NotEvaluated[],
   code: FindingCode,
   name: string,
   stated: Stated<CardSpeed> | null,
@@ -106,6 +134,9 @@ function maximumSpeed(
   const limit = stated?.value;
   if (!stated || !limit) return;
   const { corners } = checking.evaluated;
+  if (limit.ias && corners.all.some((one) => limitCas(checking, limit, one) === null)) {
+    indicatedUnknown(checking, code, name, stated, skipped);
+  }
   const worst = worstExcess(checking, limit, corners.all);
   if (!worst || !above(worst.corner.cas, worst.cas)) return;
   const nominalLimit = limitCas(checking, limit, corners.nominal);
@@ -122,6 +153,7 @@ function maximumSpeed(
       `The speed ${flown} exceeds the ${name}${of}, ${most}: slow down${code === "over-vfe" ? " or change the configuration" : ""}.`,
     ),
     {
+      figure: worst.corner.cas,
       related: [
         ...carriedFrom(checking.point, code === "over-vfe" ? ["speed", "config"] : ["speed"]),
         { origin: stated.origin, message: `The card states ${name} here.` },
@@ -145,7 +177,7 @@ function worstExcess(checking: Checking, limit: CardSpeed, corners: readonly Cor
 }
 
 /** An error with an engine out; a warning where an engine may fail next: takeoff, departure and missed. */
-function checkMinimumControl(checking: Checking): void {
+function checkMinimumControl(checking: Checking, skipped: NotEvaluated[]): void {
   const { point, evaluated } = checking;
   const { card } = evaluated.ready;
   const limit = card.vmca?.value;
@@ -153,7 +185,10 @@ function checkMinimumControl(checking: Checking): void {
   const engineOut = evaluated.conditions.engineOut !== null;
   const exposed = point.phase === "takeoff" || point.phase === "departure" || point.phase === "missed";
   if (!engineOut && !exposed) return;
-  for (const corner of evaluated.corners.all) {
+  if (limit.ias && evaluated.corners.all.some((one) => limitCas(checking, limit, one) === null)) {
+    indicatedUnknown(checking, "below-vmca", "vmca", card.vmca, skipped);
+  }
+  for (const corner of [...evaluated.corners.all].sort((a, b) => a.cas - b.cas)) {
     const least = limitCas(checking, limit, corner);
     if (least === null || !above(least, corner.cas)) continue;
     const [flown, minimum] = formatDistinct(corner.cas, least, flownSpeed, (mps, more) =>
@@ -166,6 +201,7 @@ function checkMinimumControl(checking: Checking): void {
       `The speed ${flown} is below the minimum control speed in the air, ${minimum}${engineOut ? ", with an engine out" : ", should an engine fail"}: fly faster.`,
       {
         severity: engineOut ? "error" : "warning",
+        figure: corner.cas,
         related: [
           ...carriedFrom(point, ["speed"]),
           { origin: card.vmca.origin, message: "The card states vmca here." },
@@ -191,6 +227,7 @@ function checkMach(checking: Checking): void {
       `The Mach number ${flown} exceeds the mmo, ${most}: slow down or fly lower.`,
     ),
     {
+      figure: mach.high,
       related: [
         ...carriedFrom(checking.point, ["speed", "altitude"]),
         { origin: card.mmo.origin, message: "The card states mmo here." },
@@ -214,6 +251,7 @@ function checkCeiling(checking: Checking): void {
       `The pressure altitude ${flown} is above the ceiling of ${card.name}, ${most}: fly lower.`,
     ),
     {
+      figure: pressureAltitude.high,
       related: [
         ...carriedFrom(checking.point, ["altitude"]),
         { origin: card.ceiling.origin, message: "The card states the ceiling here." },

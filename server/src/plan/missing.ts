@@ -1,7 +1,7 @@
 import type { Keyword } from "../notation/vocabulary.ts";
-import type { Point } from "./evaluatePoint.ts";
+import type { Point } from "./evaluateStated.ts";
 import type { Finding } from "./finding.ts";
-import type { Origin } from "./origin.ts";
+import { lineOf, type Origin } from "./origin.ts";
 import type { Withheld } from "./point.ts";
 import { findingAt, listed, originOf, stateFix } from "./site.ts";
 import { type CarriedKey, keywordOf, type State } from "./state.ts";
@@ -9,12 +9,24 @@ import { type CarriedKey, keywordOf, type State } from "./state.ts";
 /** What is never assumed, in the order a note states it. */
 const required = ["aircraft", "mass", "config", "altitude", "speed"] as const;
 
-const spoken: Readonly<Record<(typeof required)[number], string>> = {
+/** What is assumed where nobody states it, but not where a sweep stated many values of it. */
+const assumable = ["deviation", "cg", "contamination"] as const;
+
+type NeverAssumed = (typeof required)[number] | (typeof assumable)[number];
+
+function wanted(carried: Point["applied"]["carried"], clauses: Point["clauses"]): readonly NeverAssumed[] {
+  return assumable.filter((key) => carried[key]?.swept && !clauses[key === "deviation" ? "isa" : key]);
+}
+
+const spoken: Readonly<Record<NeverAssumed, string>> = {
   aircraft: "an aeroplane (`fly`)",
   mass: "a weight",
   config: "a configuration",
   altitude: "an altitude",
   speed: "a speed",
+  deviation: "a temperature (`isa`)",
+  cg: "a cg",
+  contamination: "its contamination",
 };
 
 /**
@@ -28,10 +40,12 @@ export function findMissing(
 ): { readonly withheld: Withheld | null; readonly told: State["told"] } {
   const { applied, clauses, site, phaseClause } = point;
   const told: { [K in CarriedKey]?: Origin } = {};
-  const missing: (typeof required)[number][] = [];
+  const missing: NeverAssumed[] = [];
   let withheld: Withheld | null = null;
-  for (const key of required) {
-    if (applied.carried[key] || (key === "speed" && clauses.speed)) continue;
+  const swept = wanted(applied.carried, clauses);
+  for (const key of [...required, ...swept]) {
+    const carried = applied.carried[key];
+    if ((carried && !carried.swept) || (key === "speed" && clauses.speed)) continue;
     const origin = applied.afresh ? undefined : before.told[key];
     if (origin) {
       told[key] = origin;
@@ -42,9 +56,12 @@ export function findMissing(
   const origin = originOf(site, phaseClause);
   for (const key of missing) told[key] = origin;
   const names = listed(missing.map((key) => spoken[key]));
-  const where = applied.newSector
-    ? "and a new sector begins here, so that nothing is carried into it"
-    : `and no line up to here states ${missing.length === 1 ? "it" : "them"}`;
+  const sweep = missing.map((key) => applied.carried[key]).find((one) => one?.swept);
+  const where = sweep
+    ? `for of the values that are swept on line ${lineOf(sweep.origin) + 1} none goes on: state ${missing.length === 1 ? "it" : "them"} here`
+    : applied.newSector
+      ? "and a new sector begins here, so that nothing is carried into it"
+      : `and no line up to here states ${missing.length === 1 ? "it" : "them"}`;
   findings.push(
     findingAt("missing-value", phaseClause, `This point needs ${names}, ${where}.`, {
       fixes: missing.map((key) => stateFix(site.block, keywordOf[key], `Write ${keywordOf[key]}`)),

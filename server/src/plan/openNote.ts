@@ -12,7 +12,7 @@ import { lowerCard } from "./lowerCard.ts";
 import { type LimitsDraft, lowerLimits } from "./lowerLimits.ts";
 import type { BlockResult, Note, PlacedFinding } from "./note.ts";
 import type { Anchor } from "./origin.ts";
-import type { Site } from "./site.ts";
+import type { PlanSite } from "./site.ts";
 import { type State, sameState, startState } from "./state.ts";
 
 /** What a folder gives its notes: everything that one note cannot know of itself. */
@@ -23,6 +23,8 @@ export interface Surroundings {
   resolved(draft: LimitsDraft): Limits;
   /** Findings that the other notes cause at this block: a name given twice, a definition that nobody uses. */
   findingsAt(block: Block): readonly Finding[];
+  /** The day the notes are read on. */
+  readonly today: string;
   /** Told after an edit that touched a definition or the use of one. */
   changed(): void;
 }
@@ -237,7 +239,7 @@ class OpenNote implements FolderNote {
       const limits = this.#around.resolved(draft);
       return { kind: "limits", block, limits, findings: [...textFindings(block), ...limits.findings] };
     }
-    const site: Site = { uri: this.uri, block, anchor: place };
+    const site: PlanSite = { uri: this.uri, block, anchor: place, today: this.#around.today };
     const known = place.after;
     const result = evaluateBlock(site, clauses as Clauses, definitions, before);
     // The same state as this place left before: what follows need not be evaluated again.

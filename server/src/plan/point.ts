@@ -1,9 +1,12 @@
 import type { Atmosphere } from "../flight/atmosphere.ts";
 import type { Block, PlacedClause } from "../notation/block.ts";
-import type { Keyword, Phase, ResultName } from "../notation/vocabulary.ts";
+import type { Keyword, Phase, ResultName, Unit } from "../notation/vocabulary.ts";
 import type { Card, Configuration } from "./card.ts";
-import type { Finding } from "./finding.ts";
+import type { Acceptance, Finding } from "./finding.ts";
+import type { FindingCode } from "./findings.ts";
+import type { FurtherFigures } from "./further.ts";
 import type { Limits, Row } from "./limits.ts";
+import type { OpenClause, Written } from "./openClause.ts";
 import type { Origin } from "./origin.ts";
 import type { Spread } from "./spread.ts";
 
@@ -82,9 +85,59 @@ export interface ClaimResult {
   readonly holds: boolean | null;
 }
 
+/** A rule or a check that could not be held against the point, or does not exist for its card. */
+export interface NotEvaluated {
+  readonly rule: string;
+  readonly why: string;
+}
+
 export interface Withheld {
   readonly origin: Origin;
   readonly code: string;
+}
+
+/** What an `expect` clause says, and whether it came. */
+export interface Expectation {
+  readonly code: FindingCode;
+  readonly not: boolean;
+  /** Null where the point has no figures, so that nothing can come. */
+  readonly came: boolean | null;
+}
+
+/** One end of the values that keep every rule and check. */
+export interface SolvedEnd {
+  /** In the unit of {@link Solved}, rounded to the safe side and checked there. */
+  readonly value: number;
+  /** To 1e-6. */
+  readonly exact: number;
+  /** The rule, or the code of the check, that the next step breaks. */
+  readonly boundBy: string;
+}
+
+export interface Solved {
+  readonly what: "bank" | "speed" | "weight" | "altitude";
+  readonly unit: Unit | "M";
+  /** Null where no value keeps every rule; `blockedBy` then says what blocks. */
+  readonly best: SolvedEnd | null;
+  /** The other end of the values around the best that keep every rule; worked out when asked for. */
+  other(): SolvedEnd | null;
+  readonly blockedBy: string | null;
+  /** The value as the fix writes it, and where. */
+  readonly written: Written | null;
+  readonly open: OpenClause;
+}
+
+export interface SweepRow {
+  readonly written: Written;
+  readonly point: PointResult;
+}
+
+export interface SweepResult {
+  readonly what: Keyword;
+  readonly rows: readonly SweepRow[];
+  readonly shown: number;
+  /** True where a row breaks a rule or a check: the one that is shown is the first of them. */
+  readonly breaks: boolean;
 }
 
 /** Everything a point has to say. One evaluation feeds hints, hovers, tables, sheets and findings. */
@@ -113,7 +166,17 @@ export interface PointResult {
   readonly bankLimit: HeldRow | null;
   readonly bankAdvice: HeldRow | null;
   readonly claims: readonly ClaimResult[];
-  readonly notEvaluated: readonly { readonly rule: string; readonly why: string }[];
+  readonly notEvaluated: readonly NotEvaluated[];
+  /** Codes of the checks that were made here and found nothing. */
+  readonly heldChecks: readonly FindingCode[];
+  /** Null where the point gives no figures. */
+  readonly further: FurtherFigures | null;
+  /** The value that was sought with `?`. */
+  readonly solved: Solved | null;
+  /** The rows of a sweep, in its order; the point's own figures are those of the row `shown`. */
+  readonly sweep: SweepResult | null;
+  readonly accepted: readonly Acceptance[];
+  readonly expected: readonly Expectation[];
   readonly assumed: readonly Assumption[];
   /** Where each input in force was written, this point's own clauses included. */
   readonly inputs: ReadonlyMap<Keyword, Origin>;

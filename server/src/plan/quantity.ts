@@ -29,7 +29,13 @@ export type Measured =
   | "slope"
   | "radius"
   | "factor"
-  | "liftCoefficient";
+  | "liftCoefficient"
+  | "gust"
+  | "shear"
+  | "decel"
+  | "ratio"
+  | "overshoot"
+  | "loadLeft";
 
 interface Measure {
   /** Of a number without a unit: SI as it stands, or this unit. */
@@ -85,6 +91,13 @@ const measures: Readonly<Record<Measured, Measure>> = {
   radius: span("radius", 0, 500_000, "least"),
   factor: span("factor", 0, 5, "least"),
   liftCoefficient: span("lift coefficient", 0, 6, "least"),
+  // The strongest derived gust of 14 CFR 23.333(c) is 66 ft/s.
+  gust: span("gust", 0, 100 * FOOT, "least"),
+  shear: span("loss of airspeed", 0, 150 * KNOT, "least"),
+  decel: span("deceleration", 0, 20 * KNOT, "least"),
+  ratio: span("ratio", 0, 10, "least"),
+  overshoot: span("bank", -Math.PI, Math.PI, null, "deg"),
+  loadLeft: span("load factor", -6, 12),
 };
 
 export interface Measurement {

@@ -1,15 +1,15 @@
 import { KNOT } from "../flight/units.ts";
 import type { Fix } from "../notation/finding.ts";
 import type { Checking } from "./checks.ts";
+import type { Corners } from "./corners.ts";
 import type { HeldRow } from "./point.ts";
 
 /**
  * Where the tolerance alone breaks a ratio row, the knots that are lacking are added to the speed as
  * it is written: to its number, or to its offset. Only a speed in knots CAS can be mended so.
  */
-export function ratioFix(checking: Checking, held: HeldRow): Fix | null {
-  const { point, evaluated } = checking;
-  const { corners, ready } = evaluated;
+export function ratioFix({ point, evaluated }: Checking, held: HeldRow, corners: Corners): Fix | null {
+  const { ready } = evaluated;
   const read = point.clauses.speed;
   if (!read || corners.all.length === 1) return null;
   const basis = ready.card.basis?.value;

@@ -1,5 +1,6 @@
 import type { ResultName, Subject } from "../notation/vocabulary.ts";
 import { type Checking, carriedFrom, clauseFor, tell } from "./checks.ts";
+import type { Corners } from "./corners.ts";
 import type { FindingCode } from "./findings.ts";
 import { formatBank, formatDistinct, formatRadius, formatResultValue, formatSpeed } from "./format.ts";
 import type { Row } from "./limits.ts";
@@ -35,24 +36,32 @@ export function checkRules(checking: Checking): RuleOutcome {
     emergency: point.clauses.emergency !== null,
     rules: point.applied.carried.rules?.value ?? null,
     engineOut: conditions.engineOut !== null,
-    shear: false,
+    shear: point.clauses.shear !== null,
     altitude: conditions.altitude,
     pressureAltitude: conditions.pressureAltitude,
   });
   const basis = ready.card.basis?.value;
-  const situation = { corners, vsFactor: basis?.kind === "vs" ? basis.factor : null };
+  const vsFactor = basis?.kind === "vs" ? basis.factor : null;
   const rows: HeldRow[] = [];
   const notEvaluated = limits.lost.map((rule) => ({ rule, why: "The row is in error, so it is not held." }));
   for (const group of selected.groups) {
-    if (notApplicable(group.subject, checking)) continue;
-    const held = strictest(group.rows.map((row) => holdRow(row, situation)));
+    const flown = group.afterShear ? evaluated.sheared : corners;
+    if (!flown) {
+      const row = group.rows[0] as Row;
+      const why = "Of the speed nothing is left after the shear.";
+      notEvaluated.push({ rule: row.text, why });
+      tellNotEvaluated(checking, row, why);
+      continue;
+    }
+    if (notApplicable(group.subject, flown)) continue;
+    const held = strictest(group.rows.map((row) => holdRow(row, { corners: flown, vsFactor })));
     if (!held) continue;
     rows.push(held);
-    if (held.holds === false) tellBroken(checking, held);
+    if (held.holds === false) tellBroken(checking, held, flown);
     else if (held.holds === null) {
       const why = evaluated.absent(resultOf[held.row.subject]) ?? "It is not known here.";
       notEvaluated.push({ rule: held.row.text, why });
-      tellNotEvaluated(checking, held, why);
+      tellNotEvaluated(checking, held.row, why);
     }
   }
   return { rows, off: selected.off, notEvaluated };
@@ -69,8 +78,7 @@ const resultOf: Readonly<Record<Subject, ResultName>> = {
 };
 
 /** Wings level there is no turn to be wide; without a load there is no stall to keep a margin to. */
-function notApplicable(subject: Subject, { evaluated }: Checking): boolean {
-  const { nominal, all } = evaluated.corners;
+function notApplicable(subject: Subject, { nominal, all }: Corners): boolean {
   if (subject === "radius") return all.every((one) => one.bank === 0);
   if (subject === "margin") return nominal.stall === 0;
   // Where the warning has come already there is no bank left to count: that is told as an error of its own.
@@ -94,7 +102,7 @@ function severityOf(checking: Checking, row: Row) {
   return checking.point.clauses.emergency && row.verb === "should" ? oneStepLower(severity) : severity;
 }
 
-function tellBroken(checking: Checking, held: HeldRow): void {
+function tellBroken(checking: Checking, held: HeldRow, corners: Corners): void {
   const { point } = checking;
   const { row } = held;
   const code = row.subject === "bank" && row.verb === "should" ? "bank-over-advice" : codes[row.subject];
@@ -104,9 +112,11 @@ function tellBroken(checking: Checking, held: HeldRow): void {
       : row.subject === "load"
         ? "load"
         : "speed";
-  const fix = row.subject === "ratio" ? ratioFix(checking, held) : null;
-  tell(checking, code, clauseFor(point, keyword), message(checking, held), {
+  const fix = row.subject === "ratio" ? ratioFix(checking, held, corners) : null;
+  tell(checking, code, clauseFor(point, keyword), message(checking, held, corners), {
     severity: severityOf(checking, row),
+    rule: row.text,
+    ...(held.figure === null ? {} : { figure: held.figure }),
     related: [
       ...carriedFrom(point, keyword === "speed" ? ["speed", "mass", "config"] : ["mass"]),
       { origin: row.origin, message: `The row: ${row.text}${row.remark ? ` (${row.remark})` : ""}` },
@@ -115,14 +125,14 @@ function tellBroken(checking: Checking, held: HeldRow): void {
   });
 }
 
-function message(checking: Checking, held: HeldRow): string {
+function message(checking: Checking, held: HeldRow, corners: Corners): string {
   const { point } = checking;
   const { row, bound } = held;
   const figure = held.figure ?? Number.NaN;
   const rule = `${point.limits.name} ${row.verb === "must" ? "allows" : "advises"} in ${point.phase}`;
   const asks = (least: string) =>
     `${point.limits.name} ${row.verb === "must" ? "requires" : "advises"} ${least} in ${point.phase}`;
-  const lead = byTolerances(checking, held);
+  const lead = leadOf(checking, held, corners);
   switch (row.subject) {
     case "bank": {
       const [flown, most] = formatDistinct(figure, bound, formatBank);
@@ -144,7 +154,7 @@ function message(checking: Checking, held: HeldRow): string {
       const [flown, least] = formatDistinct(figure, bound, (value, more) =>
         formatResultValue("ratio", value, more),
       );
-      return `${lead}The speed is ${flown} times ${of} and ${asks(least)}: fly ${knotsMissing(checking, held)} faster, or lighter.`;
+      return `${lead}The speed is ${flown} times ${of} and ${asks(least)}: fly ${knotsMissing(checking, held, corners)} faster, or lighter.`;
     }
     case "margin": {
       const [flown, least] = formatDistinct(figure, bound, (value, more) =>
@@ -169,16 +179,24 @@ function message(checking: Checking, held: HeldRow): string {
   }
 }
 
-/** "With the tolerances: " where the nominal figure alone would keep the row. */
-function byTolerances(checking: Checking, held: HeldRow): string {
-  const { corners, ready } = checking.evaluated;
-  if (corners.all.length === 1) return "";
-  const basis = ready.card.basis?.value;
+/** "After the shear of 10 kt, with the tolerances: ", where each applies. */
+function leadOf(checking: Checking, held: HeldRow, corners: Corners): string {
+  const shear = checking.evaluated.ready.extras.shear ?? Number.NaN;
+  const after = held.row.afterShear ? `after the shear of ${formatSpeed(shear)}` : "";
+  const tolerances = byTolerancesAlone(checking, held, corners) ? "with the tolerances" : "";
+  const lead = [after, tolerances].filter(Boolean).join(", ");
+  return lead === "" ? "" : `${lead.charAt(0).toUpperCase()}${lead.slice(1)}: `;
+}
+
+/** True where the nominal figure alone would keep the row. */
+function byTolerancesAlone({ evaluated }: Checking, held: HeldRow, corners: Corners): boolean {
+  if (corners.all.length === 1) return false;
+  const basis = evaluated.ready.card.basis?.value;
   const alone = holdRow(held.row, {
     corners: { nominal: corners.nominal, all: [corners.nominal] },
     vsFactor: basis?.kind === "vs" ? basis.factor : null,
   });
-  return alone.holds ? "With the tolerances: " : "";
+  return alone.holds === true;
 }
 
 function warningAt({ evaluated }: Checking): string {
@@ -192,8 +210,8 @@ function warningAt({ evaluated }: Checking): string {
 }
 
 /** The knots that the ratio lacks, rounded up. */
-function knotsMissing(checking: Checking, held: HeldRow): string {
-  const { ready, corners } = checking.evaluated;
+function knotsMissing({ evaluated }: Checking, held: HeldRow, corners: Corners): string {
+  const { ready } = evaluated;
   const basis = ready.card.basis?.value;
   const factor = basis?.kind === "vs" && held.row.vs !== null ? basis.factor : 1;
   let missing = 0;
@@ -201,16 +219,16 @@ function knotsMissing(checking: Checking, held: HeldRow): string {
   return formatSpeed(missing, 0, { rounding: "up" });
 }
 
-function tellNotEvaluated(checking: Checking, held: HeldRow, why: string): void {
+function tellNotEvaluated(checking: Checking, row: Row, why: string): void {
   const { point } = checking;
   tell(
     checking,
     "not-evaluated",
     point.phaseClause,
-    `The row \`${held.row.text}\` of ${point.limits.name} could not be held against this point. ${why}`,
+    `The row \`${row.text}\` of ${point.limits.name} could not be held against this point. ${why}`,
     {
-      severity: severityOf(checking, held.row),
-      related: [{ origin: held.row.origin, message: `The row: ${held.row.text}` }],
+      severity: severityOf(checking, row),
+      related: [{ origin: row.origin, message: `The row: ${row.text}` }],
     },
   );
 }

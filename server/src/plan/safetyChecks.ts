@@ -1,3 +1,4 @@
+import type { Table } from "../flight/table.ts";
 import { loadFactor } from "../flight/turn.ts";
 import type { ResultName } from "../notation/vocabulary.ts";
 import { type Checking, carriedFrom, clauseFor, exerciseSeverity, leastAt, tell } from "./checks.ts";
@@ -10,17 +11,18 @@ import {
   formatResultValue,
   formatSpeed,
 } from "./format.ts";
+import type { NotEvaluated } from "./point.ts";
 import { ALLOWANCE } from "./rules.ts";
 import { findingAt } from "./site.ts";
 
 /** The wing's own limits: stall, warning and buffet, at the worst corner. */
-export function checkSafety(checking: Checking): void {
-  if (!checkLift(checking)) return;
+export function checkSafety(checking: Checking): readonly NotEvaluated[] {
+  if (!checkLift(checking)) return [];
   const stalled = checkStalled(checking);
   if (!stalled) checkWarning(checking);
   checkStallBeforeWarning(checking);
-  checkBuffet(checking);
   checkUnloading(checking);
+  return checkBuffet(checking);
 }
 
 /** False where the wing's lift is not known here, or carries the load at no speed. */
@@ -146,12 +148,15 @@ function checkStallBeforeWarning(checking: Checking): void {
   );
 }
 
-function checkBuffet(checking: Checking): void {
+function checkBuffet(checking: Checking): readonly NotEvaluated[] {
   const { point, evaluated } = checking;
-  const { corners } = evaluated;
-  if (Number.isNaN(corners.nominal.buffetLoad)) return;
-  const worst = leastAt(corners.all, (one) => one.buffetLoad - one.load);
-  if (!(worst.buffetLoad < worst.load * (1 - ALLOWANCE))) return;
+  const { corners, ready } = evaluated;
+  if (!ready.frame.buffet) return [];
+  const skipped = buffetUnknown(checking, ready.frame.buffet.table);
+  if (corners.all.every((one) => Number.isNaN(one.buffetLoad))) return skipped;
+  const known = corners.all.filter((one) => !Number.isNaN(one.buffetLoad));
+  const worst = leastAt(known, (one) => one.buffetLoad - one.load);
+  if (!(worst.buffetLoad < worst.load * (1 - ALLOWANCE))) return skipped;
   const [onset, load] = formatDistinct(worst.buffetLoad, worst.load, result("buffet-load"), formatLoad);
   tell(
     checking,
@@ -163,6 +168,34 @@ function checkBuffet(checking: Checking): void {
       related: carriedFrom(point, ["altitude", "mass"]),
     },
   );
+  return skipped;
+}
+
+/**
+ * Beyond the table's last Mach number nobody knows where buffet begins, and that is told. Below its
+ * first the wing stalls before it buffets, which is checked; there it is only listed.
+ */
+function buffetUnknown(checking: Checking, table: Table): readonly NotEvaluated[] {
+  const { point, evaluated } = checking;
+  const { corners, ready } = evaluated;
+  if (!corners.all.some((one) => Number.isNaN(one.buffetLoad))) return [];
+  const why =
+    evaluated.absent("buffet-load") ?? "The card's buffet table does not reach all of the tolerances.";
+  const last = table.arguments[table.arguments.length - 1] ?? Number.NaN;
+  const beyond = corners.all.some((one) => Number.isNaN(one.buffetLoad) && last < one.mach);
+  if (beyond && ready.liftLoss.high === 0) {
+    const related = ready.configuration.buffet
+      ? [{ origin: ready.configuration.buffet.origin, message: "The card's buffet table." }]
+      : [];
+    tell(
+      checking,
+      "not-evaluated",
+      point.phaseClause,
+      `Whether the turn buffets could not be checked. ${why}`,
+      { severity: "warning", related: [...related, ...carriedFrom(point, ["speed", "altitude"])] },
+    );
+  }
+  return [{ rule: "buffet-in-turn", why }];
 }
 
 /** A stated load below what the bank needs in steady flight is a push-over; outside an exercise that is seldom meant. */

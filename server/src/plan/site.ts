@@ -13,6 +13,12 @@ export interface Site {
   readonly anchor: Anchor;
 }
 
+/** A block of a plan, which is read on a day. */
+export interface PlanSite extends Site {
+  /** `2026-03-01`. */
+  readonly today: string;
+}
+
 export function originOf(site: Site, placed: PlacedClause): Origin {
   return { uri: site.uri, block: site.anchor, line: placed.line, span: placed.clause.span };
 }
@@ -22,6 +28,8 @@ export interface Details {
   readonly span?: Span;
   readonly related?: readonly Related[];
   readonly fixes?: readonly Fix[];
+  readonly figure?: number;
+  readonly rule?: string;
 }
 
 /** A finding at a clause, with the catalogue's severity unless the situation says otherwise. */
@@ -39,6 +47,8 @@ export function findingAt(
     message,
     related: details.related ?? [],
     fixes: details.fixes ?? [],
+    ...(details.figure === undefined ? {} : { figure: details.figure }),
+    ...(details.rule === undefined ? {} : { rule: details.rule }),
   };
 }
 

@@ -13,6 +13,8 @@ export interface Carried<T> {
   readonly unknown: string | null;
   /** The phase of the point that stated it; null where a setting did. */
   readonly phase: Phase | null;
+  /** True where a sweep gave it many values, none of which goes on. */
+  readonly swept?: boolean;
 }
 
 export interface FlownAircraft {
@@ -54,6 +56,7 @@ export interface CarriedValues {
   readonly altitude: StatedAltitude;
   readonly deviation: Spread;
   readonly cg: Spread;
+  readonly power: Spread;
   readonly contamination: Contamination;
   readonly engineOut: "left" | "right" | "none";
   readonly speed: FlownSpeed;
@@ -83,6 +86,7 @@ const nothingStated: CarriedState = {
   altitude: undefined,
   deviation: undefined,
   cg: undefined,
+  power: undefined,
   contamination: undefined,
   engineOut: undefined,
   speed: undefined,
@@ -101,6 +105,7 @@ export const keywordOf: Readonly<Record<CarriedKey, Keyword>> = {
   altitude: "altitude",
   deviation: "isa",
   cg: "cg",
+  power: "power",
   contamination: "contamination",
   engineOut: "engine-out",
   speed: "speed",
@@ -127,6 +132,7 @@ function sameCarried(a: Carried<unknown> | undefined, b: Carried<unknown> | unde
   return (
     a.unknown === b.unknown &&
     a.phase === b.phase &&
+    a.swept === b.swept &&
     sameOrigin(a.origin, b.origin) &&
     sameValue(a.value, b.value)
   );

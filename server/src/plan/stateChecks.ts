@@ -1,6 +1,6 @@
 import type { Phase } from "../notation/vocabulary.ts";
 import { carriedFrom } from "./checks.ts";
-import type { Point } from "./evaluatePoint.ts";
+import type { Point } from "./evaluateStated.ts";
 import type { Finding } from "./finding.ts";
 import { formatPercent } from "./format.ts";
 import { lineOf } from "./origin.ts";

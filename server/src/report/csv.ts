@@ -1,9 +1,9 @@
 import type { FileJson, JsonValue, PointJson } from "./pointsJson.ts";
 
-/** Points as CSV (RFC 4180): one row a point, nested names joined with `.`, the caution in the last column. */
+/** Points as CSV (RFC 4180): one row a point or value of a sweep, nested names joined with `.`, the caution in the last column. */
 export function pointsCsv(files: readonly FileJson[], caution: string): string {
   const rows = files.flatMap(({ path, points }) =>
-    points.map((point) => new Map<string, JsonValue>([["path", path], ...flat(point, "")])),
+    points.flatMap(values).map((point) => new Map<string, JsonValue>([["path", path], ...flat(point, "")])),
   );
   const columns = [...new Set(rows.flatMap((row) => [...row.keys()]))];
   const lines = [
@@ -12,6 +12,19 @@ export function pointsCsv(files: readonly FileJson[], caution: string): string {
   ];
   return lines.map((line) => `${line.map(cell).join(",")}\r\n`).join("");
 }
+
+/** A point, or each value of its sweep as if it were one; `sweep` then says which it is. */
+function values(point: PointJson): readonly PointJson[] {
+  const { sweep } = point;
+  if (!Array.isArray(sweep)) return [{ ...point, sweep: noValue }];
+  return (sweep as readonly PointJson[]).map(({ what, value, unit, ...computed }) => ({
+    ...point,
+    ...computed,
+    sweep: { what: what ?? null, value: value ?? null, unit: unit ?? null },
+  }));
+}
+
+const noValue: PointJson = { what: null, value: null, unit: null };
 
 function flat(value: PointJson, prefix: string): [string, JsonValue][] {
   return Object.entries(value).flatMap(([key, one]): [string, JsonValue][] => {
@@ -22,7 +35,7 @@ function flat(value: PointJson, prefix: string): [string, JsonValue][] {
   });
 }
 
-const columnGroups = new Set(["speed", "approach_category"]);
+const columnGroups = new Set(["speed", "approach_category", "solved", "sweep"]);
 
 function cell(value: JsonValue): string {
   if (value === null) return "";

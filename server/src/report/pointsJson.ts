@@ -1,7 +1,7 @@
 import { fromSI } from "../flight/units.ts";
 import type { Note } from "../plan/note.ts";
 import { lineOf } from "../plan/origin.ts";
-import type { Conditions, PointResult } from "../plan/point.ts";
+import type { Conditions, PointResult, Solved, SweepResult } from "../plan/point.ts";
 import type { Spread } from "../plan/spread.ts";
 import { type FindingJson, findingsJson } from "./findingsJson.ts";
 
@@ -30,13 +30,7 @@ export function fileJson(note: Note, path: string): FileJson {
 }
 
 export function pointJson(point: PointResult): PointJson {
-  const { block, conditions } = point;
-  const spread = (name: keyof NonNullable<PointResult["results"]>) => point.results?.[name] ?? null;
-  const vs1g = spread("vs1g");
-  const stall = spread("stall");
-  const warning = spread("warning");
-  const ratio = spread("ratio");
-  const margin = spread("margin");
+  const { block } = point;
   return {
     line: block.start + 1,
     endLine: block.start + block.lines.length,
@@ -47,6 +41,57 @@ export function pointJson(point: PointResult): PointJson {
     aircraft: point.aircraft,
     limits: point.limitsName,
     rules: point.rules,
+    ...computedJson(point),
+    sweep: point.sweep && sweepJson(point.sweep),
+    claims: point.claims.map((claim) => ({
+      name: claim.name,
+      claimed: resultInUnit(claim.name, claim.claimed),
+      computed: claim.computed === null ? null : resultInUnit(claim.name, claim.computed),
+      holds: claim.holds,
+    })),
+    expected: point.expected.map(({ code, not, came }) => ({ code, not, came })),
+    accepted: point.accepted.map((one) => ({ ...one })),
+    not_evaluated: point.notEvaluated.map(({ rule, why }) => ({ rule, why })),
+    assumed: [...point.assumed],
+    inherited: inheritedJson(point),
+  };
+}
+
+/** Each value of a sweep with the same computed fields as a point, and what the point breaks there. */
+function sweepJson({ what, rows }: SweepResult): readonly PointJson[] {
+  return rows.map(({ written, point }) => ({
+    what,
+    value: written.value,
+    unit: written.unit,
+    ...computedJson(point),
+    codes: point.findings.map(({ code }) => code),
+  }));
+}
+
+function solvedJson(solved: Solved): PointJson {
+  const { what, unit, best, blockedBy } = solved;
+  const other = solved.other();
+  return {
+    what,
+    value: best?.value ?? null,
+    exact: best?.exact ?? null,
+    unit,
+    boundBy: best?.boundBy ?? null,
+    blockedBy,
+    other: other && { ...other },
+  };
+}
+
+/** Everything that is computed of a point, or of one value of its sweep. */
+function computedJson(point: PointResult): PointJson {
+  const { conditions, further } = point;
+  const spread = (name: keyof NonNullable<PointResult["results"]>) => point.results?.[name] ?? null;
+  const vs1g = spread("vs1g");
+  const stall = spread("stall");
+  const warning = spread("warning");
+  const ratio = spread("ratio");
+  const margin = spread("margin");
+  return {
     config: point.configuration?.name ?? null,
     ...conditionsJson(conditions),
     vs1g_kt: knots(vs1g?.nominal),
@@ -73,38 +118,34 @@ export function pointJson(point: PointResult): PointJson {
     buffet_load_low: known(spread("buffet-load")?.low),
     buffet_bank_deg: degrees(spread("buffet-bank")?.nominal),
     buffet_bank_low_deg: degrees(spread("buffet-bank")?.low),
-    low_buffet_mach: null,
-    high_buffet_mach: null,
-    buffet_altitude_ft: null,
-    gust_load: null,
-    gust_load_down: null,
-    margin_after_shear: null,
-    ratio_after_shear: null,
+    low_buffet_mach: known(further?.lowBuffetMach),
+    high_buffet_mach: known(further?.highBuffetMach),
+    buffet_altitude_ft: inUnit(further?.buffetAltitude, "ft"),
+    gust_load: known(further?.gustUp?.nominal),
+    gust_load_high: known(further?.gustUp?.high),
+    gust_load_down: known(further?.gustDown?.nominal),
+    gust_load_down_low: known(further?.gustDown?.low),
+    margin_after_shear: known(further?.afterShear?.margin?.nominal),
+    margin_after_shear_low: known(further?.afterShear?.margin?.low),
+    ratio_after_shear: known(further?.afterShear?.ratio?.nominal),
+    ratio_after_shear_low: known(further?.afterShear?.ratio?.low),
     va_kt: knots(spread("va")?.nominal),
     ...referenceJson(point),
-    power_on_stall_kt: null,
+    power_on_stall_kt: knots(further?.powerOnStall?.nominal),
     radius_nm: inUnit(spread("radius")?.nominal, "nm"),
     radius_high_nm: inUnit(spread("radius")?.high, "nm"),
     rate_deg_s: degrees(spread("rate")?.nominal),
     rate_one_bank_deg: degrees(spread("rate-one-bank")?.nominal),
     bank_limit_deg: degrees(point.bankLimit?.bound),
     bank_advice_deg: degrees(point.bankAdvice?.bound),
-    seconds_to_warning: null,
-    seconds_to_stall: null,
-    approach_category: null,
-    solved: null,
-    sweep: null,
-    claims: point.claims.map((claim) => ({
-      name: claim.name,
-      claimed: resultInUnit(claim.name, claim.claimed),
-      computed: claim.computed === null ? null : resultInUnit(claim.name, claim.computed),
-      holds: claim.holds,
-    })),
-    expected: [],
-    accepted: [],
-    not_evaluated: point.notEvaluated.map(({ rule, why }) => ({ rule, why })),
-    assumed: [...point.assumed],
-    inherited: inheritedJson(point),
+    seconds_to_warning: known(further?.secondsToWarning?.nominal),
+    seconds_to_warning_low: known(further?.secondsToWarning?.low),
+    seconds_to_stall: known(further?.secondsToStall?.nominal),
+    seconds_to_stall_low: known(further?.secondsToStall?.low),
+    approach_category: further?.categories
+      ? { icao: further.categories.icao, faa: further.categories.faa }
+      : null,
+    solved: point.solved && solvedJson(point.solved),
     withheld: point.withheld ? { line: lineOf(point.withheld.origin) + 1, code: point.withheld.code } : null,
   };
 }

@@ -6,10 +6,11 @@ import {
   formatMass,
   formatResult,
   formatSpeed,
+  formatWritten,
 } from "../plan/format.ts";
 import type { Note } from "../plan/note.ts";
 import { lineOf } from "../plan/origin.ts";
-import type { PointResult } from "../plan/point.ts";
+import type { PointResult, Solved } from "../plan/point.ts";
 
 /** One row of the points table, ready to be laid out. */
 export type TableRow = readonly string[];
@@ -34,12 +35,30 @@ export const tableHead: TableRow = [
 
 /** The points of a note with the figures a briefing needs, each as the one formatter writes it. */
 export function tableRows(note: Note): readonly TableRow[] {
-  return note.results().flatMap((result) => (result.kind === "point" ? [row(result.point)] : []));
+  return note.results().flatMap((result) => (result.kind === "point" ? pointRows(result.point) : []));
 }
 
-function row(point: PointResult): TableRow {
+/** One row for a point, or one for each value of its sweep. */
+export function pointRows(point: PointResult): readonly TableRow[] {
+  const { sweep } = point;
+  if (!sweep) return [row(point, point.solved)];
+  return sweep.rows.map((one) =>
+    row(one.point, one.point.solved, `${sweep.what} ${formatWritten(one.written, sweep.what)}`),
+  );
+}
+
+function row(point: PointResult, solved: Solved | null, varied = ""): TableRow {
   const line = String(point.block.start + 1);
-  const phase = `${point.phase ?? "?"}${point.title ? ` "${point.title}"` : ""}${point.aside ? " (aside)" : ""}`;
+  const marks = [
+    varied,
+    solved?.written ? `${solved.what} ${formatWritten(solved.written, solved.what)} found` : "",
+    point.aside ? "aside" : "",
+  ].filter(Boolean);
+  const phase = [
+    point.phase ?? "?",
+    point.title ? ` "${point.title}"` : "",
+    marks.length > 0 ? ` (${marks.join("; ")})` : "",
+  ].join("");
   const { conditions } = point;
   if (!conditions) {
     const why = point.withheld

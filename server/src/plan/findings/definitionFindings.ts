@@ -2,13 +2,6 @@ import { entry, flown, ruled, wheatear } from "./entry.ts";
 
 /** Findings about cards, limits, names and values. */
 export const definitionFindings = {
-  "not-in-this-version": entry(
-    "warning",
-    "read, but not computed yet",
-    "The notation has this clause, and this version checks its form and does not compute it, so nothing is held against it. A point that asks for a value (`?`) or sweeps one shows no figures: state a figure to see them.",
-    flown("| phase cruise; gust 30 ft/s"),
-    flown("| phase cruise"),
-  ),
   "unknown-config": entry(
     "error",
     "the card has no such configuration",

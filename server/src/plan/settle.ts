@@ -1,0 +1,38 @@
+import type { ResultName } from "../notation/vocabulary.ts";
+import { checkClaims } from "./claims.ts";
+import { describePoint, type Open } from "./describe.ts";
+import type { Evaluated } from "./evaluated.ts";
+import type { StatedPoint } from "./evaluateStated.ts";
+import type { Finding } from "./finding.ts";
+import type { PointResult } from "./point.ts";
+import { review } from "./review.ts";
+import type { Spread } from "./spread.ts";
+
+/** Holds the claims of a point, then puts what it accepts and expects to what was found. */
+export function settle(stated: StatedPoint, open: Open): PointResult {
+  const { point, evaluated } = stated;
+  const findings: Finding[] = [...stated.findings];
+  const claims = checkClaims(
+    point.clauses.claims,
+    {
+      spread: (name) => spreadOver(evaluated, open, name),
+      why: (name) => (evaluated ? (evaluated.absent(name) ?? "") : "This point has no figures."),
+    },
+    findings,
+  );
+  return describePoint(stated, claims, review(point, findings, evaluated !== null), open);
+}
+
+/** The figure of a result with its extremes over all rows of a sweep; null where any row lacks it. */
+function spreadOver(evaluated: Evaluated | null, { sweep }: Open, name: ResultName): Spread | null {
+  const own = evaluated?.results[name] ?? null;
+  if (!sweep || !own) return own;
+  let { low, high } = own;
+  for (const { point } of sweep.rows) {
+    const spread = point.results?.[name];
+    if (!spread) return null;
+    low = Math.min(low, spread.low);
+    high = Math.max(high, spread.high);
+  }
+  return { nominal: own.nominal, low, high };
+}
