@@ -200,7 +200,7 @@ describe("code actions", () => {
   it("mend a name by its nearest, and add the knots that a tolerance lacks", () => {
     const mend = (text: string, code: string) => {
       const note = open(text);
-      const action = codeActions(note, 0, note.document.lineCount).find((one) => one.finding.code === code);
+      const action = codeActions(note, 0, note.document.lineCount).find((one) => one.finding?.code === code);
       for (const { line, start, end, newText } of action?.edits ?? [])
         note.edit({ line, character: start }, { line, character: end }, newText);
       return { note, text: note.document.text() };

@@ -1,21 +1,33 @@
 import { caution } from "../plan/caution.ts";
 import { findingsJson } from "../report/findingsJson.ts";
 import { findingsText, summarize, summaryText } from "../report/findingsText.ts";
+import { passedJson } from "../report/passed.ts";
 import { type CheckedFile, sarifLog } from "../report/sarif.ts";
 import { load } from "./load.ts";
 import { emit, painter } from "./output.ts";
 import type { Common } from "./run.ts";
+import { UsageError } from "./usageError.ts";
 import { VERSION } from "./version.ts";
 
 export interface CheckOptions extends Common {
   readonly format: "text" | "json" | "sarif";
   readonly failOn: "error" | "warning" | "never";
+  readonly passed: boolean;
 }
 
 /** `plumbline check`: every finding of the notes. */
 export async function check(paths: readonly string[], options: CheckOptions): Promise<number> {
+  if (options.passed && options.format === "text") {
+    throw new UsageError("--passed needs --format json or sarif: the text form lists findings alone.");
+  }
   const notes = await load(paths, options);
-  const files = notes.map(({ path, note }): CheckedFile => ({ path, findings: findingsJson(note) }));
+  const files = notes.map(
+    ({ path, note }): CheckedFile => ({
+      path,
+      findings: findingsJson(note),
+      ...(options.passed ? { passed: passedJson(note) } : {}),
+    }),
+  );
   await emit(written(files, options), options);
   if (options.format === "text" && !options.quiet) process.stderr.write(`${summaryText(files)}${caution}\n`);
   return exitCode(files, options.failOn);

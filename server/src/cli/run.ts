@@ -50,6 +50,7 @@ export async function run(argv: readonly string[]): Promise<number> {
         .choices(["error", "warning", "never"])
         .default("error"),
     )
+    .option("--passed", "list what was checked and held too (json, sarif)", false)
     .action((paths: string[], options) => settle(check(paths, options)));
   overNotes(program.command("points").argument("[path...]", "files, folders or globs; - for standard input"))
     .description("show every point with its computed values")

@@ -15,11 +15,22 @@ import {
   formatResult,
   formatResultValue,
   formatSpeed,
+  formatWritten,
 } from "../plan/format.ts";
+import type { FurtherFigures } from "../plan/further.ts";
 import type { Limits } from "../plan/limits.ts";
-import type { Conditions, HeldRow, PointResult } from "../plan/point.ts";
+import type { Conditions, HeldRow, PointResult, SweepResult } from "../plan/point.ts";
 import { resultEntry, resultNames } from "../plan/results.ts";
 import { atMost } from "../plan/rules.ts";
+import {
+  type FurtherRow,
+  furtherRows,
+  gustRows,
+  powerRows,
+  shearRows,
+  timingRows,
+} from "../report/furtherRows.ts";
+import { otherEndText, solvedText, sweepText } from "../report/openText.ts";
 import { inputsText, speedText } from "./inputsText.ts";
 import { place } from "./place.ts";
 import { plainMarkdown } from "./plainMarkdown.ts";
@@ -34,6 +45,8 @@ export function derivation(point: PointResult, placed: PlacedClause, uri: string
     formulas(point, conditions, placed),
     inputsText(point, conditions, uri),
     rulesText(point, uri),
+    openText(point),
+    reviewText(point),
     resultsTable(point),
     absentText(point),
     remarksText(point, conditions),
@@ -43,8 +56,10 @@ export function derivation(point: PointResult, placed: PlacedClause, uri: string
 }
 
 function withheldText(point: PointResult, uri: string): string {
-  const { withheld } = point;
+  const { withheld, solved } = point;
   if (!withheld) return "No figures are known here.";
+  if (solved && !solved.best)
+    return `**${solved.what} ?: ${plainMarkdown(solvedText(solved))}**\n\nNo ${solved.what} keeps every rule and check of this point, so that it has no figures.`;
   return `No figures: ${place(withheld.origin, uri)} has to be mended first (\`${withheld.code}\`).`;
 }
 
@@ -58,6 +73,11 @@ function headline(point: PointResult, conditions: Conditions, placed: PlacedClau
       })
       .join(", ");
   const { keyword } = placed.clause;
+  if (point.solved?.open.placed === placed) return `**${plainMarkdown(solvedText(point.solved))}**`;
+  if (point.sweep?.open.placed === placed) return `**${plainMarkdown(sweepText(point.sweep))}**`;
+  const further = point.further ? furtherBy[keyword ?? ""]?.(point.further) : undefined;
+  if (further && further.length > 0)
+    return `**${further.map(({ name, text }) => `${name} ${text}`).join(", ")}**`;
   switch (keyword) {
     case "bank":
     case "load":
@@ -75,6 +95,66 @@ function headline(point: PointResult, conditions: Conditions, placed: PlacedClau
     default:
       return `**${show(["margin", "ratio", "stall", "warning"])}**`;
   }
+}
+
+const furtherBy: Readonly<Record<string, (further: FurtherFigures) => readonly FurtherRow[]>> = {
+  shear: shearRows,
+  gust: gustRows,
+  decel: timingRows,
+  power: powerRows,
+};
+
+/** Both ends of the values that keep everything, and the rows of a sweep. */
+function openText(point: PointResult): string {
+  const { solved, sweep } = point;
+  const parts: string[] = [];
+  if (solved?.best) {
+    const other = otherEndText(solved);
+    parts.push(
+      `${solved.what} ?: ${plainMarkdown(solvedText(solved))}${other ? `; ${plainMarkdown(other)}` : ""}.`,
+    );
+  }
+  if (sweep) parts.push(sweepTable(sweep));
+  return parts.join("\n\n");
+}
+
+/** The most rows of a sweep in a hover; the table of points has them all. */
+const MOST_ROWS = 12;
+
+function sweepTable({ what, rows }: SweepResult): string {
+  const shown = rows.slice(0, MOST_ROWS).map(({ written, point }) => {
+    const figure = (name: ResultName) => {
+      const spread = point.results?.[name];
+      return spread ? formatResult(name, spread) : "-";
+    };
+    const found = point.solved ? [plainMarkdown(solvedText(point.solved))] : [];
+    const codes = point.findings.map((one) => one.code).join(", ");
+    return `| ${[formatWritten(written, what), ...found, figure("stall"), figure("margin"), figure("warning-bank"), codes].join(" | ")} |`;
+  });
+  const head = [
+    what,
+    ...(rows.some(({ point }) => point.solved) ? ["found"] : []),
+    "stall",
+    "margin",
+    "warning at",
+    "findings",
+  ];
+  const more =
+    rows.length > MOST_ROWS ? [`\n… and ${rows.length - MOST_ROWS} more rows in the table of points.`] : [];
+  return [`| ${head.join(" | ")} |`, `|${" --- |".repeat(head.length)}`, ...shown, ...more].join("\n");
+}
+
+/** What the note accepts here and what it expects. */
+function reviewText({ accepted, expected }: PointResult): string {
+  const taken = accepted.map(
+    ({ code, to, because, by, until }) =>
+      `- accepted: ${code}${to ? ` to ${to}` : ""}${by ? ` by ${plainMarkdown(by)}` : ""}${until ? ` until ${until}` : ""} (${plainMarkdown(because)})`,
+  );
+  const meant = expected.map(
+    ({ code, not, came }) =>
+      `- expected: ${not ? "no " : ""}${code}, ${came === null ? "not known" : came === not ? "and it is otherwise" : "and so it is"}`,
+  );
+  return [...taken, ...meant].join("\n");
 }
 
 /** The pressure altitude that the figures hold for. */
@@ -103,7 +183,8 @@ function resultsTable(point: PointResult): string {
       `| ${name} | ${least}${formatResult(name, spread, { spread: true })} | ${resultEntry(name).label}${referenceNote(point, name)} |`,
     ];
   });
-  return ["| result | value | |", "| --- | --- | --- |", ...rows].join("\n");
+  const further = furtherRows(point).map(({ name, text, about }) => `| ${name} | ${text} | ${about} |`);
+  return ["| result | value | |", "| --- | --- | --- |", ...rows, ...further].join("\n");
 }
 
 function referenceNote(point: PointResult, name: ResultName): string {

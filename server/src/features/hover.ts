@@ -74,6 +74,12 @@ function hasFigures(keyword: Keyword): boolean {
     "contamination",
     "claim",
     "config",
+    "gust",
+    "shear",
+    "decel",
+    "power",
+    "accept",
+    "expect",
   ].includes(keyword);
 }
 

@@ -2,11 +2,14 @@ import type { PlacedClause } from "../notation/block.ts";
 import type { Unknown, Value } from "../notation/tree.ts";
 import type { ResultName } from "../notation/vocabulary.ts";
 import type { Card } from "../plan/card.ts";
-import { formatFlightLevel, formatMass, formatResult, formatSpeed } from "../plan/format.ts";
+import { formatFlightLevel, formatMass, formatResult, formatSpeed, formatWritten } from "../plan/format.ts";
+import type { FurtherFigures } from "../plan/further.ts";
 import type { BlockResult, Note } from "../plan/note.ts";
 import { lineOf, type Origin } from "../plan/origin.ts";
 import type { PointResult } from "../plan/point.ts";
 import { resultEntry } from "../plan/results.ts";
+import { type FurtherRow, gustRows, powerRows, shearRows, timingRows } from "../report/furtherRows.ts";
+import { solvedText, sweepText } from "../report/openText.ts";
 import { blocksBetween } from "./blocksBetween.ts";
 
 export type HintLevel = "full" | "brief" | "off";
@@ -104,7 +107,7 @@ function pointHints(point: PointResult, level: "full" | "brief"): readonly Hint[
   for (const placed of point.block.clauses) {
     const parts = clauseParts(point, placed, level);
     if (!parts) continue;
-    const hint = hintAt(point, placed, point.conditions ? parts : waiting(point));
+    const hint = hintAt(point, placed, point.conditions || isOpenAt(point, placed) ? parts : waiting(point));
     if (hint) hints.push(hint);
   }
   return hints;
@@ -118,9 +121,18 @@ function clauseParts(
 ): readonly HintPart[] | null {
   const body = placed.clause.body;
   if (!body || !placed.counts) return spoiltParts(point, placed, level);
+  if (isOpenAt(point, placed)) return openParts(point, placed, level);
   switch (body.kind) {
     case "phase":
       return phaseParts(point, level);
+    case "gust":
+      return furtherParts(point, gustRows, "load ");
+    case "shear":
+      return furtherParts(point, shearRows);
+    case "decel":
+      return furtherParts(point, timingRows);
+    case "power":
+      return point.further?.powerOnStall ? furtherParts(point, powerRows) : null;
     case "weight":
     case "burn":
     case "burn-rate":
@@ -134,6 +146,43 @@ function clauseParts(
     default:
       return null;
   }
+}
+
+/** True for the clause whose value was sought, where it was, and for the one that is swept. */
+function isOpenAt({ solved, sweep }: PointResult, placed: PlacedClause): boolean {
+  return solved?.open.placed === placed || sweep?.open.placed === placed;
+}
+
+/** What was found for a `?` and what bounds it; the first value of a sweep that breaks something. */
+function openParts(point: PointResult, placed: PlacedClause, level: "full" | "brief"): readonly HintPart[] {
+  const { solved, sweep } = point;
+  if (sweep?.open.placed === placed) {
+    const row = sweep.rows[sweep.shown];
+    const tooltip = `The figures shown at this point are those at ${sweep.what} ${row ? formatWritten(row.written, sweep.what) : ""}; the table of points has every row.`;
+    return [{ text: sweepText(sweep), tooltip, origin: null }];
+  }
+  if (!solved) return [];
+  const tooltip = solved.best
+    ? "This value keeps every rule and check of the point, and the next breaks what is named. A code action writes it in."
+    : "No value keeps every rule and check of the point.";
+  const found: HintPart = { text: solvedText(solved), tooltip, origin: null };
+  return solved.what === "bank" && point.conditions ? [found, ...bankParts(point, level)] : [found];
+}
+
+/** Figures that a clause asks for, after their names. */
+function furtherParts(
+  point: PointResult,
+  rows: (further: FurtherFigures) => readonly FurtherRow[],
+  lead: string | null = null,
+): readonly HintPart[] {
+  const shown = point.further ? rows(point.further) : [];
+  if (shown.length === 0)
+    return [{ text: "…", tooltip: "It is not known here; the hover says why.", origin: null }];
+  return shown.map(({ name, text, about }) => ({
+    text: `${lead ?? `${name} `}${text}`,
+    tooltip: `The ${name}: ${about}.`,
+    origin: null,
+  }));
 }
 
 /** A clause in error, which is being typed as a rule, keeps the place of its hint. */
@@ -156,6 +205,22 @@ function spoiltParts(
 }
 
 function phaseParts(point: PointResult, level: "full" | "brief"): readonly HintPart[] {
+  const { sweep } = point;
+  const row = sweep?.rows[sweep.shown];
+  const at: readonly HintPart[] =
+    sweep && row
+      ? [
+          {
+            text: `at ${sweep.what} ${formatWritten(row.written, sweep.what)}`,
+            tooltip: "One value of the sweep.",
+            origin: null,
+          },
+        ]
+      : [];
+  return [...at, ...figureParts(point, level)];
+}
+
+function figureParts(point: PointResult, level: "full" | "brief"): readonly HintPart[] {
   const brief = [...resultPart(point, "margin", "margin "), ...resultPart(point, "ratio", "ratio ")];
   const parts =
     level === "full"

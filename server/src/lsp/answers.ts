@@ -1,6 +1,5 @@
 import {
   type CancellationToken,
-  CodeActionKind,
   type Connection,
   DocumentDiagnosticReportKind,
   type InlayHint,
@@ -144,10 +143,10 @@ export function answerRequests(
   connection.onCodeAction(
     answering("code action", async ({ textDocument: { uri }, range, context }, token) => {
       const note = await noteOf(uri, token);
-      if (!note || !asksForFixes(context.only)) return [];
-      return codeActions(note, range.start.line, range.end.line).map((action) =>
-        codeActionOf(action, uri, context.diagnostics),
-      );
+      if (!note) return [];
+      return codeActions(note, range.start.line, range.end.line)
+        .map((action) => codeActionOf(action, uri, context.diagnostics))
+        .filter(({ kind }) => isAskedFor(kind ?? "", context.only));
     }),
   );
 
@@ -204,6 +203,6 @@ function dropCancelled(token: CancellationToken): void {
 }
 
 /** A kind asks for its own and for those below it. */
-function asksForFixes(only: readonly string[] | undefined): boolean {
-  return !only || only.some((kind) => kind === "" || kind === CodeActionKind.QuickFix);
+function isAskedFor(kind: string, only: readonly string[] | undefined): boolean {
+  return !only || only.some((asked) => asked === "" || kind === asked || kind.startsWith(`${asked}.`));
 }

@@ -19,7 +19,7 @@ export function capabilities(client: Client): ServerCapabilities {
     hoverProvider: true,
     completionProvider: { triggerCharacters: ["|", ";", " "] },
     definitionProvider: true,
-    codeActionProvider: { codeActionKinds: [CodeActionKind.QuickFix] },
+    codeActionProvider: { codeActionKinds: [CodeActionKind.QuickFix, CodeActionKind.RefactorRewrite] },
     documentSymbolProvider: true,
     foldingRangeProvider: true,
     documentFormattingProvider: true,

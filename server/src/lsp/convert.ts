@@ -145,13 +145,14 @@ export function codeActionOf(
   const { finding, findingLine } = action;
   const own = diagnostics.filter(
     (one) =>
+      finding !== null &&
       one.code === finding.code &&
       one.range.start.line === findingLine &&
       one.range.start.character === finding.span.start,
   );
   return {
     title: action.title,
-    kind: CodeActionKind.QuickFix,
+    kind: action.kind === "rewrite" ? CodeActionKind.RefactorRewrite : CodeActionKind.QuickFix,
     ...(own.length > 0 ? { diagnostics: own } : {}),
     ...(action.preferred ? { isPreferred: true } : {}),
     edit: { changes: { [uri]: action.edits.map(textEditOf) } },

@@ -79,6 +79,8 @@ function readAccept(point: Point, read: Read<"accept">, told: Finding[]): Accept
     );
     return null;
   }
+  if (!body.because?.text.trim())
+    return refuse("Write the reason between the quotation marks: without one nothing is accepted.");
   const rule = figureRules[code];
   const problem = rule
     ? figureProblem(rule, body.to)

@@ -58,6 +58,7 @@ export function applyExpects(point: Point, found: readonly Finding[], hasFigures
   return { findings, told, expected };
 }
 
-function canCome(code: FindingCode): boolean {
+/** True for what an exercise may be about. */
+export function canCome(code: FindingCode): boolean {
   return isAcceptable(code, "manoeuvre") || exercised.has(code);
 }

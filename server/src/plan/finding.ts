@@ -31,10 +31,10 @@ export interface Finding {
 }
 
 /** What an `accept` clause says, with its figure as it is written. */
-export interface Acceptance {
+export type Acceptance = {
   readonly code: FindingCode;
   readonly to: string | null;
   readonly because: string;
   readonly by: string | null;
   readonly until: string | null;
-}
+};

@@ -82,8 +82,8 @@ export function formatSpeed(
 }
 
 /** "M 0.740". */
-export function formatMach(mach: number, more = 0): string {
-  const text = rounded(mach, 3 + more, "nearest");
+export function formatMach(mach: number, more = 0, rounding: Rounding = "nearest"): string {
+  const text = rounded(mach, 3 + more, rounding);
   return text === UNKNOWN ? text : `M ${text}`;
 }
 

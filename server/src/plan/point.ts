@@ -134,6 +134,7 @@ export interface SweepRow {
 
 export interface SweepResult {
   readonly what: Keyword;
+  readonly open: OpenClause;
   readonly rows: readonly SweepRow[];
   readonly shown: number;
   /** True where a row breaks a rule or a check: the one that is shown is the first of them. */

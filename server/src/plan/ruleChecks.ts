@@ -97,6 +97,11 @@ const codes: Readonly<Record<Subject, FindingCode>> = {
   buffet: "buffet-short",
 };
 
+/** The finding that tells of a broken row. */
+export function ruleCode({ subject, verb }: Row): FindingCode {
+  return subject === "bank" && verb === "should" ? "bank-over-advice" : codes[subject];
+}
+
 function severityOf(checking: Checking, row: Row) {
   const severity = row.verb === "must" ? "error" : "warning";
   return checking.point.clauses.emergency && row.verb === "should" ? oneStepLower(severity) : severity;
@@ -105,7 +110,7 @@ function severityOf(checking: Checking, row: Row) {
 function tellBroken(checking: Checking, held: HeldRow, corners: Corners): void {
   const { point } = checking;
   const { row } = held;
-  const code = row.subject === "bank" && row.verb === "should" ? "bank-over-advice" : codes[row.subject];
+  const code = ruleCode(row);
   const keyword =
     row.subject === "bank" || row.subject === "radius" || row.subject === "overshoot"
       ? "bank"

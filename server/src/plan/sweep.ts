@@ -43,7 +43,7 @@ export function evaluateSweep(
   const swept: StatedPoint = { ...stated, findings: findingsOf(rows, what) };
   const point = settle(swept, {
     solved,
-    sweep: { what, shown, breaks: 0 <= breaking, rows: rows.map((row) => describedRow(row)) },
+    sweep: { what, open, shown, breaks: 0 <= breaking, rows: rows.map((row) => describedRow(row)) },
   });
   return { point, after: clauses.aside ? setting.before : withoutSwept(stated.after, setting, open) };
 }

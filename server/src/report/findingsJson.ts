@@ -1,8 +1,10 @@
+import type { Acceptance } from "../plan/finding.ts";
 import type { Note } from "../plan/note.ts";
+import type { JsonValue } from "./pointsJson.ts";
 
 /** One finding as scripts read it: lines and columns count from 1, columns in UTF-16 code units. */
 export interface FindingJson {
-  readonly [key: string]: string | number | null;
+  readonly [key: string]: JsonValue;
   readonly code: string;
   readonly severity: string;
   readonly line: number;
@@ -10,7 +12,9 @@ export interface FindingJson {
   readonly endLine: number;
   readonly endColumn: number;
   readonly message: string;
-  readonly accepted: null;
+  /** Who took it and why; null where nobody did. */
+  readonly accepted: Acceptance | null;
+  readonly expected: boolean;
 }
 
 export function findingsJson(note: Note): readonly FindingJson[] {
@@ -22,6 +26,7 @@ export function findingsJson(note: Note): readonly FindingJson[] {
     endLine: line + 1,
     endColumn: finding.span.end + 1,
     message: finding.message,
-    accepted: null,
+    accepted: finding.accepted ?? null,
+    expected: finding.expected ?? false,
   }));
 }

@@ -33,6 +33,8 @@ export function summaryText(files: readonly CheckedFile[]): string {
     .map((severity) =>
       counted(summary[severity], severity === "information" ? "piece of information" : severity),
     );
+  const taken = files.flatMap(({ findings }) => findings).filter((one) => one.accepted !== null).length;
+  if (taken > 0) parts.push(`${taken} accepted`);
   const where = counted(files.length, "note");
   return parts.length === 0 ? `Nothing found in ${where}.\n` : `${parts.join(", ")} in ${where}.\n`;
 }

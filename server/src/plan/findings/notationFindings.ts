@@ -113,7 +113,7 @@ export const notationFindings: Readonly<Record<TextCode, FindingEntry>> = {
     "not the code of a finding",
     "`expect` and `accept` name a finding by its code, as the Problems list shows it.",
     flown("| phase cruise; expect stall"),
-    flown("| phase cruise; expect stalled"),
+    flown("| phase cruise; expect not stalled"),
   ),
   "bad-table": entry(
     "error",

@@ -37,7 +37,7 @@ export const reviewFindings = {
     "what was expected did not come",
     "An exercise says with `expect` which finding is meant to come, or with `expect not` which is not. Here it is the other way round, so that the exercise does not show what it is for. What says that the note or the point was not checked cannot be expected.",
     flown("| phase manoeuvre; bank 20; expect warning-in-turn"),
-    flown("| phase manoeuvre; bank 70; speed 140 kt; expect warning-in-turn"),
+    flown("| phase manoeuvre; bank 60; speed 133 kt; expect warning-in-turn"),
   ),
   "accept-unused": entry(
     "warning",
