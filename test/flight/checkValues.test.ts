@@ -41,7 +41,7 @@ describe("published and computed values", () => {
       if (Array.isArray(wanted))
         for (const [i, one] of wanted.entries())
           within((actual as number[])[i] as number, one, tolerance, key);
-      else if (typeof wanted === "boolean") expect(actual).toBe(wanted);
+      else if (typeof wanted === "boolean" || typeof wanted === "string") expect(actual).toBe(wanted);
       else within(actual as number, wanted as number, tolerance, key);
     }
     expect(compared).toBeGreaterThan(0);

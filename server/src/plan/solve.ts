@@ -47,6 +47,7 @@ class Seeker {
   readonly setting: Setting;
   readonly open: OpenClause;
   readonly #clauses: Clauses;
+  least: { readonly at: number; readonly trial: Trial } | null = null;
 
   constructor(setting: Setting, clauses: Clauses, open: OpenClause) {
     this.setting = setting;
@@ -60,21 +61,24 @@ class Seeker {
   }
 
   try(value: number): Trial {
-    const { stated } = this.#tried(value);
-    const { point, findings, evaluated, withheld } = stated;
+    const { unit, decimals } = this.grid;
+    const { point, findings, evaluated, withheld } = this.stated({ value, unit, decimals });
     const broken = applyAccepts(point, findings, evaluated !== null).findings.filter(blocks);
     if (!evaluated) return { keeps: false, broken: [withheld?.code ?? "missing-value"], figures: false };
     return { keeps: broken.length === 0, broken: byGravity(broken).map(label), figures: true };
   }
 
-  #tried(value: number) {
-    return { stated: this.stated({ value, unit: this.grid.unit, decimals: this.grid.decimals }) };
-  }
-
-  /** The index of the best value that keeps everything; null where none does. */
+  /** The index of the best value that keeps everything; null where none does, and `least` says which breaks least. */
   best(): number | null {
     const { from, to, step, value } = this.grid;
-    for (let i = from; step < 0 ? to <= i : i <= to; i += step) if (this.try(value(i)).keeps) return i;
+    for (let i = from; step < 0 ? to <= i : i <= to; i += step) {
+      const trial = this.try(value(i));
+      if (trial.keeps) return i;
+      // Of two that break as much the later one, which asks less, is named.
+      const { least } = this;
+      if (trial.figures && (!least || trial.broken.length <= least.trial.broken.length))
+        this.least = { at: i, trial };
+    }
     return null;
   }
 
@@ -146,17 +150,9 @@ class Found implements Solved {
 
 /** No value keeps everything: what stands in the way at the value that breaks least. */
 function unsolved(seeker: Seeker): SolvedPoint {
-  const { grid } = seeker;
-  const { from, to, step, value } = grid;
-  let least: { readonly at: number; readonly trial: Trial } | null = null;
-  // From the easy end, so that of two that break as much the easier is named.
-  for (let i = to; step < 0 ? i <= from : from <= i; i -= step) {
-    const trial = seeker.try(value(i));
-    if (trial.figures && (!least || trial.broken.length < least.trial.broken.length))
-      least = { at: i, trial };
-  }
+  const { grid, least } = seeker;
   // Without figures anywhere something else is in the way, which is told as it is for any point.
-  if (!least) return { stated: seeker.stated(grid.written(to)), solved: null };
+  if (!least) return { stated: seeker.stated(grid.written(grid.to)), solved: null };
   const at = `${grid.what} ${formatWritten(grid.written(least.at), grid.keyword)}`;
   return withoutSolution(
     seeker,
