@@ -98,6 +98,57 @@ describe("plumbline check", () => {
     }
   });
 
+  it("prints what is accepted as a suppression with its reason, and counts it", () => {
+    const log = JSON.parse(plumbline(["check", "demo/night-mail-2.plumb", "--format", "sarif"]).stdout);
+    const taken = log.runs[0].results.filter((one: { suppressions?: unknown }) => one.suppressions);
+    expect(taken).toMatchObject([
+      {
+        ruleId: "bank-over-advice",
+        level: "note",
+        suppressions: [
+          {
+            kind: "inSource",
+            status: "accepted",
+            justification: "inside the mast, still within the must row; by J. Lund; to 30",
+          },
+        ],
+      },
+    ]);
+    expect(plumbline(["check", "demo/night-mail-2.plumb"]).stderr).toContain(", 1 accepted in 1 note");
+  });
+
+  it("lists with --passed what was checked and held, in JSON and in SARIF", () => {
+    const args = ["check", "demo/winter-shuttle.plumb", "--passed", "--format"];
+    const { files } = JSON.parse(plumbline([...args, "json"]).stdout) as {
+      files: { passed: Record<string, unknown>[]; findings: { code: string; line: number }[] }[];
+    };
+    const [file] = files;
+    expect(file?.passed).toContainEqual({
+      line: 12,
+      endLine: 13,
+      phase: "takeoff",
+      title: "Runway 25, left at 400 ft",
+      at: null,
+      rule: "must takeoff, departure, missed ratio 1.13, vs 1.2",
+      kind: "row",
+      code: "ratio-short",
+      figure: expect.closeTo(1.21, 1),
+      bound: 1.13,
+      unit: null,
+    });
+    // The noise turn breaks its bank rows; what it breaks it has not passed.
+    const noise = file?.passed.filter(({ line }) => line === 21).map(({ code }) => code) ?? [];
+    expect(noise).toContain("warning-in-turn");
+    expect(noise).not.toContain("bank-over-limit");
+    const log = JSON.parse(plumbline([...args, "sarif"]).stdout);
+    const passes = log.runs[0].results.filter((one: { kind?: string }) => one.kind === "pass");
+    expect(passes).toHaveLength(file?.passed.length ?? 0);
+    expect(plumbline(["check", "demo", "--passed"])).toMatchObject({
+      status: 2,
+      stderr: expect.stringContaining("--passed needs --format json or sarif"),
+    });
+  });
+
   it("writes where it is told, and reads cards under --root", () => {
     writeFileSync(join(folder, "cards.plumb"), card);
     const out = join(folder, "out.txt");
@@ -150,10 +201,16 @@ describe("plumbline points", () => {
     });
   });
 
-  it("prints CSV with one row a point and the caution last", () => {
+  it("prints CSV with one row a point or value of a sweep, and the caution last", () => {
+    const { files } = JSON.parse(plumbline(["points", "demo", "--format", "json"]).stdout) as {
+      files: { points: { sweep: unknown[] | null }[] }[];
+    };
+    const points = files.flatMap((file) => file.points);
+    const rows = points.reduce((sum, { sweep }) => sum + (sweep?.length ?? 1), 0);
+    expect(rows).toBeGreaterThan(points.length);
     const lines = plumbline(["points", "demo", "--format", "csv"]).stdout.trimEnd().split("\r\n");
     expect(lines[0]).toMatch(/^path,line,.*speed\.cas_kt.*,caution$/);
-    expect(lines).toHaveLength(1 + 14);
+    expect(lines).toHaveLength(1 + rows);
     for (const line of lines.slice(1)) expect(line).toContain("planning aid");
   });
 
