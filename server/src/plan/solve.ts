@@ -1,3 +1,4 @@
+import { fromSI, type UnitName } from "../flight/units.ts";
 import { applyAccepts } from "./accepts.ts";
 import { blocks } from "./blocking.ts";
 import type { Clauses } from "./clauses.ts";
@@ -7,6 +8,7 @@ import { formatWritten } from "./format.ts";
 import { closed, type OpenClause, type Written } from "./openClause.ts";
 import type { Solved, SolvedEnd } from "./point.ts";
 import { findingAt, listed, originOf } from "./site.ts";
+import { speedWindow } from "./solveBounds.ts";
 import { type Grid, gridOf } from "./solveGrid.ts";
 import { withUnknown } from "./unknownState.ts";
 
@@ -70,16 +72,36 @@ class Seeker {
 
   /** The index of the best value that keeps everything; null where none does, and `least` says which breaks least. */
   best(): number | null {
-    const { from, to, step, value } = this.grid;
-    for (let i = from; step < 0 ? to <= i : i <= to; i += step) {
-      const trial = this.try(value(i));
-      if (trial.keeps) return i;
-      // Of two that break as much the later one, which asks less, is named.
-      const { least } = this;
-      if (trial.figures && (!least || trial.broken.length <= least.trial.broken.length))
-        this.least = { at: i, trial };
-    }
+    const { step } = this.grid;
+    const { from, to } = this.#searched();
+    for (let i = from; step < 0 ? to <= i : i <= to; i += step) if (this.#keepsAt(i)) return i;
     return null;
+  }
+
+  #keepsAt(i: number): boolean {
+    const trial = this.try(this.grid.value(i));
+    // Of two that break as much the later one, which asks less, is named.
+    const { least } = this;
+    if (!trial.keeps && trial.figures && (!least || trial.broken.length <= least.trial.broken.length))
+      this.least = { at: i, trial };
+    return trial.keeps;
+  }
+
+  /** Where a value can keep everything: the whole grid, or for a speed the part that is not ruled out beforehand. */
+  #searched(): Pick<Grid, "from" | "to"> {
+    const { grid } = this;
+    if (grid.what !== "speed") return grid;
+    const window = speedWindow(grid, this.stated(grid.written(this.#probe())));
+    if (!window) return grid;
+    if (window.low <= window.high) return { from: window.low, to: window.high };
+    // Nothing is left between what is asked for at least and at most: the fastest allowed says what is in the way.
+    return { from: window.high - 2, to: window.high - 1 };
+  }
+
+  /** A speed at which most aeroplanes have figures. */
+  #probe(): number {
+    const { shownUnit } = this.grid;
+    return shownUnit === "M" ? 500 : Math.round(fromSI(100, shownUnit as UnitName));
   }
 
   /** True where nothing stands in the way beyond the first value that was tried. */
