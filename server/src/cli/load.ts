@@ -75,7 +75,7 @@ export function flavourOf(path: string): Flavour {
   return /\.(md|markdown)$/i.test(path) ? "markdown" : "plumb";
 }
 
-function shortPath(file: string, cwd: string): string {
+export function shortPath(file: string, cwd: string): string {
   return relative(cwd, file).split(sep).join("/") || file;
 }
 
