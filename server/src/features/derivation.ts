@@ -20,9 +20,9 @@ import type { Limits } from "../plan/limits.ts";
 import type { Conditions, HeldRow, PointResult } from "../plan/point.ts";
 import { resultEntry, resultNames } from "../plan/results.ts";
 import { atMost } from "../plan/rules.ts";
+import { plainMarkdown } from "../report/plainMarkdown.ts";
 import { inputsText, speedText } from "./inputsText.ts";
 import { place } from "./place.ts";
-import { plainMarkdown } from "./plainMarkdown.ts";
 
 /** The result of a point, then how it came about with this note's values, as Markdown. */
 export function derivation(point: PointResult, placed: PlacedClause, uri: string): string {
