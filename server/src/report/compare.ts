@@ -1,6 +1,6 @@
 import type { Note } from "../plan/note.ts";
 import { type DefinitionChange, definitionChanges } from "./comparison/definitionChanges.ts";
-import { withSources } from "./comparison/definitionsOf.ts";
+import { type Definition, definitionsOf, withSources } from "./comparison/definitionsOf.ts";
 import { type FigureChange, figureChanges } from "./comparison/figureChanges.ts";
 import { type FindingChange, findingChanges } from "./comparison/findingChanges.ts";
 import { type Item, itemsOf } from "./comparison/items.ts";
@@ -55,7 +55,10 @@ export interface Comparison {
 
 /** What changed between two revisions of a note. */
 export function compare(old: Revision, now: Revision): Comparison {
-  const definitions = definitionChanges(old.note, now.note);
+  const oldDefinitions = definitionsOf(old.note);
+  const newDefinitions = definitionsOf(now.note);
+  const definitions = definitionChanges(oldDefinitions, newDefinitions);
+  const behind = changedBehind(definitions, [...oldDefinitions, ...newDefinitions]);
   const olds = itemsOf(old.note);
   const news = itemsOf(now.note);
   const oldFindings = findingsByItem(old, olds);
@@ -67,7 +70,7 @@ export function compare(old: Revision, now: Revision): Comparison {
       match,
       (match.old && oldFindings.get(match.old)) ?? [],
       (match.new && newFindings.get(match.new)) ?? [],
-      (item) => definitionsBehind(item, definitions),
+      behind,
       carries,
     );
     if (!change) continue;
@@ -120,7 +123,7 @@ function itemChange(
   { old, new: now, moved }: Match,
   oldFindings: readonly FindingJson[],
   newFindings: readonly FindingJson[],
-  changedBehind: (item: Item) => readonly string[],
+  behind: (item: Item) => readonly string[],
   carries: boolean,
 ): ItemChange | null {
   const parts = partChanges(old?.parts ?? [], now?.parts ?? []);
@@ -137,25 +140,26 @@ function itemChange(
   };
   if (isEdit(change)) return change;
   if (change.results.length + change.findings.length === 0) return null;
-  const because = [...changedBehind(now as Item), ...(carries ? [carriedDown] : [])];
+  const because = [...behind(now as Item), ...(carries ? [carriedDown] : [])];
   return { ...change, because };
 }
 
 const carriedDown = "what carries down from before";
 
-/** The changed cards and limits that a point is computed with, in either revision. */
-function definitionsBehind({ point }: Item, changes: readonly DefinitionChange[]): readonly string[] {
-  const all = changes.flatMap((change) => [change.old, change.new]).flatMap((one) => one ?? []);
-  const limits = withSources([point?.limitsName.toLowerCase() ?? ""], all);
-  return [
-    ...new Set(
-      all
-        .filter(({ kind, name }) =>
-          kind === "card"
-            ? name.toLowerCase() === point?.aircraft?.toLowerCase()
-            : limits.has(name.toLowerCase()),
-        )
-        .map(({ kind, name }) => `the ${kind} ${name}`),
-    ),
-  ];
+/** For a point, the changed cards and limits that it is computed with, in either revision. */
+function changedBehind(
+  changes: readonly DefinitionChange[],
+  all: readonly Definition[],
+): (item: Item) => readonly string[] {
+  const changed = changes.flatMap((change) => change.new ?? change.old ?? []);
+  return ({ point }) => {
+    if (!point || changed.length === 0) return [];
+    const aircraft = point.aircraft?.toLowerCase();
+    const limits = withSources([point.limitsName.toLowerCase()], all);
+    return changed
+      .filter(({ kind, name }) =>
+        kind === "card" ? name.toLowerCase() === aircraft : limits.has(name.toLowerCase()),
+      )
+      .map(({ kind, name }) => `the ${kind} ${name}`);
+  };
 }

@@ -1,5 +1,4 @@
-import type { Note } from "../../plan/note.ts";
-import { type Definition, definitionsOf } from "./definitionsOf.ts";
+import type { Definition } from "./definitionsOf.ts";
 import { type PartChange, partChanges } from "./partChanges.ts";
 
 /** A card or limits that is another one now; null on the side where there is none. */
@@ -10,9 +9,12 @@ export interface DefinitionChange {
 }
 
 /** What changed in the cards and limits that the revisions use, wherever they are written. */
-export function definitionChanges(old: Note, now: Note): readonly DefinitionChange[] {
-  const left = [...definitionsOf(now)];
-  const pairs = definitionsOf(old).map((one) => {
+export function definitionChanges(
+  olds: readonly Definition[],
+  news: readonly Definition[],
+): readonly DefinitionChange[] {
+  const left = [...news];
+  const pairs = olds.map((one) => {
     const at = left.findIndex((other) => key(other) === key(one));
     return { old: one, new: at < 0 ? null : (left.splice(at, 1)[0] ?? null) };
   });

@@ -2,6 +2,7 @@ import { align, type Pair } from "./align.ts";
 import { inOrder } from "./inOrder.ts";
 import type { Item } from "./items.ts";
 import { likeness, saidInBoth } from "./partChanges.ts";
+import type { Part } from "./parts.ts";
 
 export interface Match {
   readonly old: Item | null;
@@ -16,7 +17,8 @@ const ONE_PAIR = 1_000_000;
 /**
  * Finds each point and setting of the old revision in the new one. What says the same comes first,
  * then what has the same phase and title; then, between two neighbours that were found, what has the
- * same phase, or else the same title or half of its clauses. What is left came or went.
+ * same phase and something else in common, or else the same title or half of its clauses. What is left
+ * came or went.
  */
 export function matchItems(olds: readonly Item[], news: readonly Item[]): readonly Match[] {
   const matching = new Matching(olds, news);
@@ -24,7 +26,7 @@ export function matchItems(olds: readonly Item[], news: readonly Item[]): readon
   matching.everywhere((old, now) => (old.content === now.content ? 1 : 0));
   matching.everywhere((old, now) => (isTitled(old) && sameHead(old, now) ? alike(old, now) : 0));
   matching.inGaps((old, now) => (sameHead(old, now) && related(old, now) ? alike(old, now) : 0));
-  matching.inGaps((old, now) => (samePhase(old, now) ? alike(old, now) : 0));
+  matching.inGaps((old, now) => (samePhase(old, now) && mayBeRetitled(old, now) ? alike(old, now) : 0));
   matching.inGaps((old, now) => (sameTitle(old, now) || sharesHalf(old, now) ? alike(old, now) : 0));
   matching.everywhere((old, now) => (samePhase(old, now) && sharesHalf(old, now) ? alike(old, now) : 0));
   return matching.matches();
@@ -167,10 +169,21 @@ function related(old: Item, now: Item): boolean {
   return old.point !== null || likeness(old.parts, now.parts) > 0;
 }
 
+/** Under another title it is the same point only where something else of it stayed. */
+function mayBeRetitled(old: Item, now: Item): boolean {
+  return related(old, now) && (!(isTitled(old) && isTitled(now)) || ownSaidInBoth(old, now) > 0);
+}
+
 function sharesHalf(old: Item, now: Item): boolean {
   if ((old.point === null) !== (now.point === null)) return false;
-  const own = (item: Item) => item.parts.filter((part) => part.keyword !== "phase");
-  const [olds, news] = [own(old), own(now)];
-  const shared = saidInBoth(olds, news);
-  return 0 < shared && Math.max(olds.length, news.length) <= 2 * shared;
+  const shared = ownSaidInBoth(old, now);
+  return 0 < shared && Math.max(own(old).length, own(now).length) <= 2 * shared;
+}
+
+function ownSaidInBoth(old: Item, now: Item): number {
+  return saidInBoth(own(old), own(now));
+}
+
+function own({ parts }: Item): readonly Part[] {
+  return parts.filter((part) => part.keyword !== "phase");
 }
