@@ -200,7 +200,7 @@ describe("results and findings", () => {
   });
 
   it("are given in full in JSON beside what is shown", () => {
-    const json = comparisonJson(compared(two("200 kg"), two("900 kg")), caution) as {
+    const json = comparisonJson(compared(two("200 kg"), two("900 kg"))) as {
       points: {
         results: { name: string; old: { shown: string; value: { high: number; unit: string } } }[];
       }[];

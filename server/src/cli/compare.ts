@@ -1,7 +1,6 @@
 import { stat } from "node:fs/promises";
 import { dirname, resolve, sep } from "node:path";
 import { discover, notesIn } from "../disk/discover.ts";
-import { caution } from "../plan/caution.ts";
 import { compare as compareRevisions, type Revision } from "../report/compare.ts";
 import { comparisonJson } from "../report/comparisonJson.ts";
 import { comparisonText } from "../report/comparisonText.ts";
@@ -41,8 +40,8 @@ export async function compare(before: string, now: string, options: CompareOptio
   const comparison = compareRevisions(old, newer);
   const text =
     options.format === "json"
-      ? `${JSON.stringify(comparisonJson(comparison, caution), null, 2)}\n`
-      : `${comparisonText(comparison, options.format)}\n${caution}\n`;
+      ? `${JSON.stringify(comparisonJson(comparison), null, 2)}\n`
+      : comparisonText(comparison, options.format);
   await emit(text, options);
   return exitCode([{ path: newer.path, findings: findingsJson(newer.note) }], options.failOn);
 }

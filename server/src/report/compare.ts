@@ -9,7 +9,7 @@ import { type PartChange, partChanges } from "./comparison/partChanges.ts";
 import { type Tightest, tightest } from "./comparison/tightest.ts";
 import { type FindingJson, findingsJson } from "./findingsJson.ts";
 import { type Summary, summarize } from "./findingsText.ts";
-import { fileJson } from "./pointsJson.ts";
+import { fileJson, type JsonValue, type PointJson } from "./pointsJson.ts";
 
 /** One of the two notes that are compared, with its own cards and limits around it. */
 export interface Revision {
@@ -22,6 +22,10 @@ export interface Revision {
 export interface RevisionSummary {
   readonly path: string;
   readonly points: number;
+  /** How many of them have no figures. */
+  readonly withoutFigures: number;
+  /** The codes of the findings that keep them from having any. */
+  readonly withheldBy: readonly string[];
   readonly findings: Summary;
   readonly margin: Tightest | null;
   readonly ratio: Tightest | null;
@@ -98,10 +102,16 @@ function summaryOf({ note, path }: Revision): RevisionSummary {
   return {
     path,
     points: points.length,
+    withoutFigures: points.filter((point) => point.speed === null).length,
+    withheldBy: [...new Set(points.map((point) => point.withheld).flatMap(codeOf))],
     findings: summarize([{ path, findings }]),
     margin: tightest(points, "margin"),
     ratio: tightest(points, "ratio"),
   };
+}
+
+function codeOf(withheld: JsonValue | undefined): readonly string[] {
+  return withheld ? [String((withheld as PointJson).code)] : [];
 }
 
 /** The findings of each point and setting; under null those of nobody. */

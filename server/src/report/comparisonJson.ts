@@ -1,3 +1,4 @@
+import { caution } from "../plan/caution.ts";
 import { fileName } from "../plan/names.ts";
 import type { Comparison, ItemChange, RevisionSummary } from "./compare.ts";
 import type { Definition } from "./comparison/definitionsOf.ts";
@@ -9,7 +10,7 @@ import type { Figure } from "./comparison/pointFigures.ts";
 import type { Tightest } from "./comparison/tightest.ts";
 
 /** What `compare --format json` prints: lines count from 1, values have full precision, `shown` is as tables show it. */
-export function comparisonJson(comparison: Comparison, caution: string): object {
+export function comparisonJson(comparison: Comparison): object {
   return {
     schema: 1,
     caution,
@@ -29,8 +30,8 @@ export function comparisonJson(comparison: Comparison, caution: string): object 
   };
 }
 
-function revisionJson({ path, points, findings, margin, ratio }: RevisionSummary): object {
-  return { path, points, findings, tightest: { margin: tightestJson(margin), ratio: tightestJson(ratio) } };
+function revisionJson({ margin, ratio, ...counts }: RevisionSummary): object {
+  return { ...counts, tightest: { margin: tightestJson(margin), ratio: tightestJson(ratio) } };
 }
 
 function tightestJson(tightest: Tightest | null): object | null {

@@ -1,3 +1,4 @@
+import { caution } from "../plan/caution.ts";
 import { fileName } from "../plan/names.ts";
 import { type Comparison, type ItemChange, isEdit, type RevisionSummary } from "./compare.ts";
 import type { DefinitionChange } from "./comparison/definitionChanges.ts";
@@ -32,7 +33,7 @@ const markdown: Style = {
   table: (rows, head) => `${markdownTable(rows, head)}\n`,
 };
 
-/** A comparison for a reader, without the caution. */
+/** A comparison for a reader. */
 export function comparisonText(comparison: Comparison, format: "table" | "markdown"): string {
   const style = format === "markdown" ? markdown : plain;
   const { old, new: now, same, definitions, items, findings } = comparison;
@@ -45,6 +46,7 @@ export function comparisonText(comparison: Comparison, format: "table" | "markdo
     ...(findings.length > 0
       ? [style.heading("Findings beside the points"), ...findingLines(findings, style)]
       : []),
+    `\n${caution}\n`,
   ].join("");
 }
 
@@ -55,12 +57,17 @@ function summaryRows(old: RevisionSummary, now: RevisionSummary): readonly Table
   const row = (name: string, of: (one: RevisionSummary) => string): TableRow => [name, of(old), of(now)];
   return [
     row("points", ({ points }) => String(points)),
+    ...(old.withoutFigures + now.withoutFigures > 0 ? [row("without figures", withoutFigures)] : []),
     ...(["error", "warning", "information", "hint"] as const).map((severity) =>
       row(plurals[severity], ({ findings }) => String(findings[severity])),
     ),
     row("tightest margin", ({ margin }) => tightestText(margin)),
     row("tightest ratio", ({ ratio }) => tightestText(ratio)),
   ];
+}
+
+function withoutFigures({ withoutFigures: count, withheldBy }: RevisionSummary): string {
+  return withheldBy.length > 0 ? `${count} (${withheldBy.join(", ")})` : String(count);
 }
 
 const plurals = { error: "errors", warning: "warnings", information: "information", hint: "hints" };
