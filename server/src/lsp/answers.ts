@@ -211,7 +211,10 @@ export function answerRequests(
     answering("compare", async (params: CompareParams, token: CancellationToken): Promise<CompareAnswer> => {
       const note = await noteOf(params.textDocument.uri, token);
       const folder = workspace.folderOf(params.textDocument.uri);
-      return note && folder ? compareWithOlder(note, folder, params) : null;
+      if (!note || !folder) return null;
+      // Folders of one window do not see each other's cards, neither now nor then.
+      const others = params.others.filter(({ uri }) => workspace.folderOf(uri) === folder);
+      return compareWithOlder(note, folder, { ...params, others });
     }),
   );
 }
