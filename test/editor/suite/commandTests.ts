@@ -39,6 +39,7 @@ export const commandTests: readonly Test[] = [
       });
       await vscode.window.showTextDocument(untitled);
       await vscode.commands.executeCommand("plumbline.compareWithCommitted");
+      assert.deepEqual(comparisonsOpen(), []);
       if (hasPage) {
         await eventually("the reason", async () => {
           const told = await page.texts(".notifications-toasts .notification-list-item-message");
@@ -99,6 +100,7 @@ async function refused(message: string): Promise<void> {
   await eventually(message, async () => {
     await openNote("winter-shuttle.plumb");
     await vscode.commands.executeCommand("plumbline.compareWithCommitted");
+    assert.deepEqual(comparisonsOpen(), []);
     if (!hasPage) return;
     const told = await page.texts(".notifications-toasts .notification-list-item-message");
     assert.ok(
@@ -118,11 +120,14 @@ async function comparisonWith(what: RegExp): Promise<string> {
       tabs.some((tab) => tab.label.includes("winter-shuttle.plumb since its last commit")),
       tabs.map((tab) => tab.label).join(", "),
     );
-    const documents = vscode.workspace.textDocuments.filter(
-      (one) => one.uri.scheme === "plumbline-comparison",
-    );
-    const text = documents.map((one) => one.getText()).join("");
+    const text = comparisonsOpen().join("");
     assert.match(text, what);
     return text;
   });
+}
+
+function comparisonsOpen(): readonly string[] {
+  return vscode.workspace.textDocuments
+    .filter((one) => one.uri.scheme === "plumbline-comparison")
+    .map((one) => one.getText());
 }

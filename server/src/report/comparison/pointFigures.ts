@@ -14,7 +14,7 @@ import { lineOf } from "../../plan/origin.ts";
 import type { Conditions, PointResult } from "../../plan/point.ts";
 import { inShownUnit, resultEntry, resultNames } from "../../plan/results.ts";
 import { type JsonValue, type PointJson, pointJson } from "../pointsJson.ts";
-import { shownField } from "./shownField.ts";
+import { fieldName, resultOfField, shownField } from "./shownField.ts";
 
 /** Something that is known of a point: as it is shown, and in full. */
 export interface Figure {
@@ -101,19 +101,26 @@ function resultFigures({ results }: PointResult): readonly Figure[] {
 
 /** Told above, as a clause of the point or as a finding; or no figure at all. */
 const elsewhere = new Set([
-  ...["line", "endLine", "phase", "title", "aside", "emergency", "claims", "inherited", "withheld"],
+  ...[
+    "line",
+    "endLine",
+    "phase",
+    "title",
+    "aside",
+    "emergency",
+    "claims",
+    "accepted",
+    "inherited",
+    "withheld",
+  ],
   ...["aircraft", "limits", "rules", "config", "speed", "bank_side", "engine_out"],
   ...["mass_kg", "altitude_ft", "pressure_altitude_ft", "isa_deviation_c", "cg_percent"],
   ...["lift_loss_percent", "bank_deg", "path_deg"],
 ]);
 
-const ofResult = new RegExp(
-  `^(${resultNames.map((name) => name.replaceAll("-", "_")).join("|")})(_low|_high)?(_kt|_deg|_nm|_deg_s)?(_low|_high)?$`,
-);
-
 function furtherFigures(json: PointJson): readonly Figure[] {
   return Object.keys(json)
-    .filter((name) => !elsewhere.has(name) && !ofResult.test(name))
+    .filter((name) => !elsewhere.has(name) && resultOfField(name) === null)
     .filter((name) => json[`${name}_low`] === undefined && json[`${name}_high`] === undefined)
     .flatMap((name) =>
       name === "sweep" ? sweepFigures(json[name] ?? null) : [fieldFigure(name, json[name] ?? null)],
@@ -140,9 +147,5 @@ function sweepFigures(sweep: JsonValue): readonly Figure[] {
 const sweptFields = ["margin_low", "ratio_low", "stall_high_kt", "warning_high_kt", "codes"];
 
 function fieldFigure(field: string, value: JsonValue): Figure {
-  return {
-    name: field.replace(/_(low|high|kt|deg|ft|nm)\b/g, "").replaceAll("_", " "),
-    shown: shownField(field, value),
-    value,
-  };
+  return { name: fieldName(field), shown: shownField(field, value), value };
 }

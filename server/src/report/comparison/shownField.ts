@@ -1,4 +1,5 @@
 import { toSI } from "../../flight/units.ts";
+import type { ResultName } from "../../notation/vocabulary.ts";
 import {
   formatAltitude,
   formatBank,
@@ -9,6 +10,7 @@ import {
   formatResultValue,
   formatSpeed,
 } from "../../plan/format.ts";
+import { fromShownUnit, resultNames } from "../../plan/results.ts";
 import type { JsonValue } from "../pointsJson.ts";
 
 /**
@@ -25,12 +27,23 @@ export function shownField(name: string, value: JsonValue): string {
   }
   return Object.entries(value)
     .filter(([key, one]) => one !== null && !behindTheScenes.has(key))
-    .map(([key, one]) => `${key.replaceAll("_", " ")} ${shownField(key, one)}`)
+    .map(([key, one]) => `${fieldName(key)} ${shownField(key, one)}`)
     .join(", ");
 }
 
 /** Full precision that is rounded in its neighbour, and lines, which are no figures. */
 const behindTheScenes = new Set(["exact", "line"]);
+
+/** A field's name without its unit and the corner it is of: the figure says both. */
+export function fieldName(field: string): string {
+  return field.replace(/(_(low|high|kt|deg|ft|nm|s))+$/, "").replaceAll("_", " ");
+}
+
+/** The result that a field is a value of; null where it is another figure. */
+export function resultOfField(field: string): ResultName | null {
+  const stem = field.replace(/(_(low|high|kt|deg|nm|deg_s))+$/, "").replaceAll("_", "-");
+  return resultNames.find((name) => name === stem) ?? null;
+}
 
 const byName: readonly (readonly [RegExp, (value: number) => string])[] = [
   [/^(ratio|margin)(_|$)/, (value) => formatResultValue("margin", value)],
@@ -43,6 +56,8 @@ const byName: readonly (readonly [RegExp, (value: number) => string])[] = [
 ];
 
 function shownNumber(name: string, value: number): string {
+  const result = resultOfField(name);
+  if (result) return formatResultValue(result, fromShownUnit(result, value));
   const format = byName.find(([pattern]) => pattern.test(name))?.[1];
   if (format) return format(value);
   return Number.isInteger(value) ? String(value) : formatFactor(value);
