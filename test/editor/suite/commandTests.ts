@@ -74,12 +74,13 @@ export const commandTests: readonly Test[] = [
           assert.match(text, /gone, error: Bank 32°/);
           assert.match(text, /not approved data/);
           assert.doesNotMatch(text, /The card/);
-          if (hasPage) await page.screenshot("compare");
+          if (hasPage) await drawn(/gone, error: Bank 32° exceeds/);
         });
         await writeFile(cards, cardsBefore.replace("stall 127 kt", "stall 129 kt"));
         const text = await comparisonWith(/The card brambling-37 has changed \(aeroplanes\.plumb, line 7\)/);
         assert.match(text, /not edited; the card brambling-37 changed/);
         assert.doesNotMatch(text, /bank 28/);
+        if (hasPage) await drawn(/The card brambling-37 has changed/);
       } finally {
         await writeFile(cards, cardsBefore);
         await rm(join(folder, ".git"), { recursive: true, force: true });
@@ -113,7 +114,11 @@ async function refused(message: string): Promise<void> {
 /** Runs the comparison until it says what is looked for, and its preview is there; gives its text. */
 async function comparisonWith(what: RegExp): Promise<string> {
   return eventually(`a comparison with ${what}`, async () => {
-    await openNote("winter-shuttle.plumb");
+    const folder = vscode.workspace.workspaceFolders?.[0];
+    assert.ok(folder);
+    // Beside the preview, and not in its place.
+    const note = vscode.Uri.joinPath(folder.uri, "winter-shuttle.plumb");
+    await vscode.window.showTextDocument(note, { viewColumn: vscode.ViewColumn.One, preview: false });
     await vscode.commands.executeCommand("plumbline.compareWithCommitted");
     const tabs = vscode.window.tabGroups.all.flatMap((group) => group.tabs);
     assert.ok(
@@ -124,6 +129,16 @@ async function comparisonWith(what: RegExp): Promise<string> {
     assert.match(text, what);
     return text;
   });
+}
+
+/** Waits until the preview shows a text, the newest one; a picture of it is saved. */
+async function drawn(text: RegExp): Promise<void> {
+  await vscode.commands.executeCommand("workbench.action.closePanel");
+  await vscode.commands.executeCommand("notifications.clearAll");
+  await eventually(`a preview with ${text}`, async () =>
+    assert.match((await page.frames()).join("\n"), text),
+  );
+  await page.screenshot("compare");
 }
 
 function comparisonsOpen(): readonly string[] {
