@@ -1,5 +1,7 @@
 import { type ExtensionContext, commands as editorCommands, window } from "vscode";
 import type { BaseLanguageClient } from "vscode-languageclient";
+import { compareWithCommitted } from "./compareWithCommitted.ts";
+import type { Comparisons } from "./comparisons.ts";
 import { openDemo } from "./openDemo.ts";
 import { toggleHints } from "./toggleHints.ts";
 
@@ -7,6 +9,7 @@ import { toggleHints } from "./toggleHints.ts";
 export interface CommandContext {
   readonly extension: ExtensionContext;
   readonly client: BaseLanguageClient;
+  readonly comparisons: Comparisons;
 }
 
 type Command = (context: CommandContext, ...args: unknown[]) => Promise<void>;
@@ -16,6 +19,7 @@ const commands: Readonly<Record<string, Command>> = {
   "plumbline.toggleHints": toggleHints,
   "plumbline.restartServer": restartServer,
   "plumbline.openDemo": openDemo,
+  "plumbline.compareWithCommitted": compareWithCommitted,
 };
 
 export function registerCommands(context: CommandContext): void {

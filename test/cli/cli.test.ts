@@ -1,5 +1,5 @@
 import { spawnSync } from "node:child_process";
-import { mkdtempSync, readFileSync, rmSync, writeFileSync } from "node:fs";
+import { mkdirSync, mkdtempSync, readFileSync, rmSync, writeFileSync } from "node:fs";
 import { tmpdir } from "node:os";
 import { join } from "node:path";
 import { fileURLToPath } from "node:url";
@@ -218,6 +218,99 @@ describe("plumbline points", () => {
     expect(plumbline(["points", "demo/winter-shuttle.plumb", "--format", "markdown"]).stdout).toMatch(
       /^## demo\/winter-shuttle\.plumb\n\n\| line \| phase \|/,
     );
+  });
+});
+
+describe("plumbline compare", () => {
+  const older = `${card}\n${point}`;
+  const newer = older.replace("stall 95 kt", "stall 96 kt").replace("phase cruise", "phase cruise; bank 40");
+  let revisions = "";
+  let months = "";
+  beforeAll(() => {
+    revisions = mkdtempSync(join(tmpdir(), "plumbline-revisions-"));
+    months = mkdtempSync(join(tmpdir(), "plumbline-months-"));
+    writeFileSync(join(revisions, "older.plumb"), older);
+    writeFileSync(join(revisions, "newer.plumb"), newer);
+    mkdirSync(join(months, "march"));
+    writeFileSync(join(months, "march", "cards.plumb"), card.replace("stall 95 kt", "stall 90 kt"));
+    writeFileSync(join(months, "march", "note.plumb"), point);
+    mkdirSync(join(months, "april"));
+    writeFileSync(join(months, "april", "cards.plumb"), card);
+    writeFileSync(join(months, "april", "note.plumb"), point);
+  });
+  afterAll(() => {
+    for (const one of [revisions, months]) rmSync(one, { recursive: true });
+  });
+  const compared = (...args: string[]) => plumbline(["compare", ...args], { cwd: revisions });
+
+  it("prints what changed with the caution, in every format, and ends with 0", () => {
+    for (const format of ["table", "markdown", "json"]) {
+      const { status, stdout } = compared("older.plumb", "newer.plumb", "--format", format);
+      expect(status).toBe(0);
+      expect(stdout).toContain("not approved data");
+      expect(stdout).toContain("bank-over-limit");
+      // The two revisions define the same card, and neither is told that it is there twice.
+      expect(stdout).not.toContain("duplicate-name");
+    }
+    const json = JSON.parse(compared("older.plumb", "newer.plumb", "--format", "json").stdout);
+    expect(json).toMatchObject({
+      schema: 1,
+      same: false,
+      old: { path: "older.plumb" },
+      new: { path: "newer.plumb" },
+    });
+    expect(json.definitions).toMatchObject([{ kind: "card", name: "wheatear-9", change: "changed" }]);
+    expect(json.points).toMatchObject([{ change: "changed", inputs: [{ keyword: "bank", old: null }] }]);
+  });
+
+  it("writes where it is told, and has an exit code for the new note's findings", () => {
+    const out = join(revisions, "out.md");
+    const { stdout } = compared("older.plumb", "newer.plumb", "--format", "markdown", "-o", out);
+    expect(stdout).toBe("");
+    expect(readFileSync(out, "utf8")).toMatch(/^# older\.plumb compared with newer\.plumb\n/);
+    expect(compared("older.plumb", "newer.plumb", "--fail-on", "error").status).toBe(1);
+    expect(compared("newer.plumb", "older.plumb", "--fail-on", "error").status).toBe(0);
+  });
+
+  it("takes one revision from standard input, as an older text of the other", () => {
+    const args = ["compare", "-", "newer.plumb", "--format", "json"];
+    const { stdout } = plumbline(args, { cwd: revisions, input: newer.replace("bank 40", "bank 20") });
+    const json = JSON.parse(stdout);
+    expect(json.old.path).toBe("newer.plumb");
+    expect(json.points[0].inputs[0].old.text).toBe("bank 20");
+  });
+
+  it("gives each revision the cards of its own folder, and of its own root", () => {
+    const json = (...args: string[]) =>
+      JSON.parse(plumbline(["compare", ...args, "--format", "json"], { cwd: months }).stdout);
+    const stall = (compared: ReturnType<typeof json>, side: "old" | "new") =>
+      compared.definitions[0].clauses[0][side].text;
+    const own = json("march/note.plumb", "april/note.plumb");
+    expect([stall(own, "old"), stall(own, "new")]).toEqual([
+      "config clean stall 90 kt",
+      "config clean stall 95 kt",
+    ]);
+    expect(own.points).toMatchObject([{ inputs: [], because: ["the card wheatear-9"] }]);
+    writeFileSync(join(months, "note.plumb"), point);
+    const roots = json("note.plumb", "april/note.plumb", "--old-root", "march");
+    expect([stall(roots, "old"), stall(roots, "new")]).toEqual([stall(own, "old"), stall(own, "new")]);
+    const back = json("april/note.plumb", "note.plumb", "--new-root", "march");
+    expect([stall(back, "old"), stall(back, "new")]).toEqual([stall(own, "new"), stall(own, "old")]);
+    // Both months lie under the one root that the note in the middle has, and so does either card.
+    const twice = json("note.plumb", "note.plumb");
+    expect(twice.new).toMatchObject({ withoutFigures: 1, withheldBy: ["duplicate-name"] });
+  });
+
+  it.each([
+    [["older.plumb"], "missing required argument 'new'"],
+    [["older.plumb", "nothing.plumb"], "There is no file or folder nothing.plumb."],
+    [["older.plumb", "."], ". is a folder: compare takes two notes, so name the file in it."],
+    [["-", "-"], "Only one of the two revisions can come from standard input."],
+    [["older.plumb", "newer.plumb", "--old-root", "nowhere"], "There is no file or folder"],
+  ])("refuses %j with one clear line and 2", (args, message) => {
+    const { status, stdout, stderr } = compared(...args);
+    expect([status, stdout]).toEqual([2, ""]);
+    expect(stderr).toContain(message);
   });
 });
 

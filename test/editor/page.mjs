@@ -18,6 +18,11 @@ export function servePage(page, pictures) {
     async texts({ selector }) {
       return page.$$eval(selector, (found) => found.map((one) => one.textContent ?? ""));
     },
+    /** The text of every frame within the page: what a webview shows. */
+    async frames() {
+      const inner = page.frames().filter((frame) => frame !== page.mainFrame());
+      return Promise.all(inner.map((frame) => frame.evaluate(() => document.body?.textContent ?? "")));
+    },
     /** Waits until a selector finds something visible. */
     async appears({ selector }) {
       await page.waitForSelector(selector, { state: "visible", timeout: 15_000 });

@@ -13,6 +13,7 @@ import type {
   TextEdit,
   WorkspaceDiagnosticReport,
 } from "vscode-languageserver";
+import type { CompareParams } from "../../server/src/lsp/protocol.ts";
 import { createFolder } from "../../server/src/plan/createFolder.ts";
 import { fileJson } from "../../server/src/report/pointsJson.ts";
 import { eventually } from "../support/eventually.ts";
@@ -128,6 +129,42 @@ describe("the server over stdio", () => {
       textDocument,
     });
     expect(points.points.map((one) => one.phase)).toContain("cruise");
+  });
+
+  it("compares a note with an older text of it, and with its cards as they were", async () => {
+    const client = await start([demo]);
+    client.open(shuttle, shuttleText);
+    const compared = (oldText: string, others: CompareParams["others"] = []) =>
+      client.request<{ same: boolean; markdown: string }>("plumbline/compare", {
+        textDocument: { uri: shuttle },
+        oldText,
+        oldName: "winter-shuttle.plumb, last commit",
+        others,
+      } satisfies CompareParams);
+    const same = await compared(shuttleText);
+    expect(same.same).toBe(true);
+    expect(same.markdown).toContain("not approved data");
+    const edited = await compared(shuttleText.replace("bank 32 left", "bank 28 left"));
+    expect(edited.markdown).toContain(
+      "# winter-shuttle.plumb, last commit compared with winter-shuttle.plumb",
+    );
+    expect(edited.markdown).toMatch(/\| bank \(line \d+\) \| bank 28 left \| bank 32 left \|/);
+    expect(edited.markdown).toMatch(/^- new, error: Bank 32°/m);
+    const uri = `${demo}/aeroplanes.plumb`;
+    const cards = readFileSync(join(demoFolder, "aeroplanes.plumb"), "utf8");
+    const old = await compared(shuttleText, [{ uri, text: cards.replace("stall 127 kt", "stall 125 kt") }]);
+    expect(old.markdown).toContain("The card brambling-37 has changed (aeroplanes.plumb, line 7)");
+    expect(old.markdown).toContain('Noise turn", line 21: not edited; the card brambling-37 changed');
+    const without = await compared(shuttleText, [{ uri, text: null }]);
+    expect(without.markdown).toContain("The card brambling-37 is new");
+  });
+
+  it("compares nothing that it does not know", async () => {
+    const client = await start();
+    const textDocument = { uri: "file:///nowhere/note.plumb" };
+    expect(
+      await client.request("plumbline/compare", { textDocument, oldText: "", oldName: "", others: [] }),
+    ).toBeNull();
   });
 
   it("opens the built-in limits from their name", async () => {

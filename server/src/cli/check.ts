@@ -44,7 +44,8 @@ function written(files: readonly CheckedFile[], options: CheckOptions): string {
   }
 }
 
-function exitCode(files: readonly CheckedFile[], failOn: CheckOptions["failOn"]): number {
+/** 1 where the files have a finding at or above `failOn`, else 0. */
+export function exitCode(files: readonly CheckedFile[], failOn: CheckOptions["failOn"]): number {
   const { error, warning } = summarize(files);
   switch (failOn) {
     case "never":

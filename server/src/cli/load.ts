@@ -17,6 +17,8 @@ export interface LoadOptions {
   readonly root: string;
   readonly today: string;
   readonly stdinPath: string;
+  /** The files that they are looked for in, instead of those under the root. */
+  readonly besides?: readonly string[];
 }
 
 /**
@@ -28,7 +30,9 @@ export async function load(paths: readonly string[], options: LoadOptions): Prom
   const named = paths.length === 0 ? ["."] : paths;
   const onDisk = named.filter((path) => path !== "-");
   const wanted = await discover(onDisk, cwd);
-  const besides = await discover([options.root], cwd);
+  const besides = options.besides
+    ? { files: options.besides, problems: [] }
+    : await discover([options.root], cwd);
   const problems = [...wanted.problems, ...besides.problems];
   const texts = new Map<string, string>();
   await Promise.all(

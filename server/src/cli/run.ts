@@ -1,5 +1,6 @@
 import { Command, CommanderError, InvalidArgumentError, Option } from "commander";
 import { check } from "./check.ts";
+import { compare } from "./compare.ts";
 import { explain } from "./explain.ts";
 import { format } from "./formatNotes.ts";
 import { points } from "./points.ts";
@@ -60,6 +61,38 @@ export async function run(argv: readonly string[]): Promise<number> {
         .default("table"),
     )
     .action((paths: string[], options) => settle(points(paths, options)));
+  overNotes(
+    program
+      .command("compare")
+      .argument("<old>", "the revision before: a file, or - for standard input")
+      .argument("<new>", "the revision now: a file, or - for standard input"),
+  )
+    .description("show what changed between two revisions of a note")
+    .addHelpText(
+      "after",
+      `
+Differences alone do not change the exit code: it is 0, or 1 where --fail-on finds something in NEW.
+The cards and limits of each revision are looked for in the folder that it lies in and under its root.
+Neither revision sees the other's note, nor what lies in the other's folders.`,
+    )
+    .option("--old-root <dir>", "where the cards and limits of OLD are looked for, instead of --root")
+    .option("--new-root <dir>", "where the cards and limits of NEW are looked for, instead of --root")
+    .addOption(
+      new Option("--format <format>", "how it is written")
+        .choices(["table", "json", "markdown"])
+        .default("table"),
+    )
+    .addOption(
+      new Option("--fail-on <severity>", "the findings of NEW that make the exit code 1")
+        .choices(["error", "warning", "never"])
+        .default("never"),
+    )
+    .action((before: string, now: string, options, command: Command) => {
+      // Standard input is by far most often an older text of the very note that it is compared with.
+      const named = command.getOptionValueSource("stdinPath") === "cli";
+      const stdinPath = named ? options.stdinPath : before === "-" ? now : before;
+      return settle(compare(before, now, { ...options, stdinPath }));
+    });
   overNotes(program.command("format").argument("[path...]", "files, folders or globs; - for standard input"))
     .description("lay out bar lines: blanks only, never a word or a figure")
     .option("--check", "only tell which files would change", false)

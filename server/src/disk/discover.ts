@@ -62,14 +62,21 @@ export async function walk(folder: string): Promise<readonly string[]> {
   return found.sort();
 }
 
-async function enter(folder: string, above: readonly Rules[], found: string[]): Promise<void> {
+/** The notes of a folder itself, without those of the folders in it. */
+export async function notesIn(folder: string): Promise<readonly string[]> {
+  const found: string[] = [];
+  await enter(folder, await rulesAbove(folder), found, false);
+  return found.sort();
+}
+
+async function enter(folder: string, above: readonly Rules[], found: string[], below = true): Promise<void> {
   const entries = await readdir(folder, { withFileTypes: true }).catch(() => []);
   const own = entries.some((entry) => entry.name === ".gitignore") ? await rulesOf(folder) : null;
   const rules = own ? [...above, own] : above;
   for (const entry of entries) {
     const path = join(folder, entry.name);
     if (entry.isDirectory()) {
-      if (entry.name === ".git" || entry.name === "node_modules") continue;
+      if (!below || entry.name === ".git" || entry.name === "node_modules") continue;
       if (!matches(rules, path, true)) await enter(path, rules, found);
     } else if (entry.isFile() && isNoteFile(entry.name) && !matches(rules, path, false)) found.push(path);
   }

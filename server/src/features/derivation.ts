@@ -31,9 +31,9 @@ import {
   timingRows,
 } from "../report/furtherRows.ts";
 import { otherEndText, solvedText, sweepText } from "../report/openText.ts";
+import { plainMarkdown } from "../report/plainMarkdown.ts";
 import { inputsText, speedText } from "./inputsText.ts";
 import { place } from "./place.ts";
-import { plainMarkdown } from "./plainMarkdown.ts";
 
 /** The result of a point, then how it came about with this note's values, as Markdown. */
 export function derivation(point: PointResult, placed: PlacedClause, uri: string): string {

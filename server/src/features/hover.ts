@@ -6,10 +6,10 @@ import type { Card } from "../plan/card.ts";
 import { formatMass, formatSpeed } from "../plan/format.ts";
 import type { Limits } from "../plan/limits.ts";
 import type { BlockResult, Note } from "../plan/note.ts";
+import { plainMarkdown } from "../report/plainMarkdown.ts";
 import { blockAt } from "./blocksBetween.ts";
 import { derivation } from "./derivation.ts";
 import { place } from "./place.ts";
-import { plainMarkdown } from "./plainMarkdown.ts";
 import { targetAt } from "./target.ts";
 
 export interface Hover {

@@ -17,6 +17,7 @@ import { inlayHints } from "../features/inlayHints.ts";
 import type { Note } from "../plan/note.ts";
 import { fileJson } from "../report/pointsJson.ts";
 import type { Client } from "./client.ts";
+import { compareWithOlder } from "./compareWithOlder.ts";
 import {
   codeActionOf,
   completionOf,
@@ -34,7 +35,14 @@ import {
 } from "./convert.ts";
 import { diagnosticsOf, workspaceReport } from "./diagnostics.ts";
 import type { guardWith } from "./guard.ts";
-import { type PointsAnswer, type PointsParams, pointsRequest } from "./protocol.ts";
+import {
+  type CompareAnswer,
+  type CompareParams,
+  compareRequest,
+  type PointsAnswer,
+  type PointsParams,
+  pointsRequest,
+} from "./protocol.ts";
 import type { Settings } from "./settings.ts";
 import type { Workspace } from "./workspace.ts";
 
@@ -195,6 +203,18 @@ export function answerRequests(
         return note ? fileJson(note, textDocument.uri) : null;
       },
     ),
+  );
+
+  connection.onRequest(
+    compareRequest,
+    answering("compare", async (params: CompareParams, token: CancellationToken): Promise<CompareAnswer> => {
+      const note = await noteOf(params.textDocument.uri, token);
+      const folder = workspace.folderOf(params.textDocument.uri);
+      if (!note || !folder) return null;
+      // Folders of one window do not see each other's cards, neither now nor then.
+      const others = params.others.filter(({ uri }) => workspace.folderOf(uri) === folder);
+      return compareWithOlder(note, folder, { ...params, others });
+    }),
   );
 }
 

@@ -11,6 +11,7 @@ import {
 import type { Note } from "../plan/note.ts";
 import { lineOf } from "../plan/origin.ts";
 import type { PointResult, Solved } from "../plan/point.ts";
+import { plainMarkdown } from "./plainMarkdown.ts";
 
 /** One row of the points table, ready to be laid out. */
 export type TableRow = readonly string[];
@@ -93,9 +94,9 @@ function row(point: PointResult, solved: Solved | null, varied = ""): TableRow {
 }
 
 /** Columns padded to their widest cell, two blanks between them. */
-export function plainTable(rows: readonly TableRow[]): string {
-  const all = [tableHead, ...rows];
-  const widths = tableHead.map((_, column) => Math.max(...all.map((one) => one[column]?.length ?? 0)));
+export function plainTable(rows: readonly TableRow[], head: TableRow = tableHead): string {
+  const all = [head, ...rows];
+  const widths = head.map((_, column) => Math.max(...all.map((one) => one[column]?.length ?? 0)));
   return all
     .map((one) =>
       one
@@ -107,9 +108,8 @@ export function plainTable(rows: readonly TableRow[]): string {
     .join("");
 }
 
-/** The same rows as a Markdown table. */
-export function markdownTable(rows: readonly TableRow[]): string {
-  const line = (cells: readonly string[]) =>
-    `| ${cells.map((text) => text.replaceAll("|", "\\|")).join(" | ")} |\n`;
-  return line(tableHead) + line(tableHead.map(() => "---")) + rows.map(line).join("");
+/** The same rows as a Markdown table, in which no mark of an author's text means anything. */
+export function markdownTable(rows: readonly TableRow[], head: TableRow = tableHead): string {
+  const line = (cells: readonly string[]) => `| ${cells.join(" | ")} |\n`;
+  return line(head) + line(head.map(() => "---")) + rows.map((row) => line(row.map(plainMarkdown))).join("");
 }

@@ -18,6 +18,7 @@ export const page = {
   press: (keys: string) => ask<null>("press", { keys }),
   type: (text: string) => ask<null>("type", { text }),
   texts: (selector: string) => ask<string[]>("texts", { selector }),
+  frames: () => ask<string[]>("frames"),
   appears: (selector: string) => ask<null>("appears", { selector }),
   hover: (selector: string, text: string) => ask<null>("hover", { selector, text }),
   pullUp: (selector: string, pixels: number) => ask<null>("pullUp", { selector, pixels }),

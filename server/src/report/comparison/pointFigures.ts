@@ -1,0 +1,163 @@
+import {
+  formatAltitude,
+  formatAngle,
+  formatBank,
+  formatDeviation,
+  formatFlightLevel,
+  formatMach,
+  formatMass,
+  formatPercent,
+  formatResult,
+  formatSpeed,
+} from "../../plan/format.ts";
+import { lineOf } from "../../plan/origin.ts";
+import type { Conditions, PointResult } from "../../plan/point.ts";
+import { inShownUnit, resultEntry, resultNames } from "../../plan/results.ts";
+import { solvedText } from "../openText.ts";
+import { type JsonValue, type PointJson, pointJson } from "../pointsJson.ts";
+import { fieldName, resultOfField, shownField } from "./shownField.ts";
+
+/** Something that is known of a point: as it is shown, and in full. */
+export interface Figure {
+  readonly name: string;
+  readonly shown: string;
+  /** A result as its nominal value, its corners and their unit; else as the points' JSON has it. */
+  readonly value: JsonValue;
+}
+
+/**
+ * All that is computed of a point, in the order it is listed: the state it is evaluated at, the
+ * results, and every other field that its JSON has.
+ */
+export function pointFigures(point: PointResult): readonly Figure[] {
+  const json = pointJson(point);
+  const { conditions } = point;
+  const state = conditions ? stateFigures(point, conditions) : [];
+  return [
+    given(point),
+    ...["aircraft", "limits", "rules", "config"].map((name) => fieldFigure(name, json[name] ?? null)),
+    ...state.map(([name, shown, field]): Figure => ({ name, shown, value: fieldValue(json, field) })),
+    soughtFigure(point, json),
+    ...resultFigures(point),
+    ...furtherFigures(json),
+  ];
+}
+
+function given({ conditions, withheld }: PointResult): Figure {
+  const why = withheld ? `${withheld.code}, line ${lineOf(withheld.origin) + 1}` : "";
+  const shown = conditions ? "computed" : why ? `none (${why})` : "none";
+  return { name: "figures", shown, value: conditions ? "computed" : (withheld?.code ?? null) };
+}
+
+/** Name, figure as it is shown, and its field in the JSON. */
+function stateFigures(
+  { card }: PointResult,
+  conditions: Conditions,
+): readonly (readonly [string, string, string])[] {
+  const { mass, altitude, flightLevel, pressureAltitude, deviation, cg, liftLoss, contaminant } = conditions;
+  const { cas, tas, mach, ias, bank, bankSide, path, engineOut } = conditions;
+  return [
+    ["weight", formatMass(mass.nominal, card?.referenceMass?.value ?? mass.nominal), "mass_kg"],
+    [
+      "altitude",
+      flightLevel ? formatFlightLevel(altitude.nominal) : formatAltitude(altitude.nominal),
+      "altitude_ft",
+    ],
+    ["pressure altitude", formatAltitude(pressureAltitude.nominal), "pressure_altitude_ft"],
+    ["isa", formatDeviation(deviation.nominal), "isa_deviation_c"],
+    ["cg", cg ? formatPercent(cg.nominal) : "-", "cg_percent"],
+    [
+      "contamination",
+      contaminant ? `${contaminant} ${formatPercent(liftLoss.nominal)}` : formatPercent(liftLoss.nominal),
+      "lift_loss_percent",
+    ],
+    ["engine-out", engineOut ?? "none", "engine_out"],
+    ["speed", formatSpeed(cas.nominal), "speed.cas_kt"],
+    ["tas", formatSpeed(tas.nominal, 0, { type: "tas" }), "speed.tas_kt"],
+    ["mach", formatMach(mach.nominal), "speed.mach"],
+    ["ias", ias ? formatSpeed(ias.nominal, 0, { type: "ias" }) : "-", "speed.ias_kt"],
+    ["bank", `${formatBank(bank.nominal)}${bankSide ? ` ${bankSide}` : ""}`, "bank_deg"],
+    ["path", formatAngle(path.nominal), "path_deg"],
+  ];
+}
+
+function fieldValue(json: PointJson, field: string): JsonValue {
+  const [group, name] = field.split(".") as [string, string | undefined];
+  const value = json[group] ?? null;
+  return name === undefined ? value : ((value as PointJson | null)?.[name] ?? null);
+}
+
+function resultFigures({ results }: PointResult): readonly Figure[] {
+  return resultNames.map((name): Figure => {
+    const spread = results?.[name];
+    if (!spread) return { name, shown: "-", value: null };
+    const value = {
+      nominal: inShownUnit(name, spread.nominal),
+      low: inShownUnit(name, spread.low),
+      high: inShownUnit(name, spread.high),
+      unit: resultEntry(name).unit,
+    };
+    return { name, shown: formatResult(name, spread), value };
+  });
+}
+
+/** Told above, as a clause of the point or as a finding; or no figure at all. */
+const elsewhere = new Set([
+  ...[
+    "line",
+    "endLine",
+    "phase",
+    "title",
+    "aside",
+    "emergency",
+    "claims",
+    "accepted",
+    "inherited",
+    "withheld",
+    "solved",
+  ],
+  ...["aircraft", "limits", "rules", "config", "speed", "bank_side", "engine_out"],
+  ...["mass_kg", "altitude_ft", "pressure_altitude_ft", "isa_deviation_c", "cg_percent"],
+  ...["lift_loss_percent", "bank_deg", "path_deg"],
+]);
+
+function furtherFigures(json: PointJson): readonly Figure[] {
+  return Object.keys(json)
+    .filter((name) => !elsewhere.has(name) && resultOfField(name) === null)
+    .filter((name) => json[`${name}_low`] === undefined && json[`${name}_high`] === undefined)
+    .flatMap((name) =>
+      name === "sweep" ? sweepFigures(json[name] ?? null) : [fieldFigure(name, json[name] ?? null)],
+    );
+}
+
+/** What was found for a `?`, as its hint says it. */
+function soughtFigure({ solved }: PointResult, json: PointJson): Figure {
+  return {
+    name: "found",
+    shown: solved ? `${solved.what} ${solvedText(solved)}` : "-",
+    value: json.solved ?? null,
+  };
+}
+
+/** One for each value of a sweep, with the figures that say most. */
+function sweepFigures(sweep: JsonValue): readonly Figure[] {
+  if (!Array.isArray(sweep)) return [];
+  return (sweep as readonly PointJson[]).map((row): Figure => {
+    const shown = sweptFields
+      .filter((field) => row[field] !== undefined)
+      .map((field) => shownField(field, { [field]: row[field] ?? null }))
+      .filter(Boolean);
+    const { what = null, value = null } = row;
+    return {
+      name: `${shownField("", what)} ${shownField("", value)}`,
+      shown: shown.join(", ") || "-",
+      value: row,
+    };
+  });
+}
+
+const sweptFields = ["margin_low", "ratio_low", "stall_high_kt", "warning_high_kt", "codes"];
+
+function fieldFigure(field: string, value: JsonValue): Figure {
+  return { name: fieldName(field), shown: shownField(field, value), value };
+}
