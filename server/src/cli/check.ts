@@ -1,44 +1,94 @@
 import { caution } from "../plan/caution.ts";
 import { findingsJson } from "../report/findingsJson.ts";
 import { findingsText, summarize, summaryText } from "../report/findingsText.ts";
+import { githubCommands } from "../report/github.ts";
+import { junitPoints, junitXml } from "../report/junit.ts";
 import { passedJson } from "../report/passed.ts";
 import { type CheckedFile, sarifLog } from "../report/sarif.ts";
-import { load } from "./load.ts";
+import { createLoader, type LoadedNote } from "./load.ts";
 import { emit, painter } from "./output.ts";
+import { progress } from "./progress.ts";
 import type { Common } from "./run.ts";
 import { UsageError } from "./usageError.ts";
 import { VERSION } from "./version.ts";
+import { watching } from "./watch.ts";
 
 export interface CheckOptions extends Common {
-  readonly format: "text" | "json" | "sarif";
+  readonly format: "text" | "json" | "sarif" | "github" | "junit";
   readonly failOn: "error" | "warning" | "never";
   readonly passed: boolean;
+  readonly watch: boolean;
 }
 
-/** `plumbline check`: every finding of the notes. */
+/** `plumbline check`: every finding of the notes, once or again and again. */
 export async function check(paths: readonly string[], options: CheckOptions): Promise<number> {
-  if (options.passed && options.format === "text") {
-    throw new UsageError("--passed needs --format json or sarif: the text form lists findings alone.");
+  refuseWhatDoesNotGoTogether(paths, options);
+  const loader = createLoader(options);
+  if (!options.watch) return checkOnce(await loader.load(paths), options);
+  return watching(paths, options, async (changed) => {
+    if (!options.quiet) process.stderr.write(headline(changed));
+    try {
+      return await checkOnce(await loader.load(paths), options);
+    } catch (error) {
+      // What cannot be read now may be readable again after the next change.
+      if (!(error instanceof UsageError)) throw error;
+      process.stderr.write(`plumbline: ${error.message}\n`);
+      return 2;
+    }
+  });
+}
+
+function refuseWhatDoesNotGoTogether(paths: readonly string[], options: CheckOptions): void {
+  if (options.passed && options.format !== "json" && options.format !== "sarif") {
+    throw new UsageError("--passed needs --format json or sarif: the other forms list findings alone.");
   }
-  const notes = await load(paths, options);
-  const files = notes.map(
-    ({ path, note }): CheckedFile => ({
+  if (!options.watch) return;
+  if (options.format !== "text" || options.output !== undefined)
+    throw new UsageError("--watch writes text to standard output: leave out --format and -o.");
+  if (paths.includes("-"))
+    throw new UsageError("--watch needs files or folders: standard input is read once.");
+}
+
+function headline(changed: readonly string[]): string {
+  const time = new Date().toTimeString().slice(0, 8);
+  const [first, ...others] = changed;
+  const what =
+    first === undefined
+      ? "watching; Ctrl+C ends it"
+      : `${first}${others.length > 0 ? ` and ${others.length} more` : ""} changed`;
+  return `\n${time}  ${what}\n`;
+}
+
+async function checkOnce(notes: readonly LoadedNote[], options: CheckOptions): Promise<number> {
+  const shown = progress(options);
+  const files = notes.map(({ path, note }, i): CheckedFile => {
+    shown.step(i, notes.length, path);
+    return {
       path,
       findings: findingsJson(note),
       ...(options.passed ? { passed: passedJson(note) } : {}),
-    }),
-  );
-  await emit(written(files, options), options);
+    };
+  });
+  shown.end();
+  await emit(written(files, notes, options), options);
   if (options.format === "text" && !options.quiet) process.stderr.write(`${summaryText(files)}${caution}\n`);
   return exitCode(files, options.failOn);
 }
 
-function written(files: readonly CheckedFile[], options: CheckOptions): string {
+function written(files: readonly CheckedFile[], notes: readonly LoadedNote[], options: CheckOptions): string {
   switch (options.format) {
     case "json":
       return `${JSON.stringify({ schema: 1, caution, files, summary: summarize(files) }, null, 2)}\n`;
     case "sarif":
       return `${JSON.stringify(sarifLog(files, VERSION, caution), null, 2)}\n`;
+    case "github":
+      return githubCommands(files);
+    case "junit":
+      return junitXml(
+        files.map((file, i) => ({ ...file, points: junitPoints((notes[i] as LoadedNote).note) })),
+        ({ severity }) => severity === "error" || (severity === "warning" && options.failOn === "warning"),
+        caution,
+      );
     case "text":
       return findingsText(files, painter(options));
   }

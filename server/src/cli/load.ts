@@ -21,13 +21,61 @@ export interface LoadOptions {
   readonly besides?: readonly string[];
 }
 
+/** Reads the notes of the paths once. */
+export function load(paths: readonly string[], options: LoadOptions): Promise<readonly LoadedNote[]> {
+  return createLoader(options).load(paths);
+}
+
+/** Reads notes again and again; only what changed is read into the folder anew. */
+export interface Loader {
+  load(paths: readonly string[]): Promise<readonly LoadedNote[]>;
+}
+
+export function createLoader(options: LoadOptions): Loader {
+  const folder = createFolder({ today: options.today });
+  const held = new Map<string, string>();
+  return {
+    async load(paths) {
+      const cwd = process.cwd();
+      const named = paths.length === 0 ? ["."] : paths;
+      const { wanted, texts } = await readTexts(named, options, cwd);
+      for (const file of held.keys()) {
+        if (texts.has(file)) continue;
+        folder.remove(uriOf(file));
+        held.delete(file);
+      }
+      for (const file of [...texts.keys()].sort()) {
+        const text = texts.get(file) as string;
+        if (held.get(file) === text) continue;
+        held.set(file, text);
+        folder.open(uriOf(file), text, flavourOf(file));
+      }
+      const loaded = wanted
+        .filter((file) => isNote(folder.note(uriOf(file)), file))
+        .map((file) => ({ path: shortPath(file, cwd), note: folder.note(uriOf(file)) as Note }));
+      if (!named.includes("-")) {
+        if (loaded.length === 0)
+          throw new UsageError(
+            `There is no note in ${named.join(", ")}: a note is a .plumb file, or a Markdown file with a \`plumb\` fence.`,
+          );
+        return loaded;
+      }
+      const path = resolve(cwd, options.stdinPath);
+      const note = folder.open(uriOf(path), await readStdin(), flavourOf(path));
+      return [...loaded, { path: shortPath(path, cwd), note }];
+    },
+  };
+}
+
 /**
- * Reads the notes of the paths, and the cards and limits under the root. Every file that cannot be
+ * The texts of the paths' notes, and of the cards and limits under the root. Every file that cannot be
  * read is told before anything is shown: a plan is never checked in part without saying so.
  */
-export async function load(paths: readonly string[], options: LoadOptions): Promise<readonly LoadedNote[]> {
-  const cwd = process.cwd();
-  const named = paths.length === 0 ? ["."] : paths;
+async function readTexts(
+  named: readonly string[],
+  options: LoadOptions,
+  cwd: string,
+): Promise<{ readonly wanted: readonly string[]; readonly texts: ReadonlyMap<string, string> }> {
   const onDisk = named.filter((path) => path !== "-");
   const wanted = await discover(onDisk, cwd);
   const besides = options.besides
@@ -43,22 +91,7 @@ export async function load(paths: readonly string[], options: LoadOptions): Prom
     }),
   );
   if (problems.length > 0) throw new UsageError(problems.join("\n"));
-  const folder = createFolder({ today: options.today });
-  const files = [...texts.keys()].sort();
-  for (const file of files) folder.open(uriOf(file), texts.get(file) as string, flavourOf(file));
-  const loaded = wanted.files
-    .filter((file) => isNote(folder.note(uriOf(file)), file))
-    .map((file) => ({ path: shortPath(file, cwd), note: folder.note(uriOf(file)) as Note }));
-  if (!named.includes("-")) {
-    if (loaded.length === 0)
-      throw new UsageError(
-        `There is no note in ${named.join(", ")}: a note is a .plumb file, or a Markdown file with a \`plumb\` fence.`,
-      );
-    return loaded;
-  }
-  const path = resolve(cwd, options.stdinPath);
-  const note = folder.open(uriOf(path), await readStdin(), flavourOf(path));
-  return [...loaded, { path: shortPath(path, cwd), note }];
+  return { wanted: wanted.files, texts };
 }
 
 /** A Markdown file without a plumb fence is nobody's note; one that is named itself has its say. */

@@ -43,7 +43,7 @@ export async function run(argv: readonly string[]): Promise<number> {
     .description("show findings (the default command)")
     .addOption(
       new Option("--format <format>", "how they are written")
-        .choices(["text", "json", "sarif"])
+        .choices(["text", "json", "sarif", "github", "junit"])
         .default("text"),
     )
     .addOption(
@@ -51,6 +51,7 @@ export async function run(argv: readonly string[]): Promise<number> {
         .choices(["error", "warning", "never"])
         .default("error"),
     )
+    .option("--watch", "check again whenever a note, a card or limits change", false)
     .option("--passed", "list what was checked and held too (json, sarif)", false)
     .action((paths: string[], options) => settle(check(paths, options)));
   overNotes(program.command("points").argument("[path...]", "files, folders or globs; - for standard input"))

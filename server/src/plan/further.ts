@@ -1,4 +1,3 @@
-import type { ApproachCategory } from "../flight/approachCategory.ts";
 import { buffetAltitude, buffetMachs } from "../flight/buffet.ts";
 import { secondsTo } from "../flight/deceleration.ts";
 import { interpolate } from "../flight/table.ts";
@@ -29,8 +28,6 @@ export interface FurtherFigures {
   readonly secondsToStall: Spread | null;
   readonly categories: Categories | null;
 }
-
-export type { ApproachCategory };
 
 /** Advisory practice to 14 CFR 25.251(e), which gives no figure: what the buffet altitude keeps where no row says more. */
 const USUAL_BUFFET_LOAD = 1.3;

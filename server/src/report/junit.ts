@@ -1,3 +1,5 @@
+import type { Note } from "../plan/note.ts";
+import { lineOf } from "../plan/origin.ts";
 import type { FindingJson } from "./findingsJson.ts";
 
 /** A file with its points, each a case that passed or failed. */
@@ -14,6 +16,23 @@ export interface JunitPoint {
   readonly title: string | null;
   /** Why it was not checked: the line and the code that keep it from having figures. */
   readonly withheld: { readonly line: number; readonly code: string } | null;
+}
+
+/** The points of a note as cases. */
+export function junitPoints(note: Note): readonly JunitPoint[] {
+  return note.results().flatMap((result): readonly JunitPoint[] => {
+    if (result.kind !== "point") return [];
+    const { block, phase, title, withheld } = result.point;
+    return [
+      {
+        line: block.start + 1,
+        endLine: block.start + block.lines.length,
+        phase,
+        title,
+        withheld: withheld && { line: lineOf(withheld.origin) + 1, code: withheld.code },
+      },
+    ];
+  });
 }
 
 interface Case {
