@@ -222,6 +222,11 @@ describe("plumbline points", () => {
 });
 
 describe("plumbline compare", () => {
+  it("says of the demo's two issues what it is kept as", () => {
+    const args = ["compare", "demo/night-mail-1.plumb", "demo/night-mail-2.plumb", "--today", "2026-12-01"];
+    expect(plumbline(args).stdout).toBe(readFileSync(join(root, "test/examples/demo.compare.txt"), "utf8"));
+  });
+
   const older = `${card}\n${point}`;
   const newer = older.replace("stall 95 kt", "stall 96 kt").replace("phase cruise", "phase cruise; bank 40");
   let revisions = "";

@@ -2,9 +2,12 @@ import fc from "fast-check";
 import { describe, expect, it } from "vitest";
 import { caution } from "../../server/src/plan/caution.ts";
 import { createFolder } from "../../server/src/plan/createFolder.ts";
+import { formatResult } from "../../server/src/plan/format.ts";
 import { type Comparison, compare, type ItemChange, isEdit } from "../../server/src/report/compare.ts";
 import { comparisonJson } from "../../server/src/report/comparisonJson.ts";
 import { comparisonText } from "../../server/src/report/comparisonText.ts";
+import { furtherRows } from "../../server/src/report/furtherRows.ts";
+import { solvedText } from "../../server/src/report/openText.ts";
 import { fileJson } from "../../server/src/report/pointsJson.ts";
 
 const card = `| aircraft wheatear-9 "invented"; source "invented"; basis vsr; reference 9 t; warning 1.05
@@ -247,6 +250,24 @@ describe("results and findings", () => {
     ]);
     expect(Number(now.margin?.shown)).toBeLessThan(Number(old.margin?.shown));
     expect(compared("Prose.", "Prose.").old.margin).toBeNull();
+  });
+
+  it("read as they do everywhere: further ones, what is found, and each value of a sweep", () => {
+    const note = (weight: string, bank: string) =>
+      `${start.replace("8 t", weight)}\n\n| phase climb; bank ${bank}; shear 10 kt; decel 1 kt/s\n\n| phase cruise; bank 0 to 40 by 20\n`;
+    const { items } = compared(note("8 t", "20"), note("8.9 t", "?"));
+    const points = revision(note("8.9 t", "?"))
+      .note.results()
+      .flatMap((one) => (one.kind === "point" ? one.point : []));
+    const now = (index: number) => new Map(items[index]?.results.map((one) => [one.name, one.new?.shown]));
+    const [solved, swept] = points;
+    const rows = solved ? furtherRows(solved) : [];
+    expect(rows.map((one) => one.name)).toContain("time to warning");
+    for (const { name, text } of rows) expect([name, now(1).get(name) ?? text]).toEqual([name, text]);
+    expect(now(1).get("time to warning")).toMatch(/^\d+ s$/);
+    expect(now(1).get("found")).toBe(solved?.solved && `bank ${solvedText(solved.solved)}`);
+    const last = swept?.sweep?.rows[2]?.point.results?.margin;
+    expect(now(2).get("bank 40")).toContain(`margin ${last && formatResult("margin", last)}, `);
   });
 
   it("of a setting are its edits", () => {

@@ -4,6 +4,7 @@ import { tmpdir } from "node:os";
 import { join } from "node:path";
 import * as vscode from "vscode";
 import { page } from "./page.ts";
+import { picture, theme } from "./pictures.ts";
 import { edited, eventually, hints, openNote, pause, startOf, type Test } from "./workbench.ts";
 
 /** What stands on the page that the workbench is drawn on; pictures of it are saved on the way. */
@@ -167,21 +168,4 @@ async function pointAt(word: string): Promise<void> {
   editor.selection = new vscode.Selection(0, 0, 0, 0);
   editor.revealRange(new vscode.Range(0, 0, 0, 0), vscode.TextEditorRevealType.AtTop);
   await page.hover(".view-line > span > span", word);
-}
-
-async function theme(name: string, kind: vscode.ColorThemeKind): Promise<void> {
-  await vscode.workspace
-    .getConfiguration("workbench")
-    .update("colorTheme", name, vscode.ConfigurationTarget.Global);
-  await eventually(name, () => assert.equal(vscode.window.activeColorTheme.kind, kind));
-  // The colours of the text follow a little later than the kind.
-  await pause(1200);
-}
-
-/** Takes the pointer and messages away first. */
-async function picture(name: string): Promise<void> {
-  await vscode.commands.executeCommand("notifications.clearAll");
-  await page.away();
-  await pause(600);
-  await page.screenshot(name);
 }

@@ -9,10 +9,12 @@ import {
   formatPercent,
   formatResult,
   formatSpeed,
+  formatWritten,
 } from "../../plan/format.ts";
 import { lineOf } from "../../plan/origin.ts";
 import type { Conditions, PointResult } from "../../plan/point.ts";
 import { inShownUnit, resultEntry, resultNames } from "../../plan/results.ts";
+import { furtherRows } from "../furtherRows.ts";
 import { solvedText } from "../openText.ts";
 import { type JsonValue, type PointJson, pointJson } from "../pointsJson.ts";
 import { fieldName, resultOfField, shownField } from "./shownField.ts";
@@ -39,7 +41,9 @@ export function pointFigures(point: PointResult): readonly Figure[] {
     ...state.map(([name, shown, field]): Figure => ({ name, shown, value: fieldValue(json, field) })),
     soughtFigure(point, json),
     ...resultFigures(point),
-    ...furtherFigures(json),
+    ...furtherFigures(point),
+    ...sweepFigures(point, json),
+    ...otherFigures(json),
   ];
 }
 
@@ -115,19 +119,27 @@ const elsewhere = new Set([
     "inherited",
     "withheld",
     "solved",
+    "sweep",
   ],
   ...["aircraft", "limits", "rules", "config", "speed", "bank_side", "engine_out"],
   ...["mass_kg", "altitude_ft", "pressure_altitude_ft", "isa_deviation_c", "cg_percent"],
   ...["lift_loss_percent", "bank_deg", "path_deg"],
 ]);
 
-function furtherFigures(json: PointJson): readonly Figure[] {
+/** What is asked for with `shear`, `gust`, `decel` and `power`, and buffet and category, as shown everywhere. */
+function furtherFigures(point: PointResult): readonly Figure[] {
+  return furtherRows(point).map(({ name, text }): Figure => ({ name, shown: text, value: text }));
+}
+
+/** The fields that those stand for. */
+const ofFurther =
+  /^(low_buffet|high_buffet|buffet_altitude|gust_load|power_on|seconds_to|approach_category)|_after_shear/;
+
+/** Every other field of the JSON, as its name says. */
+function otherFigures(json: PointJson): readonly Figure[] {
   return Object.keys(json)
-    .filter((name) => !elsewhere.has(name) && resultOfField(name) === null)
-    .filter((name) => json[`${name}_low`] === undefined && json[`${name}_high`] === undefined)
-    .flatMap((name) =>
-      name === "sweep" ? sweepFigures(json[name] ?? null) : [fieldFigure(name, json[name] ?? null)],
-    );
+    .filter((name) => !elsewhere.has(name) && !ofFurther.test(name) && resultOfField(name) === null)
+    .map((name) => fieldFigure(name, json[name] ?? null));
 }
 
 /** What was found for a `?`, as its hint says it. */
@@ -140,23 +152,25 @@ function soughtFigure({ solved }: PointResult, json: PointJson): Figure {
 }
 
 /** One for each value of a sweep, with the figures that say most. */
-function sweepFigures(sweep: JsonValue): readonly Figure[] {
-  if (!Array.isArray(sweep)) return [];
-  return (sweep as readonly PointJson[]).map((row): Figure => {
-    const shown = sweptFields
-      .filter((field) => row[field] !== undefined)
-      .map((field) => shownField(field, { [field]: row[field] ?? null }))
-      .filter(Boolean);
-    const { what = null, value = null } = row;
+function sweepFigures({ sweep }: PointResult, json: PointJson): readonly Figure[] {
+  if (!sweep) return [];
+  const rows = (json.sweep ?? []) as readonly PointJson[];
+  return sweep.rows.map(({ written, point }, i): Figure => {
+    const { results, withheld, findings } = point;
+    const shown = sweptResults.flatMap((name) => {
+      const spread = results?.[name];
+      return spread ? [`${name} ${formatResult(name, spread)}`] : [];
+    });
+    const codes = [...(withheld ? [withheld.code] : []), ...findings.map(({ code }) => code)];
     return {
-      name: `${shownField("", what)} ${shownField("", value)}`,
-      shown: shown.join(", ") || "-",
-      value: row,
+      name: `${sweep.what} ${formatWritten(written, sweep.what)}`,
+      shown: [...shown, ...new Set(codes)].join(", ") || "-",
+      value: rows[i] ?? null,
     };
   });
 }
 
-const sweptFields = ["margin_low", "ratio_low", "stall_high_kt", "warning_high_kt", "codes"];
+const sweptResults = ["margin", "ratio", "stall", "warning"] as const;
 
 function fieldFigure(field: string, value: JsonValue): Figure {
   return { name: fieldName(field), shown: shownField(field, value), value };
