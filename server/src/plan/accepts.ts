@@ -92,7 +92,7 @@ function readAccept(point: Point, read: Read<"accept">, told: Finding[]): Accept
     code,
     to: body.to ? formatWritten(body.to, "accept") : null,
     because: body.because?.text ?? "",
-    by: body.by?.text ?? null,
+    by: body.by?.text.trim() || null,
     until: body.until?.text ?? null,
   };
   return { read, acceptance, to: rule && body.to ? measure(body.to, rule.what).value : null };
