@@ -81,6 +81,8 @@ export const commandTests: readonly Test[] = [
         assert.match(text, /not edited; the card brambling-37 changed/);
         assert.doesNotMatch(text, /bank 28/);
         if (hasPage) await drawn(/The card brambling-37 has changed/);
+        const tabs = vscode.window.tabGroups.all.flatMap((group) => group.tabs);
+        assert.equal(tabs.filter((tab) => tab.label.includes("since its last commit")).length, 1);
       } finally {
         await writeFile(cards, cardsBefore);
         await rm(join(folder, ".git"), { recursive: true, force: true });
