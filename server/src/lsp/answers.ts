@@ -15,7 +15,6 @@ import { folding } from "../features/folding.ts";
 import { formatting } from "../features/formatting.ts";
 import { hover } from "../features/hover.ts";
 import { inlayHints } from "../features/inlayHints.ts";
-import type { Note } from "../plan/note.ts";
 import { fileJson } from "../report/pointsJson.ts";
 import type { Client } from "./client.ts";
 import {
@@ -35,6 +34,7 @@ import {
 } from "./convert.ts";
 import { diagnosticsOf, workspaceReport } from "./diagnostics.ts";
 import type { guardWith } from "./guard.ts";
+import { dropCancelled, noteFinder } from "./noteFinder.ts";
 import { type PointsAnswer, type PointsParams, pointsRequest } from "./protocol.ts";
 import type { Settings } from "./settings.ts";
 import type { Workspace } from "./workspace.ts";
@@ -56,12 +56,7 @@ export function answerRequests(
   { answering }: ReturnType<typeof guardWith>,
   { workspace, pageUri, client, settings, ready }: Answering,
 ): void {
-  /** The note, once the folders are read. Null for a text that nobody opened. */
-  async function noteOf(uri: string, token: CancellationToken): Promise<Note | null> {
-    await ready();
-    dropCancelled(token);
-    return workspace.note(uri);
-  }
+  const noteOf = noteFinder({ workspace, ready });
 
   /** Lets waiting changes in, and gives up where the text was overtaken: a burst is answered for its last text. */
   async function settled(uri: string, token: CancellationToken): Promise<void> {
@@ -197,10 +192,6 @@ export function answerRequests(
       },
     ),
   );
-}
-
-function dropCancelled(token: CancellationToken): void {
-  if (token.isCancellationRequested) throw new ResponseError(LSPErrorCodes.RequestCancelled, "Cancelled.");
 }
 
 /** A kind asks for its own and for those below it. */

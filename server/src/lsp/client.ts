@@ -17,6 +17,10 @@ export interface Client {
   readonly resolvesHints: boolean;
   /** It shows an outline as a tree; else it gets a list. */
   readonly nestsSymbols: boolean;
+  /** It asks, before it asks for a new name, whether there can be one. */
+  readonly preparesRename: boolean;
+  /** It takes edits with the version of the text that they are for, and refuses them for any other. */
+  readonly versionsEdits: boolean;
 }
 
 export function clientOf({ capabilities, workspaceFolders, rootUri }: InitializeParams): Client {
@@ -35,5 +39,7 @@ export function clientOf({ capabilities, workspaceFolders, rootUri }: Initialize
     snippets: textDocument?.completion?.completionItem?.snippetSupport === true,
     resolvesHints: ["label.tooltip", "label.location"].every((one) => lazily.includes(one)),
     nestsSymbols: textDocument?.documentSymbol?.hierarchicalDocumentSymbolSupport === true,
+    preparesRename: textDocument?.rename?.prepareSupport === true,
+    versionsEdits: workspace?.workspaceEdit?.documentChanges === true,
   };
 }

@@ -5,6 +5,8 @@ import {
   type Diagnostic,
   DiagnosticSeverity,
   DiagnosticTag,
+  type DocumentHighlight,
+  DocumentHighlightKind,
   type DocumentSymbol,
   type FoldingRange,
   type InlayHint,
@@ -16,6 +18,7 @@ import {
   type SymbolInformation,
   SymbolKind,
   type TextEdit,
+  type WorkspaceEdit,
 } from "vscode-languageserver";
 import type { CodeAction } from "../features/codeActions.ts";
 import type { Completion } from "../features/completion.ts";
@@ -23,6 +26,8 @@ import type { OutlineEntry } from "../features/documentSymbols.ts";
 import type { Fold } from "../features/folding.ts";
 import type { Hover } from "../features/hover.ts";
 import type { Hint } from "../features/inlayHints.ts";
+import type { NameUse } from "../features/nameUses.ts";
+import type { Renaming } from "../features/rename.ts";
 import type { Edit } from "../notation/finding.ts";
 import type { LineEdit } from "../notation/layout.ts";
 import type { Span } from "../notation/span.ts";
@@ -39,8 +44,44 @@ export function rangeOf(line: number, { start, end }: Span): Range {
 }
 
 export function locationOf(origin: Origin, pageUri: PageUri): Location | null {
-  const uri = origin.uri === BUILT_IN_URI ? pageUri("common-practice.plumb") : origin.uri;
-  return uri === null ? null : { uri, range: rangeOf(lineOf(origin), origin.span) };
+  return placeOf({ uri: origin.uri, line: lineOf(origin), span: origin.span }, pageUri);
+}
+
+/** Null where the built-in limits have no page to be shown on. */
+export function placeOf(
+  { uri, line, span }: Pick<NameUse, "uri" | "line" | "span">,
+  pageUri: PageUri,
+): Location | null {
+  const shown = uri === BUILT_IN_URI ? pageUri("common-practice.plumb") : uri;
+  return shown === null ? null : { uri: shown, range: rangeOf(line, span) };
+}
+
+export function highlightOf({ line, span, defines }: NameUse): DocumentHighlight {
+  return {
+    range: rangeOf(line, span),
+    kind: defines ? DocumentHighlightKind.Write : DocumentHighlightKind.Read,
+  };
+}
+
+/**
+ * The edits of a renaming. With `versionOf` each document's edits name the version that they are for,
+ * null for one that no editor has open; without it they are for a client that knows no versions.
+ */
+export function renamingOf(
+  { newName, places }: Renaming,
+  versionOf: ((uri: string) => number | null) | null,
+): WorkspaceEdit {
+  const edits = new Map<string, TextEdit[]>();
+  for (const { uri, line, span } of places) {
+    edits.set(uri, [...(edits.get(uri) ?? []), { range: rangeOf(line, span), newText: newName }]);
+  }
+  if (!versionOf) return { changes: Object.fromEntries(edits) };
+  return {
+    documentChanges: [...edits].map(([uri, own]) => ({
+      textDocument: { uri, version: versionOf(uri) },
+      edits: own,
+    })),
+  };
 }
 
 const severities: Readonly<Record<Severity, DiagnosticSeverity>> = {

@@ -4,11 +4,12 @@ import {
   type InitializeParams,
   type InitializeResult,
 } from "vscode-languageserver";
-import { answerRequests } from "./answers.ts";
+import { type Answering, answerRequests } from "./answers.ts";
 import { capabilities } from "./capabilities.ts";
 import { type Client, clientOf } from "./client.ts";
 import { Pusher } from "./diagnostics.ts";
 import { guardWith } from "./guard.ts";
+import { answerNameRequests } from "./nameAnswers.ts";
 import { registerWhatIsOffered } from "./registration.ts";
 import type { Runtime } from "./runtime.ts";
 import { readSettings, type Settings, standardSettings } from "./settings.ts";
@@ -147,7 +148,7 @@ export function startServer(connection: Connection, runtime: Runtime): void {
     if (changed) everythingChanged();
   }
 
-  answerRequests(connection, guard, {
+  const answering: Answering = {
     workspace,
     pageUri,
     client: () => client,
@@ -156,6 +157,8 @@ export function startServer(connection: Connection, runtime: Runtime): void {
       return settings;
     },
     ready: () => ready,
-  });
+  };
+  answerRequests(connection, guard, answering);
+  answerNameRequests(connection, guard, answering);
   connection.listen();
 }
