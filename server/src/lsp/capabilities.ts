@@ -1,5 +1,6 @@
 import { CodeActionKind, type ServerCapabilities, TextDocumentSyncKind } from "vscode-languageserver";
 import type { Client } from "./client.ts";
+import { legend } from "./semanticLegend.ts";
 
 /** What the server says it can do, to this client. */
 export function capabilities(client: Client): ServerCapabilities {
@@ -24,9 +25,14 @@ export function capabilities(client: Client): ServerCapabilities {
     renameProvider: client.preparesRename ? { prepareProvider: true } : true,
     codeActionProvider: { codeActionKinds: [CodeActionKind.QuickFix] },
     documentSymbolProvider: true,
+    workspaceSymbolProvider: true,
+    selectionRangeProvider: true,
+    signatureHelpProvider: { triggerCharacters: [" "], retriggerCharacters: [","] },
+    ...(client.coloursNotes ? { semanticTokensProvider: { legend, full: true, range: true } } : {}),
     foldingRangeProvider: true,
     documentFormattingProvider: true,
     documentRangeFormattingProvider: true,
+    documentOnTypeFormattingProvider: { firstTriggerCharacter: "\n" },
     workspace: { workspaceFolders: { supported: true, changeNotifications: client.changesFolders } },
   };
 }

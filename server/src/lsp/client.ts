@@ -21,6 +21,9 @@ export interface Client {
   readonly preparesRename: boolean;
   /** It takes edits with the version of the text that they are for, and refuses them for any other. */
   readonly versionsEdits: boolean;
+  /** It finds an argument in a signature by its place there; else by its text. */
+  readonly placesArguments: boolean;
+  readonly coloursNotes: boolean;
 }
 
 export function clientOf({ capabilities, workspaceFolders, rootUri }: InitializeParams): Client {
@@ -40,6 +43,9 @@ export function clientOf({ capabilities, workspaceFolders, rootUri }: Initialize
     resolvesHints: ["label.tooltip", "label.location"].every((one) => lazily.includes(one)),
     nestsSymbols: textDocument?.documentSymbol?.hierarchicalDocumentSymbolSupport === true,
     preparesRename: textDocument?.rename?.prepareSupport === true,
+    placesArguments:
+      textDocument?.signatureHelp?.signatureInformation?.parameterInformation?.labelOffsetSupport === true,
+    coloursNotes: textDocument?.semanticTokens?.formats.includes("relative") === true,
     versionsEdits: workspace?.workspaceEdit?.documentChanges === true,
   };
 }

@@ -15,6 +15,10 @@ import {
   type CodeAction as LspCodeAction,
   type Hover as LspHover,
   type Range,
+  type SelectionRange,
+  type SemanticTokens,
+  SemanticTokensBuilder,
+  type SignatureHelp,
   type SymbolInformation,
   SymbolKind,
   type TextEdit,
@@ -28,6 +32,10 @@ import type { Hover } from "../features/hover.ts";
 import type { Hint } from "../features/inlayHints.ts";
 import type { NameUse } from "../features/nameUses.ts";
 import type { Renaming } from "../features/rename.ts";
+import type { Stretch } from "../features/selectionRanges.ts";
+import { type ColouredToken, colours } from "../features/semanticTokens.ts";
+import type { Signature } from "../features/signatureHelp.ts";
+import type { FoundSymbol } from "../features/workspaceSymbols.ts";
 import type { Edit } from "../notation/finding.ts";
 import type { LineEdit } from "../notation/layout.ts";
 import type { Span } from "../notation/span.ts";
@@ -230,6 +238,48 @@ export function flatSymbolsOf(symbol: OutlineEntry, note: Note, container = ""):
     container ? { ...own, containerName: container } : own,
     ...symbol.children.flatMap((child) => flatSymbolsOf(child, note, name)),
   ];
+}
+
+export function workspaceSymbolOf({ uri, entry, container }: FoundSymbol): SymbolInformation {
+  return {
+    name: entry.name,
+    kind: symbolKinds[entry.kind],
+    location: { uri, range: rangeOf(entry.nameLine, entry.nameSpan) },
+    ...(container ? { containerName: container } : {}),
+  };
+}
+
+/** The least stretch, with those it grows to as its parents. */
+export function selectionRangeOf(stretches: readonly Stretch[]): SelectionRange {
+  const [widest, ...others] = stretches.toReversed();
+  const outermost: SelectionRange = { range: widest ?? rangeOf(0, { start: 0, end: 0 }) };
+  return others.reduce<SelectionRange>((parent, range) => ({ range, parent }), outermost);
+}
+
+export function semanticTokensOf(tokens: readonly ColouredToken[]): SemanticTokens {
+  const builder = new SemanticTokensBuilder();
+  for (const { line, start, end, colour, defines } of tokens) {
+    builder.push(line, start, end - start, colours.indexOf(colour), defines ? 1 : 0);
+  }
+  return builder.build();
+}
+
+export function signatureHelpOf(signature: Signature, byPlace: boolean): SignatureHelp {
+  const { label, documentation, parameters, active } = signature;
+  return {
+    signatures: [
+      {
+        label,
+        documentation: { kind: "markdown", value: documentation },
+        parameters: parameters.map(({ start, end }) => ({
+          label: byPlace ? [start, end] : label.slice(start, end),
+        })),
+        activeParameter: active,
+      },
+    ],
+    activeSignature: 0,
+    activeParameter: active,
+  };
 }
 
 export function foldOf({ firstLine, lastLine }: Fold): FoldingRange {

@@ -1,11 +1,12 @@
 import { type Connection, LSPErrorCodes, ResponseError } from "vscode-languageserver";
 import { highlights, references } from "../features/references.ts";
 import { prepareRename, type Refusal, rename } from "../features/rename.ts";
+import { workspaceSymbols } from "../features/workspaceSymbols.ts";
 import type { Note } from "../plan/note.ts";
 import type { Answering } from "./answers.ts";
-import { highlightOf, placeOf, rangeOf, renamingOf } from "./convert.ts";
+import { highlightOf, placeOf, rangeOf, renamingOf, workspaceSymbolOf } from "./convert.ts";
 import type { guardWith } from "./guard.ts";
-import { noteFinder } from "./noteFinder.ts";
+import { dropCancelled, noteFinder } from "./noteFinder.ts";
 
 /** Answers what is asked about the names of cards, limits, configurations and contaminants. */
 export function answerNameRequests(
@@ -31,6 +32,14 @@ export function answerNameRequests(
     answering("document highlight", async ({ textDocument: { uri }, position }, token) => {
       const note = await noteOf(uri, token);
       return note ? highlights(note, position.line, position.character).map(highlightOf) : [];
+    }),
+  );
+
+  connection.onWorkspaceSymbol(
+    answering("workspace symbol", async ({ query }, token) => {
+      await ready();
+      dropCancelled(token);
+      return workspaceSymbols(workspace.notes, query).map(workspaceSymbolOf);
     }),
   );
 

@@ -14,6 +14,7 @@ import { registerWhatIsOffered } from "./registration.ts";
 import type { Runtime } from "./runtime.ts";
 import { readSettings, type Settings, standardSettings } from "./settings.ts";
 import { type FileChange, flavourOf, Workspace } from "./workspace.ts";
+import { answerWritingRequests } from "./writingAnswers.ts";
 
 const fileChanges: Readonly<Record<FileChangeType, FileChange["kind"]>> = {
   [FileChangeType.Created]: "created",
@@ -160,5 +161,6 @@ export function startServer(connection: Connection, runtime: Runtime): void {
   };
   answerRequests(connection, guard, answering);
   answerNameRequests(connection, guard, answering);
+  answerWritingRequests(connection, guard, answering);
   connection.listen();
 }
