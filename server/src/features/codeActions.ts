@@ -5,6 +5,7 @@ import type { Note } from "../plan/note.ts";
 import { measure } from "../plan/quantity.ts";
 import { blockAt } from "./blocksBetween.ts";
 import { clauseAt } from "./hover.ts";
+import { preferredFix } from "./preferredFix.ts";
 import { cardInUse } from "./target.ts";
 
 /** A way out of a finding, with its edits on lines of the document. */
@@ -24,13 +25,14 @@ export function codeActions(note: Note, from: number, to: number): readonly Code
     const base = line - finding.line;
     const own = inOrder(note, line, finding);
     const fixes = [...own.map((fix) => ({ ...fix, base })), ...joinFix(note, line, finding)];
+    const preferred = preferredFix(finding.code, fixes);
     return fixes.map(
-      ({ title, edits, preferred, base: first }): CodeAction => ({
-        title,
+      (fix): CodeAction => ({
+        title: fix.title,
         finding,
         findingLine: line,
-        edits: edits.map((edit) => ({ ...edit, line: first + edit.line })),
-        preferred: preferred === true && fixes.filter((one) => one.preferred).length === 1,
+        edits: fix.edits.map((edit) => ({ ...edit, line: fix.base + edit.line })),
+        preferred: fix === preferred,
       }),
     );
   });

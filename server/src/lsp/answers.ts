@@ -15,11 +15,14 @@ import { folding } from "../features/folding.ts";
 import { formatting } from "../features/formatting.ts";
 import { hover } from "../features/hover.ts";
 import { inlayHints } from "../features/inlayHints.ts";
+import { unitSpelling } from "../features/unitSpelling.ts";
 import { fileJson } from "../report/pointsJson.ts";
 import type { Client } from "./client.ts";
 import {
   codeActionOf,
   completionOf,
+  FIX_ALL,
+  fixAllOf,
   flatSymbolsOf,
   foldOf,
   type HintData,
@@ -139,10 +142,16 @@ export function answerRequests(
   connection.onCodeAction(
     answering("code action", async ({ textDocument: { uri }, range, context }, token) => {
       const note = await noteOf(uri, token);
-      if (!note || !asksForFixes(context.only)) return [];
-      return codeActions(note, range.start.line, range.end.line).map((action) =>
-        codeActionOf(action, uri, context.diagnostics),
-      );
+      if (!note) return [];
+      const spelling = asksFor(FIX_ALL, context.only ?? []) ? unitSpelling(note) : [];
+      const fixes =
+        !context.only || asksFor(CodeActionKind.QuickFix, context.only)
+          ? codeActions(note, range.start.line, range.end.line)
+          : [];
+      return [
+        ...fixes.map((action) => codeActionOf(action, uri, context.diagnostics)),
+        ...(spelling.length > 0 ? [fixAllOf(spelling, uri)] : []),
+      ];
     }),
   );
 
@@ -195,6 +204,6 @@ export function answerRequests(
 }
 
 /** A kind asks for its own and for those below it. */
-function asksForFixes(only: readonly string[] | undefined): boolean {
-  return !only || only.some((kind) => kind === "" || kind === CodeActionKind.QuickFix);
+function asksFor(kind: string, only: readonly string[]): boolean {
+  return only.some((asked) => asked === "" || kind === asked || kind.startsWith(`${asked}.`));
 }

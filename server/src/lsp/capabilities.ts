@@ -1,5 +1,6 @@
 import { CodeActionKind, type ServerCapabilities, TextDocumentSyncKind } from "vscode-languageserver";
 import type { Client } from "./client.ts";
+import { FIX_ALL } from "./convert.ts";
 import { legend } from "./semanticLegend.ts";
 
 /** What the server says it can do, to this client. */
@@ -23,7 +24,7 @@ export function capabilities(client: Client): ServerCapabilities {
     referencesProvider: true,
     documentHighlightProvider: true,
     renameProvider: client.preparesRename ? { prepareProvider: true } : true,
-    codeActionProvider: { codeActionKinds: [CodeActionKind.QuickFix] },
+    codeActionProvider: { codeActionKinds: [CodeActionKind.QuickFix, FIX_ALL] },
     documentSymbolProvider: true,
     workspaceSymbolProvider: true,
     selectionRangeProvider: true,

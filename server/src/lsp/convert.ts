@@ -207,6 +207,17 @@ export function codeActionOf(
   };
 }
 
+/** The kind of the action that spells all units of a note; clients run it on saving where the user says so. */
+export const FIX_ALL = `${CodeActionKind.SourceFixAll}.plumbline`;
+
+export function fixAllOf(edits: readonly Edit[], uri: string): LspCodeAction {
+  return {
+    title: "Spell the units of this note as the notation does",
+    kind: FIX_ALL,
+    edit: { changes: { [uri]: edits.map(textEditOf) } },
+  };
+}
+
 const symbolKinds: Readonly<Record<OutlineEntry["kind"], SymbolKind>> = {
   point: SymbolKind.Event,
   setting: SymbolKind.Property,
