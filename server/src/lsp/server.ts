@@ -40,9 +40,12 @@ export function startServer(connection: Connection, runtime: Runtime): void {
   connection.onInitialize(
     guard.answering("initialize", (params: InitializeParams): InitializeResult => {
       client = clientOf(params);
+      guard.start();
       return { capabilities: capabilities(client), serverInfo: { name: "plumbline" } };
     }),
   );
+
+  connection.onShutdown(() => guard.end());
 
   connection.onInitialized(
     guard.hearing("initialized", async () => {
