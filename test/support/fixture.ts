@@ -44,3 +44,26 @@ export function withMarks(marked: string): { readonly text: string; readonly mar
   }
   return { text: lines.join("\n"), marks };
 }
+
+/**
+ * Takes apart a text in which stretches stand between `⟦` and `⟧`, the ones that begin with `=` marked
+ * as `gives` and the others as `uses`: for a text where carets would stand too far from their words.
+ */
+export function withBrackets(marked: string): { readonly text: string; readonly marks: readonly Mark[] } {
+  const marks: Mark[] = [];
+  const lines = marked.split("\n").map((line, at) => {
+    let plain = "";
+    for (const [i, part] of line.split(/⟦|⟧/).entries()) {
+      const inside = i % 2 === 1;
+      const gives = inside && part.startsWith("=");
+      const text = gives ? part.slice(1) : part;
+      if (inside) {
+        const start = plain.length;
+        marks.push({ line: at, start, end: start + text.length, says: gives ? "gives" : "uses" });
+      }
+      plain += text;
+    }
+    return plain;
+  });
+  return { text: lines.join("\n"), marks };
+}

@@ -11,6 +11,7 @@ import type { PointResult } from "../plan/point.ts";
 import { measure } from "../plan/quantity.ts";
 import { blockAt, blocksBetween } from "./blocksBetween.ts";
 import { clauseAt } from "./hover.ts";
+import { preferredFix } from "./preferredFix.ts";
 import { cardInUse } from "./target.ts";
 
 /** A change that is offered, with its edits on lines of the document. */
@@ -46,14 +47,15 @@ function fixes(note: Note, from: number, to: number): readonly CodeAction[] {
     const base = line - finding.line;
     const own = inOrder(note, line, finding);
     const all = [...own.map((fix) => ({ ...fix, base })), ...joinFix(note, line, finding)];
+    const preferred = preferredFix(finding.code, all);
     return all.map(
-      ({ title, edits, preferred, base: first }): CodeAction => ({
-        title,
+      (fix): CodeAction => ({
+        title: fix.title,
         kind: "fix",
         finding,
         findingLine: line,
-        edits: edits.map((edit) => ({ ...edit, line: first + edit.line })),
-        preferred: preferred === true && all.filter((one) => one.preferred).length === 1,
+        edits: fix.edits.map((edit) => ({ ...edit, line: fix.base + edit.line })),
+        preferred: fix === preferred,
       }),
     );
   });

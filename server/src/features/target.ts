@@ -2,9 +2,11 @@ import type { PlacedClause } from "../notation/block.ts";
 import type { Span } from "../notation/span.ts";
 import type { Name } from "../notation/tree.ts";
 import type { Card } from "../plan/card.ts";
+import type { Lookup } from "../plan/definitions.ts";
 import type { Limits } from "../plan/limits.ts";
 import type { BlockResult, Note } from "../plan/note.ts";
 import type { Origin } from "../plan/origin.ts";
+import { namesIn, type WrittenName } from "./namesIn.ts";
 
 /** A name in the text, and what it names. */
 export interface Target {
@@ -35,57 +37,36 @@ export function targetAt(
   placed: PlacedClause,
   character: number,
 ): Target | null {
-  const body = placed.clause.body;
-  if (!body) return null;
-  const under = (name: Name | null | undefined) =>
-    name && name.span.start <= character && character <= name.span.end ? name : null;
-  switch (body.kind) {
-    case "fly":
-    case "aircraft":
-      return namedCard(note, under(body.name));
-    case "under":
-      return namedLimits(note, under(body.name));
+  const written = nameAt(result, placed, character);
+  return written && targetOf(note, result, written);
+}
+
+/** The name under the cursor, whether something is called so or not. */
+export function nameAt(result: BlockResult, placed: PlacedClause, character: number): WrittenName | null {
+  const under = ({ name: { span } }: WrittenName) => span.start <= character && character <= span.end;
+  return namesIn(placed, result.block).find(under) ?? null;
+}
+
+function targetOf(note: Note, result: BlockResult, { kind, name }: WrittenName): Target | null {
+  switch (kind) {
+    case "card":
+      return found(name, note.definitions.card(name.text));
     case "limits":
-      return namedLimits(note, under(body.name) ?? under(body.from));
-    case "config":
-      return namedConfiguration(cardInUse(result), under(body.name));
-    case "lift-mach":
-    case "buffet":
-    case "ias":
-    case "published":
-      return namedConfiguration(cardInUse(result), under(body.config));
-    case "contamination":
-      return typeof body.value === "object" && "text" in body.value
-        ? namedContaminant(cardInUse(result), under(body.value))
-        : null;
+      return found(name, note.definitions.limitsNamed(name.text));
+    case "configuration":
+      return partOf(cardInUse(result), "configurations", name);
     case "contaminant":
-      return namedContaminant(cardInUse(result), under(body.name));
-    default:
-      return null;
+      return partOf(cardInUse(result), "contaminants", name);
   }
 }
 
-function namedCard(note: Note, name: Name | null): Target | null {
-  const found = name && note.definitions.card(name.text);
-  return name && found?.kind === "found"
-    ? { span: name.span, definition: found.definition, origin: found.definition.origin }
-    : null;
+function found(name: Name, lookup: Lookup<Card | Limits>): Target | null {
+  if (lookup.kind !== "found") return null;
+  const { definition } = lookup;
+  return { span: name.span, definition, origin: definition.origin };
 }
 
-function namedLimits(note: Note, name: Name | null): Target | null {
-  const found = name && note.definitions.limitsNamed(name.text);
-  return name && found?.kind === "found"
-    ? { span: name.span, definition: found.definition, origin: found.definition.origin }
-    : null;
-}
-
-function namedConfiguration(card: Card | null, name: Name | null): Target | null {
-  const found =
-    name && card?.configurations.find((one) => one.name.toLowerCase() === name.text.toLowerCase());
-  return card && found ? { span: name.span, definition: card, origin: found.origin } : null;
-}
-
-function namedContaminant(card: Card | null, name: Name | null): Target | null {
-  const found = name && card?.contaminants.find((one) => one.name.toLowerCase() === name.text.toLowerCase());
-  return card && found ? { span: name.span, definition: card, origin: found.origin } : null;
+function partOf(card: Card | null, parts: "configurations" | "contaminants", name: Name): Target | null {
+  const part = card?.[parts].find((one) => one.name.toLowerCase() === name.text.toLowerCase());
+  return card && part ? { span: name.span, definition: card, origin: part.origin } : null;
 }

@@ -14,13 +14,15 @@ import { folding } from "../features/folding.ts";
 import { formatting } from "../features/formatting.ts";
 import { hover } from "../features/hover.ts";
 import { inlayHints } from "../features/inlayHints.ts";
-import type { Note } from "../plan/note.ts";
+import { unitSpelling } from "../features/unitSpelling.ts";
 import { fileJson } from "../report/pointsJson.ts";
 import type { Client } from "./client.ts";
 import { compareWithOlder } from "./compareWithOlder.ts";
 import {
   codeActionOf,
   completionOf,
+  FIX_ALL,
+  fixAllOf,
   flatSymbolsOf,
   foldOf,
   type HintData,
@@ -35,6 +37,7 @@ import {
 } from "./convert.ts";
 import { diagnosticsOf, workspaceReport } from "./diagnostics.ts";
 import type { guardWith } from "./guard.ts";
+import { dropCancelled, noteFinder } from "./noteFinder.ts";
 import {
   type CompareAnswer,
   type CompareParams,
@@ -63,12 +66,7 @@ export function answerRequests(
   { answering }: ReturnType<typeof guardWith>,
   { workspace, pageUri, client, settings, ready }: Answering,
 ): void {
-  /** The note, once the folders are read. Null for a text that nobody opened. */
-  async function noteOf(uri: string, token: CancellationToken): Promise<Note | null> {
-    await ready();
-    dropCancelled(token);
-    return workspace.note(uri);
-  }
+  const noteOf = noteFinder({ workspace, ready });
 
   /** Lets waiting changes in, and gives up where the text was overtaken: a burst is answered for its last text. */
   async function settled(uri: string, token: CancellationToken): Promise<void> {
@@ -152,9 +150,11 @@ export function answerRequests(
     answering("code action", async ({ textDocument: { uri }, range, context }, token) => {
       const note = await noteOf(uri, token);
       if (!note) return [];
-      return codeActions(note, range.start.line, range.end.line)
+      const spelling = asksFor(FIX_ALL, context.only ?? []) ? unitSpelling(note) : [];
+      const actions = codeActions(note, range.start.line, range.end.line)
         .map((action) => codeActionOf(action, uri, context.diagnostics))
-        .filter(({ kind }) => isAskedFor(kind ?? "", context.only));
+        .filter(({ kind }) => !context.only || asksFor(kind ?? "", context.only));
+      return [...actions, ...(spelling.length > 0 ? [fixAllOf(spelling, uri)] : [])];
     }),
   );
 
@@ -218,11 +218,7 @@ export function answerRequests(
   );
 }
 
-function dropCancelled(token: CancellationToken): void {
-  if (token.isCancellationRequested) throw new ResponseError(LSPErrorCodes.RequestCancelled, "Cancelled.");
-}
-
 /** A kind asks for its own and for those below it. */
-function isAskedFor(kind: string, only: readonly string[] | undefined): boolean {
-  return !only || only.some((asked) => asked === "" || kind === asked || kind.startsWith(`${asked}.`));
+function asksFor(kind: string, only: readonly string[]): boolean {
+  return only.some((asked) => asked === "" || kind === asked || kind.startsWith(`${asked}.`));
 }

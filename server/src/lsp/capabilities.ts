@@ -1,5 +1,7 @@
 import { CodeActionKind, type ServerCapabilities, TextDocumentSyncKind } from "vscode-languageserver";
 import type { Client } from "./client.ts";
+import { FIX_ALL } from "./convert.ts";
+import { legend } from "./semanticLegend.ts";
 
 /** What the server says it can do, to this client. */
 export function capabilities(client: Client): ServerCapabilities {
@@ -19,11 +21,21 @@ export function capabilities(client: Client): ServerCapabilities {
     hoverProvider: true,
     completionProvider: { triggerCharacters: ["|", ";", " "] },
     definitionProvider: true,
-    codeActionProvider: { codeActionKinds: [CodeActionKind.QuickFix, CodeActionKind.RefactorRewrite] },
+    referencesProvider: true,
+    documentHighlightProvider: true,
+    renameProvider: client.preparesRename ? { prepareProvider: true } : true,
+    codeActionProvider: {
+      codeActionKinds: [CodeActionKind.QuickFix, CodeActionKind.RefactorRewrite, FIX_ALL],
+    },
     documentSymbolProvider: true,
+    workspaceSymbolProvider: true,
+    selectionRangeProvider: true,
+    signatureHelpProvider: { triggerCharacters: [" "], retriggerCharacters: [","] },
+    ...(client.coloursNotes ? { semanticTokensProvider: { legend, full: true, range: true } } : {}),
     foldingRangeProvider: true,
     documentFormattingProvider: true,
     documentRangeFormattingProvider: true,
+    documentOnTypeFormattingProvider: { firstTriggerCharacter: "\n" },
     workspace: { workspaceFolders: { supported: true, changeNotifications: client.changesFolders } },
   };
 }

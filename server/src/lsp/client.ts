@@ -17,6 +17,13 @@ export interface Client {
   readonly resolvesHints: boolean;
   /** It shows an outline as a tree; else it gets a list. */
   readonly nestsSymbols: boolean;
+  /** It asks, before it asks for a new name, whether there can be one. */
+  readonly preparesRename: boolean;
+  /** It takes edits with the version of the text that they are for, and refuses them for any other. */
+  readonly versionsEdits: boolean;
+  /** It finds an argument in a signature by its place there; else by its text. */
+  readonly placesArguments: boolean;
+  readonly coloursNotes: boolean;
 }
 
 export function clientOf({ capabilities, workspaceFolders, rootUri }: InitializeParams): Client {
@@ -35,5 +42,10 @@ export function clientOf({ capabilities, workspaceFolders, rootUri }: Initialize
     snippets: textDocument?.completion?.completionItem?.snippetSupport === true,
     resolvesHints: ["label.tooltip", "label.location"].every((one) => lazily.includes(one)),
     nestsSymbols: textDocument?.documentSymbol?.hierarchicalDocumentSymbolSupport === true,
+    preparesRename: textDocument?.rename?.prepareSupport === true,
+    placesArguments:
+      textDocument?.signatureHelp?.signatureInformation?.parameterInformation?.labelOffsetSupport === true,
+    coloursNotes: textDocument?.semanticTokens?.formats.includes("relative") === true,
+    versionsEdits: workspace?.workspaceEdit?.documentChanges === true,
   };
 }

@@ -5,6 +5,8 @@ import {
   type Diagnostic,
   DiagnosticSeverity,
   DiagnosticTag,
+  type DocumentHighlight,
+  DocumentHighlightKind,
   type DocumentSymbol,
   type FoldingRange,
   type InlayHint,
@@ -13,9 +15,14 @@ import {
   type CodeAction as LspCodeAction,
   type Hover as LspHover,
   type Range,
+  type SelectionRange,
+  type SemanticTokens,
+  SemanticTokensBuilder,
+  type SignatureHelp,
   type SymbolInformation,
   SymbolKind,
   type TextEdit,
+  type WorkspaceEdit,
 } from "vscode-languageserver";
 import type { CodeAction } from "../features/codeActions.ts";
 import type { Completion } from "../features/completion.ts";
@@ -23,6 +30,12 @@ import type { OutlineEntry } from "../features/documentSymbols.ts";
 import type { Fold } from "../features/folding.ts";
 import type { Hover } from "../features/hover.ts";
 import type { Hint } from "../features/inlayHints.ts";
+import type { NameUse } from "../features/nameUses.ts";
+import type { Renaming } from "../features/rename.ts";
+import type { Stretch } from "../features/selectionRanges.ts";
+import { type ColouredToken, colours } from "../features/semanticTokens.ts";
+import type { Signature } from "../features/signatureHelp.ts";
+import type { FoundSymbol } from "../features/workspaceSymbols.ts";
 import type { Edit } from "../notation/finding.ts";
 import type { LineEdit } from "../notation/layout.ts";
 import type { Span } from "../notation/span.ts";
@@ -39,8 +52,44 @@ export function rangeOf(line: number, { start, end }: Span): Range {
 }
 
 export function locationOf(origin: Origin, pageUri: PageUri): Location | null {
-  const uri = origin.uri === BUILT_IN_URI ? pageUri("common-practice.plumb") : origin.uri;
-  return uri === null ? null : { uri, range: rangeOf(lineOf(origin), origin.span) };
+  return placeOf({ uri: origin.uri, line: lineOf(origin), span: origin.span }, pageUri);
+}
+
+/** Null where the built-in limits have no page to be shown on. */
+export function placeOf(
+  { uri, line, span }: Pick<NameUse, "uri" | "line" | "span">,
+  pageUri: PageUri,
+): Location | null {
+  const shown = uri === BUILT_IN_URI ? pageUri("common-practice.plumb") : uri;
+  return shown === null ? null : { uri: shown, range: rangeOf(line, span) };
+}
+
+export function highlightOf({ line, span, defines }: NameUse): DocumentHighlight {
+  return {
+    range: rangeOf(line, span),
+    kind: defines ? DocumentHighlightKind.Write : DocumentHighlightKind.Read,
+  };
+}
+
+/**
+ * The edits of a renaming. With `versionOf` each document's edits name the version that they are for,
+ * null for one that no editor has open; without it they are for a client that knows no versions.
+ */
+export function renamingOf(
+  { newName, places }: Renaming,
+  versionOf: ((uri: string) => number | null) | null,
+): WorkspaceEdit {
+  const edits = new Map<string, TextEdit[]>();
+  for (const { uri, line, span } of places) {
+    edits.set(uri, [...(edits.get(uri) ?? []), { range: rangeOf(line, span), newText: newName }]);
+  }
+  if (!versionOf) return { changes: Object.fromEntries(edits) };
+  return {
+    documentChanges: [...edits].map(([uri, own]) => ({
+      textDocument: { uri, version: versionOf(uri) },
+      edits: own,
+    })),
+  };
 }
 
 const severities: Readonly<Record<Severity, DiagnosticSeverity>> = {
@@ -159,6 +208,17 @@ export function codeActionOf(
   };
 }
 
+/** The kind of the action that spells all units of a note; clients run it on saving where the user says so. */
+export const FIX_ALL = `${CodeActionKind.SourceFixAll}.plumbline`;
+
+export function fixAllOf(edits: readonly Edit[], uri: string): LspCodeAction {
+  return {
+    title: "Spell the units of this note as the notation does",
+    kind: FIX_ALL,
+    edit: { changes: { [uri]: edits.map(textEditOf) } },
+  };
+}
+
 const symbolKinds: Readonly<Record<OutlineEntry["kind"], SymbolKind>> = {
   point: SymbolKind.Event,
   setting: SymbolKind.Property,
@@ -190,6 +250,48 @@ export function flatSymbolsOf(symbol: OutlineEntry, note: Note, container = ""):
     container ? { ...own, containerName: container } : own,
     ...symbol.children.flatMap((child) => flatSymbolsOf(child, note, name)),
   ];
+}
+
+export function workspaceSymbolOf({ uri, entry, container }: FoundSymbol): SymbolInformation {
+  return {
+    name: entry.name,
+    kind: symbolKinds[entry.kind],
+    location: { uri, range: rangeOf(entry.nameLine, entry.nameSpan) },
+    ...(container ? { containerName: container } : {}),
+  };
+}
+
+/** The least stretch, with those it grows to as its parents. */
+export function selectionRangeOf(stretches: readonly Stretch[]): SelectionRange {
+  const [widest, ...others] = stretches.toReversed();
+  const outermost: SelectionRange = { range: widest ?? rangeOf(0, { start: 0, end: 0 }) };
+  return others.reduce<SelectionRange>((parent, range) => ({ range, parent }), outermost);
+}
+
+export function semanticTokensOf(tokens: readonly ColouredToken[]): SemanticTokens {
+  const builder = new SemanticTokensBuilder();
+  for (const { line, start, end, colour, defines } of tokens) {
+    builder.push(line, start, end - start, colours.indexOf(colour), defines ? 1 : 0);
+  }
+  return builder.build();
+}
+
+export function signatureHelpOf(signature: Signature, byPlace: boolean): SignatureHelp {
+  const { label, documentation, parameters, active } = signature;
+  return {
+    signatures: [
+      {
+        label,
+        documentation: { kind: "markdown", value: documentation },
+        parameters: parameters.map(({ start, end }) => ({
+          label: byPlace ? [start, end] : label.slice(start, end),
+        })),
+        activeParameter: active,
+      },
+    ],
+    activeSignature: 0,
+    activeParameter: active,
+  };
 }
 
 export function foldOf({ firstLine, lastLine }: Fold): FoldingRange {

@@ -4,15 +4,17 @@ import {
   type InitializeParams,
   type InitializeResult,
 } from "vscode-languageserver";
-import { answerRequests } from "./answers.ts";
+import { type Answering, answerRequests } from "./answers.ts";
 import { capabilities } from "./capabilities.ts";
 import { type Client, clientOf } from "./client.ts";
 import { Pusher } from "./diagnostics.ts";
 import { guardWith } from "./guard.ts";
+import { answerNameRequests } from "./nameAnswers.ts";
 import { registerWhatIsOffered } from "./registration.ts";
 import type { Runtime } from "./runtime.ts";
 import { readSettings, type Settings, standardSettings } from "./settings.ts";
 import { type FileChange, flavourOf, Workspace } from "./workspace.ts";
+import { answerWritingRequests } from "./writingAnswers.ts";
 
 const fileChanges: Readonly<Record<FileChangeType, FileChange["kind"]>> = {
   [FileChangeType.Created]: "created",
@@ -38,9 +40,12 @@ export function startServer(connection: Connection, runtime: Runtime): void {
   connection.onInitialize(
     guard.answering("initialize", (params: InitializeParams): InitializeResult => {
       client = clientOf(params);
+      guard.start();
       return { capabilities: capabilities(client), serverInfo: { name: "plumbline" } };
     }),
   );
+
+  connection.onShutdown(() => guard.end());
 
   connection.onInitialized(
     guard.hearing("initialized", async () => {
@@ -147,7 +152,7 @@ export function startServer(connection: Connection, runtime: Runtime): void {
     if (changed) everythingChanged();
   }
 
-  answerRequests(connection, guard, {
+  const answering: Answering = {
     workspace,
     pageUri,
     client: () => client,
@@ -156,6 +161,9 @@ export function startServer(connection: Connection, runtime: Runtime): void {
       return settings;
     },
     ready: () => ready,
-  });
+  };
+  answerRequests(connection, guard, answering);
+  answerNameRequests(connection, guard, answering);
+  answerWritingRequests(connection, guard, answering);
   connection.listen();
 }

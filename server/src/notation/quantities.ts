@@ -3,7 +3,7 @@ import type { Cursor } from "./cursor.ts";
 import { groupedNumber, type ReadNumber, readNumber, replace } from "./numbers.ts";
 import type { Span } from "./span.ts";
 import type { Quantity } from "./tree.ts";
-import { missingUnit, tonFixes, unitFixes, unknownUnit, wrongUnit, wrongUnitFixes } from "./unitFindings.ts";
+import { missingUnit, unknownUnit, unknownUnitFixes, wrongUnit, wrongUnitFixes } from "./unitFindings.ts";
 import { type QuantityKind, unitOf, unitRule } from "./units.ts";
 import { keywordOf, type Unit } from "./vocabulary.ts";
 
@@ -91,12 +91,7 @@ export function readQuantity(
     !isDueWord(cursor)
   ) {
     const span = cursor.take(end, "unread");
-    cursor.report(
-      "wrong-unit",
-      span,
-      unknownUnit(kind, word),
-      word.toLowerCase().startsWith("ton") ? tonFixes(span) : unitFixes(kind, span),
-    );
+    cursor.report("wrong-unit", span, unknownUnit(kind, word), unknownUnitFixes(kind, word, span));
     return quantity(cursor, number, null);
   }
   if (!rule.optional && !options.unitLater && !(cursor.faulty && !faultyBefore))

@@ -2,7 +2,7 @@ import type { Cursor } from "./cursor.ts";
 import type { Fix } from "./finding.ts";
 import { type ReadNumber, replace } from "./numbers.ts";
 import type { Span } from "./span.ts";
-import { type QuantityKind, unitRule } from "./units.ts";
+import { type QuantityKind, unitInWords, unitRule } from "./units.ts";
 import type { Unit } from "./vocabulary.ts";
 
 /** The units to write; a flight level is no unit behind a number. */
@@ -24,12 +24,19 @@ export function unknownUnit(kind: QuantityKind, word: string): string {
   if (kind === "mass" && word.toLowerCase().startsWith("ton")) {
     return `A ${word} may be 1000 kg, 2000 lb or 2240 lb: write t, kg or lb.`;
   }
+  const unit = unitInWords(word, kind);
+  if (unit) return `A unit is written short: write ${unit} instead of ${word}.`;
   const { noun } = unitRule(kind);
   return `${word} is no unit of ${noun}: write ${orList(choicesOf(kind))}.`;
 }
 
-export function tonFixes(span: Span): Fix[] {
-  return [{ title: "Write t (1000 kg)", edits: [{ line: 0, ...span, newText: "t" }] }];
+/** A word that can mean one unit only has one way out; that a ton is one is the author's to say. */
+export function unknownUnitFixes(kind: QuantityKind, word: string, span: Span): Fix[] {
+  if (word.toLowerCase().startsWith("ton")) {
+    return [{ title: "Write t (1000 kg)", edits: [{ line: 0, ...span, newText: "t" }] }];
+  }
+  const unit = unitInWords(word, kind);
+  return unit ? [{ ...replace(span, unit), preferred: true }] : unitFixes(kind, span);
 }
 
 export function wrongUnitFixes(kind: QuantityKind, span: Span, unit: Unit): Fix[] {
@@ -37,7 +44,7 @@ export function wrongUnitFixes(kind: QuantityKind, span: Span, unit: Unit): Fix[
   return unitFixes(kind, span);
 }
 
-export function unitFixes(kind: QuantityKind, span: Span): Fix[] {
+function unitFixes(kind: QuantityKind, span: Span): Fix[] {
   return choicesOf(kind).map((unit) => replace(span, unit));
 }
 

@@ -104,3 +104,53 @@ const known = new Map(Object.entries(spellings));
 export function unitOf(word: string): Unit | null {
   return known.get(word) ?? known.get(word.toLowerCase()) ?? null;
 }
+
+/** Words that can mean one unit only, whole or shortened otherwise. Tons are none: there are three. */
+const words: Readonly<Record<string, Unit>> = {
+  kgs: "kg",
+  kilo: "kg",
+  kilos: "kg",
+  kilogram: "kg",
+  kilograms: "kg",
+  kilogramme: "kg",
+  kilogrammes: "kg",
+  pound: "lb",
+  pounds: "lb",
+  newton: "N",
+  newtons: "N",
+  knot: "kt",
+  knots: "kt",
+  foot: "ft",
+  feet: "ft",
+  metre: "m",
+  metres: "m",
+  meter: "m",
+  meters: "m",
+  hectopascal: "hPa",
+  hectopascals: "hPa",
+  celsius: "C",
+  kelvin: "K",
+  degs: "deg",
+  degree: "deg",
+  degrees: "deg",
+  percent: "%",
+  hr: "h",
+  hrs: "h",
+  hour: "h",
+  hours: "h",
+  mins: "min",
+  minute: "min",
+  minutes: "min",
+  sec: "s",
+  secs: "s",
+  second: "s",
+  seconds: "s",
+};
+
+const spelledOut = new Map(Object.entries(words));
+
+/** The unit that a whole word means, where it is one of the units that are due; null otherwise. */
+export function unitInWords(word: string, kind: QuantityKind): Unit | null {
+  const unit = spelledOut.get(word.toLowerCase());
+  return unit !== undefined && rules[kind].units.includes(unit) ? unit : null;
+}
