@@ -41,8 +41,13 @@ async function writePages() {
   await Promise.all(pages().map(({ name, text }) => writeFile(`dist/pages/${name}`, text)));
 }
 
+/** For a browser: the host of its extensions wraps the client, and the server is a worker's whole script. */
+const web = { ...shared, platform: "browser", target: "es2022", define: {}, banner: {} };
+
 if (!debug) {
-  const maps = ["client/extension", "server/main.node", "server/cli"].map((name) => `dist/${name}.cjs.map`);
+  const bundles = ["client/extension.cjs", "server/main.node.cjs", "server/cli.cjs"];
+  bundles.push("client/extension.web.js", "server/main.web.js");
+  const maps = bundles.map((name) => `dist/${name}.map`);
   await Promise.all(maps.map((map) => rm(map, { force: true })));
 }
 await Promise.all([
@@ -58,6 +63,18 @@ await Promise.all([
     entryPoints: ["server/src/cli/main.ts"],
     outfile: "dist/server/cli.cjs",
     banner: { js: `#!/usr/bin/env node\n${whereItStands}` },
+  }),
+  build({
+    ...web,
+    entryPoints: ["client/src/extension.web.ts"],
+    outfile: "dist/client/extension.web.js",
+    external: ["vscode"],
+  }),
+  build({
+    ...web,
+    entryPoints: ["server/src/main.web.ts"],
+    outfile: "dist/server/main.web.js",
+    format: "iife",
   }),
   writePages(),
 ]);

@@ -1,6 +1,8 @@
 import { relative, resolve, sep } from "node:path";
 import { pathToFileURL } from "node:url";
-import { discover, readNote } from "../disk/discover.ts";
+import { discover } from "../disk/discover.ts";
+import { diskTree } from "../disk/diskTree.ts";
+import { readNote } from "../files/readNote.ts";
 import type { Flavour } from "../notation/document.ts";
 import { createFolder } from "../plan/createFolder.ts";
 import type { Note } from "../plan/note.ts";
@@ -33,7 +35,7 @@ export async function load(paths: readonly string[], options: LoadOptions): Prom
   const texts = new Map<string, string>();
   await Promise.all(
     [...new Set([...wanted.files, ...besides.files])].map(async (file) => {
-      const read = await readNote(file);
+      const read = await readNote(diskTree, file);
       if ("text" in read) texts.set(file, read.text);
       else problems.push(read.problem);
     }),

@@ -36,6 +36,7 @@ import {
 import { diagnosticsOf, workspaceReport } from "./diagnostics.ts";
 import type { guardWith } from "./guard.ts";
 import { type PointsAnswer, type PointsParams, pointsRequest } from "./protocol.ts";
+import type { Runtime } from "./runtime.ts";
 import type { Settings } from "./settings.ts";
 import type { Workspace } from "./workspace.ts";
 
@@ -43,6 +44,7 @@ import type { Workspace } from "./workspace.ts";
 export interface Answering {
   readonly workspace: Workspace;
   readonly pageUri: PageUri;
+  readonly soon: Runtime["soon"];
   client(): Client;
   /** Once the client has said them. */
   settings(): Promise<Settings>;
@@ -54,7 +56,7 @@ export interface Answering {
 export function answerRequests(
   connection: Connection,
   { answering }: ReturnType<typeof guardWith>,
-  { workspace, pageUri, client, settings, ready }: Answering,
+  { workspace, pageUri, soon, client, settings, ready }: Answering,
 ): void {
   /** The note, once the folders are read. Null for a text that nobody opened. */
   async function noteOf(uri: string, token: CancellationToken): Promise<Note | null> {
@@ -66,7 +68,7 @@ export function answerRequests(
   /** Lets waiting changes in, and gives up where the text was overtaken: a burst is answered for its last text. */
   async function settled(uri: string, token: CancellationToken): Promise<void> {
     const version = workspace.openNote(uri)?.version;
-    for (let turn = 0; turn < 3; turn++) await new Promise((resolve) => setImmediate(resolve));
+    for (let turn = 0; turn < 3; turn++) await new Promise<void>(soon);
     dropCancelled(token);
     if (workspace.openNote(uri)?.version !== version) {
       throw new ResponseError(LSPErrorCodes.ContentModified, "The text has changed since.");

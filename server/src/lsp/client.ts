@@ -1,4 +1,5 @@
 import type { InitializeParams } from "vscode-languageserver";
+import { type InitializationOptions, listFilesRequest, readFileRequest } from "./protocol.ts";
 
 /** What the client said it can do. Nothing else is asked of it. */
 export interface Client {
@@ -17,12 +18,22 @@ export interface Client {
   readonly resolvesHints: boolean;
   /** It shows an outline as a tree; else it gets a list. */
   readonly nestsSymbols: boolean;
+  /** It lists and reads files for a server that cannot see them. */
+  readonly servesFiles: boolean;
+  /** URI of the folder that holds the pages, where it knows one. */
+  readonly pages: string | null;
 }
 
-export function clientOf({ capabilities, workspaceFolders, rootUri }: InitializeParams): Client {
+export function clientOf({
+  capabilities,
+  workspaceFolders,
+  rootUri,
+  initializationOptions,
+}: InitializeParams): Client {
   const { workspace, textDocument } = capabilities;
   const lazily = textDocument?.inlayHint?.resolveSupport?.properties ?? [];
   const folders = workspaceFolders?.map(({ uri }) => uri) ?? (rootUri ? [rootUri] : []);
+  const { answers, pages } = optionsOf(initializationOptions);
   return {
     folders,
     pulls: textDocument?.diagnostic !== undefined,
@@ -35,5 +46,16 @@ export function clientOf({ capabilities, workspaceFolders, rootUri }: Initialize
     snippets: textDocument?.completion?.completionItem?.snippetSupport === true,
     resolvesHints: ["label.tooltip", "label.location"].every((one) => lazily.includes(one)),
     nestsSymbols: textDocument?.documentSymbol?.hierarchicalDocumentSymbolSupport === true,
+    servesFiles: [listFilesRequest, readFileRequest].every((one) => answers.includes(one)),
+    pages,
+  };
+}
+
+/** Options come from whoever starts the server, so nothing is taken for granted. */
+function optionsOf(raw: unknown): { readonly answers: readonly unknown[]; readonly pages: string | null } {
+  const { answers, pages } = (raw ?? {}) as { [Name in keyof InitializationOptions]: unknown };
+  return {
+    answers: Array.isArray(answers) ? answers : [],
+    pages: typeof pages === "string" ? pages.replace(/\/$/, "") : null,
   };
 }
