@@ -1,4 +1,4 @@
-import { type ExtensionContext, Uri } from "vscode";
+import { type ExtensionContext, Uri, workspace } from "vscode";
 import { BrowserMessageReader, BrowserMessageWriter, LanguageClient } from "vscode-languageclient/browser";
 import { clientOptions, start } from "./activate.ts";
 
@@ -7,7 +7,7 @@ let worker: Worker | undefined;
 
 /** The browser's entry: the server is a worker, and sees the files that the client serves. */
 export async function activate(context: ExtensionContext): Promise<void> {
-  const server = Uri.joinPath(context.extensionUri, "dist/server/main.web.js").toString(true);
+  const server = Uri.joinPath(context.extensionUri, "dist/server/main.web.js");
   const pages = Uri.joinPath(context.extensionUri, "dist/pages").toString();
   client = new LanguageClient(
     "plumbline",
@@ -15,7 +15,7 @@ export async function activate(context: ExtensionContext): Promise<void> {
     async () => {
       // One that was stopped does not end by itself, and cannot be started again.
       worker?.terminate();
-      worker = new Worker(server);
+      worker = await startWorker(server);
       // The host wraps its workers, so the library would not know one when it sees it.
       return { reader: new BrowserMessageReader(worker), writer: new BrowserMessageWriter(worker) };
     },
@@ -27,4 +27,11 @@ export async function activate(context: ExtensionContext): Promise<void> {
 export async function deactivate(): Promise<void> {
   if (client?.needsStop()) await client.stop();
   worker?.terminate();
+}
+
+/** Reads the script first: a worker may not be started from wherever an extension lies. */
+async function startWorker(script: Uri): Promise<Worker> {
+  const bytes = Uint8Array.from(await workspace.fs.readFile(script));
+  const address = URL.createObjectURL(new Blob([bytes], { type: "text/javascript" }));
+  return new Worker(address);
 }
