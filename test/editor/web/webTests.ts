@@ -61,7 +61,7 @@ export const webTests: readonly Test[] = [
       const doubles = () =>
         vscode.languages
           .getDiagnostics()
-          .flatMap(([, found]) => found)
+          .flatMap(([uri, found]) => (uri.path.startsWith(`${folder.path}/`) ? found : []))
           .filter((one) => codeOf(one) === "duplicate-name").length;
       await write("twin.plumb", twin);
       try {
