@@ -4,6 +4,8 @@ import { clientOptions, start } from "./activate.ts";
 
 let client: LanguageClient | undefined;
 let worker: Worker | undefined;
+/** Of the server's script, for every start. */
+let script: string | undefined;
 
 /** The browser's entry: the server is a worker, and sees the files that the client serves. */
 export async function activate(context: ExtensionContext): Promise<void> {
@@ -15,7 +17,8 @@ export async function activate(context: ExtensionContext): Promise<void> {
     async () => {
       // One that was stopped does not end by itself, and cannot be started again.
       worker?.terminate();
-      worker = await startWorker(server);
+      script ??= await ownAddress(server);
+      worker = new Worker(script);
       // The host wraps its workers, so the library would not know one when it sees it.
       return { reader: new BrowserMessageReader(worker), writer: new BrowserMessageWriter(worker) };
     },
@@ -29,9 +32,8 @@ export async function deactivate(): Promise<void> {
   worker?.terminate();
 }
 
-/** Reads the script first: a worker may not be started from wherever an extension lies. */
-async function startWorker(script: Uri): Promise<Worker> {
-  const bytes = Uint8Array.from(await workspace.fs.readFile(script));
-  const address = URL.createObjectURL(new Blob([bytes], { type: "text/javascript" }));
-  return new Worker(address);
+/** An address within this page: a worker may not be started from wherever an extension lies. */
+async function ownAddress(file: Uri): Promise<string> {
+  const bytes = Uint8Array.from(await workspace.fs.readFile(file));
+  return URL.createObjectURL(new Blob([bytes], { type: "text/javascript" }));
 }

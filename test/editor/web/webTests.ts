@@ -75,6 +75,23 @@ export const webTests: readonly Test[] = [
     },
   ],
   [
+    "the demo is opened as a new folder",
+    async () => {
+      const folder = vscode.workspace.workspaceFolders?.[0]?.uri;
+      assert.ok(folder);
+      const parent = vscode.Uri.joinPath(folder, "../parent");
+      void vscode.commands.executeCommand("plumbline.openDemo", parent);
+      assert.ok((await page.opened()).includes(`${parent.path}/plumbline-demo`));
+      const names = async (uri: vscode.Uri) =>
+        (await vscode.workspace.fs.readDirectory(uri)).map(([name]) => name).sort();
+      const extension = vscode.extensions.getExtension("plumbline.plumbline");
+      assert.ok(extension);
+      const shipped = await names(vscode.Uri.joinPath(extension.extensionUri, "demo"));
+      assert.ok(shipped.includes("winter-shuttle.plumb"));
+      assert.deepEqual(await names(vscode.Uri.joinPath(parent, "plumbline-demo")), shipped);
+    },
+  ],
+  [
     "the server is restarted and answers again",
     async () => {
       const { document } = await openNote("winter-shuttle.plumb");
