@@ -1,13 +1,18 @@
 // Bundles the extension, the server and the command line, and writes the pages that ship beside them.
 //   node build.mjs           what ships and what the tests run
 //   node build.mjs --debug   readable, with source maps, for a debugger
+import { readdirSync } from "node:fs";
 import { mkdir, readFile, rm, writeFile } from "node:fs/promises";
+import { join, relative } from "node:path";
 import { build } from "esbuild";
 
 const debug = process.argv.includes("--debug");
 const { version } = JSON.parse(await readFile("package.json", "utf8"));
 // A dependency asks where it stands by `import.meta.url`, which a bundle in CommonJS does not have.
 const whereItStands = '"use strict";const bundleUrl=require("node:url").pathToFileURL(__filename).href;';
+const demo = readdirSync("demo", { recursive: true, withFileTypes: true })
+  .filter((entry) => entry.isFile())
+  .map((entry) => relative("demo", join(entry.parentPath, entry.name)).replaceAll("\\", "/"));
 const shared = {
   bundle: true,
   platform: "node",
@@ -15,7 +20,11 @@ const shared = {
   format: "cjs",
   minify: !debug,
   sourcemap: debug && "linked",
-  define: { PLUMBLINE_VERSION: JSON.stringify(version), "import.meta.url": "bundleUrl" },
+  define: {
+    PLUMBLINE_VERSION: JSON.stringify(version),
+    DEMO_FILES: JSON.stringify(demo),
+    "import.meta.url": "bundleUrl",
+  },
   banner: { js: whereItStands },
   legalComments: "none",
   logLevel: "warning",
@@ -41,8 +50,19 @@ async function writePages() {
   await Promise.all(pages().map(({ name, text }) => writeFile(`dist/pages/${name}`, text)));
 }
 
+/** For a browser: the host of its extensions wraps the client, and the server is a worker's whole script. */
+const web = {
+  ...shared,
+  platform: "browser",
+  target: "es2022",
+  define: { DEMO_FILES: JSON.stringify(demo) },
+  banner: {},
+};
+
 if (!debug) {
-  const maps = ["client/extension", "server/main.node", "server/cli"].map((name) => `dist/${name}.cjs.map`);
+  const bundles = ["client/extension.cjs", "server/main.node.cjs", "server/cli.cjs"];
+  bundles.push("client/extension.web.js", "server/main.web.js");
+  const maps = bundles.map((name) => `dist/${name}.map`);
   await Promise.all(maps.map((map) => rm(map, { force: true })));
 }
 await Promise.all([
@@ -58,6 +78,18 @@ await Promise.all([
     entryPoints: ["server/src/cli/main.ts"],
     outfile: "dist/server/cli.cjs",
     banner: { js: `#!/usr/bin/env node\n${whereItStands}` },
+  }),
+  build({
+    ...web,
+    entryPoints: ["client/src/extension.web.ts"],
+    outfile: "dist/client/extension.web.js",
+    external: ["vscode"],
+  }),
+  build({
+    ...web,
+    entryPoints: ["server/src/main.web.ts"],
+    outfile: "dist/server/main.web.js",
+    format: "iife",
   }),
   writePages(),
 ]);

@@ -1,4 +1,4 @@
-// Prints `N passed, M failed` over the tests and the suite in the editor, where both left their counts.
+// Prints `N passed, M failed` over the tests and the suites in the editor, where all left their counts.
 // After a failure the line is printed only if a counted test is what failed.
 import { readFileSync } from "node:fs";
 
@@ -13,7 +13,10 @@ function counts(path, read) {
 const ended = Number(process.argv[2]);
 const unit = counts("out/unit.json", (one) => ({ passed: one.numPassedTests, failed: one.numFailedTests }));
 const editor = counts("out/editor/counts.json", (one) => one);
-const failed = (unit?.failed ?? 0) + (editor?.failed ?? 0);
-if (ended === 0 ? unit && editor : failed > 0) {
-  console.log(`${(unit?.passed ?? 0) + (editor?.passed ?? 0)} passed, ${failed} failed`);
+const web = counts("out/editor/webCounts.json", (one) => one);
+const all = [unit, editor, web];
+const sum = (name) => all.reduce((total, one) => total + (one?.[name] ?? 0), 0);
+const failed = sum("failed");
+if (ended === 0 ? all.every(Boolean) : failed > 0) {
+  console.log(`${sum("passed")} passed, ${failed} failed`);
 }

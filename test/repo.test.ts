@@ -12,6 +12,7 @@ const filesIn = (folder: string, ending: string) =>
 
 interface Manifest {
   readonly main: string;
+  readonly browser: string;
   readonly bin: Readonly<Record<string, string>>;
   readonly files: readonly string[];
   readonly contributes: {
@@ -41,7 +42,9 @@ describe("the manifest", () => {
 
   it("starts what the build writes", () => {
     const build = read("build.mjs");
-    const outputs = [manifest.main, ...Object.values(manifest.bin)].map((path) => posix.normalize(path));
+    const outputs = [manifest.main, manifest.browser, ...Object.values(manifest.bin)].map((path) =>
+      posix.normalize(path),
+    );
     expect(outputs.filter((path) => !build.includes(`"${path}"`))).toEqual([]);
     expect(outputs.filter((path) => !manifest.files.includes(path))).toEqual([]);
   });
@@ -71,9 +74,16 @@ describe("imports", () => {
     plan: { from: ["flight", "notation"], packages: null },
     report: { from: ["flight", "notation", "plan"], packages: /^sarif$/ },
     features: { from: ["flight", "notation", "plan", "report"], packages: null },
-    disk: { from: ["notation", "plan", "report", "features"], packages: /^(?!vscode)/ },
-    lsp: { from: ["flight", "notation", "plan", "report", "features", "disk"], packages: /^(?!vscode$)/ },
-    cli: { from: ["flight", "notation", "plan", "report", "features", "disk"], packages: /^(?!vscode)/ },
+    files: { from: [], packages: /^ignore$/ },
+    disk: { from: ["notation", "plan", "report", "features", "files"], packages: /^(?!vscode)/ },
+    lsp: {
+      from: ["flight", "notation", "plan", "report", "features", "files"],
+      packages: /^vscode-languageserver$/,
+    },
+    cli: {
+      from: ["flight", "notation", "plan", "report", "features", "files", "disk"],
+      packages: /^(?!vscode)/,
+    },
   };
 
   interface Import {

@@ -3,6 +3,9 @@ import type { CommandContext } from "./commands.ts";
 
 const NAME = "plumbline-demo";
 
+/** Paths in the demo, written in by the bundler: an extension on the web can be read, but its folders not listed. */
+declare const DEMO_FILES: readonly string[];
+
 /**
  * Copies the demo into a new folder beneath one that the user picks, and opens the copy: in this window
  * if no folder is open in it, else in a new one. Nothing that exists is written to. A caller that has a
@@ -32,13 +35,26 @@ async function copyDemo(demo: Uri, parent: Uri): Promise<Uri> {
   for (let n = 1; n < 100; n++) {
     const target = Uri.joinPath(parent, n === 1 ? NAME : `${NAME}-${n}`);
     try {
-      await workspace.fs.copy(demo, target, { overwrite: false });
+      if (await isThere(target)) continue;
+      for (const path of DEMO_FILES) {
+        const text = await workspace.fs.readFile(Uri.joinPath(demo, path));
+        await workspace.fs.writeFile(Uri.joinPath(target, path), text);
+      }
       return target;
     } catch (error) {
-      if (error instanceof FileSystemError && error.code === "FileExists") continue;
       const why = error instanceof Error ? error.message : String(error);
       throw new Error(`The demo could not be copied to ${target.fsPath}: ${why}`);
     }
   }
   throw new Error(`${parent.fsPath} holds too many copies of the demo already; pick another folder.`);
+}
+
+async function isThere(target: Uri): Promise<boolean> {
+  try {
+    await workspace.fs.stat(target);
+    return true;
+  } catch (error) {
+    if (error instanceof FileSystemError && error.code === "FileNotFound") return false;
+    throw error;
+  }
 }

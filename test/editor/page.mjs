@@ -61,6 +61,8 @@ export function servePage(page, pictures) {
     },
   };
   const server = createServer(async (request, response) => {
+    // A host in the browser asks from a page of another origin.
+    response.setHeader("Access-Control-Allow-Origin", "*");
     let body = "";
     for await (const chunk of request) body += chunk;
     const { action, ...args } = JSON.parse(body);

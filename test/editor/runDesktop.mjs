@@ -3,7 +3,7 @@ import { cpSync, mkdtempSync } from "node:fs";
 import { tmpdir } from "node:os";
 import { join, resolve } from "node:path";
 import { runTests } from "@vscode/test-electron";
-import { build } from "esbuild";
+import { bundleSuite } from "./bundleSuite.mjs";
 
 const executable = process.env.VSCODE_EXECUTABLE;
 if (!executable) {
@@ -12,14 +12,7 @@ if (!executable) {
   );
   process.exit(1);
 }
-await build({
-  entryPoints: ["test/editor/suite/index.ts"],
-  outfile: "out/editor/suite.cjs",
-  bundle: true,
-  platform: "node",
-  format: "cjs",
-  external: ["vscode"],
-});
+await bundleSuite("out/editor/suite.cjs");
 const folder = join(mkdtempSync(join(tmpdir(), "plumbline-desktop-")), "demo");
 cpSync("demo", folder, { recursive: true });
 process.exitCode = await runTests({

@@ -1,18 +1,20 @@
 // Runs the extension in the real editor: the workbench of code-server with its Node extension host, in
 // headless Chromium. Screenshots go to out/pictures; `--readme` copies those that the README shows.
+// `--web` runs it in the browser's own extension host instead: from a copy that has no other entry.
 import { spawn } from "node:child_process";
-import { cpSync, mkdirSync, mkdtempSync, rmSync, writeFileSync } from "node:fs";
+import { cpSync, mkdirSync, mkdtempSync, readFileSync, rmSync, writeFileSync } from "node:fs";
 import { createServer } from "node:net";
 import { tmpdir } from "node:os";
-import { join, resolve } from "node:path";
-import { build } from "esbuild";
+import { dirname, join, resolve } from "node:path";
 import { chromium } from "playwright-core";
+import { bundleSuite, bundleWebSuite } from "./bundleSuite.mjs";
 import { editorEntry, installEditor } from "./installEditor.mjs";
 import { servePage } from "./page.mjs";
 
 const LONGEST = 8 * 60_000;
-const pictures = resolve("out/pictures");
-const counts = resolve("out/editor/counts.json");
+const web = process.argv.includes("--web");
+const pictures = resolve(web ? "out/webPictures" : "out/pictures");
+const counts = resolve(web ? "out/editor/webCounts.json" : "out/editor/counts.json");
 const inReadme = ["screenshot-light", "screenshot-dark", "screenshot-contrast", "hover"];
 
 function freePort() {
@@ -73,20 +75,20 @@ function freshFolders() {
   return root;
 }
 
+/** The extension as a browser finds it, without the entry that a Node host would take. */
+function webExtension(root) {
+  const manifest = JSON.parse(readFileSync("package.json", "utf8"));
+  const folder = join(root, "extension");
+  for (const name of ["dist", "syntaxes", "demo"]) cpSync(name, join(folder, name), { recursive: true });
+  const { main: _, ...browserOnly } = manifest;
+  writeFileSync(join(folder, "package.json"), JSON.stringify({ ...browserOnly, extensionKind: ["web"] }));
+  return folder;
+}
+
 installEditor();
 // What an earlier run left must not pass for this one's.
 for (const old of [pictures, counts]) rmSync(old, { recursive: true, force: true });
-mkdirSync(pictures, { recursive: true });
-await build({
-  entryPoints: ["test/editor/suite/index.ts"],
-  outfile: "out/editor/suite.cjs",
-  bundle: true,
-  platform: "node",
-  format: "cjs",
-  target: "node20",
-  external: ["vscode"],
-  logLevel: "warning",
-});
+for (const folder of [pictures, dirname(counts)]) mkdirSync(folder, { recursive: true });
 const root = freshFolders();
 const port = await freePort();
 const browser = await chromium.launch({
@@ -103,6 +105,10 @@ const browser = await chromium.launch({
 });
 const page = await browser.newPage({ viewport: { width: 1360, height: 860 } });
 const bridge = await servePage(page, pictures);
+const extension = web ? webExtension(root) : resolve(".");
+// The host of an extension runs the suite that lies in its folder.
+const suite = web ? join(extension, "out/suite.js") : resolve("out/editor/suite.cjs");
+await (web ? bundleWebSuite(suite, bridge.port) : bundleSuite(suite));
 const server = spawn(
   process.execPath,
   [
@@ -139,8 +145,8 @@ try {
   });
   const base = `vscode-remote://127.0.0.1:${port}`;
   const payload = JSON.stringify([
-    ["extensionDevelopmentPath", base + resolve(".")],
-    ["extensionTestsPath", base + resolve("out/editor/suite.cjs")],
+    ["extensionDevelopmentPath", base + extension],
+    ["extensionTestsPath", base + suite],
     ["skipWelcome", "true"],
   ]);
   await page.goto(

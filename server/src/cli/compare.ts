@@ -1,6 +1,8 @@
 import { stat } from "node:fs/promises";
 import { dirname, resolve, sep } from "node:path";
-import { discover, notesIn } from "../disk/discover.ts";
+import { discover } from "../disk/discover.ts";
+import { diskTree } from "../disk/diskTree.ts";
+import { notesIn } from "../files/walk.ts";
 import { compare as compareRevisions, type Revision } from "../report/compare.ts";
 import { comparisonJson } from "../report/comparisonJson.ts";
 import { comparisonText } from "../report/comparisonText.ts";
@@ -63,7 +65,7 @@ async function placeOf(
 async function revision(place: Place, other: Place, options: CompareOptions): Promise<Revision> {
   const under = await discover([place.root], process.cwd());
   if (under.problems.length > 0) throw new UsageError(under.problems.join("\n"));
-  const besides = new Set([...(await notesIn(dirname(place.file))), ...under.files]);
+  const besides = new Set([...(await notesIn(diskTree, dirname(place.file))), ...under.files]);
   const [loaded] = await load([place.named], {
     ...options,
     besides: [...besides].filter((file) => !belongsTo(other, place, file)),

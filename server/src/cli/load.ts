@@ -1,6 +1,8 @@
 import { relative, resolve, sep } from "node:path";
 import { pathToFileURL } from "node:url";
-import { discover, readNote } from "../disk/discover.ts";
+import { discover } from "../disk/discover.ts";
+import { diskTree } from "../disk/diskTree.ts";
+import { readNote } from "../files/readNote.ts";
 import type { Flavour } from "../notation/document.ts";
 import { createFolder } from "../plan/createFolder.ts";
 import type { Note } from "../plan/note.ts";
@@ -85,7 +87,7 @@ async function readTexts(
   const texts = new Map<string, string>();
   await Promise.all(
     [...new Set([...wanted.files, ...besides.files])].map(async (file) => {
-      const read = await readNote(file);
+      const read = await readNote(diskTree, file);
       if ("text" in read) texts.set(file, read.text);
       else problems.push(read.problem);
     }),

@@ -1,6 +1,6 @@
 import { basename } from "node:path";
 import { watch } from "chokidar";
-import { isNoteFile } from "../disk/discover.ts";
+import { isNoteFile } from "../files/isNoteFile.ts";
 import type { LoadOptions } from "./load.ts";
 import { shortPath } from "./load.ts";
 

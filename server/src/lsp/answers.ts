@@ -46,6 +46,7 @@ import {
   type PointsParams,
   pointsRequest,
 } from "./protocol.ts";
+import type { Runtime } from "./runtime.ts";
 import type { Settings } from "./settings.ts";
 import type { Workspace } from "./workspace.ts";
 
@@ -53,6 +54,7 @@ import type { Workspace } from "./workspace.ts";
 export interface Answering {
   readonly workspace: Workspace;
   readonly pageUri: PageUri;
+  readonly soon: Runtime["soon"];
   client(): Client;
   /** Once the client has said them. */
   settings(): Promise<Settings>;
@@ -64,14 +66,14 @@ export interface Answering {
 export function answerRequests(
   connection: Connection,
   { answering }: ReturnType<typeof guardWith>,
-  { workspace, pageUri, client, settings, ready }: Answering,
+  { workspace, pageUri, soon, client, settings, ready }: Answering,
 ): void {
   const noteOf = noteFinder({ workspace, ready });
 
   /** Lets waiting changes in, and gives up where the text was overtaken: a burst is answered for its last text. */
   async function settled(uri: string, token: CancellationToken): Promise<void> {
     const version = workspace.openNote(uri)?.version;
-    for (let turn = 0; turn < 3; turn++) await new Promise((resolve) => setImmediate(resolve));
+    for (let turn = 0; turn < 3; turn++) await new Promise<void>(soon);
     dropCancelled(token);
     if (workspace.openNote(uri)?.version !== version) {
       throw new ResponseError(LSPErrorCodes.ContentModified, "The text has changed since.");

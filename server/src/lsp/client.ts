@@ -1,4 +1,5 @@
 import type { InitializeParams } from "vscode-languageserver";
+import { type InitializationOptions, listFilesRequest, readFileRequest } from "./protocol.ts";
 
 /** What the client said it can do. Nothing else is asked of it. */
 export interface Client {
@@ -24,12 +25,22 @@ export interface Client {
   /** It finds an argument in a signature by its place there; else by its text. */
   readonly placesArguments: boolean;
   readonly coloursNotes: boolean;
+  /** It lists and reads files for a server that cannot see them. */
+  readonly servesFiles: boolean;
+  /** URI of the folder that holds the pages, where it knows one. */
+  readonly pages: string | null;
 }
 
-export function clientOf({ capabilities, workspaceFolders, rootUri }: InitializeParams): Client {
+export function clientOf({
+  capabilities,
+  workspaceFolders,
+  rootUri,
+  initializationOptions,
+}: InitializeParams): Client {
   const { workspace, textDocument } = capabilities;
   const lazily = textDocument?.inlayHint?.resolveSupport?.properties ?? [];
   const folders = workspaceFolders?.map(({ uri }) => uri) ?? (rootUri ? [rootUri] : []);
+  const { answers, pages } = optionsOf(initializationOptions);
   return {
     folders,
     pulls: textDocument?.diagnostic !== undefined,
@@ -47,5 +58,16 @@ export function clientOf({ capabilities, workspaceFolders, rootUri }: Initialize
       textDocument?.signatureHelp?.signatureInformation?.parameterInformation?.labelOffsetSupport === true,
     coloursNotes: textDocument?.semanticTokens?.formats.includes("relative") === true,
     versionsEdits: workspace?.workspaceEdit?.documentChanges === true,
+    servesFiles: [listFilesRequest, readFileRequest].every((one) => answers.includes(one)),
+    pages,
+  };
+}
+
+/** Options come from whoever starts the server, so nothing is taken for granted. */
+function optionsOf(raw: unknown): { readonly answers: readonly unknown[]; readonly pages: string | null } {
+  const { answers, pages } = (raw ?? {}) as { [Name in keyof InitializationOptions]: unknown };
+  return {
+    answers: Array.isArray(answers) ? answers : [],
+    pages: typeof pages === "string" ? pages.replace(/\/$/, "") : null,
   };
 }

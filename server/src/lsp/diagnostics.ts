@@ -7,6 +7,7 @@ import {
 } from "vscode-languageserver";
 import type { Note } from "../plan/note.ts";
 import { diagnosticOf, type PageUri } from "./convert.ts";
+import type { Runtime } from "./runtime.ts";
 import type { Workspace } from "./workspace.ts";
 
 export function diagnosticsOf(note: Note, pageUri: PageUri): Diagnostic[] {
@@ -66,15 +67,23 @@ export class Pusher {
   readonly #pageUri: PageUri;
   /** Resolves once the folders are read: no card is told as missing that is only not read yet. */
   readonly #ready: () => Promise<unknown>;
+  readonly #soon: Runtime["soon"];
   readonly #waiting = new Set<string>();
   #turns = 0;
   #scheduled = false;
 
-  constructor(connection: Connection, workspace: Workspace, pageUri: PageUri, ready: () => Promise<unknown>) {
+  constructor(
+    connection: Connection,
+    workspace: Workspace,
+    pageUri: PageUri,
+    ready: () => Promise<unknown>,
+    soon: Runtime["soon"],
+  ) {
     this.#connection = connection;
     this.#workspace = workspace;
     this.#pageUri = pageUri;
     this.#ready = ready;
+    this.#soon = soon;
   }
 
   push(uri: string): void {
@@ -95,7 +104,7 @@ export class Pusher {
   }
 
   #turn(): void {
-    setImmediate(() => {
+    this.#soon(() => {
       this.#turns--;
       if (0 < this.#turns) this.#turn();
       else this.#flush();

@@ -1,3 +1,4 @@
+import type { Entry, ReadFile } from "../files/fileTree.ts";
 import type { FileJson } from "../report/pointsJson.ts";
 
 /** `plumbline/points`: every computed value of a note, as `plumbline points --format json` prints it. */
@@ -28,3 +29,33 @@ export type CompareAnswer = {
   /** What `plumbline compare --format markdown` prints. */
   readonly markdown: string;
 } | null;
+
+/** What a client may say in its initialization options. */
+export interface InitializationOptions {
+  /**
+   * Requests that the client answers. One that names `plumbline/listFiles` and `plumbline/readFile`
+   * is asked for files that the server cannot see itself.
+   */
+  readonly answers?: readonly string[];
+  /** URI of the folder that holds the pages, for a server that cannot tell where it ships. */
+  readonly pages?: string;
+}
+
+/** `plumbline/listFiles`: what a folder holds itself, asked of the client; null where it is none. */
+export const listFilesRequest = "plumbline/listFiles";
+
+export interface ListFilesParams {
+  readonly uri: string;
+}
+
+export type ListFilesAnswer = readonly Entry[] | null;
+
+/** `plumbline/readFile`: what a file of `mostBytes` at most says, asked of the client. */
+export const readFileRequest = "plumbline/readFile";
+
+export interface ReadFileParams {
+  readonly uri: string;
+  readonly mostBytes: number;
+}
+
+export type ReadFileAnswer = ReadFile;

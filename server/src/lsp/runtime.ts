@@ -1,12 +1,13 @@
+import type { FileSource } from "./noteFiles.ts";
+
 /** What the server needs of the machine it runs on. */
 export interface Runtime {
   /** The day, `2026-03-01`. */
   today(): string;
-  /** The notes below a folder, as URIs. */
-  listNotes(folderUri: string): Promise<readonly string[]>;
-  isFolder(uri: string): Promise<boolean>;
-  /** The text of a note; null where it cannot be read, which is logged. */
-  readNote(uri: string, log: (message: string) => void): Promise<string | null>;
-  /** Where a page ships, by its file name; null where none does. */
+  /** The machine's own files; null where it has none, as in a browser. */
+  readonly disk: FileSource | null;
+  /** Where a page ships, by its file name; null where the machine does not hold it. */
   pageUri(name: string): string | null;
+  /** Does work after what lies in the event queue already. */
+  soon(work: () => void): void;
 }

@@ -10,8 +10,10 @@ import { type Client, clientOf } from "./client.ts";
 import { Pusher } from "./diagnostics.ts";
 import { guardWith } from "./guard.ts";
 import { answerNameRequests } from "./nameAnswers.ts";
+import { noteFiles } from "./noteFiles.ts";
 import { registerWhatIsOffered } from "./registration.ts";
 import type { Runtime } from "./runtime.ts";
+import { servedFiles } from "./servedFiles.ts";
 import { readSettings, type Settings, standardSettings } from "./settings.ts";
 import { type FileChange, flavourOf, Workspace } from "./workspace.ts";
 import { answerWritingRequests } from "./writingAnswers.ts";
@@ -25,9 +27,11 @@ const fileChanges: Readonly<Record<FileChangeType, FileChange["kind"]>> = {
 /** Starts the language server on a connection. It answers at once and has no timer of its own. */
 export function startServer(connection: Connection, runtime: Runtime): void {
   const guard = guardWith(connection);
-  const workspace = new Workspace(runtime, (message) => connection.console.warn(message));
-  const pageUri = (name: string) => runtime.pageUri(name);
-  const pusher = new Pusher(connection, workspace, pageUri, () => ready);
+  const served = servedFiles(connection, () => client.servesFiles);
+  const files = noteFiles(runtime.disk ? [runtime.disk, served] : [served]);
+  const workspace = new Workspace(files, runtime.today, (message) => connection.console.warn(message));
+  const pageUri = (name: string) => runtime.pageUri(name) ?? (client.pages && `${client.pages}/${name}`);
+  const pusher = new Pusher(connection, workspace, pageUri, () => ready, runtime.soon);
   let client: Client = clientOf({ processId: null, rootUri: null, capabilities: {} });
   let settings: Settings = standardSettings;
   /** What is read from the disk, one after the other, so that an older text never comes after a newer one. */
@@ -155,6 +159,7 @@ export function startServer(connection: Connection, runtime: Runtime): void {
   const answering: Answering = {
     workspace,
     pageUri,
+    soon: runtime.soon,
     client: () => client,
     settings: async () => {
       await configured;

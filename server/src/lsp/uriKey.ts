@@ -3,7 +3,6 @@
  * write a drive's letter either way: compared as they come, an open note and the disk's would be two.
  */
 export function uriKey(uri: string): string {
-  if (!uri.startsWith("file:")) return uri;
   let path = uri;
   try {
     path = decodeURIComponent(uri);

@@ -3,7 +3,7 @@ import type { Flavour } from "../notation/document.ts";
 import { createFolder } from "../plan/createFolder.ts";
 import type { Folder } from "../plan/folder.ts";
 import type { Note } from "../plan/note.ts";
-import type { Runtime } from "./runtime.ts";
+import type { NoteFiles } from "./noteFiles.ts";
 import { uriKey } from "./uriKey.ts";
 
 /** A note that an editor has open. */
@@ -39,7 +39,8 @@ const READ_AT_ONCE = 32;
  * counts before the disk's.
  */
 export class Workspace {
-  readonly #runtime: Runtime;
+  readonly #files: NoteFiles;
+  readonly #today: () => string;
   readonly #log: (message: string) => void;
   /** By key, each ending with `/`. */
   readonly #roots = new Map<string, Root>();
@@ -47,8 +48,9 @@ export class Workspace {
   readonly #strays = new Map<string, Root>();
   readonly #open = new Map<string, OpenNote>();
 
-  constructor(runtime: Runtime, log: (message: string) => void) {
-    this.#runtime = runtime;
+  constructor(files: NoteFiles, today: () => string, log: (message: string) => void) {
+    this.#files = files;
+    this.#today = today;
     this.#log = log;
   }
 
@@ -146,13 +148,13 @@ export class Workspace {
   }
 
   async #mayHoldNotes(uri: string): Promise<boolean> {
-    return flavourOrNull(uri) !== null || (await this.#runtime.isFolder(uri));
+    return flavourOrNull(uri) !== null || (await this.#files.isFolder(uri));
   }
 
   /** Brings a folder in step with the disk. */
   async #synchronise(root: Root): Promise<boolean> {
     if (root.uri === null) return false;
-    const found = await this.#runtime.listNotes(root.uri).catch((error: unknown) => {
+    const found = await this.#files.listNotes(root.uri).catch((error: unknown) => {
       this.#log(`${root.uri} cannot be read: ${String(error)}`);
       return [];
     });
@@ -177,7 +179,7 @@ export class Workspace {
   /** Reads a note from the disk, unless an editor has it open. True where it is another one now. */
   async #read(root: Root, key: string, uri: string): Promise<boolean> {
     if (this.#open.has(key)) return false;
-    const text = await this.#runtime.readNote(uri, this.#log);
+    const text = await this.#files.readNote(uri, this.#log);
     // While the disk was read, an editor may have opened it, or the folder may have gone.
     if (this.#open.has(key) || this.#rootOf(key) !== root) return false;
     if (text === null) {
@@ -247,7 +249,7 @@ export class Workspace {
   }
 
   #newRoot(uri: string | null): Root {
-    const folder = createFolder({ today: this.#runtime.today() });
+    const folder = createFolder({ today: this.#today() });
     return { uri, folder, held: new Map(), refused: new Set() };
   }
 

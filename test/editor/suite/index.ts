@@ -1,28 +1,12 @@
 import { commandTests } from "./commandTests.ts";
 import { noteTests } from "./noteTests.ts";
-import { hasPage, page } from "./page.ts";
+import { hasPage } from "./page.ts";
 import { pageTests } from "./pageTests.ts";
 import { reviewTests } from "./reviewTests.ts";
-import type { Test } from "./workbench.ts";
+import { runTests } from "./runTests.ts";
 
-// A desktop build has no page that could be asked: its run is the shorter for it, and says so by its count.
-const tests: readonly Test[] = [...noteTests, ...(hasPage ? pageTests : []), ...reviewTests, ...commandTests];
-
-/** Runs the suite in the extension host. Throws where a test failed, as the editor expects it. */
-export async function run(): Promise<void> {
-  let failed = 0;
-  for (const [name, test] of tests) {
-    try {
-      await test();
-      console.log(`  ok    ${name}`);
-    } catch (error) {
-      failed++;
-      const why = error instanceof Error ? (error.stack ?? error.message) : String(error);
-      console.log(`  FAIL  ${name}\n        ${why}`);
-      // The picture helps whoever reads the failure; that it cannot be taken is no failure of its own.
-      if (hasPage) await page.screenshot(`failed-${failed}`).catch(() => undefined);
-    }
-  }
-  console.log(`editor: ${tests.length - failed} passed, ${failed} failed`);
-  if (failed > 0) throw new Error(`${failed} of ${tests.length} editor tests failed.`);
+/** The suite for Node's extension host. */
+export function run(): Promise<void> {
+  // A desktop build has no page that could be asked: its run is the shorter for it, and says so by its count.
+  return runTests([...noteTests, ...(hasPage ? pageTests : []), ...reviewTests, ...commandTests]);
 }

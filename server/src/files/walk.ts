@@ -1,0 +1,42 @@
+import type { FileTree } from "./fileTree.ts";
+import { isNoteFile } from "./isNoteFile.ts";
+import { below, leavesOut, type RuledFolder, ruledFolder, withOwnRules } from "./ruledFolder.ts";
+
+/**
+ * Every note below a folder, sorted. `.git` and `node_modules` are never entered; what `.gitignore`
+ * files leave out, there and in the folders above, is not read.
+ */
+export async function walk(tree: FileTree, folder: string): Promise<readonly string[]> {
+  const found: string[] = [];
+  await enter(tree, await ruledFolder(tree, folder), found);
+  return found.sort();
+}
+
+/** The notes of a folder itself, without those of the folders in it. */
+export async function notesIn(tree: FileTree, folder: string): Promise<readonly string[]> {
+  const found: string[] = [];
+  await take(tree, await ruledFolder(tree, folder), found);
+  return found.sort();
+}
+
+async function enter(tree: FileTree, above: RuledFolder, found: string[]): Promise<void> {
+  const inner = await take(tree, above, found);
+  // Side by side: a tree that is far away answers each question late.
+  await Promise.all(inner.map((one) => enter(tree, one, found)));
+}
+
+/** Takes in the notes of a folder itself, and gives the folders in it that may hold more. */
+async function take(tree: FileTree, above: RuledFolder, found: string[]): Promise<readonly RuledFolder[]> {
+  const entries = (await tree.entries(above.place)) ?? [];
+  const folder = entries.some(({ name }) => name === ".gitignore") ? await withOwnRules(tree, above) : above;
+  const inner: RuledFolder[] = [];
+  for (const { name, kind } of entries) {
+    if (kind === "folder") {
+      if (name === ".git" || name === "node_modules" || leavesOut(folder, name, true)) continue;
+      inner.push(below(tree, folder, name));
+    } else if (kind === "file" && isNoteFile(name) && !leavesOut(folder, name, false)) {
+      found.push(tree.child(folder.place, name));
+    }
+  }
+  return inner;
+}

@@ -1,0 +1,51 @@
+import type { FileTree } from "../files/fileTree.ts";
+
+/** Files that have URIs. */
+export interface FileSource {
+  readonly tree: FileTree;
+  /** The place in the tree; null for the URI of a file that is elsewhere. */
+  placeOf(uri: string): string | null;
+  uriOf(place: string): string;
+}
+
+/** The notes of folders, by URI. */
+export interface NoteFiles {
+  /** The notes below a folder. */
+  listNotes(folderUri: string): Promise<readonly string[]>;
+  isFolder(uri: string): Promise<boolean>;
+  /** The text of a note; null where it cannot be read, which is logged. */
+  readNote(uri: string, log: (message: string) => void): Promise<string | null>;
+}
+
+/** Looks for each note in the first source that knows its URI. What reads files is loaded when it is used. */
+export function noteFiles(sources: readonly FileSource[]): NoteFiles {
+  function found(uri: string): { readonly source: FileSource; readonly place: string } | null {
+    for (const source of sources) {
+      const place = source.placeOf(uri);
+      if (place !== null) return { source, place };
+    }
+    return null;
+  }
+
+  return {
+    async listNotes(folderUri) {
+      const folder = found(folderUri);
+      if (!folder) return [];
+      const { walk } = await import("../files/walk.ts");
+      return (await walk(folder.source.tree, folder.place)).map(folder.source.uriOf);
+    },
+    async isFolder(uri) {
+      const folder = found(uri);
+      return folder !== null && (await folder.source.tree.entries(folder.place)) !== null;
+    },
+    async readNote(uri, log) {
+      const file = found(uri);
+      if (!file) return null;
+      const { readNote } = await import("../files/readNote.ts");
+      const read = await readNote(file.source.tree, file.place);
+      if ("text" in read) return read.text;
+      log(read.problem);
+      return null;
+    },
+  };
+}
