@@ -26,6 +26,8 @@ const shared = {
     "import.meta.url": "bundleUrl",
   },
   banner: { js: whereItStands },
+  // Its main file finds its parts in a way that no bundler follows.
+  alias: { "jsonc-parser": "jsonc-parser/lib/esm/main.js" },
   legalComments: "none",
   logLevel: "warning",
 };

@@ -71,7 +71,7 @@ describe("imports", () => {
   > = {
     flight: { from: [], packages: null },
     notation: { from: [], packages: null },
-    plan: { from: ["flight", "notation"], packages: null },
+    plan: { from: ["flight", "notation"], packages: /^jsonc-parser$/ },
     report: { from: ["flight", "notation", "plan"], packages: /^sarif$/ },
     features: { from: ["flight", "notation", "plan", "report"], packages: null },
     files: { from: [], packages: /^ignore$/ },

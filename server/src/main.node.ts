@@ -20,6 +20,10 @@ const runtime: Runtime = {
   },
   pageUri: (name) => (hasPages() ? pathToFileURL(join(pages, name)).href : null),
   soon: setImmediate,
+  later(milliseconds, work) {
+    const timer = setTimeout(work, milliseconds);
+    return () => clearTimeout(timer);
+  },
 };
 
 let known: boolean | undefined;

@@ -11,4 +11,8 @@ startServer(createConnection(new BrowserMessageReader(self), new BrowserMessageW
   pageUri: () => null,
   // The library takes each message in by such a timer; what is quicker would overtake those that wait.
   soon: (work) => setTimeout(work, 0),
+  later(milliseconds, work) {
+    const timer = setTimeout(work, milliseconds);
+    return () => clearTimeout(timer);
+  },
 });

@@ -5,7 +5,7 @@ import { githubCommands } from "../report/github.ts";
 import { junitPoints, junitXml } from "../report/junit.ts";
 import { passedJson } from "../report/passed.ts";
 import { type CheckedFile, sarifLog } from "../report/sarif.ts";
-import { createLoader, type LoadedNote } from "./load.ts";
+import { createLoader, type LoadedNote, type Loader } from "./load.ts";
 import { emit, painter } from "./output.ts";
 import { progress } from "./progress.ts";
 import type { Common } from "./run.ts";
@@ -13,9 +13,12 @@ import { UsageError } from "./usageError.ts";
 import { VERSION } from "./version.ts";
 import { watching } from "./watch.ts";
 
+export type FailOn = "error" | "warning" | "never";
+
 export interface CheckOptions extends Common {
   readonly format: "text" | "json" | "sarif" | "github" | "junit";
-  readonly failOn: "error" | "warning" | "never";
+  /** As it was given; else what the configuration says, and an error where it says nothing. */
+  readonly failOn?: FailOn;
   readonly passed: boolean;
   readonly watch: boolean;
 }
@@ -24,11 +27,12 @@ export interface CheckOptions extends Common {
 export async function check(paths: readonly string[], options: CheckOptions): Promise<number> {
   refuseWhatDoesNotGoTogether(paths, options);
   const loader = createLoader(options);
-  if (!options.watch) return checkOnce(await loader.load(paths), options);
+  const once = async () => checkOnce(await loader.load(paths), failOnOf(options, loader), options);
+  if (!options.watch) return once();
   return watching(paths, options, async (changed) => {
     if (!options.quiet) process.stderr.write(headline(changed));
     try {
-      return await checkOnce(await loader.load(paths), options);
+      return await once();
     } catch (error) {
       // What cannot be read now may be readable again after the next change.
       if (!(error instanceof UsageError)) throw error;
@@ -59,7 +63,15 @@ function headline(changed: readonly string[]): string {
   return `\n${time}  ${what}\n`;
 }
 
-async function checkOnce(notes: readonly LoadedNote[], options: CheckOptions): Promise<number> {
+function failOnOf({ failOn }: CheckOptions, { configuration }: Loader): FailOn {
+  return failOn ?? configuration.failOn ?? "error";
+}
+
+async function checkOnce(
+  notes: readonly LoadedNote[],
+  failOn: FailOn,
+  options: CheckOptions,
+): Promise<number> {
   const shown = progress(options);
   const files = notes.map(({ path, note }, i): CheckedFile => {
     shown.step(i, notes.length, path);
@@ -70,12 +82,17 @@ async function checkOnce(notes: readonly LoadedNote[], options: CheckOptions): P
     };
   });
   shown.end();
-  await emit(written(files, notes, options), options);
+  await emit(written(files, notes, failOn, options), options);
   if (options.format === "text" && !options.quiet) process.stderr.write(`${summaryText(files)}${caution}\n`);
-  return exitCode(files, options.failOn);
+  return exitCode(files, failOn);
 }
 
-function written(files: readonly CheckedFile[], notes: readonly LoadedNote[], options: CheckOptions): string {
+function written(
+  files: readonly CheckedFile[],
+  notes: readonly LoadedNote[],
+  failOn: FailOn,
+  options: CheckOptions,
+): string {
   switch (options.format) {
     case "json":
       return `${JSON.stringify({ schema: 1, caution, files, summary: summarize(files) }, null, 2)}\n`;
@@ -86,7 +103,7 @@ function written(files: readonly CheckedFile[], notes: readonly LoadedNote[], op
     case "junit":
       return junitXml(
         files.map((file, i) => ({ ...file, points: junitPoints((notes[i] as LoadedNote).note) })),
-        ({ severity }) => severity === "error" || (severity === "warning" && options.failOn === "warning"),
+        ({ severity }) => severity === "error" || (severity === "warning" && failOn === "warning"),
         caution,
       );
     case "text":
@@ -95,7 +112,7 @@ function written(files: readonly CheckedFile[], notes: readonly LoadedNote[], op
 }
 
 /** 1 where the files have a finding at or above `failOn`, else 0. */
-export function exitCode(files: readonly CheckedFile[], failOn: CheckOptions["failOn"]): number {
+export function exitCode(files: readonly CheckedFile[], failOn: FailOn): number {
   const { error, warning } = summarize(files);
   switch (failOn) {
     case "never":

@@ -7,7 +7,7 @@ import { compare as compareRevisions, type Revision } from "../report/compare.ts
 import { comparisonJson } from "../report/comparisonJson.ts";
 import { comparisonText } from "../report/comparisonText.ts";
 import { findingsJson } from "../report/findingsJson.ts";
-import { type CheckOptions, exitCode } from "./check.ts";
+import { exitCode, type FailOn } from "./check.ts";
 import { load } from "./load.ts";
 import { emit } from "./output.ts";
 import type { Common } from "./run.ts";
@@ -15,7 +15,7 @@ import { UsageError } from "./usageError.ts";
 
 export interface CompareOptions extends Common {
   readonly format: "table" | "json" | "markdown";
-  readonly failOn: CheckOptions["failOn"];
+  readonly failOn: FailOn;
   readonly oldRoot?: string;
   readonly newRoot?: string;
 }

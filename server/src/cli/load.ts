@@ -2,10 +2,13 @@ import { relative, resolve, sep } from "node:path";
 import { pathToFileURL } from "node:url";
 import { discover } from "../disk/discover.ts";
 import { diskTree } from "../disk/diskTree.ts";
+import { excluded } from "../files/excluded.ts";
 import { readNote } from "../files/readNote.ts";
 import type { Flavour } from "../notation/document.ts";
+import { type Configuration, noConfiguration } from "../plan/configuration.ts";
 import { createFolder } from "../plan/createFolder.ts";
 import type { Note } from "../plan/note.ts";
+import { configurationOf } from "./configurationOf.ts";
 import { UsageError } from "./usageError.ts";
 
 /** A note that was asked for, with the path it is spoken of by. */
@@ -31,16 +34,24 @@ export function load(paths: readonly string[], options: LoadOptions): Promise<re
 /** Reads notes again and again; only what changed is read into the folder anew. */
 export interface Loader {
   load(paths: readonly string[]): Promise<readonly LoadedNote[]>;
+  /** What the root's `plumbline.json` said when the notes were last read. */
+  readonly configuration: Configuration;
 }
 
 export function createLoader(options: LoadOptions): Loader {
   const folder = createFolder({ today: options.today });
   const held = new Map<string, string>();
+  let configuration = noConfiguration;
   return {
+    get configuration() {
+      return configuration;
+    },
     async load(paths) {
       const cwd = process.cwd();
       const named = paths.length === 0 ? ["."] : paths;
-      const { wanted, texts } = await readTexts(named, options, cwd);
+      configuration = await configurationOf(options.root);
+      folder.severities = configuration.severity;
+      const { wanted, texts } = await readTexts(named, options, configuration, cwd);
       for (const file of held.keys()) {
         if (texts.has(file)) continue;
         folder.remove(uriOf(file));
@@ -76,13 +87,16 @@ export function createLoader(options: LoadOptions): Loader {
 async function readTexts(
   named: readonly string[],
   options: LoadOptions,
+  { exclude }: Configuration,
   cwd: string,
 ): Promise<{ readonly wanted: readonly string[]; readonly texts: ReadonlyMap<string, string> }> {
   const onDisk = named.filter((path) => path !== "-");
-  const wanted = await discover(onDisk, cwd);
+  const leavesOut = excluded(exclude);
+  const isLeftOut = (file: string) => leavesOut(shortPath(file, resolve(cwd, options.root)));
+  const wanted = await discover(onDisk, cwd, isLeftOut);
   const besides = options.besides
     ? { files: options.besides, problems: [] }
-    : await discover([options.root], cwd);
+    : await discover([options.root], cwd, isLeftOut);
   const problems = [...wanted.problems, ...besides.problems];
   const texts = new Map<string, string>();
   await Promise.all(

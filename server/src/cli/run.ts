@@ -47,9 +47,10 @@ export async function run(argv: readonly string[]): Promise<number> {
         .default("text"),
     )
     .addOption(
-      new Option("--fail-on <severity>", "what makes the exit code 1")
-        .choices(["error", "warning", "never"])
-        .default("error"),
+      new Option(
+        "--fail-on <severity>",
+        "what makes the exit code 1 (default: failOn of plumbline.json, else error)",
+      ).choices(["error", "warning", "never"]),
     )
     .option("--watch", "check again whenever a note, a card or limits change", false)
     .option("--passed", "list what was checked and held too (json, sarif)", false)

@@ -1,6 +1,7 @@
 import { basename } from "node:path";
 import { watch } from "chokidar";
 import { isNoteFile } from "../files/isNoteFile.ts";
+import { CONFIGURATION_FILE } from "../plan/configuration.ts";
 import type { LoadOptions } from "./load.ts";
 import { shortPath } from "./load.ts";
 
@@ -8,7 +9,7 @@ import { shortPath } from "./load.ts";
 const TOGETHER_MS = 120;
 
 /**
- * Runs the work once, then again whenever a note, a card, limits or a `.gitignore` under the paths
+ * Runs the work once, then again whenever a note, a card, limits or a `.gitignore` or the configuration under the paths
  * changes, until it is interrupted. Gives what the last run gave.
  *
  * @param work told which files changed; none the first time
@@ -51,5 +52,5 @@ export async function watching(
 }
 
 function counts(path: string): boolean {
-  return isNoteFile(path) || basename(path) === ".gitignore";
+  return isNoteFile(path) || [".gitignore", CONFIGURATION_FILE].includes(basename(path));
 }

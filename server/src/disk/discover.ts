@@ -13,19 +13,30 @@ export interface Discovered {
   readonly problems: readonly string[];
 }
 
-/** The notes under files, folders and globs. A file that is named itself is read even where it is ignored. */
-export async function discover(paths: readonly string[], cwd: string): Promise<Discovered> {
-  const files = new Set<string>();
+/**
+ * The notes under files, folders and globs. A file that is named itself is read even where it is ignored
+ * or left out.
+ *
+ * @param isLeftOut told absolute paths
+ */
+export async function discover(
+  paths: readonly string[],
+  cwd: string,
+  isLeftOut: (file: string) => boolean = () => false,
+): Promise<Discovered> {
+  const found = new Set<string>();
+  const named = new Set<string>();
   const problems: string[] = [];
   for (const path of paths) {
     const absolute = resolve(cwd, path);
-    const found = await stat(absolute).catch(() => null);
-    if (found?.isDirectory()) for (const file of await walk(diskTree, absolute)) files.add(file);
-    else if (found?.isFile()) files.add(absolute);
-    else if (isDynamicPattern(path)) await addGlob(path, cwd, files, problems);
+    const there = await stat(absolute).catch(() => null);
+    if (there?.isDirectory()) for (const file of await walk(diskTree, absolute)) found.add(file);
+    else if (there?.isFile()) named.add(absolute);
+    else if (isDynamicPattern(path)) await addGlob(path, cwd, found, problems);
     else problems.push(`There is no file or folder ${path}.`);
   }
-  return { files: [...files].sort(), problems };
+  const files = [...found].filter((file) => !isLeftOut(file));
+  return { files: [...new Set([...files, ...named])].sort(), problems };
 }
 
 async function addGlob(pattern: string, cwd: string, files: Set<string>, problems: string[]): Promise<void> {

@@ -38,6 +38,7 @@ import {
 import { diagnosticsOf, workspaceReport } from "./diagnostics.ts";
 import type { guardWith } from "./guard.ts";
 import { dropCancelled, noteFinder } from "./noteFinder.ts";
+import type { Patience } from "./patience.ts";
 import {
   type CompareAnswer,
   type CompareParams,
@@ -54,6 +55,7 @@ import type { Workspace } from "./workspace.ts";
 export interface Answering {
   readonly workspace: Workspace;
   readonly pageUri: PageUri;
+  readonly patience: Patience;
   readonly soon: Runtime["soon"];
   client(): Client;
   /** Once the client has said them. */
@@ -66,7 +68,7 @@ export interface Answering {
 export function answerRequests(
   connection: Connection,
   { answering }: ReturnType<typeof guardWith>,
-  { workspace, pageUri, soon, client, settings, ready }: Answering,
+  { workspace, pageUri, soon, patience, client, settings, ready }: Answering,
 ): void {
   const noteOf = noteFinder({ workspace, ready });
 
@@ -91,14 +93,17 @@ export function answerRequests(
         throw error;
       });
       const note = await noteOf(uri, token);
-      return { kind: DocumentDiagnosticReportKind.Full, items: note ? diagnosticsOf(note, pageUri) : [] };
+      return {
+        kind: DocumentDiagnosticReportKind.Full,
+        items: note ? diagnosticsOf(note, pageUri, patience) : [],
+      };
     }),
   );
 
   connection.languages.diagnostics.onWorkspace(
     answering("workspace diagnostic", async ({ previousResultIds }, token) => {
       await ready();
-      return workspaceReport(workspace, previousResultIds, pageUri, token);
+      return workspaceReport(workspace, previousResultIds, pageUri, patience, token);
     }),
   );
 

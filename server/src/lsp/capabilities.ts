@@ -7,7 +7,7 @@ import { legend } from "./semanticLegend.ts";
 export function capabilities(client: Client): ServerCapabilities {
   return {
     positionEncoding: "utf-16",
-    textDocumentSync: { openClose: true, change: TextDocumentSyncKind.Incremental },
+    textDocumentSync: { openClose: true, change: TextDocumentSyncKind.Incremental, save: true },
     ...(client.pulls
       ? {
           diagnosticProvider: {

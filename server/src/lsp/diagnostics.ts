@@ -7,11 +7,13 @@ import {
 } from "vscode-languageserver";
 import type { Note } from "../plan/note.ts";
 import { diagnosticOf, type PageUri } from "./convert.ts";
+import type { Patience } from "./patience.ts";
 import type { Runtime } from "./runtime.ts";
 import type { Workspace } from "./workspace.ts";
 
-export function diagnosticsOf(note: Note, pageUri: PageUri): Diagnostic[] {
-  return note.findings().map((finding) => diagnosticOf(finding, pageUri));
+/** What is told of a note, new findings only once their time has come. */
+export function diagnosticsOf(note: Note, pageUri: PageUri, patience: Patience): Diagnostic[] {
+  return patience.shown(note.uri, note.findings()).map((finding) => diagnosticOf(finding, pageUri));
 }
 
 /** A short name for a list of diagnostics: the same list has the same one. */
@@ -27,6 +29,7 @@ export function workspaceReport(
   workspace: Workspace,
   previous: readonly { readonly uri: string; readonly value: string }[],
   pageUri: PageUri,
+  patience: Patience,
   token: CancellationToken,
 ): WorkspaceDiagnosticReport {
   const known = new Map(previous.map(({ uri, value }) => [uri, value]));
@@ -35,7 +38,7 @@ export function workspaceReport(
   for (const note of workspace.notes) {
     if (token.isCancellationRequested) break;
     seen.add(note.uri);
-    const diagnostics = diagnosticsOf(note, pageUri);
+    const diagnostics = diagnosticsOf(note, pageUri, patience);
     const id = resultId(diagnostics);
     const version = workspace.openNote(note.uri)?.version ?? null;
     if (known.get(note.uri) === id)
@@ -65,6 +68,7 @@ export class Pusher {
   readonly #connection: Connection;
   readonly #workspace: Workspace;
   readonly #pageUri: PageUri;
+  readonly #patience: Patience;
   /** Resolves once the folders are read: no card is told as missing that is only not read yet. */
   readonly #ready: () => Promise<unknown>;
   readonly #soon: Runtime["soon"];
@@ -76,12 +80,14 @@ export class Pusher {
     connection: Connection,
     workspace: Workspace,
     pageUri: PageUri,
+    patience: Patience,
     ready: () => Promise<unknown>,
     soon: Runtime["soon"],
   ) {
     this.#connection = connection;
     this.#workspace = workspace;
     this.#pageUri = pageUri;
+    this.#patience = patience;
     this.#ready = ready;
     this.#soon = soon;
   }
@@ -117,7 +123,8 @@ export class Pusher {
     this.#waiting.clear();
     for (const uri of uris) {
       const open = this.#workspace.openNote(uri);
-      if (open) this.#send(uri, { version: open.version }, diagnosticsOf(open.note, this.#pageUri));
+      if (open)
+        this.#send(uri, { version: open.version }, diagnosticsOf(open.note, this.#pageUri, this.#patience));
     }
   }
 

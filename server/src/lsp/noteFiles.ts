@@ -13,6 +13,8 @@ export interface NoteFiles {
   /** The notes below a folder. */
   listNotes(folderUri: string): Promise<readonly string[]>;
   isFolder(uri: string): Promise<boolean>;
+  /** The text of a file in a folder; null where the folder holds none of that name, or it cannot be read. */
+  readIn(folderUri: string, name: string): Promise<string | null>;
   /** The text of a note; null where it cannot be read, which is logged. */
   readNote(uri: string, log: (message: string) => void): Promise<string | null>;
 }
@@ -37,6 +39,15 @@ export function noteFiles(sources: readonly FileSource[]): NoteFiles {
     async isFolder(uri) {
       const folder = found(uri);
       return folder !== null && (await folder.source.tree.entries(folder.place)) !== null;
+    },
+    async readIn(folderUri, name) {
+      const folder = found(folderUri);
+      if (!folder) return null;
+      const { tree } = folder.source;
+      if (!(await tree.holds(folder.place, name))) return null;
+      const { MOST_BYTES } = await import("../files/readNote.ts");
+      const read = await tree.read(tree.child(folder.place, name), MOST_BYTES);
+      return read.kind === "text" ? read.text : null;
     },
     async readNote(uri, log) {
       const file = found(uri);

@@ -18,7 +18,7 @@ export async function registerWhatIsOffered(
       connection.client.register(DidChangeWatchedFilesNotification.type, {
         watchers: [
           { globPattern: "**/*.{plumb,md,markdown}", kind: WatchKind.Change },
-          { globPattern: "**/.gitignore", kind: WatchKind.Change },
+          { globPattern: "**/{.gitignore,plumbline.json}", kind: WatchKind.Change },
           // Of a folder that is moved or deleted, clients tell the folder alone, whatever its notes are called.
           { globPattern: "**/*", kind: WatchKind.Create | WatchKind.Delete },
         ],

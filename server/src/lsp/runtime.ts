@@ -10,4 +10,6 @@ export interface Runtime {
   pageUri(name: string): string | null;
   /** Does work after what lies in the event queue already. */
   soon(work: () => void): void;
+  /** Does work after some milliseconds; what it gives takes that back. */
+  later(milliseconds: number, work: () => void): () => void;
 }

@@ -7,10 +7,12 @@ import {
 import { type Answering, answerRequests } from "./answers.ts";
 import { capabilities } from "./capabilities.ts";
 import { type Client, clientOf } from "./client.ts";
+import { configurationDiagnostics } from "./configurationDiagnostics.ts";
 import { Pusher } from "./diagnostics.ts";
 import { guardWith } from "./guard.ts";
 import { answerNameRequests } from "./nameAnswers.ts";
 import { noteFiles } from "./noteFiles.ts";
+import { patience } from "./patience.ts";
 import { registerWhatIsOffered } from "./registration.ts";
 import type { Runtime } from "./runtime.ts";
 import { servedFiles } from "./servedFiles.ts";
@@ -29,9 +31,20 @@ export function startServer(connection: Connection, runtime: Runtime): void {
   const guard = guardWith(connection);
   const served = servedFiles(connection, () => client.servesFiles);
   const files = noteFiles(runtime.disk ? [runtime.disk, served] : [served]);
-  const workspace = new Workspace(files, runtime.today, (message) => connection.console.warn(message));
+  const workspace = new Workspace(
+    files,
+    runtime.today,
+    (message) => connection.console.warn(message),
+    configurationDiagnostics(connection),
+  );
   const pageUri = (name: string) => runtime.pageUri(name) ?? (client.pages && `${client.pages}/${name}`);
-  const pusher = new Pusher(connection, workspace, pageUri, () => ready, runtime.soon);
+  const calm = patience(
+    // A client that asks by itself and cannot be told to ask again would never see what waited.
+    () => (client.pulls && !client.refreshesDiagnostics ? null : settings.diagnostics),
+    runtime.later,
+    (uri) => (client.pulls ? everythingChanged() : pusher.push(uri)),
+  );
+  const pusher = new Pusher(connection, workspace, pageUri, calm, () => ready, runtime.soon);
   let client: Client = clientOf({ processId: null, rootUri: null, capabilities: {} });
   let settings: Settings = standardSettings;
   /** What is read from the disk, one after the other, so that an older text never comes after a newer one. */
@@ -83,8 +96,13 @@ export function startServer(connection: Connection, runtime: Runtime): void {
   async function updateSettings(): Promise<void> {
     if (!client.asksConfiguration) return;
     await guard.asking("configuration", async () => {
-      settings = readSettings(await connection.workspace.getConfiguration("plumbline"));
+      takeSettings(await connection.workspace.getConfiguration("plumbline"));
     });
+  }
+
+  function takeSettings(raw: unknown): void {
+    settings = readSettings(raw);
+    workspace.severities = settings.severity;
   }
 
   /** Asks for a refresh where something other than a note's own text changed. */
@@ -101,7 +119,7 @@ export function startServer(connection: Connection, runtime: Runtime): void {
   connection.onDidChangeConfiguration(
     guard.hearing("configuration", async ({ settings: pushed }) => {
       if (client.asksConfiguration) await updateSettings();
-      else settings = readSettings((pushed as { plumbline?: unknown } | null)?.plumbline);
+      else takeSettings((pushed as { plumbline?: unknown } | null)?.plumbline);
       everythingChanged();
     }),
   );
@@ -123,13 +141,17 @@ export function startServer(connection: Connection, runtime: Runtime): void {
     guard.hearing("change", ({ textDocument: { uri, version }, contentChanges }) => {
       const before = workspace.folderOf(uri)?.definitionsVersion;
       workspace.change(uri, contentChanges, version ?? 0);
+      calm.edited(uri);
       afterChange(uri, before);
     }),
   );
 
+  connection.onDidSaveTextDocument(guard.hearing("save", ({ textDocument: { uri } }) => calm.saved(uri)));
+
   connection.onDidCloseTextDocument(
     guard.hearing("close", async ({ textDocument: { uri } }) => {
       workspace.close(uri);
+      calm.closed(uri);
       if (!client.pulls) pusher.clear(uri);
       await takeIn([{ uri, kind: "changed" }]);
     }),
@@ -160,6 +182,7 @@ export function startServer(connection: Connection, runtime: Runtime): void {
     workspace,
     pageUri,
     soon: runtime.soon,
+    patience: calm,
     client: () => client,
     settings: async () => {
       await configured;

@@ -1,8 +1,16 @@
 import type { TextDocumentContentChangeEvent } from "vscode-languageserver";
 import type { Flavour } from "../notation/document.ts";
+import {
+  CONFIGURATION_FILE,
+  type Configuration,
+  type ConfigurationProblem,
+  noConfiguration,
+  readConfiguration,
+} from "../plan/configuration.ts";
 import { createFolder } from "../plan/createFolder.ts";
 import type { Folder } from "../plan/folder.ts";
 import type { Note } from "../plan/note.ts";
+import type { Severities } from "../plan/severities.ts";
 import type { NoteFiles } from "./noteFiles.ts";
 import { uriKey } from "./uriKey.ts";
 
@@ -28,7 +36,16 @@ interface Root {
   readonly held: Map<string, string>;
   /** Keys of notes that are there and cannot be read: they may be mended. */
   readonly refused: Set<string>;
+  /** What the folder's `plumbline.json` says. */
+  configuration: Configuration;
 }
+
+/** Told of a folder's `plumbline.json` whenever it was read; without a text where there is none. */
+export type ConfigurationRead = (
+  uri: string,
+  text: string | null,
+  problems: readonly ConfigurationProblem[],
+) => void;
 
 /** So many notes are read at once: every one holds a file open. */
 const READ_AT_ONCE = 32;
@@ -48,10 +65,42 @@ export class Workspace {
   readonly #strays = new Map<string, Root>();
   readonly #open = new Map<string, OpenNote>();
 
-  constructor(files: NoteFiles, today: () => string, log: (message: string) => void) {
+  readonly #configurationRead: ConfigurationRead;
+  /** What the user's settings make of codes; a folder's own configuration wins over it. */
+  #severities: Severities = {};
+
+  constructor(
+    files: NoteFiles,
+    today: () => string,
+    log: (message: string) => void,
+    configurationRead: ConfigurationRead,
+  ) {
     this.#files = files;
     this.#today = today;
     this.#log = log;
+    this.#configurationRead = configurationRead;
+  }
+
+  set severities(severities: Severities) {
+    this.#severities = severities;
+    for (const root of [...this.#roots.values(), ...this.#strays.values()]) this.#applySeverities(root);
+  }
+
+  #applySeverities({ folder, configuration }: Root): void {
+    folder.severities = { ...this.#severities, ...configuration.severity };
+  }
+
+  /** Takes in the folder's `plumbline.json`. True where it says something else now. */
+  async #configure(root: Root): Promise<boolean> {
+    if (root.uri === null) return false;
+    const text = await this.#files.readIn(root.uri, CONFIGURATION_FILE).catch(() => null);
+    const { configuration, problems } =
+      text === null ? { configuration: noConfiguration, problems: [] } : readConfiguration(text);
+    const before = JSON.stringify(root.configuration);
+    root.configuration = configuration;
+    this.#applySeverities(root);
+    this.#configurationRead(`${root.uri.replace(/\/$/, "")}/${CONFIGURATION_FILE}`, text, problems);
+    return JSON.stringify(configuration) !== before;
   }
 
   get openNotes(): Iterable<OpenNote> {
@@ -89,6 +138,7 @@ export class Workspace {
     this.#moveOpenNotes();
     // What lies in the new folder is the outer one's no longer.
     if (outer) for (const key of [...outer.held.keys()]) if (key.startsWith(base)) this.#drop(outer, key);
+    await this.#configure(root);
     await this.#synchronise(root);
   }
 
@@ -140,7 +190,10 @@ export class Workspace {
       if (kind === "deleted") changed = this.#dropBelow(root, key) || changed;
       if (root.held.has(key) || root.refused.has(key))
         changed = (await this.#read(root, key, uri)) || changed;
-      else if (key.endsWith("/.gitignore") || (kind === "created" && (await this.#mayHoldNotes(uri))))
+      else if (isConfiguration(root, key)) {
+        changed = (await this.#configure(root)) || changed;
+        looked.add(root);
+      } else if (key.endsWith("/.gitignore") || (kind === "created" && (await this.#mayHoldNotes(uri))))
         looked.add(root);
     }
     for (const root of looked) changed = (await this.#synchronise(root)) || changed;
@@ -158,10 +211,13 @@ export class Workspace {
       this.#log(`${root.uri} cannot be read: ${String(error)}`);
       return [];
     });
+    const { excluded } = await import("../files/excluded.ts");
+    const leavesOut = excluded(root.configuration.exclude);
+    const base = baseOf(root.uri);
     const there = new Map<string, string>();
     for (const uri of found) {
       const key = uriKey(uri);
-      if (this.#rootOf(key) === root) there.set(key, uri);
+      if (this.#rootOf(key) === root && !leavesOut(decodedPath(key.slice(base.length)))) there.set(key, uri);
     }
     let changed = false;
     for (const key of [...root.held.keys()]) {
@@ -250,7 +306,9 @@ export class Workspace {
 
   #newRoot(uri: string | null): Root {
     const folder = createFolder({ today: this.#today() });
-    return { uri, folder, held: new Map(), refused: new Set() };
+    const root = { uri, folder, held: new Map(), refused: new Set<string>(), configuration: noConfiguration };
+    this.#applySeverities(root);
+    return root;
   }
 
   /** The innermost folder that holds the note. */
@@ -270,6 +328,18 @@ function baseOf(uri: string): string {
 function isNeverEntered({ uri }: Root, key: string): boolean {
   const inside = uri === null ? "" : key.slice(baseOf(uri).length - 1);
   return /\/(\.git|node_modules)(\/|$)/.test(inside);
+}
+
+function isConfiguration({ uri }: Root, key: string): boolean {
+  return uri !== null && key === `${baseOf(uri)}${CONFIGURATION_FILE}`;
+}
+
+function decodedPath(path: string): string {
+  try {
+    return decodeURIComponent(path);
+  } catch {
+    return path;
+  }
 }
 
 export function flavourOf(uri: string): Flavour {

@@ -10,6 +10,7 @@ import type { Folder } from "./folder.ts";
 import type { Limits } from "./limits.ts";
 import { type LimitsDraft, resolveLimits } from "./lowerLimits.ts";
 import { type FolderNote, openNote, type Surroundings } from "./openNote.ts";
+import type { Severities } from "./severities.ts";
 
 /** The day the notes are read on, `2026-03-01`: below the editor and the command line nothing knows the clock. */
 export interface FolderContext {
@@ -25,6 +26,7 @@ const noFindings: readonly Finding[] = [];
 
 class OpenFolder implements Folder, Surroundings {
   readonly today: string;
+  severities: Severities = {};
   readonly #notes = new Map<string, FolderNote>();
   #definitions: Definitions | null = null;
   #resolved = new Map<LimitsDraft, Limits>();

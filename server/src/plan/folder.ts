@@ -1,6 +1,7 @@
 import type { Flavour } from "../notation/document.ts";
 import type { Definitions } from "./definitions.ts";
 import type { Note } from "./note.ts";
+import type { Severities } from "./severities.ts";
 
 /**
  * The notes of one workspace folder, which see each other's cards and limits. The boundary that the
@@ -9,6 +10,8 @@ import type { Note } from "./note.ts";
 export interface Folder {
   /** The day the notes are read on, `2026-03-01`. */
   readonly today: string;
+  /** What codes are made of here; it changes what is shown, and no figure. */
+  severities: Severities;
   /** Adds a file or replaces its text. */
   open(uri: string, text: string, flavour: Flavour): Note;
   remove(uri: string): void;

@@ -12,6 +12,7 @@ import { lowerCard } from "./lowerCard.ts";
 import { type LimitsDraft, lowerLimits } from "./lowerLimits.ts";
 import type { BlockResult, Note, PlacedFinding } from "./note.ts";
 import type { Anchor } from "./origin.ts";
+import { type Severities, withSeverity } from "./severities.ts";
 import type { PlanSite } from "./site.ts";
 import { type State, sameState, startState } from "./state.ts";
 
@@ -25,6 +26,8 @@ export interface Surroundings {
   findingsAt(block: Block): readonly Finding[];
   /** The day the notes are read on. */
   readonly today: string;
+  /** What codes are made of in this folder. */
+  readonly severities: Severities;
   /** Told after an edit that touched a definition or the use of one. */
   changed(): void;
 }
@@ -139,7 +142,10 @@ class OpenNote implements FolderNote {
         placed.push({ line: block.start + finding.line, finding });
       }
     }
-    return placed.sort((a, b) => a.line - b.line || a.finding.span.start - b.finding.span.start);
+    placed.sort((a, b) => a.line - b.line || a.finding.span.start - b.finding.span.start);
+    const { severities } = this.#around;
+    if (Object.keys(severities).length === 0) return placed;
+    return placed.map(({ line, finding }) => ({ line, finding: withSeverity(finding, severities) }));
   }
 
   /** Found anew only when an entry that told something, or does now, was evaluated again. */

@@ -1,0 +1,246 @@
+import { spawnSync } from "node:child_process";
+import { cpSync, mkdirSync, mkdtempSync, rmSync, writeFileSync } from "node:fs";
+import { tmpdir } from "node:os";
+import { join } from "node:path";
+import { fileURLToPath, pathToFileURL } from "node:url";
+import { afterEach, beforeEach, describe, expect, it } from "vitest";
+import type { Diagnostic, WorkspaceDiagnosticReport } from "vscode-languageserver";
+import { eventually } from "../support/eventually.ts";
+import { able, type Client, startClient } from "../support/lspClient.ts";
+import { demoFolder } from "../support/sampleText.ts";
+
+const cli = fileURLToPath(new URL("../../dist/server/cli.cjs", import.meta.url));
+const card = "| aircraft wheatear-9; basis vsr; reference 9 t\n| config clean stall 95 kt\n";
+const plan = (bank: number) =>
+  `| limits own\n| must any bank 30\n| should any bank 20\n\n| fly wheatear-9; under own; weight 8 t; config clean; altitude FL100; speed 180 kt\n\n| phase cruise; bank ${bank}\n`;
+
+let folder = "";
+let client: Client | null = null;
+
+beforeEach(() => {
+  folder = mkdtempSync(join(tmpdir(), "plumbline-configuration-"));
+  mkdirSync(join(folder, ".git"));
+});
+
+afterEach(async () => {
+  if (client) expect(await client.stop()).toBe(0);
+  client = null;
+  rmSync(folder, { recursive: true });
+});
+
+function write(name: string, text: string | Buffer): void {
+  mkdirSync(join(folder, name, ".."), { recursive: true });
+  writeFileSync(join(folder, name), text);
+}
+
+const uriOf = (name: string) => pathToFileURL(join(folder, name)).href;
+
+async function start(settings: unknown = {}, capabilities = able): Promise<Client> {
+  client = await startClient([pathToFileURL(folder).href], capabilities);
+  client.settings = settings;
+  await client.connection.sendNotification("workspace/didChangeConfiguration", {
+    settings: { plumbline: settings },
+  });
+  return client;
+}
+
+interface Told {
+  readonly path: string;
+  readonly line: number;
+  readonly column: number;
+  readonly code: unknown;
+  readonly severity: unknown;
+  readonly message: string;
+}
+
+const severities = ["", "error", "warning", "information", "hint"];
+
+/** Everything that the editor's Problems list would hold. */
+async function inEditor(client: Client): Promise<readonly Told[]> {
+  const report = await client.request<WorkspaceDiagnosticReport>("workspace/diagnostic", {
+    previousResultIds: [],
+  });
+  return report.items.flatMap((item) =>
+    item.kind === "full"
+      ? item.items.map((one) => ({
+          path: decodeURIComponent(item.uri).slice(decodeURIComponent(pathToFileURL(folder).href).length + 1),
+          line: one.range.start.line + 1,
+          column: one.range.start.character + 1,
+          code: one.code,
+          severity: severities[one.severity ?? 0],
+          message: String(one.message),
+        }))
+      : [],
+  );
+}
+
+/** Everything that `plumbline check` finds, in the same words. */
+function onCommandLine(): readonly Told[] {
+  const { stdout } = spawnSync(process.execPath, [cli, "check", "--format", "json"], {
+    cwd: folder,
+    encoding: "utf8",
+  });
+  const { files } = JSON.parse(stdout) as {
+    files: { path: string; findings: (Told & { line: number })[] }[];
+  };
+  return files.flatMap(({ path, findings }) =>
+    findings.map(({ line, column, code, severity, message }) => ({
+      path,
+      line,
+      column,
+      code,
+      severity,
+      message,
+    })),
+  );
+}
+
+const inOrder = (told: readonly Told[]) => told.map((one) => JSON.stringify(one)).sort();
+
+describe("the editor and the command line", () => {
+  it("tell the same of a folder with a configuration, ignored and excluded notes, Markdown, CRLF and a huge file", async () => {
+    cpSync(demoFolder, join(folder, "demo"), { recursive: true });
+    write(
+      "plumbline.json",
+      '{ "severity": { "bank-over-advice": "error", "claim-stale": "error" }, "exclude": ["drafts/", "*.old.plumb"] }',
+    );
+    write("drafts/draft.plumb", "| weight 5\n");
+    write("plans/first.old.plumb", "| weight 5\n");
+    write("plans/second.plumb", "| fly brambling-37; weight 61.4\r\n\r\n| phase cruise\r\n");
+    write("plans/.gitignore", "private/\n");
+    write("plans/private/own.plumb", "| weight 5\n");
+    write(
+      "plans/briefing.md",
+      "# Plan\n\n| a | b |\n| --- | --- |\n\n```plumb\n| weight 5\n```\n\n````\n| weight 5\n````\n",
+    );
+    write("node_modules/some/note.plumb", "| weight 5\n");
+    write("plans/Größe 1.plumb", "| weight 5\n");
+    write("huge.md", `\`\`\`plumb\n| weight 5\n\`\`\`\n${"x".repeat(4 * 1024 * 1024)}`);
+    rmSync(join(folder, "huge.md"));
+    const told = inOrder(await inEditor(await start()));
+    expect(told).toEqual(inOrder(onCommandLine()));
+    expect(told.length).toBeGreaterThan(10);
+    expect(
+      told.filter((one) => one.includes("draft") || one.includes("old") || one.includes("private")),
+    ).toEqual([]);
+    expect(told.filter((one) => one.includes('"bank-over-advice","severity":"error"'))).toHaveLength(1);
+  });
+});
+
+describe("plumbline.json", () => {
+  it("wins over settings, and both are taken up while the editor runs", async () => {
+    write("cards.plumb", card);
+    write("plan.plumb", plan(25));
+    const client = await start();
+    const severity = async () =>
+      (await client.diagnostics(uriOf("plan.plumb"))).map((one) => severities[one.severity ?? 0]);
+    expect(await severity()).toEqual(["warning"]);
+    client.settings = { severity: { "bank-over-advice": "information" } };
+    await client.connection.sendNotification("workspace/didChangeConfiguration", {
+      settings: { plumbline: client.settings },
+    });
+    await eventually(async () => expect(await severity()).toEqual(["information"]));
+    write("plumbline.json", '{ "severity": { "bank-over-advice": "error" } }');
+    const changed = (type: number) =>
+      client.connection.sendNotification("workspace/didChangeWatchedFiles", {
+        changes: [{ uri: uriOf("plumbline.json"), type }],
+      });
+    await changed(1);
+    await eventually(async () => expect(await severity()).toEqual(["error"]));
+    write("plumbline.json", '{ "exclude": ["plan.plumb"] }');
+    await changed(2);
+    await eventually(async () =>
+      expect((await inEditor(client)).map(({ path }) => path)).not.toContain("plan.plumb"),
+    );
+    rmSync(join(folder, "plumbline.json"));
+    await changed(3);
+    await eventually(async () => expect(await severity()).toEqual(["information"]));
+  });
+
+  it("with a mistake in it is told beside its line, and lowers nothing", async () => {
+    write("cards.plumb", card);
+    write("plan.plumb", plan(25));
+    write(
+      "plumbline.json",
+      '{\n  "severity": { "bank-over-advice": "information", "bank-over-advise": "error" }\n}',
+    );
+    const client = await start();
+    await eventually(() => expect(client.pushed.get(uriOf("plumbline.json"))).toHaveLength(1));
+    const [problem] = client.pushed.get(uriOf("plumbline.json")) as Diagnostic[];
+    expect(problem?.range.start).toEqual({ line: 1, character: 51 });
+    expect((await client.diagnostics(uriOf("plan.plumb"))).map((one) => one.severity)).toEqual([2]);
+    expect(spawnSync(process.execPath, [cli, "check"], { cwd: folder, encoding: "utf8" })).toMatchObject({
+      status: 2,
+      stderr: expect.stringContaining(
+        'plumbline.json:2:52  "bank-over-advise" is not the code of a finding; did you mean "bank-over-advice"?',
+      ),
+    });
+  });
+
+  it("says what makes the command line fail, unless an option does", () => {
+    write("cards.plumb", card);
+    write("plan.plumb", plan(25));
+    const status = (...args: string[]) =>
+      spawnSync(process.execPath, [cli, "check", ...args], { cwd: folder }).status;
+    expect(status()).toBe(0);
+    write("plumbline.json", '{ "failOn": "warning" }');
+    expect(status()).toBe(1);
+    expect(status("--fail-on", "error")).toBe(0);
+  });
+});
+
+describe("new findings", () => {
+  const uri = "untitled:Untitled-1";
+  const text = (bank: number, more = "") => `${card}\n${plan(bank)}${more}`;
+  const codes = async (client: Client) => (await client.diagnostics(uri)).map((one) => one.code);
+
+  it("wait for the save where that is asked for; what is mended goes at once, what stays says what is true now", async () => {
+    const client = await start({ diagnostics: { run: "onSave" } });
+    client.open(uri, text(35));
+    expect(await codes(client)).toEqual(["bank-over-limit", "bank-over-advice"]);
+    client.change(uri, 2, { text: text(25) });
+    expect(await codes(client)).toEqual(["bank-over-advice"]);
+    client.change(uri, 3, { text: text(36) });
+    expect(await codes(client)).toEqual(["bank-over-advice"]);
+    expect((await client.diagnostics(uri))[0]?.message).toContain("Bank 36°");
+    await client.connection.sendNotification("textDocument/didSave", { textDocument: { uri } });
+    await eventually(async () =>
+      expect(await codes(client)).toEqual(["bank-over-limit", "bank-over-advice"]),
+    );
+    expect(client.received).toContain("workspace/diagnostic/refresh");
+  });
+
+  it("wait for the delay, and then the client is asked to look again", async () => {
+    const client = await start({ diagnostics: { delay: 400 } });
+    client.open(uri, text(20));
+    expect(await codes(client)).toEqual([]);
+    const asked = () => client.received.filter((one) => one === "workspace/diagnostic/refresh").length;
+    const before = asked();
+    client.change(uri, 2, { text: text(25) });
+    expect(await codes(client)).toEqual([]);
+    await eventually(async () => expect(await codes(client)).toEqual(["bank-over-advice"]));
+    expect(asked()).toBeGreaterThan(before);
+  });
+
+  it("do not wait where the client could not be asked to look again", async () => {
+    const client = await start(
+      { diagnostics: { run: "onSave" } },
+      { ...able, workspace: { ...able.workspace, diagnostics: {} } },
+    );
+    client.open(uri, text(20));
+    client.change(uri, 2, { text: text(25) });
+    expect(await codes(client)).toEqual(["bank-over-advice"]);
+  });
+
+  it("are pushed after the save to a client that cannot ask", async () => {
+    const { diagnostic: _, ...textDocument } = able.textDocument ?? {};
+    const client = await start({ diagnostics: { run: "onSave" } }, { ...able, textDocument });
+    client.open(uri, text(35));
+    await eventually(() => expect(client.pushed.get(uri)).toHaveLength(2));
+    client.change(uri, 2, { text: text(25) });
+    await eventually(() => expect(client.pushed.get(uri)).toHaveLength(1));
+    client.change(uri, 3, { text: text(35) });
+    await client.connection.sendNotification("textDocument/didSave", { textDocument: { uri } });
+    await eventually(() => expect(client.pushed.get(uri)).toHaveLength(2));
+  });
+});
