@@ -1,6 +1,7 @@
 import type { ExtensionContext } from "vscode";
 import type { BaseLanguageClient, LanguageClientOptions } from "vscode-languageclient";
 import { registerCommands } from "./commands.ts";
+import { showStatus } from "./status.ts";
 
 /**
  * What the server is asked about. It registers the file watching and the settings it needs by itself,
@@ -19,6 +20,7 @@ export const clientOptions: LanguageClientOptions = {
 /** Registers the commands first, so that they answer even where the server does not start. */
 export async function start(context: ExtensionContext, client: BaseLanguageClient): Promise<void> {
   registerCommands({ extension: context, client });
+  showStatus(context, client);
   try {
     await client.start();
   } catch {

@@ -35,12 +35,13 @@ import {
   symbolOf,
   wholeHint,
 } from "./convert.ts";
-import { diagnosticsOf, workspaceReport } from "./diagnostics.ts";
+import { diagnosticsOf } from "./diagnostics.ts";
 import type { guardWith } from "./guard.ts";
 import { dropCancelled, noteFinder } from "./noteFinder.ts";
 import { type PointsAnswer, type PointsParams, pointsRequest } from "./protocol.ts";
 import type { Settings } from "./settings.ts";
 import type { Workspace } from "./workspace.ts";
+import { workspaceReport } from "./workspaceReport.ts";
 
 /** What answers are made from. */
 export interface Answering {
@@ -87,9 +88,10 @@ export function answerRequests(
   );
 
   connection.languages.diagnostics.onWorkspace(
-    answering("workspace diagnostic", async ({ previousResultIds }, token) => {
+    answering("workspace diagnostic", async ({ previousResultIds }, token, progress, partial) => {
       await ready();
-      return workspaceReport(workspace, previousResultIds, pageUri, token);
+      dropCancelled(token);
+      return workspaceReport({ workspace, pageUri, token, progress, partial }, previousResultIds);
     }),
   );
 

@@ -24,10 +24,16 @@ export interface Client {
   /** It finds an argument in a signature by its place there; else by its text. */
   readonly placesArguments: boolean;
   readonly coloursNotes: boolean;
+  /** It tells which files its user renamed, created and deleted, watching or not. */
+  readonly tellsFileOperations: boolean;
+  /** It shows that something is going on when the server asks for it. */
+  readonly showsProgress: boolean;
+  /** It shows how much is checked, and wants to hear of every change. */
+  readonly hearsStatus: boolean;
 }
 
 export function clientOf({ capabilities, workspaceFolders, rootUri }: InitializeParams): Client {
-  const { workspace, textDocument } = capabilities;
+  const { workspace, textDocument, window } = capabilities;
   const lazily = textDocument?.inlayHint?.resolveSupport?.properties ?? [];
   const folders = workspaceFolders?.map(({ uri }) => uri) ?? (rootUri ? [rootUri] : []);
   return {
@@ -43,6 +49,9 @@ export function clientOf({ capabilities, workspaceFolders, rootUri }: Initialize
     resolvesHints: ["label.tooltip", "label.location"].every((one) => lazily.includes(one)),
     nestsSymbols: textDocument?.documentSymbol?.hierarchicalDocumentSymbolSupport === true,
     preparesRename: textDocument?.rename?.prepareSupport === true,
+    tellsFileOperations: workspace?.fileOperations?.didRename === true,
+    showsProgress: window?.workDoneProgress === true,
+    hearsStatus: capabilities.experimental?.plumbline?.statusChanged === true,
     placesArguments:
       textDocument?.signatureHelp?.signatureInformation?.parameterInformation?.labelOffsetSupport === true,
     coloursNotes: textDocument?.semanticTokens?.formats.includes("relative") === true,

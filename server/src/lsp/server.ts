@@ -10,9 +10,12 @@ import { type Client, clientOf } from "./client.ts";
 import { Pusher } from "./diagnostics.ts";
 import { guardWith } from "./guard.ts";
 import { answerNameRequests } from "./nameAnswers.ts";
+import { statusRequest } from "./protocol.ts";
+import { readingProgress } from "./readingProgress.ts";
 import { registerWhatIsOffered } from "./registration.ts";
 import type { Runtime } from "./runtime.ts";
 import { readSettings, type Settings, standardSettings } from "./settings.ts";
+import { StatusTeller } from "./statusTeller.ts";
 import { type FileChange, flavourOf, Workspace } from "./workspace.ts";
 import { answerWritingRequests } from "./writingAnswers.ts";
 
@@ -28,6 +31,15 @@ export function startServer(connection: Connection, runtime: Runtime): void {
   const workspace = new Workspace(runtime, (message) => connection.console.warn(message));
   const pageUri = (name: string) => runtime.pageUri(name);
   const pusher = new Pusher(connection, workspace, pageUri, () => ready);
+  let reading = false;
+  const status = new StatusTeller({
+    connection,
+    guard,
+    workspace,
+    pageUri,
+    reading: () => reading,
+    hears: () => client.hearsStatus,
+  });
   let client: Client = clientOf({ processId: null, rootUri: null, capabilities: {} });
   let settings: Settings = standardSettings;
   /** What is read from the disk, one after the other, so that an older text never comes after a newer one. */
@@ -49,7 +61,7 @@ export function startServer(connection: Connection, runtime: Runtime): void {
 
   connection.onInitialized(
     guard.hearing("initialized", async () => {
-      ready = fromDisk("folders", () => Promise.all(client.folders.map((uri) => workspace.addFolder(uri))));
+      ready = fromDisk("folders", () => readingProgress(connection, client, guard, readFolders));
       configured = updateSettings();
       if (client.changesFolders) connection.workspace.onDidChangeWorkspaceFolders(foldersChanged);
       await registerWhatIsOffered(connection, client, guard);
@@ -64,13 +76,30 @@ export function startServer(connection: Connection, runtime: Runtime): void {
     return disk;
   }
 
+  /** Tells meanwhile that notes are being read. */
+  async function whileReading(work: () => Promise<unknown>): Promise<void> {
+    reading = true;
+    status.allChanged();
+    try {
+      await work();
+    } finally {
+      reading = false;
+    }
+  }
+
+  async function readFolders(): Promise<void> {
+    await whileReading(() => Promise.all(client.folders.map((uri) => workspace.addFolder(uri))));
+  }
+
   const foldersChanged = guard.hearing(
     "workspace folders",
     async ({ added, removed }: Record<"added" | "removed", readonly { readonly uri: string }[]>) => {
-      ready = fromDisk("folders", async () => {
-        for (const { uri } of removed) await workspace.removeFolder(uri);
-        for (const { uri } of added) await workspace.addFolder(uri);
-      });
+      ready = fromDisk("folders", () =>
+        whileReading(async () => {
+          for (const { uri } of removed) await workspace.removeFolder(uri);
+          for (const { uri } of added) await workspace.addFolder(uri);
+        }),
+      );
       await ready;
       everythingChanged();
     },
@@ -85,6 +114,7 @@ export function startServer(connection: Connection, runtime: Runtime): void {
 
   /** Asks for a refresh where something other than a note's own text changed. */
   function everythingChanged(): void {
+    status.allChanged();
     if (!client.pulls) pusher.pushAll();
     else if (client.refreshesDiagnostics) {
       void guard.asking("refresh of diagnostics", () => connection.languages.diagnostics.refresh());
@@ -126,6 +156,7 @@ export function startServer(connection: Connection, runtime: Runtime): void {
   connection.onDidCloseTextDocument(
     guard.hearing("close", async ({ textDocument: { uri } }) => {
       workspace.close(uri);
+      status.changed(uri);
       if (!client.pulls) pusher.clear(uri);
       await takeIn([{ uri, kind: "changed" }]);
     }),
@@ -135,12 +166,33 @@ export function startServer(connection: Connection, runtime: Runtime): void {
   function afterChange(uri: string, before: number | undefined): void {
     const now = workspace.folderOf(uri)?.definitionsVersion;
     if (before !== undefined && now !== before) everythingChanged();
-    else if (!client.pulls) pusher.push(uri);
+    else {
+      status.changed(uri);
+      if (!client.pulls) pusher.push(uri);
+    }
   }
 
   connection.onDidChangeWatchedFiles(
     guard.hearing("watched files", ({ changes }) =>
       takeIn(changes.map(({ uri, type }) => ({ uri, kind: fileChanges[type] }))),
+    ),
+  );
+
+  // Beside the watched files, since many clients tell these and watch nothing: what is told twice changes nothing.
+  connection.workspace.onDidCreateFiles(
+    guard.hearing("created files", ({ files }) => takeIn(files.map(({ uri }) => ({ uri, kind: "created" })))),
+  );
+  connection.workspace.onDidDeleteFiles(
+    guard.hearing("deleted files", ({ files }) => takeIn(files.map(({ uri }) => ({ uri, kind: "deleted" })))),
+  );
+  connection.workspace.onDidRenameFiles(
+    guard.hearing("renamed files", ({ files }) =>
+      takeIn(
+        files.flatMap(({ oldUri, newUri }) => [
+          { uri: oldUri, kind: "deleted" },
+          { uri: newUri, kind: "created" },
+        ]),
+      ),
     ),
   );
 
@@ -162,6 +214,10 @@ export function startServer(connection: Connection, runtime: Runtime): void {
     },
     ready: () => ready,
   };
+  connection.onRequest(
+    statusRequest,
+    guard.answering("status", () => status.status()),
+  );
   answerRequests(connection, guard, answering);
   answerNameRequests(connection, guard, answering);
   answerWritingRequests(connection, guard, answering);
