@@ -3,9 +3,15 @@ import { noteTests } from "./noteTests.ts";
 import { hasPage, page } from "./page.ts";
 import { pageTests } from "./pageTests.ts";
 import type { Test } from "./workbench.ts";
+import { writingPageTests, writingTests } from "./writingTests.ts";
 
 // A desktop build has no page that could be asked: its run is the shorter for it, and says so by its count.
-const tests: readonly Test[] = [...noteTests, ...(hasPage ? pageTests : []), ...commandTests];
+const tests: readonly Test[] = [
+  ...noteTests,
+  ...writingTests,
+  ...(hasPage ? [...writingPageTests, ...pageTests] : []),
+  ...commandTests,
+];
 
 /** Runs the suite in the extension host. Throws where a test failed, as the editor expects it. */
 export async function run(): Promise<void> {
