@@ -117,3 +117,16 @@ it("Enter lays out the line that was left", async () => {
   });
   expect(edits).toEqual([{ range: { start: at(0, 0), end: at(0, 12) }, newText: "| weight 5 t" }]);
 });
+
+it("lines are laid out in the range asked for alone", async () => {
+  client.open(uri, "|  weight 5t\n|  isa   +6\n");
+  const lay = (method: string, params: object) =>
+    client.request<TextEdit[]>(method, {
+      textDocument,
+      options: { tabSize: 2, insertSpaces: true },
+      ...params,
+    });
+  const [second] = await lay("textDocument/rangeFormatting", { range: { start: at(1, 0), end: at(1, 3) } });
+  expect(second).toEqual({ range: { start: at(1, 0), end: at(1, 11) }, newText: "| isa +6" });
+  expect(await lay("textDocument/formatting", {})).toHaveLength(2);
+});

@@ -91,7 +91,10 @@ export function answerRequests(
     answering("workspace diagnostic", async ({ previousResultIds }, token, progress, partial) => {
       await ready();
       dropCancelled(token);
-      return workspaceReport({ workspace, pageUri, token, progress, partial }, previousResultIds);
+      return workspaceReport(
+        { workspace, pageUri, soon: setImmediate, token, progress, partial },
+        previousResultIds,
+      );
     }),
   );
 

@@ -39,6 +39,7 @@ export function startServer(connection: Connection, runtime: Runtime): void {
     pageUri,
     reading: () => reading,
     hears: () => client.hearsStatus,
+    soon: setImmediate,
   });
   let client: Client = clientOf({ processId: null, rootUri: null, capabilities: {} });
   let settings: Settings = standardSettings;

@@ -2,7 +2,7 @@ import { type Connection, DiagnosticSeverity } from "vscode-languageserver";
 import type { PageUri } from "./convert.ts";
 import { diagnosticsOf } from "./diagnostics.ts";
 import type { guardWith } from "./guard.ts";
-import { nextTurn } from "./nextTurn.ts";
+import { nextTurn, type Soon } from "./nextTurn.ts";
 import { type Status, statusChangedNotification } from "./protocol.ts";
 import type { Workspace } from "./workspace.ts";
 
@@ -17,6 +17,7 @@ export interface Counting {
   reading(): boolean;
   /** True where the client wants to hear of every change. */
   hears(): boolean;
+  readonly soon: Soon;
 }
 
 /**
@@ -51,12 +52,12 @@ export class StatusTeller {
 
   /** Counts what is not counted yet. While folders are read it is told at once, for the notes that are there. */
   async status(): Promise<Status> {
-    const { workspace, reading } = this.#with;
+    const { workspace, reading, soon } = this.#with;
     for (let change = -1; change !== this.#change; ) {
       change = this.#change;
       for (const { uri } of workspace.notes) {
         this.#count(uri);
-        await nextTurn();
+        await nextTurn(soon);
       }
     }
     return this.#sum(reading());
@@ -76,18 +77,18 @@ export class StatusTeller {
   }
 
   async #run(): Promise<void> {
-    const { workspace } = this.#with;
+    const { workspace, soon } = this.#with;
     for (let change = -1; change !== this.#change; ) {
       change = this.#change;
       // A burst of edits is counted once.
-      for (let turn = 0; turn < 3; turn++) await nextTurn();
+      for (let turn = 0; turn < 3; turn++) await nextTurn(soon);
       const open = workspace.notes.filter(({ uri }) => !this.#counted.has(uri));
       // One note is counted before anybody could read that it is being counted.
       if (1 < open.length || this.#with.reading()) this.#tell(this.#sum(true));
       for (const { uri } of open) {
         if (change !== this.#change) break;
         this.#count(uri);
-        await nextTurn();
+        await nextTurn(soon);
       }
     }
     // A change from here on begins a count of its own.

@@ -9,7 +9,7 @@ import {
 } from "vscode-languageserver";
 import type { PageUri } from "./convert.ts";
 import { diagnosticsOf } from "./diagnostics.ts";
-import { nextTurn } from "./nextTurn.ts";
+import { nextTurn, type Soon } from "./nextTurn.ts";
 import { dropCancelled } from "./noteFinder.ts";
 import type { Workspace } from "./workspace.ts";
 
@@ -19,6 +19,7 @@ type Items = WorkspaceDiagnosticReport["items"];
 export interface Reporting {
   readonly workspace: Workspace;
   readonly pageUri: PageUri;
+  readonly soon: Soon;
   readonly token: CancellationToken;
   readonly progress: WorkDoneProgressReporter;
   /** Told piece by piece where the client takes it so. */
@@ -37,7 +38,7 @@ export async function workspaceReport(
   reporting: Reporting,
   previous: readonly { readonly uri: string; readonly value: string }[],
 ): Promise<WorkspaceDiagnosticReport> {
-  const { workspace, token, progress, partial } = reporting;
+  const { workspace, soon, token, progress, partial } = reporting;
   const known = new Map(previous.map(({ uri, value }) => [uri, value]));
   const uris = workspace.notes.map(({ uri }) => uri);
   let items: Items = [];
@@ -54,7 +55,7 @@ export async function workspaceReport(
         tell();
         progress.report((100 * (i + 1)) / uris.length, `${i + 1} of ${uris.length}`);
       }
-      await nextTurn();
+      await nextTurn(soon);
       dropCancelled(token);
     }
     // What a removed note was told is taken back.
