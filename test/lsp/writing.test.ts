@@ -67,7 +67,7 @@ it("colours are told for the note and for a range, by the legend", async () => {
   const { legend } = client.initialized.capabilities.semanticTokensProvider ?? {};
   client.open(uri, "Prose.\n\n| aircraft twite-4\n| config clean\n");
   const told = async (method: string, params: object) => {
-    const { data } = await client.request<SemanticTokens>(`textDocument/semanticTokens/${method}`, {
+    const { data } = await client.request<SemanticTokens>(method, {
       textDocument,
       ...params,
     });
@@ -77,13 +77,15 @@ it("colours are told for the note and for a range, by the legend", async () => {
       data[i * 5 + 4],
     ]);
   };
-  expect(await told("full", {})).toEqual([
+  expect(await told("textDocument/semanticTokens/full", {})).toEqual([
     [2, 2, 8, "keyword", 0],
     [0, 9, 7, "class", 1],
     [1, 2, 6, "keyword", 0],
     [0, 7, 5, "property", 1],
   ]);
-  expect(await told("range", { range: { start: at(3, 0), end: at(3, 99) } })).toEqual([
+  expect(
+    await told("textDocument/semanticTokens/range", { range: { start: at(3, 0), end: at(3, 99) } }),
+  ).toEqual([
     [3, 2, 6, "keyword", 0],
     [0, 7, 5, "property", 1],
   ]);
