@@ -1,3 +1,4 @@
+import { readFileSync } from "node:fs";
 import { afterAll, beforeAll, describe, expect, it } from "vitest";
 import type { ClientCapabilities, ServerCapabilities } from "vscode-languageserver";
 import { CancellationTokenSource } from "vscode-languageserver/node";
@@ -295,6 +296,17 @@ describe("what comes out of order", () => {
     // The text is the one before: nothing of all this was taken in.
     expect((await client.diagnostics(uri)).map((one) => one.code)).toContain("missing-unit");
     await lives();
+  });
+
+  it("and whatever is answered stands in DEVELOPERS.md with a test that asks for it", () => {
+    const read = (path: string) => readFileSync(new URL(`../../${path}`, import.meta.url), "utf8");
+    const rows = [...read("DEVELOPERS.md").matchAll(/^\| `(\S+\/\S+)` \| .* \| `(test\/\S+)` \|$/gm)].map(
+      ([, method = "", file = ""]) => ({ method, file }),
+    );
+    const listed = rows.map(({ method }) => method);
+    expect(listed).toEqual(expect.arrayContaining(requests.map(({ method }) => method)));
+    expect(new Set(listed).size).toBe(listed.length);
+    for (const { method, file } of rows) expect(read(file), `${file}: ${method}`).toContain(`"${method}"`);
   });
 
   it("is every request that the server says it answers", () => {
