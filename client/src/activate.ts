@@ -3,6 +3,7 @@ import type { BaseLanguageClient, LanguageClientOptions } from "vscode-languagec
 import { registerCommands } from "./commands.ts";
 import { offerComparisons } from "./comparisons.ts";
 import { servedRequests, serveFiles } from "./serveFiles.ts";
+import { showStatus } from "./status.ts";
 
 /**
  * What the server is asked about. It registers the file watching and the settings it needs by itself,
@@ -23,6 +24,7 @@ export const clientOptions: LanguageClientOptions = {
 export async function start(context: ExtensionContext, client: BaseLanguageClient): Promise<void> {
   registerCommands({ extension: context, client, comparisons: offerComparisons(context) });
   serveFiles(client);
+  showStatus(context, client);
   try {
     await client.start();
   } catch {

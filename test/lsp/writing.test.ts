@@ -67,7 +67,7 @@ it("colours are told for the note and for a range, by the legend", async () => {
   const { legend } = client.initialized.capabilities.semanticTokensProvider ?? {};
   client.open(uri, "Prose.\n\n| aircraft twite-4\n| config clean\n");
   const told = async (method: string, params: object) => {
-    const { data } = await client.request<SemanticTokens>(`textDocument/semanticTokens/${method}`, {
+    const { data } = await client.request<SemanticTokens>(method, {
       textDocument,
       ...params,
     });
@@ -77,13 +77,15 @@ it("colours are told for the note and for a range, by the legend", async () => {
       data[i * 5 + 4],
     ]);
   };
-  expect(await told("full", {})).toEqual([
+  expect(await told("textDocument/semanticTokens/full", {})).toEqual([
     [2, 2, 8, "keyword", 0],
     [0, 9, 7, "class", 1],
     [1, 2, 6, "keyword", 0],
     [0, 7, 5, "property", 1],
   ]);
-  expect(await told("range", { range: { start: at(3, 0), end: at(3, 99) } })).toEqual([
+  expect(
+    await told("textDocument/semanticTokens/range", { range: { start: at(3, 0), end: at(3, 99) } }),
+  ).toEqual([
     [3, 2, 6, "keyword", 0],
     [0, 7, 5, "property", 1],
   ]);
@@ -116,4 +118,17 @@ it("Enter lays out the line that was left", async () => {
     options: { tabSize: 2, insertSpaces: true },
   });
   expect(edits).toEqual([{ range: { start: at(0, 0), end: at(0, 12) }, newText: "| weight 5 t" }]);
+});
+
+it("lines are laid out in the range asked for alone", async () => {
+  client.open(uri, "|  weight 5t\n|  isa   +6\n");
+  const lay = (method: string, params: object) =>
+    client.request<TextEdit[]>(method, {
+      textDocument,
+      options: { tabSize: 2, insertSpaces: true },
+      ...params,
+    });
+  const [second] = await lay("textDocument/rangeFormatting", { range: { start: at(1, 0), end: at(1, 3) } });
+  expect(second).toEqual({ range: { start: at(1, 0), end: at(1, 11) }, newText: "| isa +6" });
+  expect(await lay("textDocument/formatting", {})).toHaveLength(2);
 });

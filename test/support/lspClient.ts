@@ -46,6 +46,17 @@ export interface Client {
   stop(): Promise<number | null>;
 }
 
+/** Runs the built server over standard input and output, and says nothing to it yet. */
+export function runServer() {
+  const child = spawn(process.execPath, [serverPath, "--stdio"], { stdio: ["pipe", "pipe", "inherit"] });
+  const ended = new Promise<number | null>((done) => child.once("exit", done));
+  const connection = createMessageConnection(
+    new StreamMessageReader(child.stdout),
+    new StreamMessageWriter(child.stdin),
+  );
+  return { child, connection, ended };
+}
+
 /**
  * Starts the built server over standard input and output, as any editor does. `answer` replaces what
  * the client says to the server's own requests.
@@ -55,12 +66,7 @@ export async function startClient(
   capabilities: ClientCapabilities = able,
   answer: ((method: string) => unknown) | null = null,
 ): Promise<Client> {
-  const child = spawn(process.execPath, [serverPath, "--stdio"], { stdio: ["pipe", "pipe", "inherit"] });
-  const ended = new Promise<number | null>((done) => child.once("exit", done));
-  const connection = createMessageConnection(
-    new StreamMessageReader(child.stdout),
-    new StreamMessageWriter(child.stdin),
-  );
+  const { child, connection, ended } = runServer();
   const received: string[] = [];
   const pushed = new Map<string, Diagnostic[]>();
   const client = { settings: null as unknown };

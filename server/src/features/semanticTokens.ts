@@ -44,10 +44,27 @@ const nameColours: Readonly<Record<NameKind, Colour>> = {
 
 /** What the bar lines among some lines are made of, in the order of the text; nothing is evaluated for it. */
 export function semanticTokens(note: Note, from: number, to: number): readonly ColouredToken[] {
-  return note.document.blocks
-    .filter((block) => block.start <= to && from < block.start + block.lines.length)
-    .flatMap((block) => blockTokens(block))
-    .filter(({ line }) => from <= line && line <= to);
+  const found: ColouredToken[] = [];
+  for (const block of note.document.blocks) {
+    if (to < block.start || block.start + block.lines.length <= from) continue;
+    for (const token of tokensOf(block)) {
+      const line = block.start + token.line;
+      if (from <= line && line <= to) found.push({ ...token, line });
+    }
+  }
+  return found;
+}
+
+/** A block whose lines stay is coloured once: an edit in a long note costs its own block. */
+const coloured = new WeakMap<Block, readonly ColouredToken[]>();
+
+/** The block's tokens with their lines counted from its first. */
+function tokensOf(block: Block): readonly ColouredToken[] {
+  const known = coloured.get(block);
+  if (known) return known;
+  const tokens = blockTokens(block);
+  coloured.set(block, tokens);
+  return tokens;
 }
 
 function blockTokens(block: Block): readonly ColouredToken[] {
@@ -60,7 +77,7 @@ function blockTokens(block: Block): readonly ColouredToken[] {
       const own = clauses.find(({ clause: { span } }) => span.start <= start && start < span.end);
       const colour = name ? nameColours[name.kind] : colourOf(token, tokens[i + 1], text, own);
       const defines = name?.defines === true;
-      return colour ? [{ line: block.start + index, start, end, colour, defines }] : [];
+      return colour ? [{ line: index, start, end, colour, defines }] : [];
     });
   });
 }

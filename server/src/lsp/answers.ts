@@ -35,7 +35,7 @@ import {
   symbolOf,
   wholeHint,
 } from "./convert.ts";
-import { diagnosticsOf, workspaceReport } from "./diagnostics.ts";
+import { diagnosticsOf } from "./diagnostics.ts";
 import type { guardWith } from "./guard.ts";
 import { dropCancelled, noteFinder } from "./noteFinder.ts";
 import type { Patience } from "./patience.ts";
@@ -50,6 +50,7 @@ import {
 import type { Runtime } from "./runtime.ts";
 import type { Settings } from "./settings.ts";
 import type { Workspace } from "./workspace.ts";
+import { workspaceReport } from "./workspaceReport.ts";
 
 /** What answers are made from. */
 export interface Answering {
@@ -101,9 +102,13 @@ export function answerRequests(
   );
 
   connection.languages.diagnostics.onWorkspace(
-    answering("workspace diagnostic", async ({ previousResultIds }, token) => {
+    answering("workspace diagnostic", async ({ previousResultIds }, token, progress, partial) => {
       await ready();
-      return workspaceReport(workspace, previousResultIds, pageUri, patience, token);
+      dropCancelled(token);
+      return workspaceReport(
+        { workspace, pageUri, patience, soon, token, progress, partial },
+        previousResultIds,
+      );
     }),
   );
 

@@ -1,7 +1,21 @@
-import { CodeActionKind, type ServerCapabilities, TextDocumentSyncKind } from "vscode-languageserver";
+import {
+  CodeActionKind,
+  FileOperationPatternKind,
+  type FileOperationRegistrationOptions,
+  type ServerCapabilities,
+  TextDocumentSyncKind,
+} from "vscode-languageserver";
 import type { Client } from "./client.ts";
 import { FIX_ALL } from "./convert.ts";
 import { legend } from "./semanticLegend.ts";
+
+/** Notes, and folders that may hold some. */
+const noteFiles: FileOperationRegistrationOptions = {
+  filters: [
+    { pattern: { glob: "**/*.{plumb,md,markdown}", matches: FileOperationPatternKind.file } },
+    { pattern: { glob: "**", matches: FileOperationPatternKind.folder } },
+  ],
+};
 
 /** What the server says it can do, to this client. */
 export function capabilities(client: Client): ServerCapabilities {
@@ -36,6 +50,11 @@ export function capabilities(client: Client): ServerCapabilities {
     documentFormattingProvider: true,
     documentRangeFormattingProvider: true,
     documentOnTypeFormattingProvider: { firstTriggerCharacter: "\n" },
-    workspace: { workspaceFolders: { supported: true, changeNotifications: client.changesFolders } },
+    workspace: {
+      workspaceFolders: { supported: true, changeNotifications: client.changesFolders },
+      ...(client.tellsFileOperations
+        ? { fileOperations: { didCreate: noteFiles, didRename: noteFiles, didDelete: noteFiles } }
+        : {}),
+    },
   };
 }

@@ -29,6 +29,12 @@ export interface Client {
   readonly servesFiles: boolean;
   /** URI of the folder that holds the pages, where it knows one. */
   readonly pages: string | null;
+  /** It tells which files its user renamed, created and deleted, watching or not. */
+  readonly tellsFileOperations: boolean;
+  /** It shows that something is going on when the server asks for it. */
+  readonly showsProgress: boolean;
+  /** It shows how much is checked, and wants to hear of every change. */
+  readonly hearsStatus: boolean;
 }
 
 export function clientOf({
@@ -37,7 +43,7 @@ export function clientOf({
   rootUri,
   initializationOptions,
 }: InitializeParams): Client {
-  const { workspace, textDocument } = capabilities;
+  const { workspace, textDocument, window } = capabilities;
   const lazily = textDocument?.inlayHint?.resolveSupport?.properties ?? [];
   const folders = workspaceFolders?.map(({ uri }) => uri) ?? (rootUri ? [rootUri] : []);
   const { answers, pages } = optionsOf(initializationOptions);
@@ -54,6 +60,9 @@ export function clientOf({
     resolvesHints: ["label.tooltip", "label.location"].every((one) => lazily.includes(one)),
     nestsSymbols: textDocument?.documentSymbol?.hierarchicalDocumentSymbolSupport === true,
     preparesRename: textDocument?.rename?.prepareSupport === true,
+    tellsFileOperations: workspace?.fileOperations?.didRename === true,
+    showsProgress: window?.workDoneProgress === true,
+    hearsStatus: capabilities.experimental?.plumbline?.statusChanged === true,
     placesArguments:
       textDocument?.signatureHelp?.signatureInformation?.parameterInformation?.labelOffsetSupport === true,
     coloursNotes: textDocument?.semanticTokens?.formats.includes("relative") === true,

@@ -273,7 +273,8 @@ export function semanticTokensOf(tokens: readonly ColouredToken[]): SemanticToke
   for (const { line, start, end, colour, defines } of tokens) {
     builder.push(line, start, end - start, colours.indexOf(colour), defines ? 1 : 0);
   }
-  return builder.build();
+  // Without the name of a result: none is asked for what changed since.
+  return { data: builder.build().data };
 }
 
 export function signatureHelpOf(signature: Signature, byPlace: boolean): SignatureHelp {

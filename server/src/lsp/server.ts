@@ -13,10 +13,13 @@ import { guardWith } from "./guard.ts";
 import { answerNameRequests } from "./nameAnswers.ts";
 import { noteFiles } from "./noteFiles.ts";
 import { patience } from "./patience.ts";
+import { statusRequest } from "./protocol.ts";
+import { readingProgress } from "./readingProgress.ts";
 import { registerWhatIsOffered } from "./registration.ts";
 import type { Runtime } from "./runtime.ts";
 import { servedFiles } from "./servedFiles.ts";
 import { readSettings, type Settings, standardSettings } from "./settings.ts";
+import { StatusTeller } from "./statusTeller.ts";
 import { type FileChange, flavourOf, Workspace } from "./workspace.ts";
 import { answerWritingRequests } from "./writingAnswers.ts";
 
@@ -45,6 +48,15 @@ export function startServer(connection: Connection, runtime: Runtime): void {
     (uri) => (client.pulls ? everythingChanged() : pusher.push(uri)),
   );
   const pusher = new Pusher(connection, workspace, pageUri, calm, () => ready, runtime.soon);
+  let reading = false;
+  const status = new StatusTeller({
+    connection,
+    guard,
+    workspace,
+    reading: () => reading,
+    hears: () => client.hearsStatus,
+    soon: runtime.soon,
+  });
   let client: Client = clientOf({ processId: null, rootUri: null, capabilities: {} });
   let settings: Settings = standardSettings;
   /** What is read from the disk, one after the other, so that an older text never comes after a newer one. */
@@ -66,7 +78,7 @@ export function startServer(connection: Connection, runtime: Runtime): void {
 
   connection.onInitialized(
     guard.hearing("initialized", async () => {
-      ready = fromDisk("folders", () => Promise.all(client.folders.map((uri) => workspace.addFolder(uri))));
+      ready = fromDisk("folders", () => readingProgress(connection, client, guard, readFolders));
       configured = updateSettings();
       if (client.changesFolders) connection.workspace.onDidChangeWorkspaceFolders(foldersChanged);
       await registerWhatIsOffered(connection, client, guard);
@@ -81,13 +93,30 @@ export function startServer(connection: Connection, runtime: Runtime): void {
     return disk;
   }
 
+  /** Tells meanwhile that notes are being read. */
+  async function whileReading(work: () => Promise<unknown>): Promise<void> {
+    reading = true;
+    status.allChanged();
+    try {
+      await work();
+    } finally {
+      reading = false;
+    }
+  }
+
+  async function readFolders(): Promise<void> {
+    await whileReading(() => Promise.all(client.folders.map((uri) => workspace.addFolder(uri))));
+  }
+
   const foldersChanged = guard.hearing(
     "workspace folders",
     async ({ added, removed }: Record<"added" | "removed", readonly { readonly uri: string }[]>) => {
-      ready = fromDisk("folders", async () => {
-        for (const { uri } of removed) await workspace.removeFolder(uri);
-        for (const { uri } of added) await workspace.addFolder(uri);
-      });
+      ready = fromDisk("folders", () =>
+        whileReading(async () => {
+          for (const { uri } of removed) await workspace.removeFolder(uri);
+          for (const { uri } of added) await workspace.addFolder(uri);
+        }),
+      );
       await ready;
       everythingChanged();
     },
@@ -107,6 +136,7 @@ export function startServer(connection: Connection, runtime: Runtime): void {
 
   /** Asks for a refresh where something other than a note's own text changed. */
   function everythingChanged(): void {
+    status.allChanged();
     if (!client.pulls) pusher.pushAll();
     else if (client.refreshesDiagnostics) {
       void guard.asking("refresh of diagnostics", () => connection.languages.diagnostics.refresh());
@@ -152,6 +182,7 @@ export function startServer(connection: Connection, runtime: Runtime): void {
     guard.hearing("close", async ({ textDocument: { uri } }) => {
       workspace.close(uri);
       calm.closed(uri);
+      status.changed(uri);
       if (!client.pulls) pusher.clear(uri);
       await takeIn([{ uri, kind: "changed" }]);
     }),
@@ -161,12 +192,33 @@ export function startServer(connection: Connection, runtime: Runtime): void {
   function afterChange(uri: string, before: number | undefined): void {
     const now = workspace.folderOf(uri)?.definitionsVersion;
     if (before !== undefined && now !== before) everythingChanged();
-    else if (!client.pulls) pusher.push(uri);
+    else {
+      status.changed(uri);
+      if (!client.pulls) pusher.push(uri);
+    }
   }
 
   connection.onDidChangeWatchedFiles(
     guard.hearing("watched files", ({ changes }) =>
       takeIn(changes.map(({ uri, type }) => ({ uri, kind: fileChanges[type] }))),
+    ),
+  );
+
+  // Beside the watched files, since many clients tell these and watch nothing: what is told twice changes nothing.
+  connection.workspace.onDidCreateFiles(
+    guard.hearing("created files", ({ files }) => takeIn(files.map(({ uri }) => ({ uri, kind: "created" })))),
+  );
+  connection.workspace.onDidDeleteFiles(
+    guard.hearing("deleted files", ({ files }) => takeIn(files.map(({ uri }) => ({ uri, kind: "deleted" })))),
+  );
+  connection.workspace.onDidRenameFiles(
+    guard.hearing("renamed files", ({ files }) =>
+      takeIn(
+        files.flatMap(({ oldUri, newUri }) => [
+          { uri: oldUri, kind: "deleted" },
+          { uri: newUri, kind: "created" },
+        ]),
+      ),
     ),
   );
 
@@ -190,6 +242,10 @@ export function startServer(connection: Connection, runtime: Runtime): void {
     },
     ready: () => ready,
   };
+  connection.onRequest(
+    statusRequest,
+    guard.answering("status", () => status.status()),
+  );
   answerRequests(connection, guard, answering);
   answerNameRequests(connection, guard, answering);
   answerWritingRequests(connection, guard, answering);
