@@ -15,6 +15,8 @@ export interface Client {
   readonly snippets: boolean;
   /** It asks for tooltips and places of a hint when it shows them; else they are sent with the hint. */
   readonly resolvesHints: boolean;
+  /** It draws figures of its own accord, and wants to hear when they may be others now. */
+  readonly hearsFigures: boolean;
   /** It shows an outline as a tree; else it gets a list. */
   readonly nestsSymbols: boolean;
 }
@@ -34,6 +36,7 @@ export function clientOf({ capabilities, workspaceFolders, rootUri }: Initialize
     changesFolders: workspace?.workspaceFolders === true,
     snippets: textDocument?.completion?.completionItem?.snippetSupport === true,
     resolvesHints: ["label.tooltip", "label.location"].every((one) => lazily.includes(one)),
+    hearsFigures: capabilities.experimental?.plumbline?.figuresChanged === true,
     nestsSymbols: textDocument?.documentSymbol?.hierarchicalDocumentSymbolSupport === true,
   };
 }

@@ -1,3 +1,4 @@
+import type { Fences } from "../report/fences.ts";
 import type { FileJson } from "../report/pointsJson.ts";
 
 /** `plumbline/points`: every computed value of a note, as `plumbline points --format json` prints it. */
@@ -8,3 +9,17 @@ export interface PointsParams {
 }
 
 export type PointsAnswer = FileJson | null;
+
+/** What is asked of one note. */
+export interface NoteParams {
+  readonly textDocument: { readonly uri: string };
+}
+
+/** `plumbline/fences`: the fences of a note that is open, as tables that are ready to be drawn. */
+export const fencesRequest = "plumbline/fences";
+
+/** With the version of the text that the figures are for; null where the note is not open. */
+export type FencesAnswer = (Fences & { readonly version: number }) | null;
+
+/** `plumbline/figuresChanged`, told to the client: figures of any note may be others now, though its own text is the same. */
+export const figuresChangedNotification = "plumbline/figuresChanged";

@@ -9,9 +9,11 @@ import { capabilities } from "./capabilities.ts";
 import { type Client, clientOf } from "./client.ts";
 import { Pusher } from "./diagnostics.ts";
 import { guardWith } from "./guard.ts";
+import { figuresChangedNotification } from "./protocol.ts";
 import { registerWhatIsOffered } from "./registration.ts";
 import type { Runtime } from "./runtime.ts";
 import { readSettings, type Settings, standardSettings } from "./settings.ts";
+import { answerShownRequests } from "./shownRequests.ts";
 import { type FileChange, flavourOf, Workspace } from "./workspace.ts";
 
 const fileChanges: Readonly<Record<FileChangeType, FileChange["kind"]>> = {
@@ -87,6 +89,9 @@ export function startServer(connection: Connection, runtime: Runtime): void {
     if (client.refreshesHints) {
       void guard.asking("refresh of hints", () => connection.languages.inlayHint.refresh());
     }
+    if (client.hearsFigures) {
+      void guard.asking("change of figures", () => connection.sendNotification(figuresChangedNotification));
+    }
   }
 
   connection.onDidChangeConfiguration(
@@ -157,5 +162,6 @@ export function startServer(connection: Connection, runtime: Runtime): void {
     },
     ready: () => ready,
   });
+  answerShownRequests(connection, guard, { workspace, ready: () => ready });
   connection.listen();
 }
