@@ -1,6 +1,7 @@
 import type { ExtensionContext } from "vscode";
 import type { BaseLanguageClient, LanguageClientOptions, StaticFeature } from "vscode-languageclient";
 import { registerCommands } from "./commands.ts";
+import { hintsOfNotes } from "./hintsOfNotes.ts";
 import { extendMarkdownIt, type PreviewParser } from "./markdownPreview.ts";
 import { noteFigures } from "./noteFigures.ts";
 
@@ -25,7 +26,7 @@ export interface Contributed {
 
 /** Registers the commands first, so that they answer even where the server does not start. */
 export async function start(context: ExtensionContext, client: BaseLanguageClient): Promise<Contributed> {
-  registerCommands({ extension: context, client });
+  registerCommands({ extension: context, client, hintsOfNotes: hintsOfNotes(context, client) });
   client.registerFeature(hearsFigures);
   const figures = noteFigures(client);
   context.subscriptions.push(figures);

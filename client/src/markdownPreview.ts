@@ -1,5 +1,5 @@
 import type { FencesAnswer } from "../../server/src/lsp/protocol.ts";
-import { fenceHtml, waitingHtml } from "./fenceHtml.ts";
+import { type Escape, fenceHtml, waitingHtml } from "./fenceHtml.ts";
 
 /** What is known of a text at this moment. */
 export type Figures =
@@ -38,6 +38,7 @@ export interface PreviewParser {
     };
   };
   readonly renderer: { readonly rules: Record<string, unknown> };
+  readonly utils: { readonly escapeHtml: Escape };
 }
 
 /**
@@ -53,7 +54,7 @@ export function extendMarkdownIt<P extends PreviewParser>(parser: P, figuresOf: 
   const fence: Rule = (tokens, index, options, env, renderer) => {
     const token = tokens[index] as Token;
     if (!isPlumb(token)) return others?.(tokens, index, options, env, renderer) ?? "";
-    const drawn = drawFence(token, env, figuresOf);
+    const drawn = drawFence(token, env, figuresOf, parser.utils.escapeHtml);
     // Its attributes keep the preview and the editor at the same line.
     return `<div${renderer.renderAttrs(token as never)}>${drawn}</div>\n`;
   };
@@ -65,16 +66,21 @@ function isPlumb({ type, info }: Token): boolean {
   return type === "fence" && /^\s*plumb(?![\p{L}\p{M}\p{N}_-])/iu.test(info);
 }
 
-function drawFence({ content, map, meta }: Token, env: unknown, figuresOf: FiguresOf): string {
+function drawFence(
+  { content, map, meta }: Token,
+  env: unknown,
+  figuresOf: FiguresOf,
+  escaped: Escape,
+): string {
   const uri = (env as { currentDocument?: unknown } | undefined)?.currentDocument;
   const text = (meta as Meta | null)?.noteText;
   const figures = uri && text !== undefined ? figuresOf(String(uri), text) : nowhere;
-  if (figures.kind === "coming") return waitingHtml(content, "Figures are coming.");
-  if (figures.kind === "none") return waitingHtml(content, figures.why);
+  if (figures.kind === "coming") return waitingHtml(content, "Figures are coming.", escaped);
+  if (figures.kind === "none") return waitingHtml(content, figures.why, escaped);
   const found = figures.answer.fences.find(
     ({ line, endLine, closed }) => line === map?.[0] && (!closed || endLine === map[1]),
   );
-  return found ? fenceHtml(found, figures.answer, content) : waitingHtml(content, unread);
+  return found ? fenceHtml(found, figures.answer, content, escaped) : waitingHtml(content, unread, escaped);
 }
 
 const nowhere: Figures = { kind: "none", why: "No figures: the preview does not say which note this is." };

@@ -47,7 +47,7 @@ describe("the preview of a note", () => {
     for (const head of tableHead) expect(shown).toContain(`<th scope="col">${head}</th>`);
     expect(note.findings().length).toBeGreaterThan(0);
     for (const { finding } of note.findings()) expect(shown).toContain(`<code>${finding.code}</code>`);
-    expect(shown.split(caution.replaceAll("'", "&#39;")).length - 1).toBe(2);
+    expect(shown.split(caution).length - 1).toBe(2);
     expect(shown.match(/<caption>Points of lines \d+ to \d+<\/caption>/g)).toHaveLength(2);
   });
 
@@ -62,7 +62,7 @@ describe("the preview of a note", () => {
   it("draws no mark of an author's text", () => {
     const shown = preview(turn("<img src=x onerror=alert(1)> & '", "35"));
     expect(shown).not.toContain("<img");
-    expect(shown).toContain("&lt;img src=x onerror=alert(1)&gt; &amp; &#39;");
+    expect(shown).toContain("&lt;img src=x onerror=alert(1)&gt; &amp; '");
     fc.assert(
       fc.property(noteText, (text) => {
         const inside = preview(`\`\`\`plumb\n${text.replace(/[`~]/g, "<b>")}\n\`\`\`\n`);

@@ -1,3 +1,4 @@
+import type { CopyForm } from "../features/copiedText.ts";
 import type { Fences } from "../report/fences.ts";
 import type { FileJson } from "../report/pointsJson.ts";
 
@@ -23,3 +24,21 @@ export type FencesAnswer = (Fences & { readonly version: number }) | null;
 
 /** `plumbline/figuresChanged`, told to the client: figures of any note may be others now, though its own text is the same. */
 export const figuresChangedNotification = "plumbline/figuresChanged";
+
+/** `plumbline/readLine`: what is computed and found on a line, as a sentence; null where the note is not known. */
+export const readLineRequest = "plumbline/readLine";
+
+export interface ReadLineParams extends NoteParams {
+  /** From 0. */
+  readonly line: number;
+}
+
+/** `plumbline/copyWithValues`: lines with their values, to be pasted elsewhere; null where the note is not known. */
+export const copyWithValuesRequest = "plumbline/copyWithValues";
+
+export interface CopyWithValuesParams extends NoteParams {
+  /** The first and the last line, from 0. */
+  readonly from: number;
+  readonly to: number;
+  readonly form: CopyForm;
+}
