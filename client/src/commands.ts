@@ -3,6 +3,7 @@ import type { BaseLanguageClient } from "vscode-languageclient";
 import { chooseHints } from "./chooseHints.ts";
 import { copyWithValues } from "./copyWithValues.ts";
 import type { HintsOfNotes } from "./hintsOfNotes.ts";
+import { newNote, openSample } from "./newNote.ts";
 import { openDemo } from "./openDemo.ts";
 import { readLine } from "./readLine.ts";
 import { toggleHints } from "./toggleHints.ts";
@@ -24,6 +25,8 @@ const commands: Readonly<Record<string, Command>> = {
   "plumbline.readLine": readLine,
   "plumbline.copyWithValues": copyWithValues,
   "plumbline.restartServer": restartServer,
+  "plumbline.newNote": newNote,
+  "plumbline.openSample": openSample,
   "plumbline.openDemo": openDemo,
 };
 

@@ -2,10 +2,15 @@ import { commandTests } from "./commandTests.ts";
 import { noteTests } from "./noteTests.ts";
 import { hasPage, page } from "./page.ts";
 import { pageTests } from "./pageTests.ts";
+import { previewTests } from "./previewTests.ts";
 import type { Test } from "./workbench.ts";
 
 // A desktop build has no page that could be asked: its run is the shorter for it, and says so by its count.
-const tests: readonly Test[] = [...noteTests, ...(hasPage ? pageTests : []), ...commandTests];
+const tests: readonly Test[] = [
+  ...noteTests,
+  ...(hasPage ? [...pageTests, ...previewTests] : []),
+  ...commandTests,
+];
 
 /** Runs the suite in the extension host. Throws where a test failed, as the editor expects it. */
 export async function run(): Promise<void> {
