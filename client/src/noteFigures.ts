@@ -7,9 +7,16 @@ import type {
   NoteParams,
 } from "../../server/src/lsp/protocol.ts";
 import type { Figures, FiguresOf } from "./markdownPreview.ts";
+import { spaced } from "./spaced.ts";
 
 const fences: typeof fencesRequest = "plumbline/fences";
 const figuresChanged: typeof figuresChangedNotification = "plumbline/figuresChanged";
+
+/**
+ * A preview that is loaded anew while it still loads may keep the older page for good, as the editor
+ * does it; so there is time between.
+ */
+const RELOAD_MILLISECONDS = 2000;
 
 /** What was answered for one version of a note. */
 interface Answered {
@@ -32,6 +39,8 @@ export function noteFigures(client: BaseLanguageClient): {
   const asked = new Map<string, { readonly version: number }>();
   /** What was last drawn of each note, and for which text. */
   const drawn = new Map<string, { readonly text: string; readonly figures: string }>();
+
+  const redraw = spaced(() => void commands.executeCommand("markdown.preview.refresh"), RELOAD_MILLISECONDS);
 
   const figuresOf: FiguresOf = (uri, text) => {
     const last = answered.get(uri);
@@ -58,9 +67,14 @@ export function noteFigures(client: BaseLanguageClient): {
   async function answer(uri: string, version: number): Promise<Figures> {
     try {
       const params: NoteParams = { textDocument: { uri } };
-      const found = await client.sendRequest<FencesAnswer>(fences, params);
-      if (!found) return unread;
-      return found.version === version ? { kind: "known", answer: found } : { kind: "coming" };
+      // This may hear of a change before the client has told the server of it; the next question comes after that.
+      for (let attempt = 0; attempt < 4; attempt++) {
+        const found = await client.sendRequest<FencesAnswer>(fences, params);
+        if (!found) return unread;
+        if (found.version === version) return { kind: "known", answer: found };
+      }
+      // A later version is asked for by itself.
+      return { kind: "coming" };
     } catch {
       return silent;
     }
@@ -71,14 +85,23 @@ export function noteFigures(client: BaseLanguageClient): {
     const before = drawn.get(uri);
     // A preview of another text draws itself anew when it learns of this one.
     if (before?.text !== now.text || before.figures === JSON.stringify(now.figures)) return;
-    void commands.executeCommand("markdown.preview.refresh");
+    redraw.run();
+  }
+
+  /** Before a preview draws it, so that the first drawing has its figures already. */
+  function askAhead({ languageId, uri }: TextDocument): void {
+    if (languageId === "markdown" && ["file", "untitled"].includes(uri.scheme)) void ask(uri.toString());
   }
 
   /** Nothing known holds any longer. */
   function forget(): void {
     answered.clear();
     asked.clear();
-    for (const uri of drawn.keys()) void ask(uri);
+    workspace.textDocuments.forEach(askAhead);
+    // A preview outlives its editor: it opens the note again when it draws.
+    const closed = [...drawn.keys()].filter((uri) => !openNote(uri));
+    for (const uri of closed) drawn.delete(uri);
+    if (closed.length > 0) redraw.run();
   }
 
   const listening = [
@@ -86,13 +109,12 @@ export function noteFigures(client: BaseLanguageClient): {
     client.onDidChangeState(({ newState }) => {
       if (newState !== State.Starting) forget();
     }),
-    // Asked for at once, so that the answer is there when the preview has waited for the typing to pause.
-    workspace.onDidChangeTextDocument(({ document }) => {
-      const uri = document.uri.toString();
-      if (drawn.has(uri)) void ask(uri);
-    }),
+    redraw,
+    workspace.onDidOpenTextDocument(askAhead),
+    workspace.onDidChangeTextDocument(({ document }) => askAhead(document)),
     workspace.onDidCloseTextDocument(({ uri }) => {
-      for (const known of [answered, asked, drawn]) known.delete(uri.toString());
+      answered.delete(uri.toString());
+      asked.delete(uri.toString());
     }),
   ];
   return {

@@ -1,4 +1,4 @@
-import { window } from "vscode";
+import { commands, window } from "vscode";
 import type { ReadLineParams, readLineRequest } from "../../server/src/lsp/protocol.ts";
 import { askServer } from "./askServer.ts";
 import type { CommandContext } from "./commands.ts";
@@ -14,6 +14,10 @@ export async function readLine({ client }: CommandContext): Promise<void> {
     line: selection.active.line,
   };
   const sentence = await askServer(client, request, params);
-  // Not awaited: it stands until it is dismissed.
-  void window.showInformationMessage(sentence);
+  // Not awaited: it stands until it is dismissed. Without a button the editor would cut it short.
+  void window.showInformationMessage(sentence, copy).then((picked) => {
+    if (picked) void commands.executeCommand("plumbline.copyWithValues");
+  });
 }
+
+const copy = "Copy with Values";

@@ -54,11 +54,11 @@ describe("a line that is read", () => {
 
   it("is one sentence with every value and finding, without a mark that stands for a word", () => {
     expect(read(turn, 4)).toBe(
-      "Line 5, departure, Noise turn; phase margin 1.34, ratio 1.48, stall 142 kt, warning 147 kt.",
+      "Line 5, departure, Noise turn; phase: margin 1.34, ratio 1.48, stall 142 kt, warning 147 kt.",
     );
     const bank = read(turn, 6);
     expect(bank).toMatch(
-      /^Line 7, departure, Noise turn; bank warning at 61°, load 1\.23, radius \d\.\d\d nm; error: Bank 35° exceeds the 30° .*\.$/,
+      /^Line 7, departure, Noise turn; bank: warning at 61°, load 1\.23, radius \d\.\d\d nm; error: Bank 35° exceeds the 30° .*\.$/,
     );
     expect(bank).not.toMatch(/≈|…|;;|\.\.|\|/);
   });
@@ -82,7 +82,7 @@ describe("a line that is read", () => {
   it("says why figures wait", () => {
     const broken = turn.replace("56.4 t +- 0.4 t", "56.4");
     expect(read(broken, 4)).toBe(
-      "Line 5, departure, Noise turn; phase no figures: line 3 has to be mended first (missing-unit).",
+      "Line 5, departure, Noise turn; phase: no figures: line 3 has to be mended first (missing-unit).",
     );
   });
 });

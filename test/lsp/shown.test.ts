@@ -67,7 +67,7 @@ describe("what is ready to be shown", () => {
     client.open(briefing, text, "markdown");
     const line = text.split("\n").findIndex((one) => one.includes("After de-icing"));
     expect(await client.request("plumbline/readLine", { textDocument, line })).toMatch(
-      /^Line \d+, takeoff, After de-icing; phase margin \d\.\d\d, .* warning \d+ kt\.$/,
+      /^Line \d+, takeoff, After de-icing; phase: margin \d\.\d\d, .* warning \d+ kt\.$/,
     );
     const copied = await client.request("plumbline/copyWithValues", {
       textDocument,

@@ -45,7 +45,7 @@ function spoken(result: BlockResult, hint: Hint): string {
   const placed = block.clauses.find(
     (one) => block.start + one.line === hint.line && one.clause.span.end === hint.character,
   );
-  return `${placed?.clause.keyword ?? "value"} ${said(hint)}`;
+  return `${placed?.clause.keyword ?? "value"}: ${said(hint)}`;
 }
 
 /** Where no figure is known, why. */

@@ -4,7 +4,7 @@ import { join } from "node:path";
 import * as vscode from "vscode";
 import { page } from "./page.ts";
 import { inEveryTheme, picture } from "./picture.ts";
-import { edited, eventually, lineOf, openNote, pause, startOf, type Test } from "./workbench.ts";
+import { edited, eventually, lineOf, openNote, startOf, type Test } from "./workbench.ts";
 
 const NOTE = "contingency-briefing.md";
 
@@ -28,6 +28,7 @@ export const previewTests: readonly Test[] = [
   [
     "the preview is legible in every theme, and nothing in it keeps a reader out",
     async () => {
+      await vscode.commands.executeCommand("workbench.action.closePanel");
       await inEveryTheme(async (name) => {
         await page.reveal(".plumbline table");
         await picture(`preview-${name}`);
@@ -56,6 +57,8 @@ export const previewTests: readonly Test[] = [
         });
       });
       await eventually("the figures as they were", async () => assert.deepEqual(await tables(2), before));
+      // Not over the preview, which would be taken down.
+      await vscode.commands.executeCommand("workbench.action.focusFirstEditorGroup");
       const card = await openNote("aeroplanes.plumb");
       await edited(card.document, async () => {
         const at = startOf(card.document, "stall 117 kt").translate(0, 6);
@@ -89,13 +92,34 @@ export const previewTests: readonly Test[] = [
   [
     "the walkthrough opens, and keeps no reader out",
     async () => {
-      await vscode.commands.executeCommand("workbench.action.openWalkthrough", "plumbline.plumbline#start");
+      const category = "plumbline.plumbline#start";
+      await vscode.commands.executeCommand("workbench.action.openWalkthrough", category);
       await eventually("its steps", async () => {
         const shown = (await page.texts(".gettingStartedContainer .step-title")).join(" / ");
         assert.match(shown, /Open a sample note/);
         assert.match(shown, /Write a note of your own/);
       });
-      await pause(1500);
+      await vscode.commands.executeCommand("workbench.action.closePanel");
+      for (const [step, words] of [
+        ["sample", /A note is prose with bar lines in it/],
+        ["figures", /a number or nothing/],
+        ["finding", /needs no network/],
+        ["hints", /Nothing is said by a hint alone/],
+        ["own", /Cards and limits are found by their names/],
+        ["demo", /A qualified person checks every figure/],
+      ] as const) {
+        await vscode.commands.executeCommand("workbench.action.openWalkthrough", {
+          category,
+          step,
+        });
+        await eventually(step, async () =>
+          assert.match((await page.framed("vertically-centered")).join(""), words),
+        );
+        assert.deepEqual(
+          (await page.faults("vertically-centered")).filter(({ impact }) => impact !== "minor"),
+          [],
+        );
+      }
       await inEveryTheme((name) => picture(`walkthrough-${name}`));
       await vscode.commands.executeCommand("workbench.action.closeAllEditors");
     },
