@@ -3,6 +3,11 @@ import { createServer } from "node:http";
 import { join } from "node:path";
 import axe from "axe-core";
 
+/** Matches this text and no longer one. */
+function whole(text) {
+  return new RegExp(`^\\s*${text.replace(/[.*+?^${}()|[\]\\]/g, "\\$&")}\\s*$`);
+}
+
 /** The frame in which a selector finds something, and what it finds first. */
 async function inFrame(page, selector) {
   for (const frame of page.frames()) {
@@ -35,8 +40,16 @@ export function servePage(page, pictures) {
     },
     /** Rests the pointer on the first thing a selector finds whose whole text this is. */
     async hover({ selector, text }) {
-      const whole = new RegExp(`^\\s*${text.replace(/[.*+?^${}()|[\]\\]/g, "\\$&")}\\s*$`);
-      await page.locator(selector, { hasText: whole }).first().hover({ timeout: 15_000 });
+      await page
+        .locator(selector, { hasText: whole(text) })
+        .first()
+        .hover({ timeout: 15_000 });
+    },
+    async click({ selector, text }) {
+      await page
+        .locator(selector, { hasText: whole(text) })
+        .first()
+        .click({ timeout: 15_000 });
     },
     /** Pulls something that can be dragged, as the edge of a box, upwards. */
     async pullUp({ selector, pixels }) {

@@ -27,6 +27,7 @@ export const page = {
   texts: (selector: string) => ask<string[]>("texts", { selector }),
   appears: (selector: string) => ask<null>("appears", { selector }),
   hover: (selector: string, text: string) => ask<null>("hover", { selector, text }),
+  click: (selector: string, text: string) => ask<null>("click", { selector, text }),
   pullUp: (selector: string, pixels: number) => ask<null>("pullUp", { selector, pixels }),
   scroll: (selector: string, notches: number) => ask<null>("scroll", { selector, notches }),
   framed: (selector: string) => ask<string[]>("framed", { selector }),
