@@ -12,6 +12,7 @@ export async function askServer(
   } catch {
     throw new Error("The server does not answer. The command Plumbline: Restart the Server starts it anew.");
   }
-  if (answer === null) throw new Error("Plumbline reads notes on the disk and new ones only; save this one.");
+  if (answer === null)
+    throw new Error("Plumbline reads no notes from this place. Save the note in a folder that is open.");
   return answer;
 }

@@ -90,7 +90,7 @@ export function noteFigures(client: BaseLanguageClient): {
 
   /** Before a preview draws it, so that the first drawing has its figures already. */
   function askAhead({ languageId, uri }: TextDocument): void {
-    if (languageId === "markdown" && ["file", "untitled"].includes(uri.scheme)) void ask(uri.toString());
+    if (languageId === "markdown") void ask(uri.toString());
   }
 
   /** Nothing known holds any longer. */
@@ -140,7 +140,7 @@ function asParsed(text: string): string {
 const closed: Figures = { kind: "none", why: "No figures: the note is not open in this window." };
 const unread: Figures = {
   kind: "none",
-  why: "No figures: Plumbline reads notes on the disk and new ones only.",
+  why: "No figures: Plumbline reads no notes from this place. Save the note in a folder that is open.",
 };
 const silent: Figures = {
   kind: "none",
