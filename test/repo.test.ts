@@ -1,6 +1,7 @@
 import { existsSync, readdirSync, readFileSync } from "node:fs";
 import { posix } from "node:path";
 import { describe, expect, it } from "vitest";
+import { hintKinds } from "../server/src/features/hintKinds.ts";
 
 const root = new URL("../", import.meta.url);
 const read = (path: string) => readFileSync(new URL(path, root), "utf8");
@@ -18,9 +19,27 @@ interface Manifest {
   readonly contributes: {
     readonly languages: readonly { readonly configuration: string }[];
     readonly grammars: readonly { readonly path: string; readonly scopeName: string }[];
-    readonly commands: readonly { readonly command: string }[];
-    readonly configuration: { readonly properties: Readonly<Record<string, unknown>> };
+    readonly commands: readonly {
+      readonly command: string;
+      readonly title: string;
+      readonly category?: string;
+    }[];
+    readonly configuration: { readonly properties: Readonly<Record<string, Setting>> };
+    readonly keybindings: readonly { readonly command: string }[];
+    readonly walkthroughs: readonly {
+      readonly steps: readonly {
+        readonly description: string;
+        readonly completionEvents: readonly string[];
+      }[];
+    }[];
   };
+}
+
+interface Setting {
+  readonly description?: string;
+  readonly markdownDescription?: string;
+  readonly items?: { readonly enum: readonly string[]; readonly enumDescriptions: readonly string[] };
+  readonly default?: unknown;
 }
 
 describe("the manifest", () => {
@@ -36,8 +55,38 @@ describe("the manifest", () => {
 
   it("names files that are there", () => {
     const named = [...languages.map((one) => one.configuration), ...grammars.map((one) => one.path)];
-    expect(named.filter((path) => !exists(path))).toEqual([]);
+    const others = read("package.json").match(/(?:client\/media|syntaxes)\/[^"*]+\.\w+/g) ?? [];
+    expect(others).toContain("client/media/preview.css");
+    expect([...named, ...others].filter((path) => !exists(path))).toEqual([]);
     for (const { path, scopeName } of grammars) expect(JSON.parse(read(path))).toMatchObject({ scopeName });
+  });
+
+  it("puts every command under one head, and names none that is not there", () => {
+    const { keybindings, walkthroughs } = manifest.contributes;
+    expect(commands.filter(({ category }) => category !== "Plumbline")).toEqual([]);
+    const ids = commands.map(({ command }) => command);
+    const steps = walkthroughs.flatMap((one) => one.steps);
+    expect(steps.length).toBeLessThanOrEqual(6);
+    const named = [
+      ...keybindings.map(({ command }) => command),
+      ...[...JSON.stringify(steps).matchAll(/[cC]ommand:(plumbline\.\w+)/g)].map(([, id]) => id),
+    ];
+    expect(named.length).toBeGreaterThan(steps.length);
+    expect(named.filter((id) => !ids.includes(id ?? ""))).toEqual([]);
+    for (const { completionEvents } of steps) expect(completionEvents).toHaveLength(1);
+  });
+
+  it("describes every setting, and the kinds of hints as the server knows them", () => {
+    const { properties } = configuration;
+    for (const [name, { description, markdownDescription }] of Object.entries(properties))
+      expect(description ?? markdownDescription, name).toMatch(/^[A-Z].*\.$/);
+    const kinds = properties["plumbline.hints.kinds"];
+    expect(
+      Object.fromEntries(
+        (kinds?.items?.enum ?? []).map((kind, i) => [kind, kinds?.items?.enumDescriptions[i]]),
+      ),
+    ).toEqual(hintKinds);
+    expect(kinds?.default).toEqual(Object.keys(hintKinds));
   });
 
   it("starts what the build writes", () => {

@@ -1,7 +1,10 @@
 import { type ExtensionContext, workspace } from "vscode";
-import type { BaseLanguageClient, LanguageClientOptions } from "vscode-languageclient";
+import type { BaseLanguageClient, LanguageClientOptions, StaticFeature } from "vscode-languageclient";
 import { registerCommands } from "./commands.ts";
 import { offerComparisons } from "./comparisons.ts";
+import { hintsOfNotes } from "./hintsOfNotes.ts";
+import { extendMarkdownIt, type PreviewParser } from "./markdownPreview.ts";
+import { noteFigures } from "./noteFigures.ts";
 import { servedRequests, serveFiles } from "./serveFiles.ts";
 import { showStatus } from "./status.ts";
 
@@ -20,16 +23,30 @@ export const clientOptions: LanguageClientOptions = {
   initializationOptions: { answers: servedRequests },
 };
 
+/** What the editor's Markdown preview takes from the extension. */
+export interface Contributed {
+  extendMarkdownIt<P extends PreviewParser>(parser: P): P;
+}
+
 /** Registers the commands first, so that they answer even where the server does not start. */
-export async function start(context: ExtensionContext, client: BaseLanguageClient): Promise<void> {
-  registerCommands({ extension: context, client, comparisons: offerComparisons(context) });
+export async function start(context: ExtensionContext, client: BaseLanguageClient): Promise<Contributed> {
+  registerCommands({
+    extension: context,
+    client,
+    comparisons: offerComparisons(context),
+    hintsOfNotes: hintsOfNotes(context, client),
+  });
   serveFiles(client);
   showStatus(context, client);
+  client.registerFeature(hearsFigures);
+  const figures = noteFigures(client);
+  context.subscriptions.push(figures);
   try {
     await client.start();
   } catch {
     // The client has shown and logged the reason; thrown on, it would take the commands away too.
   }
+  return { extendMarkdownIt: (parser) => extendMarkdownIt(parser, figures.figuresOf) };
 }
 
 /**
@@ -40,3 +57,14 @@ function schemes(): readonly string[] {
   const folders = workspace.workspaceFolders?.map(({ uri }) => uri.scheme) ?? [];
   return [...new Set(["file", "untitled", "vscode-remote", "vscode-vfs", ...folders])];
 }
+
+/** Tells the server that somebody here draws figures. */
+const hearsFigures: StaticFeature = {
+  fillClientCapabilities(capabilities) {
+    const { plumbline, ...others } = capabilities.experimental ?? {};
+    capabilities.experimental = { ...others, plumbline: { ...plumbline, figuresChanged: true } };
+  },
+  initialize() {},
+  getState: () => ({ kind: "static" }),
+  clear() {},
+};

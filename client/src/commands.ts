@@ -1,8 +1,13 @@
 import { type ExtensionContext, commands as editorCommands, window } from "vscode";
 import type { BaseLanguageClient } from "vscode-languageclient";
+import { chooseHints } from "./chooseHints.ts";
 import { compareWithCommitted } from "./compareWithCommitted.ts";
 import type { Comparisons } from "./comparisons.ts";
+import { copyWithValues } from "./copyWithValues.ts";
+import type { HintsOfNotes } from "./hintsOfNotes.ts";
+import { newNote, openSample } from "./newNote.ts";
 import { openDemo } from "./openDemo.ts";
+import { readLine } from "./readLine.ts";
 import { toggleHints } from "./toggleHints.ts";
 
 /** What a command works with. */
@@ -10,6 +15,7 @@ export interface CommandContext {
   readonly extension: ExtensionContext;
   readonly client: BaseLanguageClient;
   readonly comparisons: Comparisons;
+  readonly hintsOfNotes: HintsOfNotes;
 }
 
 type Command = (context: CommandContext, ...args: unknown[]) => Promise<void>;
@@ -17,7 +23,13 @@ type Command = (context: CommandContext, ...args: unknown[]) => Promise<void>;
 /** Every command of the manifest and what it does. One that fails throws an error whose message is a full sentence. */
 const commands: Readonly<Record<string, Command>> = {
   "plumbline.toggleHints": toggleHints,
+  "plumbline.chooseHints": chooseHints,
+  "plumbline.toggleHintsOfNote": ({ hintsOfNotes }) => hintsOfNotes.toggle(),
+  "plumbline.readLine": readLine,
+  "plumbline.copyWithValues": copyWithValues,
   "plumbline.restartServer": restartServer,
+  "plumbline.newNote": newNote,
+  "plumbline.openSample": openSample,
   "plumbline.openDemo": openDemo,
   "plumbline.compareWithCommitted": compareWithCommitted,
 };

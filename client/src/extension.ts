@@ -1,11 +1,11 @@
 import type { ExtensionContext } from "vscode";
 import { LanguageClient, TransportKind } from "vscode-languageclient/node";
-import { clientOptions, start } from "./activate.ts";
+import { type Contributed, clientOptions, start } from "./activate.ts";
 
 let client: LanguageClient | undefined;
 
 /** The desktop's entry: the server is a process of its own, spoken to over IPC. */
-export async function activate(context: ExtensionContext): Promise<void> {
+export async function activate(context: ExtensionContext): Promise<Contributed> {
   const server = {
     module: context.asAbsolutePath("dist/server/main.node.cjs"),
     transport: TransportKind.ipc,
@@ -17,7 +17,7 @@ export async function activate(context: ExtensionContext): Promise<void> {
     { run: server, debug: { ...server, options: { execArgv: ["--nolazy", "--inspect=6009"] } } },
     clientOptions,
   );
-  await start(context, client);
+  return start(context, client);
 }
 
 export async function deactivate(): Promise<void> {

@@ -1,6 +1,6 @@
 import { type ExtensionContext, Uri, workspace } from "vscode";
 import { BrowserMessageReader, BrowserMessageWriter, LanguageClient } from "vscode-languageclient/browser";
-import { clientOptions, start } from "./activate.ts";
+import { type Contributed, clientOptions, start } from "./activate.ts";
 
 let client: LanguageClient | undefined;
 let worker: Worker | undefined;
@@ -8,7 +8,7 @@ let worker: Worker | undefined;
 let script: string | undefined;
 
 /** The browser's entry: the server is a worker, and sees the files that the client serves. */
-export async function activate(context: ExtensionContext): Promise<void> {
+export async function activate(context: ExtensionContext): Promise<Contributed> {
   const server = Uri.joinPath(context.extensionUri, "dist/server/main.web.js");
   const pages = Uri.joinPath(context.extensionUri, "dist/pages").toString();
   client = new LanguageClient(
@@ -24,7 +24,7 @@ export async function activate(context: ExtensionContext): Promise<void> {
     },
     { ...clientOptions, initializationOptions: { ...clientOptions.initializationOptions, pages } },
   );
-  await start(context, client);
+  return start(context, client);
 }
 
 export async function deactivate(): Promise<void> {

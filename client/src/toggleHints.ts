@@ -1,23 +1,16 @@
-import { ConfigurationTarget, window, workspace } from "vscode";
+import { window, workspace } from "vscode";
 import type { CommandContext } from "./commands.ts";
+import { updateWhereStated } from "./updateWhereStated.ts";
 
+const LEVEL = "hints.level";
 const LAST_LEVEL = "hints.lastLevel";
 
-/**
- * Turns the hints off, or on again at the level they last had in this workspace. The setting is
- * changed where it stands: in the workspace if it is stated there, else for the user.
- */
+/** Turns the hints off, or on again at the level they last had in this workspace. */
 export async function toggleHints({ extension }: CommandContext): Promise<void> {
-  const settings = workspace.getConfiguration("plumbline");
-  const level = settings.get<string>("hints.level", "full");
+  const level = workspace.getConfiguration("plumbline").get<string>(LEVEL, "full");
   const next = level === "off" ? extension.workspaceState.get<string>(LAST_LEVEL, "full") : "off";
   if (level !== "off") await extension.workspaceState.update(LAST_LEVEL, level);
-  const inWorkspace = settings.inspect("hints.level")?.workspaceValue !== undefined;
-  await settings.update(
-    "hints.level",
-    next,
-    inWorkspace ? ConfigurationTarget.Workspace : ConfigurationTarget.Global,
-  );
+  await updateWhereStated(LEVEL, next);
   window.setStatusBarMessage(
     next === "off" ? "Plumbline: hints are off." : `Plumbline: hints are on (${next}).`,
     4000,

@@ -1,6 +1,22 @@
 // What the suite, which runs in the extension host, asks of the page: a small server on this machine only.
 import { createServer } from "node:http";
 import { join } from "node:path";
+import axe from "axe-core";
+
+/** Matches this text and no longer one. */
+function whole(text) {
+  return new RegExp(`^\\s*${text.replace(/[.*+?^${}()|[\]\\]/g, "\\$&")}\\s*$`);
+}
+
+/** The frame in which a selector finds something, and what it finds first. */
+async function inFrame(page, selector) {
+  for (const frame of page.frames()) {
+    // A frame may go away while it is asked.
+    const found = await frame.$(selector).catch(() => null);
+    if (found) return { frame, found };
+  }
+  throw new Error(`No frame holds ${selector}.`);
+}
 
 /** Answers the suite's requests with the page's own doing. Gives the port. */
 export function servePage(page, pictures) {
@@ -29,8 +45,16 @@ export function servePage(page, pictures) {
     },
     /** Rests the pointer on the first thing a selector finds whose whole text this is. */
     async hover({ selector, text }) {
-      const whole = new RegExp(`^\\s*${text.replace(/[.*+?^${}()|[\]\\]/g, "\\$&")}\\s*$`);
-      await page.locator(selector, { hasText: whole }).first().hover({ timeout: 15_000 });
+      await page
+        .locator(selector, { hasText: whole(text) })
+        .first()
+        .hover({ timeout: 15_000 });
+    },
+    async click({ selector, text }) {
+      await page
+        .locator(selector, { hasText: whole(text) })
+        .first()
+        .click({ timeout: 15_000 });
     },
     /** Pulls something that can be dragged, as the edge of a box, upwards. */
     async pullUp({ selector, pixels }) {
@@ -55,6 +79,30 @@ export function servePage(page, pictures) {
       await other.close();
       await page.bringToFront();
       return address;
+    },
+    /** The markup of what a selector finds in a frame of the page, as the Markdown preview is one. */
+    async framed({ selector }) {
+      return (await inFrame(page, selector)).frame.$$eval(selector, (found) =>
+        found.map((one) => one.outerHTML),
+      );
+    },
+    /** Brings something in a frame into view. */
+    async reveal({ selector }) {
+      const { found } = await inFrame(page, selector);
+      await found.scrollIntoViewIfNeeded();
+    },
+    /** What axe-core says is wrong with all that a selector finds, in the page or in a frame of it. */
+    async faults({ selector }) {
+      const { frame } = await inFrame(page, selector);
+      await frame.evaluate(axe.source);
+      return frame.evaluate(async (checked) => {
+        const { violations } = await globalThis.axe.run({ include: [checked] });
+        return violations.map(({ id, impact, nodes }) => ({
+          id,
+          impact,
+          where: nodes.map(({ html, failureSummary }) => `${html.slice(0, 200)}: ${failureSummary}`),
+        }));
+      }, selector);
     },
     async away() {
       await page.mouse.move(5, 5);

@@ -1,4 +1,5 @@
 import { inlayHints } from "../features/inlayHints.ts";
+import { withHints } from "../features/valuedLines.ts";
 import { caution } from "../plan/caution.ts";
 import { findingsJson } from "../report/findingsJson.ts";
 import { findingsText, summaryText } from "../report/findingsText.ts";
@@ -17,12 +18,8 @@ export async function tour(folder: string, options: Common): Promise<number> {
     text += `\n${path}\n${"-".repeat(path.length)}\n`;
     const hints = inlayHints(note, 0, document.lineCount - 1, "full");
     for (let line = 0; line < document.lineCount; line++) {
-      let shown = document.lineText(line);
-      // From the right, so that the columns of those on the left stay.
-      for (const hint of hints.filter((one) => one.line === line).reverse()) {
-        const label = dim(` ${hint.parts.map((part) => part.text).join("")}`);
-        shown = shown.slice(0, hint.character) + label + shown.slice(hint.character);
-      }
+      const own = hints.filter((one) => one.line === line);
+      const shown = withHints(document.lineText(line), own, dim);
       text += `${String(line + 1).padStart(4)}  ${shown}\n`;
     }
   }

@@ -11,6 +11,7 @@ import { resultEntry } from "../plan/results.ts";
 import { type FurtherRow, gustRows, powerRows, shearRows, timingRows } from "../report/furtherRows.ts";
 import { solvedText, sweepText } from "../report/openText.ts";
 import { blocksBetween } from "./blocksBetween.ts";
+import { allHintKinds, type HintKind, hintKindOf } from "./hintKinds.ts";
 
 export type HintLevel = "full" | "brief" | "off";
 
@@ -27,6 +28,7 @@ export interface HintPart {
 export interface Hint {
   readonly line: number;
   readonly character: number;
+  readonly kind: HintKind;
   readonly parts: readonly HintPart[];
 }
 
@@ -34,17 +36,28 @@ export interface Hint {
 const MARKDOWN_LENGTH = 43;
 
 /** The hints of the lines asked for, at most one a clause. In Markdown one a line, the point's own. */
-export function inlayHints(note: Note, from: number, to: number, level: HintLevel): readonly Hint[] {
+export function inlayHints(
+  note: Note,
+  from: number,
+  to: number,
+  level: HintLevel,
+  kinds: readonly HintKind[] = allHintKinds,
+): readonly Hint[] {
   if (level === "off") return [];
   const hints: Hint[] = [];
   for (const result of blocksBetween(note, from, to)) {
     for (const hint of blockHints(note, result, level))
-      if (from <= hint.line && hint.line <= to) hints.push(hint);
+      if (from <= hint.line && hint.line <= to && kinds.includes(hint.kind)) hints.push(hint);
   }
   return hints;
 }
 
-function blockHints(note: Note, result: BlockResult, level: Exclude<HintLevel, "off">): readonly Hint[] {
+/** The hints of one block. What is drawn nowhere has room for all of them, whatever the note is. */
+export function blockHints(
+  note: Pick<Note, "flavour">,
+  result: BlockResult,
+  level: Exclude<HintLevel, "off">,
+): readonly Hint[] {
   switch (result.kind) {
     case "point":
       return note.flavour === "markdown"
@@ -74,7 +87,12 @@ function hintAt(
     { ...first, text: `≈ ${first.text}` },
     ...rest.map((part) => ({ ...part, text: `, ${part.text}` })),
   ];
-  return { line: point.block.start + placed.line, character: placed.clause.span.end, parts: joined };
+  return {
+    line: point.block.start + placed.line,
+    character: placed.clause.span.end,
+    kind: hintKindOf(placed.clause.keyword),
+    parts: joined,
+  };
 }
 
 /** A figure of the point as a part of a hint; nothing where it is not known. */

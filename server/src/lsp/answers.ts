@@ -116,9 +116,9 @@ export function answerRequests(
     answering("inlay hint", async ({ textDocument: { uri }, range }, token) => {
       await settled(uri, token);
       const note = await noteOf(uri, token);
-      const { hints } = await settings();
+      const { hints, kinds } = await settings();
       if (!note) return [];
-      return inlayHints(note, range.start.line, range.end.line, hints).map((hint) =>
+      return inlayHints(note, range.start.line, range.end.line, hints, kinds).map((hint) =>
         client().resolvesHints ? plainHint(hint, uri) : wholeHint(hint, pageUri),
       );
     }),
@@ -127,9 +127,10 @@ export function answerRequests(
   connection.languages.inlayHint.resolve(
     answering("resolve a hint", async (shown: InlayHint, token) => {
       const note = await noteOf((shown.data as HintData | undefined)?.uri ?? "", token);
-      const { hints } = await settings();
+      const { hints, kinds } = await settings();
       const { line, character } = shown.position;
-      const hint = note && inlayHints(note, line, line, hints).find((one) => one.character === character);
+      const hint =
+        note && inlayHints(note, line, line, hints, kinds).find((one) => one.character === character);
       return hint && saysTheSame(shown, hint) ? { ...shown, ...wholeHint(hint, pageUri) } : shown;
     }),
   );

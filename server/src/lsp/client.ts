@@ -16,6 +16,8 @@ export interface Client {
   readonly snippets: boolean;
   /** It asks for tooltips and places of a hint when it shows them; else they are sent with the hint. */
   readonly resolvesHints: boolean;
+  /** It draws figures of its own accord, and wants to hear when they may be others now. */
+  readonly hearsFigures: boolean;
   /** It shows an outline as a tree; else it gets a list. */
   readonly nestsSymbols: boolean;
   /** It asks, before it asks for a new name, whether there can be one. */
@@ -58,6 +60,7 @@ export function clientOf({
     changesFolders: workspace?.workspaceFolders === true,
     snippets: textDocument?.completion?.completionItem?.snippetSupport === true,
     resolvesHints: ["label.tooltip", "label.location"].every((one) => lazily.includes(one)),
+    hearsFigures: capabilities.experimental?.plumbline?.figuresChanged === true,
     nestsSymbols: textDocument?.documentSymbol?.hierarchicalDocumentSymbolSupport === true,
     preparesRename: textDocument?.rename?.prepareSupport === true,
     tellsFileOperations: workspace?.fileOperations?.didRename === true,

@@ -13,12 +13,13 @@ import { guardWith } from "./guard.ts";
 import { answerNameRequests } from "./nameAnswers.ts";
 import { noteFiles } from "./noteFiles.ts";
 import { patience } from "./patience.ts";
-import { statusRequest } from "./protocol.ts";
+import { figuresChangedNotification, statusRequest } from "./protocol.ts";
 import { readingProgress } from "./readingProgress.ts";
 import { registerWhatIsOffered } from "./registration.ts";
 import type { Runtime } from "./runtime.ts";
 import { servedFiles } from "./servedFiles.ts";
 import { readSettings, type Settings, standardSettings } from "./settings.ts";
+import { answerShownRequests } from "./shownRequests.ts";
 import { StatusTeller } from "./statusTeller.ts";
 import { type FileChange, flavourOf, Workspace } from "./workspace.ts";
 import { answerWritingRequests } from "./writingAnswers.ts";
@@ -144,6 +145,9 @@ export function startServer(connection: Connection, runtime: Runtime): void {
     if (client.refreshesHints) {
       void guard.asking("refresh of hints", () => connection.languages.inlayHint.refresh());
     }
+    if (client.hearsFigures) {
+      void guard.asking("change of figures", () => connection.sendNotification(figuresChangedNotification));
+    }
   }
 
   connection.onDidChangeConfiguration(
@@ -249,5 +253,6 @@ export function startServer(connection: Connection, runtime: Runtime): void {
   answerRequests(connection, guard, answering);
   answerNameRequests(connection, guard, answering);
   answerWritingRequests(connection, guard, answering);
+  answerShownRequests(connection, guard, { workspace, ready: () => ready });
   connection.listen();
 }

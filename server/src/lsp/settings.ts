@@ -1,3 +1,4 @@
+import { allHintKinds, type HintKind } from "../features/hintKinds.ts";
 import type { HintLevel } from "../features/inlayHints.ts";
 import { severitiesOf } from "../plan/configuration.ts";
 import type { Severities } from "../plan/severities.ts";
@@ -5,6 +6,7 @@ import type { Severities } from "../plan/severities.ts";
 /** The user's settings, of the section `plumbline`. */
 export interface Settings {
   readonly hints: HintLevel;
+  readonly kinds: readonly HintKind[];
   readonly severity: Severities;
   readonly diagnostics: {
     /** A new finding is shown so many milliseconds after the last edit. */
@@ -16,6 +18,7 @@ export interface Settings {
 
 export const standardSettings: Settings = {
   hints: "full",
+  kinds: allHintKinds,
   severity: {},
   diagnostics: { delay: 0, run: "onType" },
 };
@@ -24,7 +27,7 @@ export const standardSettings: Settings = {
 const LONGEST_DELAY = 10_000;
 
 interface Raw {
-  readonly hints?: { readonly level?: unknown };
+  readonly hints?: { readonly level?: unknown; readonly kinds?: unknown };
   readonly severity?: unknown;
   readonly diagnostics?: { readonly delay?: unknown; readonly run?: unknown };
 }
@@ -33,9 +36,14 @@ interface Raw {
 export function readSettings(raw: unknown): Settings {
   const { hints, severity, diagnostics } = (raw ?? {}) as Raw;
   const level = hints?.level;
+  const kinds = hints?.kinds;
   const delay = diagnostics?.delay;
   return {
     hints: level === "brief" || level === "off" || level === "full" ? level : standardSettings.hints,
+    // A name that is none is left out, so that one slip does not bring back what was turned off.
+    kinds: Array.isArray(kinds)
+      ? allHintKinds.filter((kind) => kinds.includes(kind))
+      : standardSettings.kinds,
     severity: severitiesOf(severity),
     diagnostics: {
       delay:

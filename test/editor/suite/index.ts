@@ -2,6 +2,7 @@ import { commandTests } from "./commandTests.ts";
 import { noteTests } from "./noteTests.ts";
 import { hasPage } from "./page.ts";
 import { pageTests } from "./pageTests.ts";
+import { previewTests } from "./previewTests.ts";
 import { reviewTests } from "./reviewTests.ts";
 import { runTests } from "./runTests.ts";
 import { writingPageTests, writingTests } from "./writingTests.ts";
@@ -12,7 +13,7 @@ export function run(): Promise<void> {
   return runTests([
     ...noteTests,
     ...writingTests,
-    ...(hasPage ? [...writingPageTests, ...pageTests] : []),
+    ...(hasPage ? [...writingPageTests, ...pageTests, ...previewTests] : []),
     ...reviewTests,
     ...commandTests,
   ]);

@@ -13,6 +13,13 @@ async function ask<T>(action: string, args: Record<string, unknown> = {}): Promi
   return answer as T;
 }
 
+/** Something that keeps a reader out. */
+export interface Fault {
+  readonly id: string;
+  readonly impact: "minor" | "moderate" | "serious" | "critical" | null;
+  readonly where: readonly string[];
+}
+
 export const page = {
   screenshot: (name: string) => ask<null>("screenshot", { name }),
   press: (keys: string) => ask<null>("press", { keys }),
@@ -21,8 +28,12 @@ export const page = {
   frames: () => ask<string[]>("frames"),
   appears: (selector: string) => ask<null>("appears", { selector }),
   hover: (selector: string, text: string) => ask<null>("hover", { selector, text }),
+  click: (selector: string, text: string) => ask<null>("click", { selector, text }),
   pullUp: (selector: string, pixels: number) => ask<null>("pullUp", { selector, pixels }),
   scroll: (selector: string, notches: number) => ask<null>("scroll", { selector, notches }),
+  framed: (selector: string) => ask<string[]>("framed", { selector }),
+  reveal: (selector: string) => ask<null>("reveal", { selector }),
+  faults: (selector: string) => ask<Fault[]>("faults", { selector }),
   opened: () => ask<string>("opened"),
   away: () => ask<null>("away"),
 };

@@ -4,7 +4,7 @@ import { tmpdir } from "node:os";
 import { join } from "node:path";
 import * as vscode from "vscode";
 import { page } from "./page.ts";
-import { picture, theme } from "./pictures.ts";
+import { inEveryTheme, picture } from "./picture.ts";
 import { edited, eventually, hints, openNote, pause, startOf, type Test } from "./workbench.ts";
 
 /** What stands on the page that the workbench is drawn on; pictures of it are saved on the way. */
@@ -39,15 +39,7 @@ export const pageTests: readonly Test[] = [
       await vscode.commands.executeCommand("workbench.actions.view.problems");
       await vscode.commands.executeCommand("workbench.action.focusActiveEditorGroup");
       editor.revealRange(new vscode.Range(4, 0, 4, 0), vscode.TextEditorRevealType.AtTop);
-      for (const [name, kind, file] of [
-        ["Default Light Modern", vscode.ColorThemeKind.Light, "screenshot-light"],
-        ["Default Dark Modern", vscode.ColorThemeKind.Dark, "screenshot-dark"],
-        ["Default High Contrast", vscode.ColorThemeKind.HighContrast, "screenshot-contrast"],
-        ["Default Light Modern", vscode.ColorThemeKind.Light, undefined],
-      ] as const) {
-        await theme(name, kind);
-        if (file) await picture(file);
-      }
+      await inEveryTheme((name) => picture(`screenshot-${name}`));
     },
   ],
   [
@@ -112,6 +104,67 @@ export const pageTests: readonly Test[] = [
         assert.match(rows, /Bank 32° exceeds the 30° that shuttle-rules allows in departure/);
       });
       await picture("problems");
+    },
+  ],
+  [
+    "the values of a line are read by the keyboard alone",
+    async () => {
+      const { document, editor } = await openNote("winter-shuttle.plumb");
+      const line = startOf(document, "bank 32").line;
+      editor.selection = new vscode.Selection(line, 3, line, 3);
+      await vscode.commands.executeCommand("workbench.action.focusActiveEditorGroup");
+      await page.press("Control+k");
+      await page.press("Control+v");
+      await eventually("the sentence", async () => {
+        const shown = (await page.texts(".notification-toast .notification-list-item-message")).join("\n");
+        assert.match(
+          shown,
+          /^Line \d+, departure, Noise turn; bank: warning at \d+°, .*error: Bank 32° exceeds/,
+        );
+      });
+      await pause(500);
+      await page.screenshot("read-line");
+      assert.equal(document.isDirty, false);
+      await vscode.commands.executeCommand("notifications.clearAll");
+    },
+  ],
+  [
+    "the form of a copy is picked from a list",
+    async () => {
+      const { document, editor } = await openNote("winter-shuttle.plumb");
+      const at = startOf(document, "bank 32");
+      editor.selection = new vscode.Selection(at, at);
+      void vscode.commands.executeCommand("plumbline.copyWithValues");
+      await eventually("the forms", async () => {
+        const rows = await page.texts(".quick-input-list .monaco-list-row");
+        assert.equal(rows.length, 3, rows.join(" / "));
+      });
+      await page.screenshot("copy");
+      await page.type("markdown");
+      await page.press("Enter");
+      await eventually("the copy", async () =>
+        assert.match(await vscode.env.clipboard.readText(), /^\| Line \| Note \| Values \|/),
+      );
+    },
+  ],
+  [
+    "the kinds of hints are ticked in a list",
+    async () => {
+      await openNote("winter-shuttle.plumb");
+      const kinds = () => vscode.workspace.getConfiguration("plumbline").get<string[]>("hints.kinds", []);
+      const all = kinds();
+      void vscode.commands.executeCommand("plumbline.chooseHints");
+      await eventually("the kinds", async () => {
+        const rows = await page.texts(".quick-input-list .monaco-list-row");
+        assert.equal(rows.length, all.length, rows.join(" / "));
+      });
+      await page.screenshot("choose-hints");
+      // The first in the list, which the keyboard stands on.
+      await page.press("ArrowDown");
+      await page.press("Space");
+      await page.press("Enter");
+      await eventually("one kind less", () => assert.deepEqual(kinds(), all.slice(1)));
+      await vscode.commands.executeCommand("plumbline.chooseHints", all);
     },
   ],
   [

@@ -1,7 +1,7 @@
 import assert from "node:assert/strict";
 import * as vscode from "vscode";
 import { hasPage } from "./page.ts";
-import { picture, theme } from "./pictures.ts";
+import { inEveryTheme, picture } from "./picture.ts";
 import {
   codeOf,
   edited,
@@ -83,14 +83,7 @@ export const reviewTests: readonly Test[] = [
             const { editor } = await openNote("slow-flight-lesson.plumb");
             editor.selection = new vscode.Selection(0, 0, 0, 0);
             editor.revealRange(new vscode.Range(0, 0, 0, 0), vscode.TextEditorRevealType.AtTop);
-            for (const [name, kind, file] of [
-              ["Default Dark Modern", vscode.ColorThemeKind.Dark, "exercise-dark"],
-              ["Default High Contrast", vscode.ColorThemeKind.HighContrast, "exercise-contrast"],
-              ["Default Light Modern", vscode.ColorThemeKind.Light, "exercise"],
-            ] as const) {
-              await theme(name, kind);
-              await picture(file);
-            }
+            await inEveryTheme((name) => picture(name === "light" ? "exercise" : `exercise-${name}`));
           },
         ],
       ] as const)
