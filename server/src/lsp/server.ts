@@ -21,7 +21,7 @@ import { servedFiles } from "./servedFiles.ts";
 import { readSettings, type Settings, standardSettings } from "./settings.ts";
 import { answerShownRequests } from "./shownRequests.ts";
 import { StatusTeller } from "./statusTeller.ts";
-import { type FileChange, flavourOf, Workspace } from "./workspace.ts";
+import { type FileChange, flavourOpened, Workspace } from "./workspace.ts";
 import { answerWritingRequests } from "./writingAnswers.ts";
 
 const fileChanges: Readonly<Record<FileChangeType, FileChange["kind"]>> = {
@@ -161,12 +161,7 @@ export function startServer(connection: Connection, runtime: Runtime): void {
   connection.onDidOpenTextDocument(
     guard.hearing("open", ({ textDocument: { uri, languageId, text, version } }) => {
       const before = workspace.folderOf(uri)?.definitionsVersion;
-      workspace.open(
-        uri,
-        text,
-        languageId === "markdown" ? "markdown" : languageId === "plumb" ? "plumb" : flavourOf(uri),
-        version,
-      );
+      workspace.open(uri, text, flavourOpened(uri, languageId), version);
       afterChange(uri, before);
     }),
   );

@@ -342,6 +342,12 @@ function decodedPath(path: string): string {
   }
 }
 
+/** A note that ends so is one, whatever the editor calls its language: not every editor knows the name. */
+export function flavourOpened(uri: string, languageId: string): Flavour {
+  if (/\.plumb$/i.test(uri)) return "plumb";
+  return languageId === "markdown" || languageId === "plumb" ? languageId : flavourOf(uri);
+}
+
 export function flavourOf(uri: string): Flavour {
   return flavourOrNull(uri) ?? "plumb";
 }
