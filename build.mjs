@@ -6,6 +6,8 @@ import { mkdir, readFile, rm, writeFile } from "node:fs/promises";
 import { join, relative } from "node:path";
 import { build } from "esbuild";
 
+import { writeNotices } from "./notices.mjs";
+
 const debug = process.argv.includes("--debug");
 const { version } = JSON.parse(await readFile("package.json", "utf8"));
 // A dependency asks where it stands by `import.meta.url`, which a bundle in CommonJS does not have.
@@ -30,6 +32,7 @@ const shared = {
   alias: { "jsonc-parser": "jsonc-parser/lib/esm/main.js" },
   legalComments: "none",
   logLevel: "warning",
+  metafile: true,
 };
 
 /** A file of its own for each finding, and the built-in limits as a note: links in the editor open them. */
@@ -67,7 +70,7 @@ if (!debug) {
   const maps = bundles.map((name) => `dist/${name}.map`);
   await Promise.all(maps.map((map) => rm(map, { force: true })));
 }
-await Promise.all([
+const built = await Promise.all([
   build({
     ...shared,
     entryPoints: ["client/src/extension.ts"],
@@ -95,3 +98,4 @@ await Promise.all([
   }),
   writePages(),
 ]);
+await writeNotices(built.flatMap((one) => (one?.metafile ? [one.metafile] : [])));

@@ -14,7 +14,9 @@ const ended = Number(process.argv[2]);
 const unit = counts("out/unit.json", (one) => ({ passed: one.numPassedTests, failed: one.numFailedTests }));
 const editor = counts("out/editor/counts.json", (one) => one);
 const web = counts("out/editor/webCounts.json", (one) => one);
-const all = [unit, editor, web];
+const neovim = counts("out/editor/neovim.json", (one) => one);
+const installed = counts("out/editor/installedCounts.json", (one) => one);
+const all = [unit, editor, web, neovim, installed];
 const sum = (name) => all.reduce((total, one) => total + (one?.[name] ?? 0), 0);
 const failed = sum("failed");
 if (ended === 0 ? all.every(Boolean) : failed > 0) {

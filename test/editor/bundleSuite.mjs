@@ -13,9 +13,9 @@ const checked = () =>
     },
   );
 
-/** For Node's extension host. */
-export function bundleSuite(outfile) {
-  return build({ ...shared("test/editor/suite/index.ts", outfile), platform: "node", target: "node20" });
+/** For Node's extension host: the whole suite, or the part that an installed extension is held to. */
+export function bundleSuite(outfile, folder = "suite") {
+  return build({ ...shared(`test/editor/${folder}/index.ts`, outfile), platform: "node", target: "node20" });
 }
 
 /** For the browser's extension host, which has no Node: the few names that the tests use are put in their place. */

@@ -1,7 +1,8 @@
 // Runs the extension in the real editor: the workbench of code-server with its Node extension host, in
 // headless Chromium. Screenshots go to out/pictures; `--readme` copies those that the README shows.
 // `--web` runs it in the browser's own extension host instead: from a copy that has no other entry.
-import { spawn } from "node:child_process";
+// `--vsix` installs dist/plumbline.vsix as a user does, and runs a part of the suite against that.
+import { execFileSync, spawn } from "node:child_process";
 import { cpSync, mkdirSync, mkdtempSync, readFileSync, rmSync, writeFileSync } from "node:fs";
 import { createServer } from "node:net";
 import { tmpdir } from "node:os";
@@ -13,8 +14,10 @@ import { servePage } from "./page.mjs";
 
 const LONGEST = 8 * 60_000;
 const web = process.argv.includes("--web");
-const pictures = resolve(web ? "out/webPictures" : "out/pictures");
-const counts = resolve(web ? "out/editor/webCounts.json" : "out/editor/counts.json");
+const vsix = process.argv.includes("--vsix");
+const kind = web ? "web" : vsix ? "installed" : "";
+const pictures = resolve(kind ? `out/${kind}Pictures` : "out/pictures");
+const counts = resolve(kind ? `out/editor/${kind}Counts.json` : "out/editor/counts.json");
 const inReadme = ["screenshot-light", "screenshot-dark", "screenshot-contrast", "hover"];
 
 function freePort() {
@@ -85,6 +88,22 @@ function webExtension(root) {
   return folder;
 }
 
+/** Installs the package, and gives an extension that is nothing but the place of the suite. */
+function installedExtension(root) {
+  const folders = ["--user-data-dir", join(root, "user"), "--extensions-dir", join(root, "extensions")];
+  const options = { env: ownEnvironment(), stdio: ["ignore", "pipe", "inherit"] };
+  execFileSync(
+    process.execPath,
+    [editorEntry, ...folders, "--install-extension", resolve("dist/plumbline.vsix")],
+    options,
+  );
+  const folder = join(root, "suite");
+  mkdirSync(folder);
+  const manifest = { name: "suite", publisher: "tests", version: "0.0.0", engines: { vscode: "*" } };
+  writeFileSync(join(folder, "package.json"), JSON.stringify(manifest));
+  return folder;
+}
+
 installEditor();
 // What an earlier run left must not pass for this one's.
 for (const old of [pictures, counts]) rmSync(old, { recursive: true, force: true });
@@ -105,10 +124,14 @@ const browser = await chromium.launch({
 });
 const page = await browser.newPage({ viewport: { width: 1360, height: 860 } });
 const bridge = await servePage(page, pictures);
-const extension = web ? webExtension(root) : resolve(".");
+const extension = web ? webExtension(root) : vsix ? installedExtension(root) : resolve(".");
 // The host of an extension runs the suite that lies in its folder.
-const suite = web ? join(extension, "out/suite.js") : resolve("out/editor/suite.cjs");
-await (web ? bundleWebSuite(suite, bridge.port) : bundleSuite(suite));
+const suite = web
+  ? join(extension, "out/suite.js")
+  : vsix
+    ? join(extension, "suite.cjs")
+    : resolve("out/editor/suite.cjs");
+await (web ? bundleWebSuite(suite, bridge.port) : bundleSuite(suite, vsix ? "installed" : "suite"));
 const server = spawn(
   process.execPath,
   [
