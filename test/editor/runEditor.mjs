@@ -18,7 +18,10 @@ const vsix = process.argv.includes("--vsix");
 const kind = web ? "web" : vsix ? "installed" : "";
 const pictures = resolve(kind ? `out/${kind}Pictures` : "out/pictures");
 const counts = resolve(kind ? `out/editor/${kind}Counts.json` : "out/editor/counts.json");
-const inReadme = ["screenshot-light", "screenshot-dark", "screenshot-contrast", "hover"];
+const inReadme = [
+  ...["screenshot-light", "screenshot-dark", "screenshot-contrast", "hover"],
+  ...["exercise", "preview-light"],
+];
 
 function freePort() {
   return new Promise((done) => {

@@ -86,6 +86,19 @@ const requests: readonly Request[] = [
     told: "documentOnTypeFormattingProvider",
   },
   { method: "plumbline/points", params: { textDocument }, told: null },
+  { method: "plumbline/fences", params: { textDocument }, told: null },
+  { method: "plumbline/readLine", params: { textDocument, line: 0 }, told: null },
+  {
+    method: "plumbline/copyWithValues",
+    params: { textDocument, from: 0, to: 1, form: "text" },
+    spare: ["form"],
+    told: null,
+  },
+  {
+    method: "plumbline/compare",
+    params: { textDocument, oldText: "", oldName: "before", others: [] },
+    told: null,
+  },
   { method: "plumbline/status", params: {}, told: null },
 ];
 
@@ -136,7 +149,7 @@ const wrong: readonly unknown[] = [null, 7, "seven", true, [], [null], [7], {}, 
 function placedAt(value: unknown, line: number, character: number): unknown {
   if (Array.isArray(value)) return value.map((one) => placedAt(one, line, character));
   if (typeof value !== "object" || value === null) return value;
-  if ("line" in value) return { line, character };
+  if ("line" in value) return { ...value, line, ...("character" in value ? { character } : {}) };
   return Object.fromEntries(Object.entries(value).map(([key, one]) => [key, placedAt(one, line, character)]));
 }
 
@@ -171,6 +184,7 @@ describe.each(requests)("$method", ({ method, params, spare = [] }) => {
         const [is, was] = [one[key], params[key]];
         if (Array.isArray(was)) return Array.isArray(is) && is.length === 0;
         if (key === "context" && method === "textDocument/references") return typeof is === "object" && is;
+        if (typeof was === "number") return Number.isInteger(is);
         return typeof was === "string" ? typeof is === "string" : is === was;
       });
     for (const { one, came } of outcomes) {
