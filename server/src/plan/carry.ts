@@ -63,20 +63,10 @@ export function applyClauses(site: Site, clauses: Clauses, definitions: Definiti
   if (clauses.config) set(applying, "config", clauses.config.placed, clauses.config.body.name.text);
   applyAltitude(applying);
   applyDeviation(applying);
-  if (clauses.cg)
-    set(
-      applying,
-      "cg",
-      clauses.cg.placed,
-      spreadIn(applying, clauses.cg.placed, clauses.cg.body.value, "cg"),
-    );
-  if (clauses.power)
-    set(
-      applying,
-      "power",
-      clauses.power.placed,
-      spreadIn(applying, clauses.power.placed, clauses.power.body.value, "power"),
-    );
+  for (const key of ["cg", "power"] as const) {
+    const read = clauses[key];
+    if (read) set(applying, key, read.placed, spreadIn(applying, read.placed, read.body.value, key));
+  }
   applyContamination(applying);
   if (clauses.engineOut) set(applying, "engineOut", clauses.engineOut.placed, clauses.engineOut.body.engine);
   spoil(applying);

@@ -5,7 +5,18 @@ import { join } from "node:path";
 import * as vscode from "vscode";
 import { hasPage, page } from "./page.ts";
 import { sameAsCommandLine } from "./sameAsCommandLine.ts";
-import { edited, eventually, hintLabels, hints, lineOf, openNote, startOf, type Test } from "./workbench.ts";
+import {
+  codeOf,
+  edited,
+  eventually,
+  hintLabels,
+  hints,
+  lineOf,
+  openNote,
+  problems,
+  startOf,
+  type Test,
+} from "./workbench.ts";
 
 /** What the commands of the extension do. Opening the demo is among the tests of the page, for it opens one. */
 export const commandTests: readonly Test[] = [
@@ -77,6 +88,30 @@ export const commandTests: readonly Test[] = [
     },
   ],
   [
+    "a server that was killed is started again, and what it shows comes back",
+    async () => {
+      const { document } = await openNote("winter-shuttle.plumb");
+      await eventually("hints", async () => assert.ok((await hintLabels(document)).length > 15));
+      const before = serverProcess();
+      process.kill(before, "SIGKILL");
+      await eventually("another server", () => assert.notEqual(serverProcess(), before));
+      await eventually("hints again", async () => assert.ok((await hintLabels(document)).length > 15));
+      await sameAsCommandLine("winter-shuttle.plumb");
+    },
+  ],
+  [
+    "the problems of a note that nobody opened are listed",
+    async () => {
+      const folder = vscode.workspace.workspaceFolders?.[0];
+      assert.ok(folder);
+      const never = vscode.Uri.joinPath(folder.uri, "night-mail-2.plumb");
+      await eventually("its findings", () =>
+        assert.deepEqual(problems(never).map(codeOf).sort(), ["bank-over-advice", "reference-config"]),
+      );
+      assert.ok(!vscode.workspace.textDocuments.some((one) => one.uri.toString() === never.toString()));
+    },
+  ],
+  [
     "a note that was never saved is not compared, and is told so",
     async () => {
       const untitled = await vscode.workspace.openTextDocument({
@@ -137,6 +172,14 @@ export const commandTests: readonly Test[] = [
     },
   ],
 ];
+
+/** The process of the server, which this host has started. */
+function serverProcess(): number {
+  const found = execFileSync("pgrep", ["-P", String(process.pid), "-f", "main.node.cjs"], {
+    encoding: "utf8",
+  });
+  return Number(found.trim().split("\n")[0]);
+}
 
 /** Git as somebody of the tests, whatever this machine says of its user. */
 function git(folder: string, ...args: string[]): void {
