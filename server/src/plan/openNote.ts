@@ -74,6 +74,8 @@ class OpenNote implements FolderNote {
   /** From here on the entries are as they were, if the state that reaches them is. */
   #dirtyTo = 0;
   #evaluatedWith: Definitions | null = null;
+  /** How many of the entries are points. */
+  #points = 0;
   /** Entries whose findings are told, so that a note of 10,000 points is not looked through for 20 findings. */
   #telling: Entry[] | null = null;
 
@@ -102,7 +104,7 @@ class OpenNote implements FolderNote {
   }
 
   get hasPoints(): boolean {
-    return this.#entries.some((entry) => entry.block.kind === "point");
+    return 0 < this.#points;
   }
 
   get usedNames(): ReadonlySet<string> {
@@ -178,7 +180,10 @@ class OpenNote implements FolderNote {
     this.#dirtyFrom = Math.min(this.#dirtyFrom, from);
     this.#dirtyTo = Math.max(from + added, this.#dirtyTo + added - removed);
     if (gone.some(tells)) this.#telling = null;
-    return gone.some(defines) || come.some(defines);
+    const had = this.hasPoints;
+    this.#points += count(come, isPoint) - count(gone, isPoint);
+    // A definition that nobody uses is told only where there are points.
+    return gone.some(defines) || come.some(defines) || this.hasPoints !== had;
   }
 
   #entry(block: Block, place: Place): Entry {
@@ -302,6 +307,16 @@ function placeFor(block: Block, gone: Entry | undefined): Place {
 
 function stateAfter(result: BlockResult, before: State): State {
   return result.kind === "point" || result.kind === "setting" ? result.after : before;
+}
+
+function isPoint({ block }: Entry): boolean {
+  return block.kind === "point";
+}
+
+function count<T>(items: readonly T[], fits: (item: T) => boolean): number {
+  let found = 0;
+  for (const item of items) if (fits(item)) found++;
+  return found;
 }
 
 function defines(entry: Entry): boolean {
