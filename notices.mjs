@@ -30,7 +30,12 @@ export async function writeNotices(metafiles) {
 async function noticeOf(folder) {
   const { name, version, license } = JSON.parse(await readFile(join(folder, "package.json"), "utf8"));
   if (!allowed.has(license)) throw new Error(`${name} is under ${license}, which a bundle may not carry.`);
-  const file = (await readdir(folder)).find((one) => /^licen[cs]e/i.test(one));
-  const text = file ? (await readFile(join(folder, file), "utf8")).replaceAll("\r\n", "\n").trim() : "";
-  return `${name} ${version} (${license})\n\n${text || "The package has no text of its licence."}\n`;
+  // What a package holds of others it tells in a file of its own.
+  const files = (await readdir(folder)).filter((one) =>
+    /^(licen[cs]e|notices?|third-?party-?notices)\b/i.test(one),
+  );
+  const texts = await Promise.all(files.sort().map((file) => readFile(join(folder, file), "utf8")));
+  if (!files.some((one) => /^licen[cs]e/i.test(one))) throw new Error(`${name} has no text of its licence.`);
+  const text = texts.map((one) => one.replaceAll("\r\n", "\n").trim()).join("\n\n");
+  return `${name} ${version} (${license})\n\n${text}\n`;
 }

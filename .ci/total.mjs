@@ -15,8 +15,9 @@ const unit = counts("out/unit.json", (one) => ({ passed: one.numPassedTests, fai
 const editor = counts("out/editor/counts.json", (one) => one);
 const web = counts("out/editor/webCounts.json", (one) => one);
 const neovim = counts("out/editor/neovim.json", (one) => one);
+const emacs = counts("out/editor/emacs.json", (one) => one);
 const installed = counts("out/editor/installedCounts.json", (one) => one);
-const all = [unit, editor, web, neovim, installed];
+const all = [unit, editor, web, neovim, emacs, installed];
 const sum = (name) => all.reduce((total, one) => total + (one?.[name] ?? 0), 0);
 const failed = sum("failed");
 if (ended === 0 ? all.every(Boolean) : failed > 0) {

@@ -1,5 +1,7 @@
 import { readFileSync } from "node:fs";
+import { parse as parseToml } from "smol-toml";
 import { describe, expect, it } from "vitest";
+import { parse as parseYaml } from "yaml";
 import { vocabulary } from "../server/src/notation/vocabulary.ts";
 import { createFolder } from "../server/src/plan/createFolder.ts";
 
@@ -34,5 +36,32 @@ describe("the README", () => {
     // What an example accepts or expects is meant to be there.
     const unmeant = note.findings().filter(({ finding }) => !finding.accepted && !finding.expected);
     expect(unmeant.map(({ line, finding }) => `${line + 1} ${finding.code}: ${finding.message}`)).toEqual([]);
+  });
+
+  const appendix = readme.split("## Appendix: set-ups for other editors")[1] ?? "";
+  const setUps = (language: string) =>
+    [...appendix.matchAll(/```(\w+)\n([\s\S]*?)```/g)]
+      .filter(([, of]) => of === language)
+      .map(([, , text]) => text ?? "");
+  const command = ["plumbline", "serve", "--stdio"];
+
+  it("has set-ups for other editors whose TOML, JSON and YAML are read, and start the server", () => {
+    const helix = parseToml(setUps("toml")[0] ?? "");
+    expect(helix["language-server"]).toEqual({ plumbline: { command: command[0], args: command.slice(1) } });
+    expect(helix.language).toMatchObject([
+      { name: "plumb", "file-types": ["plumb"], "language-servers": ["plumbline"] },
+      { name: "markdown", "language-servers": expect.arrayContaining(["plumbline"]) },
+    ]);
+    const [sublime, kate] = setUps("json").map((text) => JSON.parse(text));
+    expect(sublime.clients.plumbline).toMatchObject({ command });
+    expect(kate.servers.markdown).toMatchObject({ command });
+    const syntax = parseYaml(setUps("yaml")[0] ?? "");
+    expect(sublime.clients.plumbline.selector.split(" | ")).toContain(syntax.scope);
+    expect(syntax.file_extensions).toEqual(["plumb"]);
+  });
+
+  it("has no set-up in a language that nothing reads", () => {
+    const languages = [...appendix.matchAll(/```(\w+)\n/g)].map(([, language]) => language);
+    expect([...new Set(languages)].sort()).toEqual(["elisp", "json", "lua", "toml", "yaml"]);
   });
 });

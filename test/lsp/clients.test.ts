@@ -96,6 +96,19 @@ describe("clients of every kind", () => {
     }
   });
 
+  it("that call a note by a name of their own have its bar lines checked, and no fence is asked for", async () => {
+    const client = await startClient();
+    const findings = async (uri: string, languageId: string) => {
+      client.open(uri, "| weight 61.4\n", languageId);
+      return (await client.diagnostics(uri)).map((one) => one.code);
+    };
+    for (const [i, name] of ["plaintext", "text", "markdown", "plumb", ""].entries()) {
+      expect(await findings(`file:///invented/${i}.plumb`, name), name).toEqual(["missing-unit"]);
+    }
+    expect(await findings("file:///invented/table.md", "markdown")).toEqual([]);
+    expect(await client.stop()).toBe(0);
+  });
+
   it("that cancel a request are told so, and answered the next", async () => {
     const client = await startClient([demo]);
     client.open(steep, steepText);
