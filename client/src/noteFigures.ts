@@ -13,10 +13,11 @@ const fences: typeof fencesRequest = "plumbline/fences";
 const figuresChanged: typeof figuresChangedNotification = "plumbline/figuresChanged";
 
 /**
- * A preview that is loaded anew while it still loads may keep the older page for good, as the editor
- * does it; so there is time between.
+ * A preview that is loaded anew while it still loads may keep the older page, as the editor does it; so
+ * there is time between, and after the last time it is loaded once more when a slow page is surely there.
  */
 const RELOAD_MILLISECONDS = 2000;
+const AGAIN_MILLISECONDS = 6000;
 
 /** What was answered for one version of a note. */
 interface Answered {
@@ -40,7 +41,11 @@ export function noteFigures(client: BaseLanguageClient): {
   /** What was last drawn of each note, and for which text. */
   const drawn = new Map<string, { readonly text: string; readonly figures: string }>();
 
-  const redraw = spaced(() => void commands.executeCommand("markdown.preview.refresh"), RELOAD_MILLISECONDS);
+  const redraw = spaced(
+    () => void commands.executeCommand("markdown.preview.refresh"),
+    RELOAD_MILLISECONDS,
+    AGAIN_MILLISECONDS,
+  );
 
   const figuresOf: FiguresOf = (uri, text) => {
     const last = answered.get(uri);

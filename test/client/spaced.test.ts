@@ -34,3 +34,23 @@ it("does nothing any more once it is disposed of", () => {
   vi.advanceTimersByTime(500);
   expect(work).toHaveBeenCalledTimes(1);
 });
+
+it("does it once more after a quiet while, for what may have missed the last time", () => {
+  const work = vi.fn();
+  const { run, dispose } = spaced(work, 100, 400);
+  run();
+  vi.advanceTimersByTime(50);
+  run();
+  vi.advanceTimersByTime(50);
+  expect(work).toHaveBeenCalledTimes(2);
+  vi.advanceTimersByTime(399);
+  expect(work).toHaveBeenCalledTimes(2);
+  vi.advanceTimersByTime(1);
+  expect(work).toHaveBeenCalledTimes(3);
+  vi.advanceTimersByTime(5000);
+  expect(work).toHaveBeenCalledTimes(3);
+  run();
+  dispose();
+  vi.advanceTimersByTime(5000);
+  expect(work).toHaveBeenCalledTimes(4);
+});
