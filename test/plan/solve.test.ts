@@ -282,6 +282,16 @@ describe("what is sought", () => {
     expect(point.findings.map(({ code }) => code)).toEqual(["missing-value"]);
   });
 
+  it("names the row that could not be evaluated where that stands in the way, and why", () => {
+    const text = `| aircraft testbed-4; basis vsr; reference 5 t\n| config clean stall 80 kt\n
+| limits own\n| should any overshoot 15\n\n| fly testbed-4; under own; weight 5 t; config clean; altitude FL100; speed 150 kt\n\n| phase cruise; bank ?\n`;
+    const { solved, findings } = pointOf(open(text));
+    expect(solved?.blockedBy).toBe("should any overshoot 15 (not evaluated)");
+    expect(findings.map(({ message }) => message).join("\n")).toMatch(
+      /The card testbed-4 states no warning\.[\s\S]*`should any overshoot 15 \(not evaluated\)` stands in the way\./,
+    );
+  });
+
   it("leaves nothing behind where there is none", () => {
     const text = `${definitions}\n| limits own\n| must any ratio 4.9\n\n| fly testbed-1; under own; weight 50 t; config clean; altitude FL100\n\n| phase cruise; speed ?\n\n| phase cruise; bank 10\n`;
     const [first, second] = fileJson(open(text), "note").points as readonly PointJson[];

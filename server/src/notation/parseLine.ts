@@ -265,14 +265,33 @@ function finish(cursor: Cursor, text: string): void {
   const bar = cursor.code() === 124;
   const span = takeRest(cursor);
   if (already) return;
+  const keyword = text.slice(0, start).trimEnd().split(/[;|]/).pop()?.trim().split(/\s+/)[0] ?? "the clause";
+  const rest = text.slice(span.start, span.end).trimEnd();
+  if (titled.has(keyword.toLowerCase()) && /^\p{L}[^"|]*$/u.test(rest)) {
+    cursor.report(
+      "unexpected-text",
+      span,
+      `A title of ${keyword} stands in quotation marks: write "${rest}".`,
+      [
+        {
+          title: "Put the title in quotation marks",
+          edits: [{ line: 0, start: span.start, end: span.start + rest.length, newText: `"${rest}"` }],
+        },
+      ],
+    );
+    return;
+  }
   cursor.report(
     "unexpected-text",
     span,
     bar
       ? "A `|` begins a line and means nothing inside it; if this is a Markdown table, leave a blank line above it and make its second line `| --- | --- |`."
-      : `This is not understood after ${text.slice(0, start).trimEnd().split(/[;|]/).pop()?.trim().split(/\s+/)[0] ?? "the clause"}: write \`;\` before a new clause, or leave it out.`,
+      : `This is not understood after ${keyword}: write \`;\` before a new clause, or leave it out.`,
   );
 }
+
+/** Clauses that may end with a title. */
+const titled: ReadonlySet<string> = new Set(["aircraft", "limits", "phase", "emergency"]);
 
 function startsKeyword(cursor: Cursor, at: number): boolean {
   const end = cursor.nameEnd(at);

@@ -233,6 +233,7 @@ function tellNotEvaluated(checking: Checking, row: Row, why: string): void {
     `The row \`${row.text}\` of ${point.limits.name} could not be held against this point. ${why}`,
     {
       severity: severityOf(checking, row),
+      rule: `${row.text} (not evaluated)`,
       related: [{ origin: row.origin, message: `The row: ${row.text}` }],
     },
   );

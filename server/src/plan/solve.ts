@@ -180,7 +180,7 @@ function unsolved(seeker: Seeker): SolvedPoint {
     seeker,
     seeker.stated(grid.written(least.at)),
     least.trial.broken.join("; "),
-    `No ${grid.what} keeps every rule and check here: at ${at}, which breaks least, ${names(least.trial.broken)} ${least.trial.broken.length === 1 ? "is" : "are"} broken. Change something else of the point, or the limits.`,
+    `No ${grid.what} keeps every rule and check here: at ${at}, which breaks least, ${names(least.trial.broken)} ${least.trial.broken.length === 1 ? "stands" : "stand"} in the way. Change something else of the point, or the limits.`,
   );
 }
 
@@ -203,7 +203,8 @@ function withoutSolution(
 ): SolvedPoint {
   const withheld = { origin: originOf(setting.site, open.placed), code: "no-solution" };
   const finding = findingAt("no-solution", open.placed, message, { span: open.value.span });
-  const others = stated.findings.filter((one) => !blocks(one));
+  // What could not be evaluated says why itself, whatever the value is.
+  const others = stated.findings.filter((one) => !blocks(one) || one.code === "not-evaluated");
   const unknown = { value: null, origin: withheld.origin, unknown: "no-solution", phase: null };
   return {
     stated: {
