@@ -9,6 +9,7 @@ import { type Configuration, noConfiguration } from "../plan/configuration.ts";
 import { createFolder } from "../plan/createFolder.ts";
 import type { Note } from "../plan/note.ts";
 import { configurationOf } from "./configurationOf.ts";
+import { progress } from "./progress.ts";
 import { UsageError } from "./usageError.ts";
 
 /** A note that was asked for, with the path it is spoken of by. */
@@ -24,6 +25,8 @@ export interface LoadOptions {
   readonly stdinPath: string;
   /** The files that they are looked for in, instead of those under the root. */
   readonly besides?: readonly string[];
+  /** Shows no progress. */
+  readonly quiet?: boolean;
 }
 
 /** Reads the notes of the paths once. */
@@ -99,13 +102,18 @@ async function readTexts(
     : await discover([options.root], cwd, isLeftOut);
   const problems = [...wanted.problems, ...besides.problems];
   const texts = new Map<string, string>();
+  const files = [...new Set([...wanted.files, ...besides.files])];
+  const shown = progress(options, "read");
+  let done = 0;
   await Promise.all(
-    [...new Set([...wanted.files, ...besides.files])].map(async (file) => {
+    files.map(async (file) => {
       const read = await readNote(diskTree, file);
       if ("text" in read) texts.set(file, read.text);
       else problems.push(read.problem);
+      shown.step(++done, files.length, shortPath(file, cwd));
     }),
   );
+  shown.end();
   if (problems.length > 0) throw new UsageError(problems.join("\n"));
   return { wanted: wanted.files, texts };
 }
