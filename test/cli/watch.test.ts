@@ -102,9 +102,7 @@ describe("plumbline check --watch", () => {
     writeFileSync(join(folder, "plan.plumb"), note(35));
     await eventually(() => expect(out).toContain("Bank 35°"));
     writeFileSync(join(folder, "plan.plumb"), last);
-    await eventually(() =>
-      expect(errors).toMatch(status === 0 ? /(Nothing found.*){2}/s : /not UTF-8/),
-    );
+    await eventually(() => expect(errors).toMatch(status === 0 ? /(Nothing found.*){2}/s : /not UTF-8/));
     const code = ended();
     child.kill("SIGTERM");
     expect(await code).toBe(status);

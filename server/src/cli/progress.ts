@@ -27,7 +27,7 @@ export function progress({ quiet }: { readonly quiet?: boolean }, participle: "r
       last = now;
       shown = true;
       const text = `${done} of ${total} notes ${participle}: ${what}`;
-      stderr.write(`\r\u001b[K${text.slice(0, Math.max(20, (stderr.columns ?? 80) - 1))}`);
+      stderr.write(`\r\u001b[K${text.slice(0, Math.max(20, (stderr.columns || 80) - 1))}`);
     },
     end() {
       if (shown) stderr.write("\r\u001b[K");
