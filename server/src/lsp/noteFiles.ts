@@ -1,4 +1,5 @@
 import type { FileTree } from "../files/fileTree.ts";
+import type { ReadNote } from "../files/readNote.ts";
 
 /** Files that have URIs. */
 export interface FileSource {
@@ -13,8 +14,8 @@ export interface NoteFiles {
   /** The notes below a folder. */
   listNotes(folderUri: string): Promise<readonly string[]>;
   isFolder(uri: string): Promise<boolean>;
-  /** The text of a file in a folder; null where the folder holds none of that name, or it cannot be read. */
-  readIn(folderUri: string, name: string): Promise<string | null>;
+  /** Reads a file in a folder; null where the folder holds none of that name. */
+  readIn(folderUri: string, name: string): Promise<ReadNote | null>;
   /** The text of a note; null where it cannot be read, which is logged. */
   readNote(uri: string, log: (message: string) => void): Promise<string | null>;
 }
@@ -45,9 +46,8 @@ export function noteFiles(sources: readonly FileSource[]): NoteFiles {
       if (!folder) return null;
       const { tree } = folder.source;
       if (!(await tree.holds(folder.place, name))) return null;
-      const { MOST_BYTES } = await import("../files/readNote.ts");
-      const read = await tree.read(tree.child(folder.place, name), MOST_BYTES);
-      return read.kind === "text" ? read.text : null;
+      const { readNote } = await import("../files/readNote.ts");
+      return readNote(tree, tree.child(folder.place, name));
     },
     async readNote(uri, log) {
       const file = found(uri);
