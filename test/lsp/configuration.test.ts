@@ -249,6 +249,24 @@ describe("plumbline.json", () => {
     expect(status()).toBe(1);
     expect(status("--fail-on", "error")).toBe(0);
   });
+
+  it("of a folder that is checked from outside is told not to hold, and how it does", () => {
+    write("cards.plumb", card);
+    write("plans/plan.plumb", plan(25));
+    write("plans/plumbline.json", '{ "failOn": "warning" }');
+    const check = (...args: string[]) =>
+      spawnSync(process.execPath, [cli, "check", "plans", ...args], { cwd: folder, encoding: "utf8" });
+    const says = "plans/plumbline.json does not hold here; with --root plans it does.\n";
+    expect(check()).toMatchObject({ status: 0, stderr: expect.stringContaining(says) });
+    expect(check("--quiet")).toMatchObject({ status: 0, stderr: "" });
+    const { status, stderr } = check("--root", "plans");
+    expect([status, stderr.includes(says)]).toEqual([1, false]);
+    write("plumbline.json", '{ "exclude": ["plans"] }');
+    expect(check()).toMatchObject({
+      status: 2,
+      stderr: expect.stringContaining("There is no note in plans, beside what plumbline.json leaves out"),
+    });
+  });
 });
 
 describe("the setting of severities", () => {

@@ -5,7 +5,7 @@ import { diskTree } from "../disk/diskTree.ts";
 import { excluded } from "../files/excluded.ts";
 import { readNote } from "../files/readNote.ts";
 import type { Flavour } from "../notation/document.ts";
-import { type Configuration, noConfiguration } from "../plan/configuration.ts";
+import { CONFIGURATION_FILE, type Configuration, noConfiguration } from "../plan/configuration.ts";
 import { createFolder } from "../plan/createFolder.ts";
 import type { Note } from "../plan/note.ts";
 import { configurationOf } from "./configurationOf.ts";
@@ -69,10 +69,11 @@ export function createLoader(options: LoadOptions): Loader {
       const loaded = wanted
         .filter((file) => isNote(folder.note(uriOf(file)), file))
         .map((file) => ({ path: shortPath(file, cwd), note: folder.note(uriOf(file)) as Note }));
+      if (!options.quiet) await tellOtherConfigurations(named, options.root, cwd);
       if (!named.includes("-")) {
         if (loaded.length === 0)
           throw new UsageError(
-            `There is no note in ${named.join(", ")}: a note is a .plumb file, or a Markdown file with a \`plumb\` fence.`,
+            `There is no note in ${named.join(", ")}${configuration.exclude.length > 0 ? `, beside what ${CONFIGURATION_FILE} leaves out` : ""}: a note is a .plumb file, or a Markdown file with a \`plumb\` fence.`,
           );
         return loaded;
       }
@@ -116,6 +117,17 @@ async function readTexts(
   shown.end();
   if (problems.length > 0) throw new UsageError(problems.join("\n"));
   return { wanted: wanted.files, texts };
+}
+
+/** A folder that is checked from outside may have a configuration of its own, which somebody may think holds. */
+async function tellOtherConfigurations(named: readonly string[], root: string, cwd: string): Promise<void> {
+  for (const path of named) {
+    const folder = resolve(cwd, path);
+    if (folder === resolve(cwd, root) || !(await diskTree.holds(folder, CONFIGURATION_FILE))) continue;
+    process.stderr.write(
+      `${shortPath(resolve(folder, CONFIGURATION_FILE), cwd)} does not hold here; with --root ${path} it does.\n`,
+    );
+  }
 }
 
 /** A Markdown file without a plumb fence is nobody's note; one that is named itself has its say. */

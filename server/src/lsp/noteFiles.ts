@@ -11,8 +11,8 @@ export interface FileSource {
 
 /** The notes of folders, by URI. */
 export interface NoteFiles {
-  /** The notes below a folder. */
-  listNotes(folderUri: string): Promise<readonly string[]>;
+  /** The notes below a folder. A folder in it that cannot be looked into is logged. */
+  listNotes(folderUri: string, log: (message: string) => void): Promise<readonly string[]>;
   isFolder(uri: string): Promise<boolean>;
   /** Reads a file in a folder; null where the folder holds none of that name. */
   readIn(folderUri: string, name: string): Promise<ReadNote | null>;
@@ -31,11 +31,13 @@ export function noteFiles(sources: readonly FileSource[]): NoteFiles {
   }
 
   return {
-    async listNotes(folderUri) {
+    async listNotes(folderUri, log) {
       const folder = found(folderUri);
       if (!folder) return [];
       const { walk } = await import("../files/walk.ts");
-      return (await walk(folder.source.tree, folder.place)).map(folder.source.uriOf);
+      const { source, place } = folder;
+      const unreadable = (one: string) => log(`${one} cannot be looked into, so nothing in it is checked.`);
+      return (await walk(source.tree, place, unreadable)).map(source.uriOf);
     },
     async isFolder(uri) {
       const folder = found(uri);

@@ -217,7 +217,7 @@ export class Workspace {
   /** Brings a folder in step with the disk. */
   async #synchronise(root: Root): Promise<boolean> {
     if (root.uri === null) return false;
-    const found = await this.#files.listNotes(root.uri).catch((error: unknown) => {
+    const found = await this.#files.listNotes(root.uri, this.#log).catch((error: unknown) => {
       this.#log(`${root.uri} cannot be read: ${String(error)}`);
       return [];
     });
