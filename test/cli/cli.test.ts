@@ -403,6 +403,22 @@ describe("discovery", () => {
     expect(paths(["secret.plumb"])).toEqual(["secret.plumb"]);
     rmSync(place, { recursive: true });
   });
+
+  it("reads more notes than a program may hold open at once", () => {
+    const place = mkdtempSync(join(tmpdir(), "plumbline-many-"));
+    for (let i = 0; i < 600; i++) writeFileSync(join(place, `${i}.plumb`), "| weight 5 t\n");
+    const { status, stderr } = spawnSync(
+      "sh",
+      ["-c", `ulimit -n 128; "${process.execPath}" "${join(root, bin)}"`],
+      {
+        cwd: place,
+        encoding: "utf8",
+      },
+    );
+    expect(stderr).toContain("Nothing found in 600 notes.");
+    expect(status).toBe(0);
+    rmSync(place, { recursive: true });
+  });
 });
 
 describe("npm start's tour", () => {

@@ -3,6 +3,7 @@ import { describe, expect, it } from "vitest";
 import { findingCodes } from "../../server/src/notation/codes.ts";
 import { readConfiguration } from "../../server/src/plan/configuration.ts";
 import { createFolder } from "../../server/src/plan/createFolder.ts";
+import { catalogue } from "../../server/src/plan/findings.ts";
 import type { Severities } from "../../server/src/plan/severities.ts";
 
 const text = `| aircraft testbed-1; basis vsr; reference 55 t; warning 1.03
@@ -71,6 +72,21 @@ describe("plumbline.json", () => {
       '"hint"',
       'The level of stalled is "error", "warning" or "information".',
     ],
+    [
+      '{ "severity": { "bank-over-limit": "warning" } }',
+      '"warning"',
+      'bank-over-limit is an error, and an error is never lowered: write "error", or take it out.',
+    ],
+    [
+      '{ "severity": { "stalled": "error", "stalled" : "error" } }',
+      '"stalled"',
+      '"stalled" is given twice: take one out.',
+    ],
+    ['{ "exclude": ["drafts/", 5] }', "5", "A pattern is a text"],
+    ['{ "exclude": ["./drafts/"] }', '"./drafts/"', 'write "/drafts/"'],
+    ['{ "exclude": ["../drafts/"] }', '"../drafts/"', "in this folder"],
+    ['{ "exclude": ["old\\\\drafts"] }', '"old\\\\drafts"', "separated by /"],
+    ['{ "exclude": ["#drafts"] }', '"#drafts"', "is a remark"],
     ['{ "severity": [] }', "[]", "severity is an object"],
     ['{ "exclude": "drafts" }', '"drafts"', "exclude is a list of patterns"],
     ['{ "failOn": "hint" }', '"hint"', 'failOn is "error", "warning" or "never".'],
@@ -92,5 +108,8 @@ describe("plumbline.json", () => {
     expect(properties.severity.propertyNames.enum).toEqual([...findingCodes]);
     const setting = read("package.json").contributes.configuration.properties["plumbline.severity"];
     expect(setting.propertyNames.enum).toEqual([...findingCodes]);
+    const errors = findingCodes.filter((code) => catalogue[code].severity === "error");
+    const never = { [`^(${errors.join("|")})$`]: { const: "error" } };
+    expect([properties.severity.patternProperties, setting.patternProperties]).toEqual([never, never]);
   });
 });

@@ -13,6 +13,7 @@ export const serverPath = fileURLToPath(new URL("../../dist/server/main.node.cjs
 /** What a client with every capability says. */
 export const able: ClientCapabilities = {
   textDocument: {
+    synchronization: { didSave: true },
     diagnostic: {},
     inlayHint: { resolveSupport: { properties: ["tooltip", "label.tooltip", "label.location"] } },
     completion: { completionItem: { snippetSupport: true } },

@@ -11,7 +11,7 @@ import { progress } from "./progress.ts";
 import type { Common } from "./run.ts";
 import { UsageError } from "./usageError.ts";
 import { VERSION } from "./version.ts";
-import { watching } from "./watch.ts";
+import { type Change, watching } from "./watch.ts";
 
 export type FailOn = "error" | "warning" | "never";
 
@@ -21,16 +21,24 @@ export interface CheckOptions extends Common {
   readonly failOn?: FailOn;
   readonly passed: boolean;
   readonly watch: boolean;
+  /** The day the notes are read on, asked again at each run. */
+  day(): string;
 }
 
 /** `plumbline check`: every finding of the notes, once or again and again. */
 export async function check(paths: readonly string[], options: CheckOptions): Promise<number> {
   refuseWhatDoesNotGoTogether(paths, options);
-  const loader = createLoader(options);
+  let today = options.day();
+  let loader = createLoader({ ...options, today });
   const once = async () => checkOnce(await loader.load(paths), failOnOf(options, loader), options);
   if (!options.watch) return once();
-  return watching(paths, options, async (changed) => {
-    if (!options.quiet) process.stderr.write(headline(changed));
+  return watching(paths, options, async (changes) => {
+    await emit(headline(changes), options);
+    if (options.day() !== today) {
+      // Past midnight other dates hold, so everything is read anew.
+      today = options.day();
+      loader = createLoader({ ...options, today });
+    }
     try {
       return await once();
     } catch (error) {
@@ -53,14 +61,15 @@ function refuseWhatDoesNotGoTogether(paths: readonly string[], options: CheckOpt
     throw new UsageError("--watch needs files or folders: standard input is read once.");
 }
 
-function headline(changed: readonly string[]): string {
+/** So many changes are named in one line. */
+const NAMED = 3;
+
+/** Sets a run apart from the one before, in the output itself, so that a log that is kept has it too. */
+function headline(changes: readonly Change[]): string {
   const time = new Date().toTimeString().slice(0, 8);
-  const [first, ...others] = changed;
-  const what =
-    first === undefined
-      ? "watching; Ctrl+C ends it"
-      : `${first}${others.length > 0 ? ` and ${others.length} more` : ""} changed`;
-  return `\n${time}  ${what}\n`;
+  const named = changes.slice(0, NAMED).map(({ path, how }) => `${path} ${how}`);
+  const more = changes.length > NAMED ? ` and ${changes.length - NAMED} more` : "";
+  return `\n${time}  ${changes.length === 0 ? "watching; Ctrl+C ends it" : named.join(", ") + more}\n`;
 }
 
 function failOnOf({ failOn }: CheckOptions, { configuration }: Loader): FailOn {
@@ -72,7 +81,7 @@ async function checkOnce(
   failOn: FailOn,
   options: CheckOptions,
 ): Promise<number> {
-  const shown = progress(options);
+  const shown = progress(options, "checked");
   const files = notes.map(({ path, note }, i): CheckedFile => {
     shown.step(i, notes.length, path);
     return {

@@ -1,6 +1,6 @@
 import { join, relative, resolve } from "node:path";
 import { diskTree } from "../disk/diskTree.ts";
-import { MOST_BYTES } from "../files/readNote.ts";
+import { readNote } from "../files/readNote.ts";
 import {
   CONFIGURATION_FILE,
   type Configuration,
@@ -14,11 +14,8 @@ export async function configurationOf(root: string): Promise<Configuration> {
   const file = join(resolve(root), CONFIGURATION_FILE);
   if (!(await diskTree.holds(resolve(root), CONFIGURATION_FILE))) return noConfiguration;
   const shown = relative(process.cwd(), file) || file;
-  const read = await diskTree.read(file, MOST_BYTES);
-  if (read.kind !== "text") {
-    const why = read.kind === "unreadable" ? read.why : read.kind === "too-large" ? "too large" : "not UTF-8";
-    throw new UsageError(`${shown} cannot be read (${why}).`);
-  }
+  const read = await readNote(diskTree, file);
+  if ("problem" in read) throw new UsageError(read.problem);
   const { configuration, problems } = readConfiguration(read.text);
   if (problems.length === 0) return configuration;
   const lines = problems.map(({ message, start }) => {

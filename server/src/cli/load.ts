@@ -5,10 +5,11 @@ import { diskTree } from "../disk/diskTree.ts";
 import { excluded } from "../files/excluded.ts";
 import { readNote } from "../files/readNote.ts";
 import type { Flavour } from "../notation/document.ts";
-import { type Configuration, noConfiguration } from "../plan/configuration.ts";
+import { CONFIGURATION_FILE, type Configuration, noConfiguration } from "../plan/configuration.ts";
 import { createFolder } from "../plan/createFolder.ts";
 import type { Note } from "../plan/note.ts";
 import { configurationOf } from "./configurationOf.ts";
+import { progress } from "./progress.ts";
 import { UsageError } from "./usageError.ts";
 
 /** A note that was asked for, with the path it is spoken of by. */
@@ -24,6 +25,8 @@ export interface LoadOptions {
   readonly stdinPath: string;
   /** The files that they are looked for in, instead of those under the root. */
   readonly besides?: readonly string[];
+  /** Shows no progress. */
+  readonly quiet?: boolean;
 }
 
 /** Reads the notes of the paths once. */
@@ -66,10 +69,11 @@ export function createLoader(options: LoadOptions): Loader {
       const loaded = wanted
         .filter((file) => isNote(folder.note(uriOf(file)), file))
         .map((file) => ({ path: shortPath(file, cwd), note: folder.note(uriOf(file)) as Note }));
+      if (!options.quiet) await tellOtherConfigurations(named, options.root, cwd);
       if (!named.includes("-")) {
         if (loaded.length === 0)
           throw new UsageError(
-            `There is no note in ${named.join(", ")}: a note is a .plumb file, or a Markdown file with a \`plumb\` fence.`,
+            `There is no note in ${named.join(", ")}${configuration.exclude.length > 0 ? `, beside what ${CONFIGURATION_FILE} leaves out` : ""}: a note is a .plumb file, or a Markdown file with a \`plumb\` fence.`,
           );
         return loaded;
       }
@@ -99,15 +103,31 @@ async function readTexts(
     : await discover([options.root], cwd, isLeftOut);
   const problems = [...wanted.problems, ...besides.problems];
   const texts = new Map<string, string>();
+  const files = [...new Set([...wanted.files, ...besides.files])];
+  const shown = progress(options, "read");
+  let done = 0;
   await Promise.all(
-    [...new Set([...wanted.files, ...besides.files])].map(async (file) => {
+    files.map(async (file) => {
       const read = await readNote(diskTree, file);
       if ("text" in read) texts.set(file, read.text);
       else problems.push(read.problem);
+      shown.step(++done, files.length, shortPath(file, cwd));
     }),
   );
+  shown.end();
   if (problems.length > 0) throw new UsageError(problems.join("\n"));
   return { wanted: wanted.files, texts };
+}
+
+/** A folder that is checked from outside may have a configuration of its own, which somebody may think holds. */
+async function tellOtherConfigurations(named: readonly string[], root: string, cwd: string): Promise<void> {
+  for (const path of named) {
+    const folder = resolve(cwd, path);
+    if (folder === resolve(cwd, root) || !(await diskTree.holds(folder, CONFIGURATION_FILE))) continue;
+    process.stderr.write(
+      `${shortPath(resolve(folder, CONFIGURATION_FILE), cwd)} does not hold here; with --root ${path} it does.\n`,
+    );
+  }
 }
 
 /** A Markdown file without a plumb fence is nobody's note; one that is named itself has its say. */

@@ -5,6 +5,8 @@ import { run } from "./run.ts";
 process.stdout.on("error", (error: NodeJS.ErrnoException) => {
   process.exit(error.code === "EPIPE" ? 0 : 2);
 });
+// What only goes along with the result must not change how it ends.
+process.stderr.on("error", () => undefined);
 
 run(process.argv).then(
   (code) => {

@@ -9,8 +9,12 @@ export interface Progress {
   end(): void;
 }
 
-/** A line on standard error while long work goes on, where that is a terminal; else nothing. */
-export function progress({ quiet }: { readonly quiet?: boolean }): Progress {
+/**
+ * A line on standard error while long work goes on, where that is a terminal; else nothing.
+ *
+ * @param participle what is done with the notes
+ */
+export function progress({ quiet }: { readonly quiet?: boolean }, participle: "read" | "checked"): Progress {
   const { stderr } = process;
   if (quiet || stderr.isTTY !== true) return { step: () => {}, end: () => {} };
   const start = Date.now();
@@ -22,8 +26,8 @@ export function progress({ quiet }: { readonly quiet?: boolean }): Progress {
       if (now - start < PATIENCE_MS || now - last < EVERY_MS) return;
       last = now;
       shown = true;
-      const text = `${done} of ${total} notes: ${what}`;
-      stderr.write(`\r\u001b[K${text.slice(0, Math.max(20, (stderr.columns ?? 80) - 1))}`);
+      const text = `${done} of ${total} notes ${participle}: ${what}`;
+      stderr.write(`\r\u001b[K${text.slice(0, Math.max(20, (stderr.columns || 80) - 1))}`);
     },
     end() {
       if (shown) stderr.write("\r\u001b[K");

@@ -54,7 +54,10 @@ export async function run(argv: readonly string[]): Promise<number> {
     )
     .option("--watch", "check again whenever a note, a card or limits change", false)
     .option("--passed", "list what was checked and held too (json, sarif)", false)
-    .action((paths: string[], options) => settle(check(paths, options)));
+    .action((paths: string[], options, command: Command) => {
+      const given = command.getOptionValueSource("today") === "cli";
+      return settle(check(paths, { ...options, day: given ? () => options.today : localDay }));
+    });
   overNotes(program.command("points").argument("[path...]", "files, folders or globs; - for standard input"))
     .description("show every point with its computed values")
     .addOption(

@@ -27,10 +27,12 @@ export async function discover(
   const found = new Set<string>();
   const named = new Set<string>();
   const problems: string[] = [];
+  const unreadable = (folder: string) =>
+    problems.push(`The folder ${folder} cannot be looked into, so nothing in it is checked.`);
   for (const path of paths) {
     const absolute = resolve(cwd, path);
     const there = await stat(absolute).catch(() => null);
-    if (there?.isDirectory()) for (const file of await walk(diskTree, absolute)) found.add(file);
+    if (there?.isDirectory()) for (const file of await walk(diskTree, absolute, unreadable)) found.add(file);
     else if (there?.isFile()) named.add(absolute);
     else if (isDynamicPattern(path)) await addGlob(path, cwd, found, problems);
     else problems.push(`There is no file or folder ${path}.`);

@@ -3,6 +3,25 @@ import { readdir, readFile, stat } from "node:fs/promises";
 import { basename, dirname, join } from "node:path";
 import type { FileTree } from "../files/fileTree.ts";
 
+/** Every file that is being read is held open, and a system lets a program hold few. */
+const READ_AT_ONCE = 32;
+let reading = 0;
+const waiting: (() => void)[] = [];
+
+/** Does the work once few enough others are at it. */
+async function inTurn<T>(work: () => Promise<T>): Promise<T> {
+  if (READ_AT_ONCE <= reading) await new Promise<void>((resolve) => waiting.push(resolve));
+  else reading++;
+  try {
+    return await work();
+  } finally {
+    const next = waiting.shift();
+    // Who waited takes the place over.
+    if (next) next();
+    else reading--;
+  }
+}
+
 /** The disk of this machine, by absolute paths. */
 export const diskTree: FileTree = {
   async entries(folder) {
@@ -19,7 +38,7 @@ export const diskTree: FileTree = {
   async read(file, mostBytes) {
     try {
       if (mostBytes < (await stat(file)).size) return { kind: "too-large" };
-      const bytes = await readFile(file);
+      const bytes = await inTurn(() => readFile(file));
       return { kind: isUtf8(bytes) ? "text" : "not-utf-8", text: bytes.toString("utf8") };
     } catch (error) {
       return { kind: "unreadable", why: (error as NodeJS.ErrnoException).code ?? "unknown error" };

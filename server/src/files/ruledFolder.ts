@@ -1,5 +1,6 @@
-import ignore, { type Ignore } from "ignore";
+import type { Ignore } from "ignore";
 import type { FileTree } from "./fileTree.ts";
+import { patterns } from "./patterns.ts";
 import { MOST_BYTES } from "./readNote.ts";
 
 /** A folder and the `.gitignore` rules that hold in it. */
@@ -41,7 +42,7 @@ export function below(tree: FileTree, folder: RuledFolder, name: string): RuledF
 export async function withOwnRules(tree: FileTree, folder: RuledFolder): Promise<RuledFolder> {
   const read = await tree.read(tree.child(folder.place, ".gitignore"), MOST_BYTES);
   if (!("text" in read)) return folder;
-  const own = { depth: folder.steps.length, matcher: ignore().add(read.text) };
+  const own = { depth: folder.steps.length, matcher: patterns(read.text) };
   return { ...folder, rules: [...folder.rules, own] };
 }
 

@@ -9,6 +9,8 @@ export interface Client {
   readonly pulls: boolean;
   readonly refreshesDiagnostics: boolean;
   readonly refreshesHints: boolean;
+  /** It tells when a note is saved. */
+  readonly tellsSaves: boolean;
   readonly watches: boolean;
   readonly asksConfiguration: boolean;
   readonly registersConfiguration: boolean;
@@ -54,6 +56,7 @@ export function clientOf({
     pulls: textDocument?.diagnostic !== undefined,
     refreshesDiagnostics: workspace?.diagnostics?.refreshSupport === true,
     refreshesHints: workspace?.inlayHint?.refreshSupport === true,
+    tellsSaves: textDocument?.synchronization?.didSave === true,
     watches: workspace?.didChangeWatchedFiles?.dynamicRegistration === true,
     asksConfiguration: workspace?.configuration === true,
     registersConfiguration: workspace?.didChangeConfiguration?.dynamicRegistration === true,

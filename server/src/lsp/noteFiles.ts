@@ -1,4 +1,5 @@
 import type { FileTree } from "../files/fileTree.ts";
+import type { ReadNote } from "../files/readNote.ts";
 
 /** Files that have URIs. */
 export interface FileSource {
@@ -10,11 +11,11 @@ export interface FileSource {
 
 /** The notes of folders, by URI. */
 export interface NoteFiles {
-  /** The notes below a folder. */
-  listNotes(folderUri: string): Promise<readonly string[]>;
+  /** The notes below a folder. A folder in it that cannot be looked into is logged. */
+  listNotes(folderUri: string, log: (message: string) => void): Promise<readonly string[]>;
   isFolder(uri: string): Promise<boolean>;
-  /** The text of a file in a folder; null where the folder holds none of that name, or it cannot be read. */
-  readIn(folderUri: string, name: string): Promise<string | null>;
+  /** Reads a file in a folder; null where the folder holds none of that name. */
+  readIn(folderUri: string, name: string): Promise<ReadNote | null>;
   /** The text of a note; null where it cannot be read, which is logged. */
   readNote(uri: string, log: (message: string) => void): Promise<string | null>;
 }
@@ -30,11 +31,13 @@ export function noteFiles(sources: readonly FileSource[]): NoteFiles {
   }
 
   return {
-    async listNotes(folderUri) {
+    async listNotes(folderUri, log) {
       const folder = found(folderUri);
       if (!folder) return [];
       const { walk } = await import("../files/walk.ts");
-      return (await walk(folder.source.tree, folder.place)).map(folder.source.uriOf);
+      const { source, place } = folder;
+      const unreadable = (one: string) => log(`${one} cannot be looked into, so nothing in it is checked.`);
+      return (await walk(source.tree, place, unreadable)).map(source.uriOf);
     },
     async isFolder(uri) {
       const folder = found(uri);
@@ -45,9 +48,8 @@ export function noteFiles(sources: readonly FileSource[]): NoteFiles {
       if (!folder) return null;
       const { tree } = folder.source;
       if (!(await tree.holds(folder.place, name))) return null;
-      const { MOST_BYTES } = await import("../files/readNote.ts");
-      const read = await tree.read(tree.child(folder.place, name), MOST_BYTES);
-      return read.kind === "text" ? read.text : null;
+      const { readNote } = await import("../files/readNote.ts");
+      return readNote(tree, tree.child(folder.place, name));
     },
     async readNote(uri, log) {
       const file = found(uri);

@@ -10,64 +10,86 @@ interface Shown {
 }
 
 export interface Patience {
-  edited(uri: string): void;
+  /**
+   * Told before an edit is taken in.
+   *
+   * @param findings what the note is told until then
+   */
+  editing(uri: string, findings: () => readonly PlacedFinding[]): void;
   saved(uri: string): void;
   closed(uri: string): void;
+  /** Something else than an edit changed what notes are told: that is shown at once, but for those being written. */
+  othersChanged(): void;
+  /** Other settings hold: nothing waits any more. */
+  settingsChanged(): void;
   /** What is shown of the findings now. What is gone goes at once; what is new may have to wait. */
   shown(uri: string, findings: readonly PlacedFinding[]): readonly PlacedFinding[];
 }
 
 /**
  * Lets new findings wait while somebody types: for a while after the last edit, or until the note is
- * saved. A finding that was shown and is still there stays, with what it says now.
+ * saved. A finding that was shown and is still there stays, with what it says now. While one note waits
+ * the others wait too, for a card that is being written changes what every note is told.
  *
  * @param settings whether and how long; null where the client could not be told to look again
- * @param lookAgain asks the client to look at a note once what waited is to be shown
+ * @param lookAgain asks the client to look again once what waited is to be shown
  */
 export function patience(
   settings: () => Settings["diagnostics"] | null,
   later: Runtime["later"],
-  lookAgain: (uri: string) => void,
+  lookAgain: () => void,
 ): Patience {
+  /** The notes being written, with what takes their timer back. */
   const waiting = new Map<string, () => void>();
   const lastShown = new Map<string, readonly Shown[]>();
 
   function end(uri: string): void {
     const key = uriKey(uri);
     waiting.get(key)?.();
-    if (waiting.delete(key)) lookAgain(uri);
+    if (!waiting.delete(key)) return;
+    forgetOthers();
+    lookAgain();
+  }
+
+  function forgetOthers(): void {
+    for (const key of [...lastShown.keys()]) if (!waiting.has(key)) lastShown.delete(key);
   }
 
   return {
-    edited(uri) {
+    editing(uri, findings) {
       const { run, delay } = settings() ?? { run: "onType", delay: 0 };
       const key = uriKey(uri);
       waiting.get(key)?.();
-      if (run === "onSave") waiting.set(key, () => {});
-      else if (0 < delay)
-        waiting.set(
-          key,
-          later(delay, () => end(uri)),
-        );
-      else waiting.delete(key);
+      if (run === "onType" && delay === 0) {
+        waiting.delete(key);
+        return;
+      }
+      if (!lastShown.has(key)) lastShown.set(key, placesOf(findings()));
+      waiting.set(key, run === "onSave" ? () => {} : later(delay, () => end(uri)));
     },
     saved: end,
     closed(uri) {
-      const key = uriKey(uri);
-      waiting.get(key)?.();
-      waiting.delete(key);
-      lastShown.delete(key);
+      end(uri);
+      lastShown.delete(uriKey(uri));
+    },
+    othersChanged: forgetOthers,
+    settingsChanged() {
+      for (const takeBack of waiting.values()) takeBack();
+      waiting.clear();
+      lastShown.clear();
     },
     shown(uri, findings) {
       const key = uriKey(uri);
-      const kept = waiting.has(key) ? stillThere(findings, lastShown.get(key) ?? []) : findings;
-      lastShown.set(
-        key,
-        kept.map(({ line, finding }) => ({ code: finding.code, line })),
-      );
+      const before = lastShown.get(key);
+      const kept = 0 < waiting.size && before ? stillThere(findings, before) : findings;
+      lastShown.set(key, placesOf(kept));
       return kept;
     },
   };
+}
+
+function placesOf(findings: readonly PlacedFinding[]): readonly Shown[] {
+  return findings.map(({ line, finding }) => ({ code: finding.code, line }));
 }
 
 /** The findings that were shown before: as many of a code as there were, those nearest to where they stood. */

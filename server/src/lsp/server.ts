@@ -3,6 +3,8 @@ import {
   FileChangeType,
   type InitializeParams,
   type InitializeResult,
+  MessageType,
+  ShowMessageNotification,
 } from "vscode-languageserver";
 import { type Answering, answerRequests } from "./answers.ts";
 import { capabilities } from "./capabilities.ts";
@@ -30,7 +32,7 @@ const fileChanges: Readonly<Record<FileChangeType, FileChange["kind"]>> = {
   [FileChangeType.Deleted]: "deleted",
 };
 
-/** Starts the language server on a connection. It answers at once and has no timer of its own. */
+/** Starts the language server on a connection. It answers at once; only new findings may wait, where a setting says so. */
 export function startServer(connection: Connection, runtime: Runtime): void {
   const guard = guardWith(connection);
   const served = servedFiles(connection, () => client.servesFiles);
@@ -42,12 +44,7 @@ export function startServer(connection: Connection, runtime: Runtime): void {
     configurationDiagnostics(connection),
   );
   const pageUri = (name: string) => runtime.pageUri(name) ?? (client.pages && `${client.pages}/${name}`);
-  const calm = patience(
-    // A client that asks by itself and cannot be told to ask again would never see what waited.
-    () => (client.pulls && !client.refreshesDiagnostics ? null : settings.diagnostics),
-    runtime.later,
-    (uri) => (client.pulls ? everythingChanged() : pusher.push(uri)),
-  );
+  const calm = patience(() => paceFor(client, settings), runtime.later, diagnosticsChanged);
   const pusher = new Pusher(connection, workspace, pageUri, calm, () => ready, runtime.soon);
   let reading = false;
   const status = new StatusTeller({
@@ -119,6 +116,7 @@ export function startServer(connection: Connection, runtime: Runtime): void {
         }),
       );
       await ready;
+      calm.othersChanged();
       everythingChanged();
     },
   );
@@ -131,17 +129,31 @@ export function startServer(connection: Connection, runtime: Runtime): void {
   }
 
   function takeSettings(raw: unknown): void {
+    const before = settings.problems.join(" ");
     settings = readSettings(raw);
     workspace.severities = settings.severity;
+    calm.settingsChanged();
+    const problems = settings.problems.join(" ");
+    if (problems === "" || problems === before) return;
+    void guard.asking("message", () =>
+      connection.sendNotification(ShowMessageNotification.type, {
+        type: MessageType.Warning,
+        message: problems,
+      }),
+    );
+  }
+
+  function diagnosticsChanged(): void {
+    if (!client.pulls) pusher.pushAll();
+    else if (client.refreshesDiagnostics) {
+      void guard.asking("refresh of diagnostics", () => connection.languages.diagnostics.refresh());
+    }
   }
 
   /** Asks for a refresh where something other than a note's own text changed. */
   function everythingChanged(): void {
     status.allChanged();
-    if (!client.pulls) pusher.pushAll();
-    else if (client.refreshesDiagnostics) {
-      void guard.asking("refresh of diagnostics", () => connection.languages.diagnostics.refresh());
-    }
+    diagnosticsChanged();
     if (client.refreshesHints) {
       void guard.asking("refresh of hints", () => connection.languages.inlayHint.refresh());
     }
@@ -169,8 +181,8 @@ export function startServer(connection: Connection, runtime: Runtime): void {
   connection.onDidChangeTextDocument(
     guard.hearing("change", ({ textDocument: { uri, version }, contentChanges }) => {
       const before = workspace.folderOf(uri)?.definitionsVersion;
+      calm.editing(uri, () => workspace.note(uri)?.findings() ?? []);
       workspace.change(uri, contentChanges, version ?? 0);
-      calm.edited(uri);
       afterChange(uri, before);
     }),
   );
@@ -183,7 +195,7 @@ export function startServer(connection: Connection, runtime: Runtime): void {
       calm.closed(uri);
       status.changed(uri);
       if (!client.pulls) pusher.clear(uri);
-      await takeIn([{ uri, kind: "changed" }]);
+      await takeIn([{ uri, kind: "closed" }]);
     }),
   );
 
@@ -226,7 +238,9 @@ export function startServer(connection: Connection, runtime: Runtime): void {
     await fromDisk("files", async () => {
       changed = await workspace.filesChanged(changes);
     });
-    if (changed) everythingChanged();
+    if (!changed) return;
+    calm.othersChanged();
+    everythingChanged();
   }
 
   const answering: Answering = {
@@ -250,4 +264,10 @@ export function startServer(connection: Connection, runtime: Runtime): void {
   answerWritingRequests(connection, guard, answering);
   answerShownRequests(connection, guard, { workspace, ready: () => ready });
   connection.listen();
+}
+
+/** How long new findings may wait; null where the client could never show what waited. */
+function paceFor(client: Client, { diagnostics }: Settings): Settings["diagnostics"] | null {
+  if (client.pulls && !client.refreshesDiagnostics) return null;
+  return client.tellsSaves ? diagnostics : { ...diagnostics, run: "onType" };
 }

@@ -8,6 +8,8 @@ export interface Settings {
   readonly hints: HintLevel;
   readonly kinds: readonly HintKind[];
   readonly severity: Severities;
+  /** What is wrong in them, as sentences. */
+  readonly problems: readonly string[];
   readonly diagnostics: {
     /** A new finding is shown so many milliseconds after the last edit. */
     readonly delay: number;
@@ -20,6 +22,7 @@ export const standardSettings: Settings = {
   hints: "full",
   kinds: allHintKinds,
   severity: {},
+  problems: [],
   diagnostics: { delay: 0, run: "onType" },
 };
 
@@ -38,13 +41,15 @@ export function readSettings(raw: unknown): Settings {
   const level = hints?.level;
   const kinds = hints?.kinds;
   const delay = diagnostics?.delay;
+  const { severities, problems } = severitiesOf(severity);
   return {
     hints: level === "brief" || level === "off" || level === "full" ? level : standardSettings.hints,
     // A name that is none is left out, so that one slip does not bring back what was turned off.
     kinds: Array.isArray(kinds)
       ? allHintKinds.filter((kind) => kinds.includes(kind))
       : standardSettings.kinds,
-    severity: severitiesOf(severity),
+    severity: severities,
+    problems: problems.map((message) => `plumbline.severity: ${message}`),
     diagnostics: {
       delay:
         typeof delay === "number" && 0 <= delay && delay <= LONGEST_DELAY

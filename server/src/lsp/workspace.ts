@@ -1,4 +1,5 @@
 import type { TextDocumentContentChangeEvent } from "vscode-languageserver";
+import type { ReadNote } from "../files/readNote.ts";
 import type { Flavour } from "../notation/document.ts";
 import {
   CONFIGURATION_FILE,
@@ -21,10 +22,10 @@ export interface OpenNote {
   version: number;
 }
 
-/** What a client tells of files on the disk. */
+/** What a client tells of files on the disk, or of a note whose editor is closed. */
 export interface FileChange {
   readonly uri: string;
-  readonly kind: "created" | "changed" | "deleted";
+  readonly kind: "created" | "changed" | "deleted" | "closed";
 }
 
 /** A folder of the window, or the one that a note outside all folders has for itself. */
@@ -34,6 +35,8 @@ interface Root {
   readonly folder: Folder;
   /** The URI that each note is held by, by its key. */
   readonly held: Map<string, string>;
+  /** Keys of what the folder's notes are, whether they can be read or not. */
+  readonly listed: Set<string>;
   /** Keys of notes that are there and cannot be read: they may be mended. */
   readonly refused: Set<string>;
   /** What the folder's `plumbline.json` says. */
@@ -93,13 +96,16 @@ export class Workspace {
   /** Takes in the folder's `plumbline.json`. True where it says something else now. */
   async #configure(root: Root): Promise<boolean> {
     if (root.uri === null) return false;
-    const text = await this.#files.readIn(root.uri, CONFIGURATION_FILE).catch(() => null);
+    const file = await this.#files
+      .readIn(root.uri, CONFIGURATION_FILE)
+      .catch((error: unknown) => ({ problem: `It cannot be read: ${String(error)}` }));
+    const text = file && "text" in file ? file.text : null;
     const { configuration, problems } =
-      text === null ? { configuration: noConfiguration, problems: [] } : readConfiguration(text);
+      text === null ? { configuration: noConfiguration, problems: unread(file) } : readConfiguration(text);
     const before = JSON.stringify(root.configuration);
     root.configuration = configuration;
     this.#applySeverities(root);
-    this.#configurationRead(`${root.uri.replace(/\/$/, "")}/${CONFIGURATION_FILE}`, text, problems);
+    this.#configurationRead(configurationUri(root.uri), text, problems);
     return JSON.stringify(configuration) !== before;
   }
 
@@ -145,7 +151,9 @@ export class Workspace {
   /** Takes a folder away; what an outer folder now holds again is read there. */
   async removeFolder(uri: string): Promise<void> {
     const base = baseOf(uri);
-    if (!this.#roots.delete(base)) return;
+    const root = this.#roots.get(base);
+    if (!root || !this.#roots.delete(base)) return;
+    this.#configurationRead(configurationUri(root.uri ?? uri), null, []);
     this.#moveOpenNotes();
     const outer = this.#rootOf(base);
     if (outer) await this.#synchronise(outer);
@@ -187,6 +195,8 @@ export class Workspace {
       const key = uriKey(uri);
       const root = this.#rootOf(key);
       if (!root || isNeverEntered(root, key)) continue;
+      // An ignored note counts as long as an editor has it open.
+      if (kind === "closed" && !root.listed.has(key)) looked.add(root);
       if (kind === "deleted") changed = this.#dropBelow(root, key) || changed;
       if (root.held.has(key) || root.refused.has(key))
         changed = (await this.#read(root, key, uri)) || changed;
@@ -207,7 +217,7 @@ export class Workspace {
   /** Brings a folder in step with the disk. */
   async #synchronise(root: Root): Promise<boolean> {
     if (root.uri === null) return false;
-    const found = await this.#files.listNotes(root.uri).catch((error: unknown) => {
+    const found = await this.#files.listNotes(root.uri, this.#log).catch((error: unknown) => {
       this.#log(`${root.uri} cannot be read: ${String(error)}`);
       return [];
     });
@@ -219,6 +229,8 @@ export class Workspace {
       const key = uriKey(uri);
       if (this.#rootOf(key) === root && !leavesOut(decodedPath(key.slice(base.length)))) there.set(key, uri);
     }
+    root.listed.clear();
+    for (const key of there.keys()) root.listed.add(key);
     let changed = false;
     for (const key of [...root.held.keys()]) {
       if (!there.has(key) && !this.#open.has(key)) changed = this.#drop(root, key) || changed;
@@ -306,7 +318,14 @@ export class Workspace {
 
   #newRoot(uri: string | null): Root {
     const folder = createFolder({ today: this.#today() });
-    const root = { uri, folder, held: new Map(), refused: new Set<string>(), configuration: noConfiguration };
+    const root: Root = {
+      uri,
+      folder,
+      held: new Map(),
+      listed: new Set(),
+      refused: new Set(),
+      configuration: noConfiguration,
+    };
     this.#applySeverities(root);
     return root;
   }
@@ -328,6 +347,15 @@ function baseOf(uri: string): string {
 function isNeverEntered({ uri }: Root, key: string): boolean {
   const inside = uri === null ? "" : key.slice(baseOf(uri).length - 1);
   return /\/(\.git|node_modules)(\/|$)/.test(inside);
+}
+
+function configurationUri(folder: string): string {
+  return `${folder.replace(/\/$/, "")}/${CONFIGURATION_FILE}`;
+}
+
+/** What is told of a file that is there and cannot be read. */
+function unread(file: ReadNote | null): readonly ConfigurationProblem[] {
+  return file && "problem" in file ? [{ message: file.problem, start: 0, end: 0 }] : [];
 }
 
 function isConfiguration({ uri }: Root, key: string): boolean {

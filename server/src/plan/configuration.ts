@@ -1,14 +1,7 @@
-import {
-  findNodeAtLocation,
-  getNodeValue,
-  type Node,
-  type ParseError,
-  parseTree,
-  printParseErrorCode,
-} from "jsonc-parser";
+import { findNodeAtLocation, type Node, type ParseError, parseTree, printParseErrorCode } from "jsonc-parser";
 import { findingCodes } from "../notation/codes.ts";
 import { nearestWord } from "../notation/spelling.ts";
-import type { FindingCode } from "./findings.ts";
+import { catalogue, type FindingCode } from "./findings.ts";
 import { type Level, levels, type Severities } from "./severities.ts";
 
 /** The name of the file, in the root of a folder of notes. */
@@ -51,7 +44,7 @@ export function readConfiguration(text: string): {
   }
   const tell = (node: Node, message: string) =>
     problems.push({ message, start: node.offset, end: node.offset + node.length });
-  for (const { key } of properties(root)) checkKey(key, tell);
+  for (const { key } of properties(root, tell)) checkKey(key, tell);
   const configuration: Configuration = {
     severity: readSeverity(findNodeAtLocation(root, ["severity"]), tell),
     exclude: readExclude(findNodeAtLocation(root, ["exclude"]), tell),
@@ -74,33 +67,54 @@ function checkKey(key: Node, tell: Tell): void {
   );
 }
 
-function properties(node: Node): readonly { readonly key: Node; readonly value: Node }[] {
+function properties(node: Node, tell: Tell): readonly { readonly key: Node; readonly value: Node }[] {
+  const seen = new Set<string>();
   return (node.children ?? []).flatMap(({ children }) => {
     const [key, value] = children ?? [];
-    return key && value ? [{ key, value }] : [];
+    if (!key || !value) return [];
+    const name = String(key.value);
+    if (seen.has(name)) tell(key, `"${name}" is given twice: take one out.`);
+    seen.add(name);
+    return [{ key, value }];
   });
 }
+
+const severityForm = 'severity is an object of codes and levels, such as { "bank-over-advice": "error" }.';
 
 function readSeverity(node: Node | undefined, tell: Tell): Severities {
   if (!node) return {};
   if (node.type !== "object") {
-    tell(node, 'severity is an object of codes and levels, such as { "bank-over-advice": "error" }.');
+    tell(node, severityForm);
     return {};
   }
   const severities: { -readonly [Code in FindingCode]?: Level } = {};
-  for (const { key, value } of properties(node)) {
+  for (const { key, value } of properties(node, tell)) {
     const code = String(key.value);
-    const level = levels.find((one) => one === value.value);
-    if (!isCode(code)) {
-      const near = nearestWord(code, findingCodes);
-      tell(
-        key,
-        `"${code}" is not the code of a finding${near ? `; did you mean "${near}"?` : ": the Problems list shows them."}`,
-      );
-    } else if (!level) tell(value, `The level of ${code} is "error", "warning" or "information".`);
-    else severities[code] = level;
+    const wrong = mistakeIn(code, value.value);
+    if (wrong === null) severities[code as FindingCode] = value.value as Level;
+    else tell(wrong.at === "code" ? key : value, wrong.message);
   }
   return severities;
+}
+
+/** What is wrong with a code's level, in the code or in the level; null where it holds. */
+function mistakeIn(
+  code: string,
+  level: unknown,
+): { readonly at: "code" | "level"; readonly message: string } | null {
+  if (!isCode(code)) {
+    const near = nearestWord(code, findingCodes);
+    const way = near ? `; did you mean "${near}"?` : ": the Problems list shows them.";
+    return { at: "code", message: `"${code}" is not the code of a finding${way}` };
+  }
+  if (!levels.some((one) => one === level))
+    return { at: "level", message: `The level of ${code} is "error", "warning" or "information".` };
+  if (catalogue[code].severity === "error" && level !== "error")
+    return {
+      at: "level",
+      message: `${code} is an error, and an error is never lowered: write "error", or take it out.`,
+    };
+  return null;
 }
 
 function isCode(code: string): code is FindingCode {
@@ -109,11 +123,26 @@ function isCode(code: string): code is FindingCode {
 
 function readExclude(node: Node | undefined, tell: Tell): readonly string[] {
   if (!node) return [];
-  const value: unknown = getNodeValue(node);
-  if (Array.isArray(value) && value.every((one) => typeof one === "string" && one.trim() !== ""))
-    return value;
-  tell(node, 'exclude is a list of patterns as .gitignore writes them, such as ["drafts/"].');
-  return [];
+  if (node.type !== "array") {
+    tell(node, 'exclude is a list of patterns as .gitignore writes them, such as ["drafts/"].');
+    return [];
+  }
+  return (node.children ?? []).flatMap((one) => {
+    const message = mistakeInPattern(one.value);
+    if (message) tell(one, message);
+    return message ? [] : [one.value as string];
+  });
+}
+
+/** Patterns that would leave out nothing, and nobody would know. */
+function mistakeInPattern(pattern: unknown): string | null {
+  if (typeof pattern !== "string" || pattern.trim() === "")
+    return 'A pattern is a text as .gitignore writes it, such as "drafts/".';
+  if (pattern.startsWith("../")) return "Only what lies in this folder can be left out.";
+  if (pattern.startsWith("./"))
+    return `Patterns start at this folder by themselves: write "${pattern.slice(1)}".`;
+  if (pattern.startsWith("#")) return "A pattern that begins with # is a remark, and leaves nothing out.";
+  return pattern.includes("\\") ? "Folders are separated by / in a pattern." : null;
 }
 
 function readFailOn(node: Node | undefined, tell: Tell): Configuration["failOn"] {
@@ -128,11 +157,16 @@ function spaced(code: string): string {
   return code.replace(/([a-z])([A-Z])/g, "$1 $2").toLowerCase();
 }
 
-/** What a setting of the same shape says; what is none of the known codes and levels does not count. */
-export function severitiesOf(raw: unknown): Severities {
-  if (typeof raw !== "object" || raw === null) return {};
-  const known = Object.entries(raw).filter(
-    ([code, level]) => isCode(code) && levels.some((one) => one === level),
-  );
-  return Object.fromEntries(known) as Severities;
+/** What a setting of the same shape says; what is none of the known codes and levels does not count, and is told. */
+export function severitiesOf(raw: unknown): {
+  readonly severities: Severities;
+  readonly problems: readonly string[];
+} {
+  if (raw === undefined || raw === null) return { severities: {}, problems: [] };
+  if (typeof raw !== "object" || Array.isArray(raw)) return { severities: {}, problems: [severityForm] };
+  const read = Object.entries(raw).map((entry) => ({ entry, wrong: mistakeIn(...entry) }));
+  return {
+    severities: Object.fromEntries(read.filter(({ wrong }) => !wrong).map(({ entry }) => entry)),
+    problems: read.flatMap(({ wrong }) => wrong?.message ?? []),
+  };
 }
