@@ -9,7 +9,7 @@ import { eventually } from "../support/eventually.ts";
 const cli = fileURLToPath(new URL("../../dist/server/cli.cjs", import.meta.url));
 const card = "| aircraft wheatear-9; basis vsr; reference 9 t\n| config clean stall 95 kt\n";
 const note = (bank: number) =>
-  `| limits own\n| must any bank 30\n\n| fly wheatear-9; under own; weight 8 t; config clean; altitude FL100; speed 180 kt\n\n| phase cruise; bank ${bank}\n`;
+  `| limits own\n| must any bank 30; must any margin none\n\n| fly wheatear-9; under own; weight 8 t; config clean; altitude FL100; speed 180 kt\n\n| phase cruise; bank ${bank}\n`;
 
 let folder = "";
 let child: ChildProcess;

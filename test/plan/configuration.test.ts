@@ -17,6 +17,8 @@ const text = `| aircraft testbed-1; basis vsr; reference 55 t; warning 1.03
 | fly testbed-1; under own; weight 50 t; config clean; altitude FL100; speed 220 kt
 
 | phase cruise; bank 35; accept overshoot-short to 20 because "a test"
+
+| phase climb; bank 25; accept overshoot-short to 20 because "a test"
 `;
 
 function told(severities: Severities): Record<string, string> {

@@ -15,7 +15,7 @@ const card = `| aircraft testbed-1; basis vsr; reference 55 t; mass 33 t to 59 t
 `;
 
 function file(point: string, { rows = "", own = card, setting = "altitude FL100; speed 220 kt" } = {}) {
-  const text = `${own}\n| limits own${rows}\n\n| fly testbed-1; under own; weight 50 t; config clean; ${setting}\n\n${point}\n`;
+  const text = `${own}\n| limits own${rows}\n| should any bank none\n| should any margin none\n\n| fly testbed-1; under own; weight 50 t; config clean; ${setting}\n\n${point}\n`;
   return fileJson(createFolder({ today: "2026-12-01" }).open("file:///note.plumb", text, "plumb"), "note");
 }
 

@@ -1,4 +1,5 @@
 import { describe, expect, it } from "vitest";
+import { phases } from "../../server/src/notation/vocabulary.ts";
 import { createFolder } from "../../server/src/plan/createFolder.ts";
 import { fileJson, type PointJson } from "../../server/src/report/pointsJson.ts";
 
@@ -7,9 +8,12 @@ const card = `| aircraft testbed-1; basis vsr; reference 55 t; warning 1.03
 | config flaps-30 stall 106 kt, landing, takeoff
 `;
 
+/** The limits leave the other subject open, and say so. */
+const open = "\n| should any bank none\n| should any margin none";
+
 function file(rows: string, points: string, more = "") {
   const folder = createFolder({ today: "2026-12-01" });
-  const text = `${card}${more}\n| limits own${rows}\n\n| fly testbed-1; under own; weight 55 t; config clean; altitude FL100; speed 220 kt\n\n${points}\n`;
+  const text = `${card}${more}\n| limits own${rows}${open}\n\n| fly testbed-1; under own; weight 55 t; config clean; altitude FL100; speed 220 kt\n\n${points}\n`;
   return fileJson(folder.open("file:///note.plumb", text, "plumb"), "note");
 }
 
@@ -139,7 +143,7 @@ describe("rows of limits", () => {
   it("hold a ratio on the vs basis against vs", () => {
     const vs = card.replace("vsr", "vs 0.94");
     const text = (speed: string) =>
-      `${vs}\n| limits own\n| must any ratio 1.23, vs 1.3\n\n| fly testbed-1; under own; weight 55 t; config clean; altitude FL050\n\n| phase cruise; speed ${speed} vs\n`;
+      `${vs}\n| limits own\n| must any ratio 1.23, vs 1.3\n| must any bank none\n\n| fly testbed-1; under own; weight 55 t; config clean; altitude FL050\n\n| phase cruise; speed ${speed} vs\n`;
     const codes = (speed: string) => {
       const note = createFolder({ today: "2026-12-01" }).open("file:///note.plumb", text(speed), "plumb");
       return note.findings().map(({ finding }) => finding.code);
@@ -282,4 +286,101 @@ describe("what cannot be checked does not pass for checked", () => {
       "out-of-range error",
     );
   });
+});
+
+describe("what no row bounds", () => {
+  /** The findings of a point in cruise under these rows alone, and what is listed as not evaluated. */
+  function unbounded(rows: readonly string[], point = "bank 50", own = card) {
+    const limits = ["| limits own", ...rows.map((row) => `| ${row}`)].join("\n");
+    const text = `${own}\n${limits}\n\n| fly testbed-1; under own; weight 55 t; config clean; altitude FL100; speed 220 kt\n\n| phase cruise; ${point}\n`;
+    const note = createFolder({ today: "2026-12-01" }).open("file:///note.plumb", text, "plumb");
+    return {
+      told: note
+        .findings()
+        .map(({ finding }) => finding)
+        .filter(({ code }) => code === "unbounded"),
+      listed: fileJson(note, "note").points[0]?.not_evaluated as { rule: string; why: string }[],
+      codes: note.findings().map(({ finding }) => finding.code),
+      note,
+    };
+  }
+
+  it("is told at the point and listed there: the bank and the margin", () => {
+    const { told, listed } = unbounded(["must departure, landing bank 30"]);
+    expect(told).toMatchObject([
+      {
+        severity: "warning",
+        message:
+          "Nothing in own bounds the bank in cruise, so it is not held here: write a row with its figure (`must cruise bank`), or with `none` where no limit is meant. Nothing in own asks for a margin over the stall in cruise, so only the stall itself and its warning are checked here: write a row with its figure (`must cruise ratio`, `margin` or `overshoot`), or with `none` where no limit is meant.",
+      },
+    ]);
+    expect(listed).toContainEqual({ rule: "bank", why: "Nothing in own bounds the bank in cruise." });
+    expect(listed.map(({ rule }) => rule)).toContain("margin");
+  });
+
+  it("says that the warning is not checked either where the card states none", () => {
+    const { told } = unbounded(["must any bank 60"], "bank 20", card.replace("; warning 1.03", ""));
+    expect(told).toHaveLength(1);
+    expect(told[0]?.message).toContain("so only the stall itself is checked here");
+  });
+
+  it.each([
+    ["a row of another phase", ["must climb bank 30", "must climb margin 1.1"], 2],
+    ["a row whose condition does not hold", ["must any bank 30 when engine-out", "must any ratio 1.2"], 1],
+    ["a row of another level", ["must any bank 30 above FL200", "must any ratio 1.2"], 1],
+    ["a margin after a shear that is not there", ["must any bank 60", "must any margin 1.1 after shear"], 1],
+    ["a row of another subject", ["must any load 2", "must any radius 3 nm", "must any buffet none"], 2],
+    ["advice", ["should any bank 60", "should any overshoot 5"], 0],
+    ["each of the margins", ["must any bank 60", "must any margin 1.1"], 0],
+    ["and", ["must any bank 60", "must any ratio 1.1"], 0],
+    ["`none`", ["must cruise bank none", "must any overshoot none"], 0],
+  ] as const)("with %s", (_, rows, missing) => {
+    const { told } = unbounded(rows);
+    expect(told.flatMap(({ message }) => message.match(/Nothing in own/g) ?? [])).toHaveLength(missing);
+  });
+
+  it("is not told where a row is in error, which is told already", () => {
+    const { told, codes } = unbounded(["must any bank 3O", "must any ratio 1.2"]);
+    expect(told).toEqual([]);
+    expect(codes).toContain("broken-definition");
+  });
+
+  it("is told at limits without a row, whose fix takes the built-in ones", () => {
+    const { told, note } = unbounded([]);
+    expect(told.map(({ message }) => message)).toContainEqual(
+      expect.stringMatching(/^own has no row, so it limits nothing: write one below/),
+    );
+    const [fix] = told.flatMap(({ fixes }) => fixes);
+    expect(fix?.edits).toHaveLength(1);
+    for (const { start, end, newText } of fix?.edits ?? [])
+      note.edit({ line: 4, character: start }, { line: 4, character: end }, newText);
+    expect(note.document.lineText(4)).toBe("| limits own, from common-practice");
+    expect(note.findings().map(({ finding }) => finding.code)).toEqual(["bank-over-limit"]);
+  });
+
+  it("is no answer to `?`, which is sought all the same", () => {
+    const { told, note } = unbounded(["must any margin 1.2"], "bank ?");
+    expect(told).toHaveLength(1);
+    const [point] = fileJson(note, "note").points;
+    expect(point?.solved).toMatchObject({ value: expect.any(Number), boundBy: "must any margin 1.2" });
+  });
+
+  it("is never so under the built-in limits, in any phase and under any rules", () => {
+    for (const phase of phases)
+      for (const rules of ["", "; rules ifr", "; rules vfr"]) {
+        const text = `${card}\n| fly testbed-1${rules}; weight 50 t; config clean; altitude FL310; speed 220 kt\n\n| phase ${phase}; speed 220 kt\n\n| phase ${phase}; altitude 3000 ft; emergency\n`;
+        const note = createFolder({ today: "2026-12-01" }).open("file:///note.plumb", text, "plumb");
+        expect(note.findings().map(({ finding }) => finding.code)).not.toContain("unbounded");
+      }
+  });
+});
+
+it("a bank over its limit is not told to be over the advice too", () => {
+  const rows = "\n| must any bank 30\n| should any bank 25";
+  expect(told(rows, "| phase cruise; bank 28")).toEqual(["bank-over-advice warning"]);
+  const { findings } = file(rows, "| phase cruise; bank 35");
+  expect(findings.map(({ code }) => code)).toEqual(["bank-over-limit"]);
+  expect(findings[0]?.message).toBe(
+    "Bank 35° exceeds the 30° that own allows in cruise and the 25° that it advises: bank 25° or less; at 220 kt the warning would come at 65°.",
+  );
 });

@@ -84,6 +84,8 @@ function noteText(one: Drawn, sought: Unknown, value: string): string {
   const config = one.card === "testbed-2" ? "clean" : one.config;
   return `${definitions}
 | limits own${one.rows.map((row) => `\n| ${row}`).join("")}
+| should any bank none
+| should any margin none
 
 | fly ${one.card}; under own; isa ${one.isa < 0 ? "" : "+"}${one.isa}; config ${config}
 

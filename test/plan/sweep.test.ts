@@ -11,6 +11,7 @@ const card = `| aircraft testbed-1; basis vsr; reference 55 t; mass 33 t to 59 t
 
 | limits own
 | must any bank 40
+| must any margin none
 
 | fly testbed-1; under own; weight 50 t; config clean; altitude FL100; speed 220 kt
 `;
@@ -67,7 +68,7 @@ describe("a sweep", () => {
     expect(point?.bank_deg).toBeCloseTo(45);
     const [finding] = note.findings();
     expect(finding?.finding.message).toBe(
-      "At bank 45: Bank 45° exceeds the 40° that own allows in cruise; at 220 kt the warning would come at 67°. So it is at 60 too.",
+      "At bank 45: Bank 45° exceeds the 40° that own allows in cruise: bank 40° or less; at 220 kt the warning would come at 67°. So it is at 60 too.",
     );
   });
 

@@ -11,7 +11,7 @@ const card = `| aircraft testbed-1; basis vsr; reference 55 t; warning 1.03
 
 | limits own
 | must any bank 30
-| should any bank 20
+| should any bank 20; must any margin none
 
 | fly testbed-1; under own; weight 50 t; config clean; altitude FL100; speed 220 kt
 `;
@@ -39,9 +39,11 @@ function parsed(text: string) {
 
 describe("workflow commands", () => {
   it("name the place, the code and the sentence, with what would end them written otherwise", () => {
-    expect(githubCommands([file("| phase cruise; bank 35; contamination 0 %")])).toBe(
-      "::error file=plans/a%2C b%3A c%25.plumb,line=10,col=17,endLine=10,endColumn=24,title=bank-over-limit::Bank 35° exceeds the 30° that own allows in cruise; at 220 kt the warning would come at 67°.\n" +
-        "::warning file=plans/a%2C b%3A c%25.plumb,line=10,col=17,endLine=10,endColumn=24,title=bank-over-advice::Bank 35° exceeds the 20° that own advises in cruise; at 220 kt the warning would come at 67°.\n",
+    expect(
+      githubCommands([file("| phase cruise; bank 35; contamination 0 %\n\n| phase climb; bank 25")]),
+    ).toBe(
+      "::error file=plans/a%2C b%3A c%25.plumb,line=10,col=17,endLine=10,endColumn=24,title=bank-over-limit::Bank 35° exceeds the 30° that own allows in cruise and the 20° that it advises: bank 20° or less; at 220 kt the warning would come at 67°.\n" +
+        "::warning file=plans/a%2C b%3A c%25.plumb,line=12,col=16,endLine=12,endColumn=23,title=bank-over-advice::Bank 25° exceeds the 20° that own advises in climb: bank 20° or less; at 220 kt the warning would come at 67°.\n",
     );
   });
 

@@ -89,7 +89,12 @@ export function patience(
 }
 
 function placesOf(findings: readonly PlacedFinding[]): readonly Shown[] {
-  return findings.map(({ line, finding }) => ({ code: finding.code, line }));
+  return findings.map(({ line, finding }) => ({ code: kindOf(finding), line }));
+}
+
+/** A bank over its limit is not told to be over the advice too: what only got worse is no new finding. */
+function kindOf({ code }: PlacedFinding["finding"]): string {
+  return code === "bank-over-advice" ? "bank-over-limit" : code;
 }
 
 /** The findings that were shown before: as many of a code as there were, those nearest to where they stood. */
@@ -98,7 +103,7 @@ function stillThere(findings: readonly PlacedFinding[], before: readonly Shown[]
   for (const { code, line } of before) left.set(code, [...(left.get(code) ?? []), line]);
   const kept = new Set<PlacedFinding>();
   for (const [code, lines] of left) {
-    const own = findings.filter(({ finding }) => finding.code === code);
+    const own = findings.filter(({ finding }) => kindOf(finding) === code);
     for (const line of lines) {
       const nearest = own
         .filter((one) => !kept.has(one))

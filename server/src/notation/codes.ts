@@ -61,6 +61,7 @@ export const findingCodes = [
   "carried-over",
   "contaminated-takeoff",
   "not-evaluated",
+  "unbounded",
   "claim-stale",
   "claim-unchecked",
   "not-as-expected",

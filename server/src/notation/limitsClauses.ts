@@ -1,4 +1,5 @@
 import type { Cursor } from "./cursor.ts";
+import { orListed } from "./orListed.ts";
 import type { ClauseReader } from "./planClauses.ts";
 import { readQuantity } from "./quantities.ts";
 import { nearestWord } from "./spelling.ts";
@@ -74,7 +75,7 @@ function readPhases(cursor: Cursor) {
     cursor.report(
       "unknown-phase",
       span,
-      `${typed} is no phase: write any, emergency, or ${phases.join(", ").replace(/, ([^,]*)$/, " or $1")}.`,
+      `${typed} is no phase: write any, emergency, or ${orListed(phases)}.`,
       nearest
         ? [{ title: `Write ${nearest}`, preferred: true, edits: [{ line: 0, ...span, newText: nearest }] }]
         : [],
@@ -103,7 +104,7 @@ function readSubject(cursor: Cursor) {
     cursor.report(
       "unexpected-text",
       span,
-      `${typed} is nothing a row can bound: write ${subjects.join(", ").replace(/, ([^,]*)$/, " or $1")}.`,
+      `${typed} is nothing a row can bound: write ${orListed(subjects)}.`,
       nearest
         ? [{ title: `Write ${nearest}`, preferred: true, edits: [{ line: 0, ...span, newText: nearest }] }]
         : [],

@@ -11,6 +11,7 @@ const besides = new Set<FindingCode>([
   "accept-refused",
   "carried-over",
   "built-in-limits",
+  "unbounded",
   "published-below-least",
   "broken-definition",
   "turn-into-dead-engine",

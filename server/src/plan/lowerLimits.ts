@@ -55,6 +55,7 @@ export function lowerLimits(block: Block, uri: string): LimitsDraft {
       ),
     );
   }
+  if (body && !body.from && rows.length === 0 && lost.length === 0) findings.push(noRows(block, head, name));
   const unknown = block.clauses.find((placed) => placed.clause.keyword === null);
   return {
     name,
@@ -74,6 +75,27 @@ export function lowerLimits(block: Block, uri: string): LimitsDraft {
     lost,
     findings,
   };
+}
+
+function noRows(block: Block, head: PlacedClause, name: string): Finding {
+  const { end } = head.clause.span;
+  // Behind a title that is not closed nothing can be written.
+  const sound = !block.findings.some(({ line }) => line === head.line);
+  return findingAt(
+    "unbounded",
+    head,
+    `${name} has no row, so it limits nothing: write one below, as in \`must any bank\` and its figure, or take those of ${BUILT_IN_NAME} with \`, from ${BUILT_IN_NAME}\`.`,
+    {
+      fixes: sound
+        ? [
+            {
+              title: `Take the rows of ${BUILT_IN_NAME}`,
+              edits: [{ line: head.line, start: end, end, newText: `, from ${BUILT_IN_NAME}` }],
+            },
+          ]
+        : [],
+    },
+  );
 }
 
 const measuredAs: Readonly<Record<Subject, Measured>> = {

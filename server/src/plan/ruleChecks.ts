@@ -1,4 +1,5 @@
 import type { ResultName, Subject } from "../notation/vocabulary.ts";
+import { checkBounds } from "./boundChecks.ts";
 import { type Checking, carriedFrom, clauseFor, tell } from "./checks.ts";
 import type { Corners } from "./corners.ts";
 import type { FindingCode } from "./findings.ts";
@@ -42,7 +43,7 @@ export function checkRules(checking: Checking): RuleOutcome {
   });
   const basis = ready.card.basis?.value;
   const vsFactor = basis?.kind === "vs" ? basis.factor : null;
-  const rows: HeldRow[] = [];
+  const held: Held[] = [];
   const notEvaluated = limits.lost.map((rule) => ({ rule, why: "The row is in error, so it is not held." }));
   for (const group of selected.groups) {
     const flown = group.afterShear ? evaluated.sheared : corners;
@@ -54,17 +55,29 @@ export function checkRules(checking: Checking): RuleOutcome {
       continue;
     }
     if (notApplicable(group.subject, flown)) continue;
-    const held = strictest(group.rows.map((row) => holdRow(row, { corners: flown, vsFactor })));
-    if (!held) continue;
-    rows.push(held);
-    if (held.holds === false) tellBroken(checking, held, flown);
-    else if (held.holds === null) {
-      const why = evaluated.absent(resultOf[held.row.subject]) ?? "It is not known here.";
-      notEvaluated.push({ rule: held.row.text, why });
-      tellNotEvaluated(checking, held.row, why);
+    const one = strictest(group.rows.map((row) => holdRow(row, { corners: flown, vsFactor })));
+    if (one) held.push({ ...one, corners: flown });
+  }
+  const bankBroken = (verb: Row["verb"]) =>
+    held.find(({ row, holds }) => row.verb === verb && row.subject === "bank" && holds === false) ?? null;
+  const advice = bankBroken("must") && bankBroken("should");
+  for (const one of held) {
+    // Who banks less for the limit meets the advice on the way: its figure stands in the same sentence.
+    if (one.holds === false && one !== advice) tellBroken(checking, one, advice);
+    else if (one.holds === null) {
+      const why = evaluated.absent(resultOf[one.row.subject]) ?? "It is not known here.";
+      notEvaluated.push({ rule: one.row.text, why });
+      tellNotEvaluated(checking, one.row, why);
     }
   }
+  notEvaluated.push(...checkBounds(checking, limits, selected));
+  const rows = held.map(({ corners: _, ...row }) => row);
   return { rows, off: selected.off, notEvaluated };
+}
+
+/** A row with the corners it was held at, which after a shear are others. */
+interface Held extends HeldRow {
+  readonly corners: Corners;
 }
 
 const resultOf: Readonly<Record<Subject, ResultName>> = {
@@ -107,7 +120,7 @@ function severityOf(checking: Checking, row: Row) {
   return checking.point.clauses.emergency && row.verb === "should" ? oneStepLower(severity) : severity;
 }
 
-function tellBroken(checking: Checking, held: HeldRow, corners: Corners): void {
+function tellBroken(checking: Checking, held: Held, advice: Held | null): void {
   const { point } = checking;
   const { row } = held;
   const code = ruleCode(row);
@@ -117,8 +130,8 @@ function tellBroken(checking: Checking, held: HeldRow, corners: Corners): void {
       : row.subject === "load"
         ? "load"
         : "speed";
-  const fix = row.subject === "ratio" ? ratioFix(checking, held, corners) : null;
-  tell(checking, code, clauseFor(point, keyword), message(checking, held, corners), {
+  const fix = row.subject === "ratio" ? ratioFix(checking, held, held.corners) : null;
+  tell(checking, code, clauseFor(point, keyword), message(checking, held, advice), {
     severity: severityOf(checking, row),
     rule: row.text,
     ...(held.figure === null ? {} : { figure: held.figure }),
@@ -130,9 +143,9 @@ function tellBroken(checking: Checking, held: HeldRow, corners: Corners): void {
   });
 }
 
-function message(checking: Checking, held: HeldRow, corners: Corners): string {
+function message(checking: Checking, held: Held, advice: Held | null): string {
   const { point } = checking;
-  const { row, bound } = held;
+  const { row, bound, corners } = held;
   const figure = held.figure ?? Number.NaN;
   const rule = `${point.limits.name} ${row.verb === "must" ? "allows" : "advises"} in ${point.phase}`;
   const asks = (least: string) =>
@@ -142,7 +155,12 @@ function message(checking: Checking, held: HeldRow, corners: Corners): string {
     case "bank": {
       const [flown, most] = formatDistinct(figure, bound, formatBank);
       const why = held.byRateOne ? ", the bank for rate one" : "";
-      return `${lead}Bank ${flown} exceeds the ${most} that ${rule}${why}; ${warningAt(checking)}.`;
+      const advised = advice ? formatBank(advice.bound) : null;
+      const too = advised ? ` and the ${advised} that it advises` : "";
+      // With a tolerance of its own the bank to write is less than the bound.
+      const varies = corners.all.some((one) => one.bank !== corners.nominal.bank);
+      const way = varies ? "bank less" : `bank ${advised ?? most} or less`;
+      return `${lead}Bank ${flown} exceeds the ${most} that ${rule}${why}${too}: ${way}${warningAt(checking)}.`;
     }
     case "load": {
       const [flown, most] = formatDistinct(figure, bound, (value, more) =>
@@ -209,9 +227,9 @@ function warningAt({ evaluated }: Checking): string {
   const at = evaluated.results["warning-bank"];
   const stall = evaluated.results["stall-bank"];
   const speed = formatSpeed(nominal.cas);
-  if (at) return `at ${speed} the warning would come at ${formatResultValue("warning-bank", at.low)}`;
-  if (stall) return `at ${speed} the stall would come at ${formatResultValue("stall-bank", stall.low)}`;
-  return "bank less";
+  if (at) return `; at ${speed} the warning would come at ${formatResultValue("warning-bank", at.low)}`;
+  if (stall) return `; at ${speed} the stall would come at ${formatResultValue("stall-bank", stall.low)}`;
+  return "";
 }
 
 /** The knots that the ratio lacks, rounded up. */

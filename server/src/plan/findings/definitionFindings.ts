@@ -1,4 +1,4 @@
-import { entry, flown, ruled, wheatear } from "./entry.ts";
+import { entry, flown, limited, ruled, wheatear } from "./entry.ts";
 
 /** Findings about cards, limits, names and values. */
 export const definitionFindings = {
@@ -92,6 +92,13 @@ export const definitionFindings = {
     "A row of the limits needs a figure that is not known here, so the plan was not checked against it. A plan that was not checked must not look like one that passed. Give the card or the point what the row needs, or switch the row off with `none`, which is then listed. For a `should` row it is a warning.",
     ruled("must any buffet 1.3", "| phase cruise"),
     ruled("must any buffet none", "| phase cruise"),
+  ),
+  unbounded: entry(
+    "warning",
+    "the limits do not bound it here",
+    "No row of the limits in use bounds the bank of the point, or none keeps its speed off the stall (`ratio`, `margin` or `overshoot`), with the phase, the altitude and the conditions it has. Without `from` only the rows hold that the limits themselves write, and a phase without a row has no limit: what was not checked must not look like what passed. Write the row, begin the limits with `from common-practice`, or write the row with `none` where no limit is meant; that is then listed at the point.",
+    limited("must takeoff, landing bank 30", "must any ratio 1.2"),
+    limited("must any bank 30", "must any ratio 1.2"),
   ),
   "carried-over": entry(
     "warning",

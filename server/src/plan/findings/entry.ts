@@ -39,7 +39,13 @@ export function flown(point: string, more = ""): string {
   return `${wheatear}${more}\n${cruising}\n${point}\n`;
 }
 
-/** The same under limits that hold one row. */
+/** The same under limits that add one row to the built-in ones. */
 export function ruled(row: string, point: string, more = ""): string {
-  return `${wheatear}${more}\n| limits own-rules\n| ${row}\n\n| under own-rules\n${cruising}\n${point}\n`;
+  return `${wheatear}${more}\n| limits own-rules, from common-practice\n| ${row}\n\n| under own-rules\n${cruising}\n${point}\n`;
+}
+
+/** A point in cruise under limits that hold these rows alone. */
+export function limited(...rows: readonly string[]): string {
+  const limits = ["| limits own-rules", ...rows.map((row) => `| ${row}`)].join("\n");
+  return `${wheatear}\n${limits}\n\n| under own-rules\n${cruising}\n| phase cruise; bank 20\n`;
 }

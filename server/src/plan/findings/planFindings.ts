@@ -91,7 +91,7 @@ export const planFindings = {
   "bank-over-advice": entry(
     "warning",
     "more bank than the limits advise",
-    "The bank, at the steep end of its tolerance, exceeds a `should` row of the limits for this phase: not forbidden, but a reason is due. With `or rate-one` the bank that gives 3 degrees a second counts where it is less.",
+    "The bank, at the steep end of its tolerance, exceeds a `should` row of the limits for this phase: not forbidden, but a reason is due. Where the `must` row is exceeded too, `bank-over-limit` tells of both. With `or rate-one` the bank that gives 3 degrees a second counts where it is less.",
     flown("| phase departure; rules ifr; bank 28"),
     flown("| phase departure; rules ifr; bank 20"),
   ),
