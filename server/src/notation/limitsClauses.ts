@@ -1,14 +1,13 @@
 import type { Cursor } from "./cursor.ts";
-import { orListed } from "./orListed.ts";
 import type { ClauseReader } from "./planClauses.ts";
 import { readQuantity } from "./quantities.ts";
-import { nearestWord } from "./spelling.ts";
 import type { ClauseBody, Name, Quantity, RowCondition, RowPhase } from "./tree.ts";
 import type { QuantityKind } from "./units.ts";
-import { phases, type Subject, subjects, synonyms } from "./vocabulary.ts";
-import { readName, readTitle, takeComma, wordAfterComma } from "./words.ts";
+import { keywordOf, phases, type Subject, subjects, synonyms } from "./vocabulary.ts";
+import { readName, readTitle, takeComma, tellUnknownWord, wordAfterComma } from "./words.ts";
 
-const rowPhases: readonly RowPhase[] = ["any", "emergency", ...phases];
+/** What a row may say where a phase is due. */
+export const rowPhases: readonly RowPhase[] = ["any", "emergency", ...phases];
 
 /** What a subject is measured in. */
 const subjectKinds: Readonly<Record<Subject, QuantityKind>> = {
@@ -59,27 +58,25 @@ function readPhases(cursor: Cursor) {
   const start = cursor.at;
   const found: RowPhase[] = [];
   for (;;) {
-    const word = cursor.code() === 44 ? wordAfterComma(cursor) : cursor.word();
+    const comma = cursor.code() === 44;
+    const word = comma ? wordAfterComma(cursor) : cursor.word();
     const phase = (synonyms[word] ?? word) as RowPhase;
     if (!rowPhases.includes(phase)) break;
-    if (cursor.code() === 44) takeComma(cursor);
+    if (comma) takeComma(cursor);
+    else if (found.length > 0) tellComma(cursor);
     cursor.take(cursor.at + word.length, "word");
     found.push(phase);
     cursor.skip();
   }
+  if (found.length > 0 && cursor.code() === 44 && wordAfterComma(cursor)) {
+    takeComma(cursor);
+    tellUnknownWord(cursor, rowPhases, "unknown-phase", "phase");
+    return null;
+  }
   if (found.length > 0) return { phases: found, span: { start, end: cursor.lastEnd } };
   const typed = cursor.word();
   if (typed && !(subjects as readonly string[]).includes(typed)) {
-    const span = cursor.take(cursor.at + typed.length, "unread");
-    const nearest = nearestWord(typed, rowPhases);
-    cursor.report(
-      "unknown-phase",
-      span,
-      `${typed} is no phase: write any, emergency, or ${orListed(phases)}.`,
-      nearest
-        ? [{ title: `Write ${nearest}`, preferred: true, edits: [{ line: 0, ...span, newText: nearest }] }]
-        : [],
-    );
+    tellUnknownWord(cursor, rowPhases, "unknown-phase", "phase");
   } else if (typed) {
     const at = cursor.at;
     cursor.report(
@@ -92,6 +89,18 @@ function readPhases(cursor: Cursor) {
   return null;
 }
 
+/** Two phases with nothing between them read one way only. */
+function tellComma(cursor: Cursor): void {
+  const at = cursor.lastEnd;
+  const { length } = cursor.word();
+  cursor.report(
+    "separator",
+    { start: cursor.at, end: cursor.at + length },
+    "Phases are separated by commas: write one here.",
+    [{ title: "Write a comma", preferred: true, edits: [{ line: 0, start: at, end: at, newText: "," }] }],
+  );
+}
+
 function readSubject(cursor: Cursor) {
   cursor.skip();
   const typed = cursor.word();
@@ -99,16 +108,7 @@ function readSubject(cursor: Cursor) {
     return { word: typed as Subject, span: cursor.take(cursor.at + typed.length, "word") };
   }
   if (typed) {
-    const span = cursor.take(cursor.at + typed.length, "unread");
-    const nearest = nearestWord(typed, subjects);
-    cursor.report(
-      "unexpected-text",
-      span,
-      `${typed} is nothing a row can bound: write ${orListed(subjects)}.`,
-      nearest
-        ? [{ title: `Write ${nearest}`, preferred: true, edits: [{ line: 0, ...span, newText: nearest }] }]
-        : [],
-    );
+    tellUnknownWord(cursor, subjects, "unexpected-text", "subject of a row");
   }
   return null;
 }
@@ -181,9 +181,21 @@ function readConditions(cursor: Cursor): RowCondition[] {
     const start = cursor.at;
     const word = cursor.word();
     const condition = readCondition(cursor, word, start);
-    if (!condition) return conditions;
+    if (!condition) {
+      if (word && !keywordOf(word) && !cursor.faulty) tellNoCondition(cursor);
+      return conditions;
+    }
     conditions.push(condition);
   }
+}
+
+function tellNoCondition(cursor: Cursor): void {
+  const said = cursor.text.slice(cursor.at, cursor.nameEnd());
+  cursor.report(
+    "unexpected-text",
+    cursor.take(cursor.nameEnd(), "unread"),
+    `${said} is no condition of a row: write \`above\` or \`below\` and a level, \`when ifr\`, \`when vfr\`, \`when engine-out\` or \`after shear\`, or leave it out.`,
+  );
 }
 
 function readCondition(cursor: Cursor, word: string, start: number): RowCondition | null {

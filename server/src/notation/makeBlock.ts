@@ -169,6 +169,14 @@ function blankLineBefore(line: number): Fix {
   return { title: "Leave a blank line before it", edits: [{ line, start: 0, end: 0, newText: "\n" }] };
 }
 
+/** Clauses of which a block may hold several; without a body nobody knows which of them one is. */
+const lists: Readonly<Record<BlockKind, ReadonlySet<Keyword>>> = {
+  card: new Set<Keyword>(["config", "contamination", "lift-mach", "buffet", "ias", "published"]),
+  limits: new Set<Keyword>(),
+  point: new Set<Keyword>(["claim", "expect", "accept"]),
+  setting: new Set<Keyword>(["claim", "expect", "accept"]),
+};
+
 /** What a clause is one of; two of the same are one thing twice. Null for clauses that list. */
 function identity(kind: BlockKind, clause: Clause): string | null {
   const body = clause.body;
@@ -184,7 +192,7 @@ function identity(kind: BlockKind, clause: Clause): string | null {
       return null;
     default:
   }
-  if (!body) return keyword;
+  if (!body) return lists[kind].has(keyword) ? null : keyword;
   switch (body.kind) {
     case "config":
       return kind === "card" ? `config ${body.name.text.toLowerCase()}` : "config";
@@ -359,13 +367,15 @@ function checkNeedsPhase(
   const first = needing[0];
   if (!first) return;
   for (const one of needing) one.counts = false;
+  // The phase may be what stands in the block misspelt, which is told.
+  if (placed.some(({ clause }) => clause.keyword === null)) return;
   const last = lines.length - 1;
   const end = (lines[last]?.text ?? "").trimEnd().length;
   findings.push({
     code: "point-needs-phase",
     line: first.line,
     span: first.clause.span,
-    message: `\`${first.clause.keyword}${openMark(first.clause.body)}\` belongs to a point, and this block has no phase: write \`phase\` and the phase, or leave out the blank line above to join it to that block.`,
+    message: `\`${first.clause.keyword}${openMark(first.clause.body)}\` belongs to a point, and this block has no phase: write \`phase\` and the phase, or, where its point stands above, leave out the blank line between.`,
     fixes: [
       {
         title: "Write phase",

@@ -2,12 +2,21 @@ import { cardClauses } from "./cardClauses.ts";
 import { isBlank, isDigit, isMinus } from "./characters.ts";
 import { Cursor } from "./cursor.ts";
 import type { Fix, TextFinding } from "./finding.ts";
-import { limitsClauses } from "./limitsClauses.ts";
+import { limitsClauses, rowPhases } from "./limitsClauses.ts";
 import { type ClauseReader, planClauses } from "./planClauses.ts";
+import type { Span } from "./span.ts";
 import { nearestWord } from "./spelling.ts";
 import type { Token } from "./token.ts";
 import type { BarLine, Clause, ClauseBody } from "./tree.ts";
-import { type Keyword, keywordEntry, keywordOf, keywords, strangers } from "./vocabulary.ts";
+import {
+  type Keyword,
+  keywordEntry,
+  keywordOf,
+  keywords,
+  strangers,
+  subjects,
+  synonyms,
+} from "./vocabulary.ts";
 
 /*
  * bar-line  = { B } "|" [ clause ] { ";" [ clause ] } ;
@@ -114,7 +123,7 @@ function readClause(cursor: Cursor, text: string): Clause {
   const reader = readers.get(word.keyword) as ClauseReader;
   const body = reader(cursor);
   if (!body && !cursor.faulty) missingArgument(cursor, word.keyword, keywordSpan, before);
-  finish(cursor, text);
+  finish(cursor, text, word.keyword === "must" || word.keyword === "should");
   const end = Math.max(cursor.lastEnd, keywordSpan.end);
   const keyword = canonical(word.keyword, body);
   return { span: { start, end }, keywordSpan, keyword, meant: null, faulty: cursor.faulty, body };
@@ -165,17 +174,20 @@ function unknownKeyword(cursor: Cursor, start: number, end: number): Clause {
   const stranger = strangers[typed.toLowerCase()] ?? null;
   const guess = stranger ?? guessKeyword(typed);
   const span = takeRest(cursor);
+  const follows = guess ? null : guessByWhatFollows(cursor.text.slice(keywordSpan.end, span.end));
   cursor.report(
     "unknown-keyword",
     keywordSpan,
-    unknownMessage(typed, stranger, guess),
-    guess ? keywordFixes(typed, keywordSpan, guess) : [],
+    follows === "row" ? rowMessage(typed) : unknownMessage(typed, stranger, guess ?? follows),
+    follows === "row"
+      ? writeOne(["must", "should"], keywordSpan)
+      : keywordFixes(typed, keywordSpan, guess ?? follows),
   );
   return {
     span: { start, end: Math.max(span.end, end) },
     keywordSpan,
     keyword: null,
-    meant: guess,
+    meant: guess ?? (follows === "phase" ? follows : null),
     faulty: true,
     body: null,
   };
@@ -188,6 +200,20 @@ function guessKeyword(typed: string): Keyword | null {
   return begun.length > 0 ? (begun[0] as Keyword) : null;
 }
 
+/** Behind a word that no keyword is close to, a phase alone makes it `phase`, one with a subject a row of limits. */
+function guessByWhatFollows(rest: string): "phase" | "row" | null {
+  const words = rest.toLowerCase().match(/[\p{L}-]+/gu) ?? [];
+  const isPhase = (word: string) => (rowPhases as readonly string[]).includes(synonyms[word] ?? word);
+  const other = words.findIndex((word) => !isPhase(word));
+  if (other === 0 || words.length === 0) return null;
+  if (other > 0 && (subjects as readonly string[]).includes(words[other] as string)) return "row";
+  return words[0] === "any" || words[0] === "emergency" ? null : "phase";
+}
+
+function rowMessage(typed: string): string {
+  return `\`${typed}\` is not a keyword: a row of limits begins with \`must\` or, where it is advice, with \`should\`.`;
+}
+
 function unknownMessage(typed: string, stranger: Keyword | null, guess: Keyword | null): string {
   if (stranger === "config") return `\`${typed}\` is not a keyword; a configuration is \`config flaps-5\`.`;
   if (guess)
@@ -195,11 +221,16 @@ function unknownMessage(typed: string, stranger: Keyword | null, guess: Keyword 
   return `\`${typed}\` is not a keyword: write one, or begin the line with \`\\|\` if it is prose.`;
 }
 
-function keywordFixes(typed: string, span: { start: number; end: number }, guess: Keyword): Fix[] {
+function keywordFixes(typed: string, span: Span, guess: Keyword | null): Fix[] {
+  if (!guess) return [];
   const short = typed.length < 3 ? keywords.filter((one) => one.startsWith(typed.toLowerCase())) : [guess];
-  return (short.length > 0 ? short : [guess]).map((keyword, i) => ({
+  return writeOne(short.length > 0 ? short : [guess], span);
+}
+
+function writeOne(choices: readonly Keyword[], span: Span): Fix[] {
+  return choices.map((keyword) => ({
     title: `Write ${keyword}`,
-    preferred: i === 0 && short.length <= 1,
+    preferred: choices.length === 1,
     edits: [{ line: 0, ...span, newText: keyword }],
   }));
 }
@@ -231,14 +262,17 @@ function missingArgument(
   );
 }
 
-/** Brings the cursor to the clause's end; what stands before it is told, or read as a missing `;`. */
-function finish(cursor: Cursor, text: string): void {
+/**
+ * Brings the cursor to the clause's end; what stands before it is told, or read as a missing `;`. In a
+ * row that is in error `bank` or `load` is its subject, not a clause of its own.
+ */
+function finish(cursor: Cursor, text: string, isRow: boolean): void {
   cursor.skip();
   if (cursor.atClauseEnd()) return;
   if (cursor.code() === 44) {
     let next = cursor.at + 1;
     while (isBlank(text.charCodeAt(next))) next++;
-    if (startsKeyword(cursor, next)) {
+    if (startsKeyword(cursor, next) && !(cursor.faulty && isRow)) {
       const word = text.slice(next, cursor.nameEnd(next));
       const span = cursor.take(cursor.at + 1, "slip");
       cursor.report(
@@ -249,7 +283,7 @@ function finish(cursor: Cursor, text: string): void {
       );
       return;
     }
-  } else if (startsKeyword(cursor, cursor.at)) {
+  } else if (startsKeyword(cursor, cursor.at) && !(cursor.faulty && isRow)) {
     const word = text.slice(cursor.at, cursor.nameEnd());
     const at = cursor.lastEnd;
     cursor.report(

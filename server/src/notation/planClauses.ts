@@ -1,6 +1,7 @@
 import { findingCodes } from "./codes.ts";
 import type { Cursor } from "./cursor.ts";
 import { atNumber } from "./numbers.ts";
+import { orListed } from "./orListed.ts";
 import { readQuantity } from "./quantities.ts";
 import { readSpeed } from "./speeds.ts";
 import type { ClauseBody, Quantity, Title, Unknown, Value } from "./tree.ts";
@@ -175,6 +176,7 @@ const resultKinds: Readonly<Record<ResultName, QuantityKind>> = {
 
 function readClaim(cursor: Cursor): ClauseBody | null {
   cursor.skip();
+  if (atNumber(cursor)) return tellNoResult(cursor);
   // A result may spell a keyword: where a result is due, one is read.
   const typed = cursor.word();
   const known = (results as readonly string[]).includes(typed);
@@ -200,6 +202,16 @@ function readClaim(cursor: Cursor): ClauseBody | null {
     if (!within.unit && claimed.unit) within = { ...within, unit: claimed.unit };
   }
   return { kind: "claim", result: result.word, value: claimed, within };
+}
+
+/** `claim 106 kt` says a figure and not of what. */
+function tellNoResult(cursor: Cursor): null {
+  cursor.report(
+    "missing-argument",
+    cursor.take(Math.max(cursor.nameEnd(), cursor.at + 1), "unread"),
+    `A claim names a result, then its figure, as in \`claim stall 106 kt\`: write ${orListed(results)} first.`,
+  );
+  return null;
 }
 
 function readCode(cursor: Cursor) {

@@ -1,6 +1,7 @@
 import { isBlank, isDigit, isLetter } from "./characters.ts";
 import type { Cursor } from "./cursor.ts";
 import type { Fix } from "./finding.ts";
+import { orListed } from "./orListed.ts";
 import { nearestWord } from "./spelling.ts";
 import type { CalendarDate, Name, Title } from "./tree.ts";
 import { keywordOf } from "./vocabulary.ts";
@@ -70,7 +71,7 @@ function isRealDay(text: string): boolean {
 export function readWord<T extends string>(
   cursor: Cursor,
   words: readonly T[],
-  code: "unknown-phase" | "unknown-result" | "unknown-code" | "unexpected-text",
+  code: UnknownWord,
   noun: string,
   synonyms: Readonly<Record<string, string>> = {},
 ): { readonly word: T; readonly span: { start: number; end: number } } | null {
@@ -82,24 +83,35 @@ export function readWord<T extends string>(
     return { word: wanted as T, span: cursor.take(cursor.at + typed.length, "word") };
   }
   if (keywordOf(typed)) return null;
+  tellUnknownWord(cursor, words, code, noun);
+  return null;
+}
+
+type UnknownWord = "unknown-phase" | "unknown-result" | "unknown-code" | "unexpected-text";
+
+/** Longer lists than this are not read out in a message. */
+const MOST_LISTED = 20;
+
+/** Takes the word that begins here and is none of those that may, and tells so: the nearest, or all of them. */
+export function tellUnknownWord(
+  cursor: Cursor,
+  words: readonly string[],
+  code: UnknownWord,
+  noun: string,
+): void {
+  const typed = cursor.word();
   const span = cursor.take(cursor.at + typed.length, "unread");
   const nearest = nearestWord(typed, words);
-  const all = words.length <= 14 ? words.join(", ") : null;
   const fixes: Fix[] = nearest
     ? [{ title: `Write ${nearest}`, preferred: true, edits: [{ line: 0, ...span, newText: nearest }] }]
     : [];
-  const way = all
-    ? `write ${all.replace(/, ([^,]*)$/, " or $1")}`
-    : nearest
-      ? `did you mean ${nearest}?`
-      : "check its spelling";
-  cursor.report(
-    code,
-    span,
-    `${cursor.text.slice(span.start, span.end)} is no ${noun}: ${way}${way.endsWith("?") ? "" : "."}`,
-    fixes,
-  );
-  return null;
+  const said = cursor.text.slice(span.start, span.end);
+  const way = nearest
+    ? `did you mean ${nearest}?`
+    : words.length <= MOST_LISTED
+      ? `write ${orListed(words)}.`
+      : "write it as the list of problems shows it.";
+  cursor.report(code, span, `${said} is no ${noun}: ${way}`, fixes);
 }
 
 /** Takes a `,`. */

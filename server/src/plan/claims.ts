@@ -17,8 +17,8 @@ type Claim = BodyOf<"claim">;
 export interface ClaimedFigures {
   /** The figure with its extremes, over all rows of a sweep; null where it is not known. */
   spread(name: ResultName): Spread | null;
-  /** Why it is not known, as a sentence. */
-  why(name: ResultName): string;
+  /** Why it is not known, as a sentence; null where that was told in this point already. */
+  why(name: ResultName): string | null;
 }
 
 /** Holds every figure that the author wrote down against the one that is computed. */
@@ -31,13 +31,15 @@ export function checkClaims(
     const claimed = inSI(body.result, body.value);
     const spread = figures.spread(body.result);
     if (!spread) {
-      findings.push(
-        findingAt(
-          "claim-unchecked",
-          placed,
-          `The ${body.result} that is claimed cannot be checked, for it is not known here. ${figures.why(body.result)}`,
-        ),
-      );
+      const why = figures.why(body.result);
+      if (why !== null)
+        findings.push(
+          findingAt(
+            "claim-unchecked",
+            placed,
+            `The ${body.result} that is claimed cannot be checked, for it is not known here. ${why}`,
+          ),
+        );
       return { clause: placed, name: body.result, claimed, computed: null, holds: null };
     }
     const computed = spread[resultEntry(body.result).worst];
@@ -55,7 +57,7 @@ export function checkClaims(
         findingAt(
           "claim-stale",
           placed,
-          `The note claims ${body.result} ${was} and it is ${now} now: check the point and write the new figure.`,
+          `The note claims ${body.result} ${was} and it is ${now} now${unsafe ? ", so that it promises too much" : ""}: check the point and write the new figure.`,
           { severity: unsafe ? "error" : "warning", fixes: claimFix(body, spread, placed.line) },
         ),
       );

@@ -4,6 +4,7 @@ import { describePoint, type Open } from "./describe.ts";
 import type { Evaluated } from "./evaluated.ts";
 import type { StatedPoint } from "./evaluateStated.ts";
 import type { Finding } from "./finding.ts";
+import { lineOf } from "./origin.ts";
 import type { PointResult } from "./point.ts";
 import { review } from "./review.ts";
 import type { Spread } from "./spread.ts";
@@ -16,11 +17,19 @@ export function settle(stated: StatedPoint, open: Open): PointResult {
     point.clauses.claims,
     {
       spread: (name) => spreadOver(evaluated, open, name),
-      why: (name) => (evaluated ? (evaluated.absent(name) ?? "") : "This point has no figures."),
+      why: (name) => (evaluated ? (evaluated.absent(name) ?? "") : whyNoFigures(stated)),
     },
     findings,
   );
   return describePoint(stated, claims, review(point, findings, evaluated !== null), open);
+}
+
+/** What is in the way in the point itself has been told there. */
+function whyNoFigures({ point, withheld }: StatedPoint): string | null {
+  if (!withheld || withheld.origin.block === point.site.anchor) return null;
+  const { origin, code } = withheld;
+  const where = origin.uri === point.site.uri ? `Line ${lineOf(origin) + 1}` : "The card";
+  return `${where} has to be mended first (${code}).`;
 }
 
 /** The figure of a result with its extremes over all rows of a sweep; null where any row lacks it. */
