@@ -4,7 +4,7 @@ import { describe, expect, it } from "vitest";
 import { extendMarkdownIt, type Figures, type PreviewParser } from "../../client/src/markdownPreview.ts";
 import { caution } from "../../server/src/plan/caution.ts";
 import { fences } from "../../server/src/report/fences.ts";
-import { tableHead, tableRows } from "../../server/src/report/pointsTable.ts";
+import { pointsTable } from "../../server/src/report/pointsTable.ts";
 import { besideDemo } from "../support/besideDemo.ts";
 import { demoFiles, noteText } from "../support/sampleText.ts";
 
@@ -37,14 +37,14 @@ describe("the preview of a note", () => {
   it("draws each point with the figures of the points table, under their heads, and says what was found", () => {
     const shown = preview(briefing);
     const note = besideDemo(briefing, "markdown");
-    const rows = tableRows(note);
+    const { head: columns, rows } = pointsTable(note);
     expect(rows.length).toBeGreaterThan(2);
     for (const [line, phase, ...cells] of rows) {
       const name = (phase ?? "").replaceAll('"', "&quot;");
       const row = `<tr><td>${line}</td><th scope="row">${name}</th>${cells.map((cell) => `<td>${cell}</td>`).join("")}</tr>`;
       expect(shown).toContain(row);
     }
-    for (const head of tableHead) expect(shown).toContain(`<th scope="col">${head}</th>`);
+    for (const head of columns) expect(shown).toContain(`<th scope="col">${head}</th>`);
     expect(note.findings().length).toBeGreaterThan(0);
     for (const { finding } of note.findings()) expect(shown).toContain(`<code>${finding.code}</code>`);
     expect(shown.split(caution).length - 1).toBe(2);

@@ -7,7 +7,7 @@ import { type HintLevel, inlayHints } from "../../server/src/features/inlayHints
 import type { Flavour } from "../../server/src/notation/document.ts";
 import { createFolder } from "../../server/src/plan/createFolder.ts";
 import { lineOf } from "../../server/src/plan/origin.ts";
-import { plainTable, tableRows } from "../../server/src/report/pointsTable.ts";
+import { plainTable, tableHead, tableRows } from "../../server/src/report/pointsTable.ts";
 import { atCursor } from "../support/fixture.ts";
 import { demoFiles } from "../support/sampleText.ts";
 
@@ -85,7 +85,7 @@ describe("one formatter", () => {
     const margin = /margin (\d\.\d\d)/.exec(hint ?? "")?.[1] ?? "";
     expect([stall, bank, margin].every((one) => one.length > 2)).toBe(true);
     const shown = hover(note, 2, 5)?.text ?? "";
-    const table = plainTable(tableRows(note));
+    const table = plainTable(tableRows(note), tableHead);
     const messages = note
       .findings()
       .map(({ finding }) => finding.message)

@@ -156,7 +156,7 @@ describe("what withholds a card", () => {
     const read = lowered("| aircraft a-1\n");
     expect(read.withheld?.code).toBe("missing-value");
     expect(read.findings.map((one) => one.message)).toEqual([
-      "The card a-1 needs `basis`, `reference` and `config`, and does not state them.",
+      "The card a-1 needs `basis`, `reference` and `config`, and does not state them: write `basis vsr`, `basis vs1g` or `basis vs` with its factor; `reference … t`, the mass at which the stall speeds hold; `config NAME stall … kt`.",
     ]);
     expect(read.findings[0]?.fixes.map((one) => one.title)).toEqual([
       "Write basis",

@@ -1,6 +1,6 @@
 import { caution } from "../plan/caution.ts";
 import { findingsJson } from "../report/findingsJson.ts";
-import { findingsText, summarize, summaryText } from "../report/findingsText.ts";
+import { findingsText, soughtText, summarize, summaryText } from "../report/findingsText.ts";
 import { githubCommands } from "../report/github.ts";
 import { junitPoints, junitXml } from "../report/junit.ts";
 import { passedJson } from "../report/passed.ts";
@@ -92,8 +92,19 @@ async function checkOnce(
   });
   shown.end();
   await emit(written(files, notes, failOn, options), options);
-  if (options.format === "text" && !options.quiet) process.stderr.write(`${summaryText(files)}${caution}\n`);
+  if (options.format === "text" && !options.quiet)
+    process.stderr.write(`${summaryText(files)}${soughtText(soughtIn(notes))}${caution}\n`);
   return exitCode(files, failOn);
+}
+
+/** How many points ask for a value and have one. */
+function soughtIn(notes: readonly LoadedNote[]): number {
+  const results = notes.flatMap(({ note }) => note.results());
+  return results.filter((one) => {
+    if (one.kind !== "point") return false;
+    const { solved, sweep } = one.point;
+    return sweep ? sweep.rows.some(({ point }) => point.solved?.best) : solved?.best;
+  }).length;
 }
 
 function written(

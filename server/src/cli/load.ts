@@ -12,6 +12,9 @@ import { configurationOf } from "./configurationOf.ts";
 import { progress } from "./progress.ts";
 import { UsageError } from "./usageError.ts";
 
+/** What standard input is called where nobody says which file it stands in for. */
+export const STANDARD_INPUT = "standard-input.plumb";
+
 /** A note that was asked for, with the path it is spoken of by. */
 export interface LoadedNote {
   readonly path: string;
@@ -79,6 +82,7 @@ export function createLoader(options: LoadOptions): Loader {
       }
       const path = resolve(cwd, options.stdinPath);
       const note = folder.open(uriOf(path), await readStdin(), flavourOf(path));
+      if (options.stdinPath === STANDARD_INPUT && !options.quiet) tellStandsFor(note);
       return [...loaded, { path: shortPath(path, cwd), note }];
     },
   };
@@ -128,6 +132,14 @@ async function tellOtherConfigurations(named: readonly string[], root: string, c
       `${shortPath(resolve(folder, CONFIGURATION_FILE), cwd)} does not hold here; with --root ${path} it does.\n`,
     );
   }
+}
+
+/** A note that is piped from a file of the folder gives the names of that file a second time. */
+function tellStandsFor(note: Note): void {
+  if (!note.findings().some(({ finding }) => finding.code === "duplicate-name")) return;
+  process.stderr.write(
+    "Standard input is read beside the notes of the folder: if it is one of them, say which with --stdin-path FILE, which is then read from standard input alone.\n",
+  );
 }
 
 /** A Markdown file without a plumb fence is nobody's note; one that is named itself has its say. */

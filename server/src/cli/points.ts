@@ -1,7 +1,7 @@
 import { caution } from "../plan/caution.ts";
 import { pointsCsv } from "../report/csv.ts";
 import { fileJson } from "../report/pointsJson.ts";
-import { markdownTable, plainTable, tableRows } from "../report/pointsTable.ts";
+import { markdownTable, plainTable, pointsTable } from "../report/pointsTable.ts";
 import { type LoadedNote, load } from "./load.ts";
 import { emit } from "./output.ts";
 import type { Common } from "./run.ts";
@@ -38,8 +38,8 @@ function tables(
   table: typeof plainTable,
 ): string {
   return notes
-    .map((one) => ({ one, rows: tableRows(one.note) }))
+    .map((one) => ({ one, ...pointsTable(one.note) }))
     .filter(({ rows }) => rows.length > 0)
-    .map(({ one, rows }) => `${head(one)}${table(rows)}\n`)
+    .map(({ one, rows, head: columns }) => `${head(one)}${table(rows, columns)}\n`)
     .join("");
 }

@@ -1,10 +1,14 @@
+import { existsSync } from "node:fs";
 import { Command, CommanderError, InvalidArgumentError, Option } from "commander";
+import { nearestWord } from "../notation/spelling.ts";
 import { check } from "./check.ts";
 import { compare } from "./compare.ts";
 import { explain } from "./explain.ts";
 import { format } from "./formatNotes.ts";
+import { STANDARD_INPUT } from "./load.ts";
 import { points } from "./points.ts";
 import { tour } from "./tour.ts";
+import { UsageError } from "./usageError.ts";
 import { VERSION } from "./version.ts";
 
 /** Options that every command over notes has. */
@@ -55,6 +59,7 @@ export async function run(argv: readonly string[]): Promise<number> {
     .option("--watch", "check again whenever a note, a card or limits change", false)
     .option("--passed", "list what was checked and held too (json, sarif)", false)
     .action((paths: string[], options, command: Command) => {
+      if (!argv.includes("check")) refuseMisspelt(paths, program);
       const given = command.getOptionValueSource("today") === "cli";
       return settle(check(paths, { ...options, day: given ? () => options.today : localDay }));
     });
@@ -104,9 +109,9 @@ Neither revision sees the other's note, nor what lies in the other's folders.`,
     .action((paths: string[], options) => settle(format(paths, options)));
   program
     .command("explain")
-    .argument("<code>", "the code of a finding")
+    .argument("[code]", "the code of a finding; without it all of them are listed")
     .description("what a finding means, with an example that breaks the rule and one that keeps it")
-    .action((finding: string) => settle(explain(finding)));
+    .action((finding: string | undefined) => settle(explain(finding)));
   program
     .command("serve")
     .option("--stdio", "speak over standard input and output", true)
@@ -125,10 +130,27 @@ Neither revision sees the other's note, nor what lies in the other's folders.`,
   return code;
 }
 
+/** A command that is misspelt is taken for the path of the default command. */
+function refuseMisspelt([path]: readonly string[], program: Command): void {
+  if (path === undefined || existsSync(path)) return;
+  const nearest = nearestWord(
+    path,
+    program.commands.map((one) => one.name()).filter((name) => name !== "tour"),
+  );
+  if (nearest === null || /[./\\*]/.test(path)) return;
+  throw new UsageError(
+    `There is no command and no file or folder ${path}; did you mean the command ${nearest}?`,
+  );
+}
+
 function overNotes(command: Command): Command {
   return command
     .option("--root <dir>", "where cards and limits are looked for besides", ".")
-    .option("--stdin-path <name>", "where standard input pretends to be", "standard-input.plumb")
+    .option(
+      "--stdin-path <name>",
+      "the file that standard input stands in for; that file itself is then not read",
+      STANDARD_INPUT,
+    )
     .option("-o, --output <file>", "write there instead of to standard output")
     .addOption(
       new Option("--color <when>", "colours on the terminal")

@@ -1,5 +1,5 @@
 import { caution } from "../plan/caution.ts";
-import { fileName } from "../plan/names.ts";
+import { fileName } from "../plan/fileName.ts";
 import type { Note } from "../plan/note.ts";
 import { escapedHtml } from "../report/escapedHtml.ts";
 import { findingsText } from "../report/findingsText.ts";

@@ -1,4 +1,4 @@
-import { fileName } from "../plan/names.ts";
+import { fileName } from "../plan/fileName.ts";
 import { lineOf, type Origin } from "../plan/origin.ts";
 import { plainMarkdown } from "../report/plainMarkdown.ts";
 

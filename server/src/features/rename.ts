@@ -4,7 +4,7 @@ import type { Span } from "../notation/span.ts";
 import { readName } from "../notation/words.ts";
 import { BUILT_IN_NAME } from "../plan/builtIn.ts";
 import type { Definitions } from "../plan/definitions.ts";
-import { fileName } from "../plan/names.ts";
+import { fileName } from "../plan/fileName.ts";
 import type { Note } from "../plan/note.ts";
 import { namesIn } from "./namesIn.ts";
 import { type NamedThing, type NameUse, nameUses, thingAt } from "./nameUses.ts";

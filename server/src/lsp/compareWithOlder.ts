@@ -1,6 +1,6 @@
 import { createFolder } from "../plan/createFolder.ts";
+import { fileName } from "../plan/fileName.ts";
 import type { Folder } from "../plan/folder.ts";
-import { fileName } from "../plan/names.ts";
 import type { Note } from "../plan/note.ts";
 import { compare } from "../report/compare.ts";
 import { comparisonText } from "../report/comparisonText.ts";

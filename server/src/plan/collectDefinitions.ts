@@ -4,9 +4,10 @@ import { BUILT_IN_NAME } from "./builtIn.ts";
 import type { Card } from "./card.ts";
 import { commonPractice } from "./commonPractice.ts";
 import type { Definitions, Lookup } from "./definitions.ts";
+import { fileName } from "./fileName.ts";
 import type { Finding } from "./finding.ts";
 import type { Limits } from "./limits.ts";
-import { findingAt } from "./site.ts";
+import { findingAt, listed } from "./site.ts";
 
 /** The definitions of a folder, and what is told where a name is given twice. */
 export function collectDefinitions(
@@ -67,7 +68,7 @@ function tellTwice<T extends Named>(
       const finding = findingAt(
         "duplicate-name",
         head,
-        `${one.name} is the name of another ${what} too, so none of them is used: rename one.`,
+        `${one.name} is the name of another ${what} too, ${whereAre(one, others)}, so none of them is used: keep one, or rename one. What several notes use is best kept in a note of its own.`,
         {
           span: one.origin.span,
           related: others.map((other) => ({
@@ -79,4 +80,13 @@ function tellTwice<T extends Named>(
       findings.set(one.block, [...(findings.get(one.block) ?? []), finding]);
     }
   }
+}
+
+/** "in cards.plumb", "in this note": by file alone, for the lines of others move without this being told anew. */
+function whereAre(one: Named, others: readonly Named[]): string {
+  const files = others.map(({ origin }) => origin.uri);
+  const named = [...new Set(files)].map((uri) =>
+    uri === one.origin.uri ? "in this note" : `in ${fileName(uri)}`,
+  );
+  return listed(named);
 }

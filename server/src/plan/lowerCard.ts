@@ -202,13 +202,20 @@ function lowerContaminants(lowering: Lowering): readonly Contaminant[] {
 }
 
 /** Why the card gives no figures at all: an unknown keyword, or a required clause that is missing or in error. */
+/** What a card cannot do without, as it is written; every figure is the author's. */
+const needed = {
+  basis: "`basis vsr`, `basis vs1g` or `basis vs` with its factor",
+  reference: "`reference … t`, the mass at which the stall speeds hold",
+  config: "`config NAME stall … kt`",
+} as const;
+
 function whyWithheld(lowering: Lowering, card: Card): Card["withheld"] {
   const { site, findings } = lowering;
   const head = site.block.clauses[0] as PlacedClause;
   const unknown = site.block.clauses.find((placed) => placed.clause.keyword === null);
   if (unknown) return { origin: originOf(site, unknown), code: "unknown-keyword" };
   if (!card.name) return { origin: card.origin, code: "missing-argument" };
-  const missing: string[] = [];
+  const missing: (keyof typeof needed)[] = [];
   if (!card.basis) missing.push("basis");
   if (!card.referenceMass) missing.push("reference");
   const spoiltConfig = site.block.clauses.some((placed) => intendedKeyword(placed) === "config");
@@ -218,7 +225,7 @@ function whyWithheld(lowering: Lowering, card: Card): Card["withheld"] {
       findingAt(
         "missing-value",
         head,
-        `The card ${card.name} needs ${listed(missing.map((one) => `\`${one}\``))}, and does not state ${missing.length === 1 ? "it" : "them"}.`,
+        `The card ${card.name} needs ${listed(missing.map((one) => `\`${one}\``))}, and does not state ${missing.length === 1 ? "it" : "them"}: write ${missing.map((one) => needed[one]).join("; ")}.`,
         {
           span: card.origin.span,
           fixes: missing.map((one) => stateFix(site.block, one, `Write ${one}`)),

@@ -18,13 +18,25 @@ function wanted(carried: Point["applied"]["carried"], clauses: Point["clauses"])
   return assumable.filter((key) => carried[key]?.swept && !clauses[key === "deviation" ? "isa" : key]);
 }
 
+/** What is written to state it; the figure is the author's, so that no example passes for one. */
+const written: Readonly<Record<NeverAssumed, string>> = {
+  aircraft: "fly NAME",
+  mass: "weight … t",
+  config: "config NAME",
+  altitude: "altitude … ft",
+  speed: "speed … kt",
+  deviation: "isa +…",
+  cg: "cg … %",
+  contamination: "contamination … %",
+};
+
 const spoken: Readonly<Record<NeverAssumed, string>> = {
-  aircraft: "an aeroplane (`fly`)",
+  aircraft: "an aeroplane",
   mass: "a weight",
   config: "a configuration",
   altitude: "an altitude",
   speed: "a speed",
-  deviation: "a temperature (`isa`)",
+  deviation: "a temperature",
   cg: "a cg",
   contamination: "its contamination",
 };
@@ -56,12 +68,13 @@ export function findMissing(
   const origin = originOf(site, phaseClause);
   for (const key of missing) told[key] = origin;
   const names = listed(missing.map((key) => spoken[key]));
+  const clausesToWrite = listed(missing.map((key) => `\`${written[key]}\``));
   const sweep = missing.map((key) => applied.carried[key]).find((one) => one?.swept);
   const where = sweep
-    ? `for of the values that are swept on line ${lineOf(sweep.origin) + 1} none goes on: state ${missing.length === 1 ? "it" : "them"} here`
+    ? `for of the values that are swept on line ${lineOf(sweep.origin) + 1} none goes on: write ${clausesToWrite} here`
     : applied.newSector
-      ? "and a new sector begins here, so that nothing is carried into it"
-      : `and no line up to here states ${missing.length === 1 ? "it" : "them"}`;
+      ? `and a new sector begins here, so that nothing is carried into it: write ${clausesToWrite} here`
+      : `and no line up to here states ${missing.length === 1 ? "it" : "them"}: write ${clausesToWrite} here, or in a setting before it`;
   findings.push(
     findingAt("missing-value", phaseClause, `This point needs ${names}, ${where}.`, {
       fixes: missing.map((key) => stateFix(site.block, keywordOf[key], `Write ${keywordOf[key]}`)),

@@ -4,6 +4,7 @@ import type { Name } from "../notation/tree.ts";
 import type { Card } from "./card.ts";
 import type { Applying } from "./carry.ts";
 import type { Read } from "./clauses.ts";
+import { fileName } from "./fileName.ts";
 import type { Finding, Related } from "./finding.ts";
 import { catalogue } from "./findings.ts";
 import type { Limits } from "./limits.ts";
@@ -146,10 +147,11 @@ function givenTwice(
   what: "card" | "limits",
   places: readonly Origin[],
 ): Finding {
+  const files = [...new Set(places.map(({ uri }) => fileName(uri)))];
   return findingAt(
     "duplicate-name",
     placed,
-    `${name.text} is the name of ${places.length} ${what === "card" ? "cards" : "sets of limits"} in this folder, so none of them is used: keep one, or rename the others.`,
+    `${name.text} is the name of ${places.length} ${what === "card" ? "cards" : "sets of limits"} in this folder (${listed(files)}), so none of them is used: keep one, or rename the others.`,
     {
       span: name.span,
       related: places.map((origin) => ({ origin, message: `${name.text} is defined here.` })),
@@ -233,14 +235,4 @@ function place(origin: Origin, uri: string): string {
   const line = `line ${lineOf(origin) + 1}`;
   if (origin.uri === uri) return line;
   return `${fileName(origin.uri)}, ${line}`;
-}
-
-/** The last part of a URI, as a reader knows the file. */
-export function fileName(uri: string): string {
-  const last = uri.slice(uri.lastIndexOf("/") + 1);
-  try {
-    return decodeURIComponent(last);
-  } catch {
-    return last;
-  }
 }

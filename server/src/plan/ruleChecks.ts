@@ -248,7 +248,7 @@ function tellNotEvaluated(checking: Checking, row: Row, why: string): void {
     checking,
     "not-evaluated",
     point.phaseClause,
-    `The row \`${row.text}\` of ${point.limits.name} could not be held against this point. ${why}`,
+    `The row \`${row.text}\` of ${point.limits.name} could not be held against this point. ${why} State what it needs, or switch the row off with \`none\`.`,
     {
       severity: severityOf(checking, row),
       rule: `${row.text} (not evaluated)`,

@@ -184,6 +184,13 @@ function stallCas(
   return null;
 }
 
+/** How a card says which configuration a reference speed belongs to. */
+const markWay: Readonly<Record<ReferenceName, string>> = {
+  v2min: "Mark the configuration in the card (`config NAME …, takeoff`)",
+  vfto: "Call the configuration without flaps `clean` in the card",
+  vref: "Mark the configuration in the card (`config NAME …, landing`)",
+};
+
 function referenceCas(
   name: ReferenceName,
   placed: PlacedClause,
@@ -197,7 +204,7 @@ function referenceCas(
       findingAt(
         "reference-config",
         placed,
-        `${name} is not known in ${configuration.name}. ${belongs.why} State the speed in knots or change the configuration.`,
+        `${name} is not known in the configuration ${configuration.name}. ${belongs.why} ${markWay[name]}, fly one that is, or state the speed in knots.`,
       ),
     );
     return null;

@@ -1,5 +1,5 @@
 import { caution } from "../plan/caution.ts";
-import { fileName } from "../plan/names.ts";
+import { fileName } from "../plan/fileName.ts";
 import type { Comparison, ItemChange, RevisionSummary } from "./compare.ts";
 import type { Definition } from "./comparison/definitionsOf.ts";
 import type { FindingChange } from "./comparison/findingChanges.ts";

@@ -1,5 +1,5 @@
 import { caution } from "../plan/caution.ts";
-import { fileName } from "../plan/names.ts";
+import { fileName } from "../plan/fileName.ts";
 import { type Comparison, type ItemChange, isEdit, type RevisionSummary } from "./compare.ts";
 import type { DefinitionChange } from "./comparison/definitionChanges.ts";
 import type { FigureChange } from "./comparison/figureChanges.ts";

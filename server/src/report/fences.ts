@@ -1,7 +1,7 @@
 import { caution } from "../plan/caution.ts";
 import type { Note } from "../plan/note.ts";
 import { findingsJson } from "./findingsJson.ts";
-import { type TableRow, tableHead, tableRows } from "./pointsTable.ts";
+import { pointsTable, type TableRow } from "./pointsTable.ts";
 
 /** A finding as a reader of a fence is told it; the line counts from 1. */
 export interface FenceFinding {
@@ -33,7 +33,7 @@ export interface Fences {
 
 /** The fences of a note as tables of their points, each figure as the one formatter writes it. */
 export function fences(note: Note): Fences {
-  const rows = tableRows(note);
+  const { head, rows } = pointsTable(note);
   const findings = findingsJson(note).map(({ line, severity, code, message }) => ({
     line,
     severity,
@@ -49,7 +49,7 @@ export function fences(note: Note): Fences {
       findings: findings.filter(({ line }) => holds(line)),
     };
   });
-  return { head: tableHead, fences: found, caution };
+  return { head, fences: found, caution };
 }
 
 function places({ document }: Note): readonly Pick<Fence, "line" | "endLine" | "closed">[] {

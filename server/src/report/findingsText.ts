@@ -39,6 +39,14 @@ export function summaryText(files: readonly CheckedFile[]): string {
   return parts.length === 0 ? `Nothing found in ${where}.\n` : `${parts.join(", ")} in ${where}.\n`;
 }
 
+/** Where values are sought, that `check` held them and where they stand. */
+export function soughtText(sought: number): string {
+  if (sought === 0) return "";
+  return sought === 1
+    ? "1 value was sought (`?`): `plumbline points` shows what was found and what bounds it.\n"
+    : `${sought} values were sought (\`?\`): \`plumbline points\` shows what was found and what bounds them.\n`;
+}
+
 function counted(count: number, noun: string): string {
   if (count === 1) return `1 ${noun}`;
   return `${count} ${noun.startsWith("piece") ? noun.replace("piece", "pieces") : `${noun}s`}`;

@@ -32,7 +32,15 @@ export const tableHead: TableRow = [
   "load",
   "warning at",
   "stall at",
+  "bounded by",
 ];
+
+/** The table of a note's points: the last column, what bounds a value that was sought, only where one was. */
+export function pointsTable(note: Note): { readonly head: TableRow; readonly rows: readonly TableRow[] } {
+  const rows = tableRows(note);
+  if (rows.some((row) => row[tableHead.length - 1] !== "")) return { head: tableHead, rows };
+  return { head: tableHead.slice(0, -1), rows: rows.map((row) => row.slice(0, -1)) };
+}
 
 /** The points of a note with the figures a briefing needs, each as the one formatter writes it. */
 export function tableRows(note: Note): readonly TableRow[] {
@@ -90,11 +98,12 @@ function row(point: PointResult, solved: Solved | null, varied = ""): TableRow {
     result("load"),
     result("warning-bank"),
     result("stall-bank"),
+    solved?.best?.boundBy ?? "",
   ];
 }
 
 /** Columns padded to their widest cell, two blanks between them. */
-export function plainTable(rows: readonly TableRow[], head: TableRow = tableHead): string {
+export function plainTable(rows: readonly TableRow[], head: TableRow): string {
   const all = [head, ...rows];
   const widths = head.map((_, column) => Math.max(...all.map((one) => one[column]?.length ?? 0)));
   return all
@@ -109,7 +118,7 @@ export function plainTable(rows: readonly TableRow[], head: TableRow = tableHead
 }
 
 /** The same rows as a Markdown table, in which no mark of an author's text means anything. */
-export function markdownTable(rows: readonly TableRow[], head: TableRow = tableHead): string {
+export function markdownTable(rows: readonly TableRow[], head: TableRow): string {
   const line = (cells: readonly string[]) => `| ${cells.join(" | ")} |\n`;
   return line(head) + line(head.map(() => "---")) + rows.map((row) => line(row.map(plainMarkdown))).join("");
 }
