@@ -23,7 +23,7 @@ export async function format(paths: readonly string[], options: FormatOptions): 
     }
     if (edits.length === 0) continue;
     changed++;
-    if (options.check) await emit(`${path}\n`, {});
+    if (options.check) await emit(edits.map((edit) => wouldBe(path, edit)).join(""), {});
     else await replaceFile(path, applied(note.document, edits));
   }
   if (!options.quiet && !paths.includes("-")) {
@@ -31,6 +31,14 @@ export async function format(paths: readonly string[], options: FormatOptions): 
     process.stderr.write(options.check ? `${files} would change.\n` : `${files} changed.\n`);
   }
   return options.check && changed > 0 ? 1 : 0;
+}
+
+/** A line that would change, with its place and what it would be. */
+function wouldBe(
+  path: string,
+  { line, newText }: { readonly line: number; readonly newText: string },
+): string {
+  return `${path}:${line + 1}  ${newText}\n`;
 }
 
 function applied(document: Document, edits: ReturnType<typeof layout>): string {

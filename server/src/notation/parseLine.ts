@@ -315,6 +315,7 @@ function finish(cursor: Cursor, text: string, isRow: boolean): void {
     );
     return;
   }
+  if (tellRange(cursor, span)) return;
   cursor.report(
     "unexpected-text",
     span,
@@ -322,6 +323,29 @@ function finish(cursor: Cursor, text: string, isRow: boolean): void {
       ? "A `|` begins a line and means nothing inside it; if this is a Markdown table, leave a blank line above it and make its second line `| --- | --- |`."
       : `This is not understood after ${keyword}: write \`;\` before a new clause, or leave it out.`,
   );
+}
+
+/** `4000 kg - 6200 kg`: true where what stands here would be a range, which is told. */
+function tellRange(cursor: Cursor, span: Span): boolean {
+  const { text } = cursor;
+  const dash = /^(?:[-\u2012-\u2015\u2212]|until|till)(?=\s*[\d.])/iu.exec(
+    text.slice(span.start, span.end),
+  )?.[0];
+  if (!dash) return false;
+  const end = span.start + dash.length;
+  const blankAt = (index: number) => (isBlank(text.charCodeAt(index)) ? "" : " ");
+  cursor.report(
+    "unexpected-text",
+    span,
+    `A range is written with \`to\`, as in \`5 t to 9 t\`: write it in place of \`${dash}\`.`,
+    [
+      {
+        title: "Write to",
+        edits: [{ line: 0, start: span.start, end, newText: `${blankAt(span.start - 1)}to${blankAt(end)}` }],
+      },
+    ],
+  );
+  return true;
 }
 
 /** Clauses that may end with a title. */

@@ -1,9 +1,10 @@
-import { fromSI } from "../flight/units.ts";
 import type { Note } from "../plan/note.ts";
 import { lineOf } from "../plan/origin.ts";
 import type { Conditions, PointResult, Solved, SweepResult } from "../plan/point.ts";
 import type { Spread } from "../plan/spread.ts";
+import { figureIn } from "./figureIn.ts";
 import { type FindingJson, findingsJson } from "./findingsJson.ts";
+import { resultFigure } from "./resultFigure.ts";
 
 export type JsonValue =
   | string
@@ -22,7 +23,7 @@ export interface FileJson {
   readonly findings: readonly FindingJson[];
 }
 
-/** Full double precision; a value that cannot be known is null; lines count from 1. */
+/** Figures to 15 digits; a value that cannot be known is null; lines count from 1. */
 export function fileJson(note: Note, path: string): FileJson {
   const points: PointJson[] = [];
   for (const result of note.results()) if (result.kind === "point") points.push(pointJson(result.point));
@@ -45,8 +46,8 @@ export function pointJson(point: PointResult): PointJson {
     sweep: point.sweep && sweepJson(point.sweep),
     claims: point.claims.map((claim) => ({
       name: claim.name,
-      claimed: resultInUnit(claim.name, claim.claimed),
-      computed: claim.computed === null ? null : resultInUnit(claim.name, claim.computed),
+      claimed: resultFigure(claim.name, claim.claimed),
+      computed: claim.computed === null ? null : resultFigure(claim.name, claim.computed),
       holds: claim.holds,
     })),
     expected: point.expected.map(({ code, not, came }) => ({ code, not, came })),
@@ -204,7 +205,7 @@ function known(value: number | null | undefined): number | null {
 
 function inUnit(value: number | null | undefined, unit: "kt" | "ft" | "nm" | "deg"): number | null {
   const si = known(value);
-  return si === null ? null : fromSI(si, unit);
+  return si === null ? null : figureIn(si, unit);
 }
 
 function knots(value: number | null | undefined): number | null {
@@ -217,28 +218,5 @@ function degrees(value: number | null | undefined): number | null {
 
 function percent(fraction: Spread | null | undefined): number | null {
   const si = known(fraction?.nominal);
-  return si === null ? null : si * 100;
-}
-
-/** A result in the unit it is shown in. */
-function resultInUnit(name: keyof NonNullable<PointResult["results"]>, si: number): number {
-  switch (name) {
-    case "ratio":
-    case "margin":
-    case "load":
-    case "stall-load":
-    case "buffet-load":
-      return si;
-    case "overshoot":
-    case "stall-bank":
-    case "warning-bank":
-    case "buffet-bank":
-    case "rate":
-    case "rate-one-bank":
-      return fromSI(si, "deg");
-    case "radius":
-      return fromSI(si, "nm");
-    default:
-      return fromSI(si, "kt");
-  }
+  return si === null ? null : figureIn(si, "%");
 }

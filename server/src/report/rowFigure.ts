@@ -1,5 +1,5 @@
-import { fromSI } from "../flight/units.ts";
 import type { Subject } from "../notation/vocabulary.ts";
+import { figureIn } from "./figureIn.ts";
 
 /** A row's figure or bound in the unit that limits are written in. */
 export function rowFigureInUnit(
@@ -10,9 +10,9 @@ export function rowFigureInUnit(
   switch (subject) {
     case "bank":
     case "overshoot":
-      return { value: known(fromSI(si, "deg")), unit: "deg" };
+      return { value: known(figureIn(si, "deg")), unit: "deg" };
     case "radius":
-      return { value: known(fromSI(si, "nm")), unit: "nm" };
+      return { value: known(figureIn(si, "nm")), unit: "nm" };
     default:
       return { value: known(si), unit: null };
   }

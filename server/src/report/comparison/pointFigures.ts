@@ -13,10 +13,11 @@ import {
 } from "../../plan/format.ts";
 import { lineOf } from "../../plan/origin.ts";
 import type { Conditions, PointResult } from "../../plan/point.ts";
-import { inShownUnit, resultEntry, resultNames } from "../../plan/results.ts";
+import { resultEntry, resultNames } from "../../plan/results.ts";
 import { furtherRows } from "../furtherRows.ts";
 import { solvedText } from "../openText.ts";
 import { type JsonValue, type PointJson, pointJson } from "../pointsJson.ts";
+import { resultFigure } from "../resultFigure.ts";
 import { fieldName, resultOfField, shownField } from "./shownField.ts";
 
 /** Something that is known of a point: as it is shown, and in full. */
@@ -96,9 +97,9 @@ function resultFigures({ results }: PointResult): readonly Figure[] {
     const spread = results?.[name];
     if (!spread) return { name, shown: "-", value: null };
     const value = {
-      nominal: inShownUnit(name, spread.nominal),
-      low: inShownUnit(name, spread.low),
-      high: inShownUnit(name, spread.high),
+      nominal: resultFigure(name, spread.nominal),
+      low: resultFigure(name, spread.low),
+      high: resultFigure(name, spread.high),
       unit: resultEntry(name).unit,
     };
     return { name, shown: formatResult(name, spread), value };
