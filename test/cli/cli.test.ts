@@ -4,6 +4,7 @@ import { tmpdir } from "node:os";
 import { join } from "node:path";
 import { fileURLToPath } from "node:url";
 import { afterAll, beforeAll, describe, expect, it } from "vitest";
+import { catalogue } from "../../server/src/plan/findings.ts";
 
 const root = fileURLToPath(new URL("../..", import.meta.url));
 const bin = JSON.parse(readFileSync(join(root, "package.json"), "utf8")).bin.plumbline as string;
@@ -147,6 +148,34 @@ describe("plumbline check", () => {
       status: 2,
       stderr: expect.stringContaining("--passed needs --format json or sarif"),
     });
+  });
+
+  it("says how many values are sought, and the points table what bounds them", () => {
+    const input = `${card.replace("9 t", "9 t; warning 1.05")}\n${point}\n| phase climb; rules vfr; bank ?\n`;
+    const args = ["-", "--stdin-path", "sought/note.plumb"];
+    expect(plumbline(["check", ...args], { input, cwd: folder }).stderr).toContain(
+      "1 value was sought (`?`): `plumbline points` shows what was found and what bounds it.",
+    );
+    const { stdout } = plumbline(["points", ...args], { input, cwd: folder });
+    expect(stdout).toMatch(/stall at {2}bounded by\n/);
+    expect(stdout).toMatch(/climb \(bank 30 found\).* must any bank 30\n/);
+    // Where nothing is sought the column is not there.
+    expect(plumbline(["points", ...args], { input: `${card}\n${point}`, cwd: folder }).stdout).not.toContain(
+      "bounded by",
+    );
+  });
+
+  it("says with a note of the folder that is piped in how to say which it is", () => {
+    const piped = mkdtempSync(join(tmpdir(), "plumbline-piped-"));
+    writeFileSync(join(piped, "plan.plumb"), `${card}\n${point}`);
+    const input = `${card}\n${point}`;
+    const twice = plumbline(["check", "-"], { input, cwd: piped });
+    expect(twice.stdout).toContain("another card too, in plan.plumb, so none of them is used");
+    expect(twice.stderr).toContain("say which with --stdin-path FILE");
+    const once = plumbline(["check", "-", "--stdin-path", "plan.plumb"], { input, cwd: piped });
+    expect(once.stdout).not.toContain("duplicate-name");
+    expect(once.stderr).not.toContain("--stdin-path");
+    rmSync(piped, { recursive: true });
   });
 
   it("writes where it is told, and reads cards under --root", () => {
@@ -323,7 +352,10 @@ describe("plumbline format", () => {
   it("lays out files in place, tells with --check, and touches no error", () => {
     const file = join(folder, "loose.plumb");
     writeFileSync(file, "|weight 5t ;\r\n\r\n| weight  5\r\n");
-    expect(plumbline(["format", file, "--check"]).status).toBe(1);
+    expect(plumbline(["format", file, "--check"])).toMatchObject({
+      status: 1,
+      stdout: expect.stringMatching(/:1 {2}\| weight 5 t\n$/),
+    });
     expect(readFileSync(file, "utf8")).toBe("|weight 5t ;\r\n\r\n| weight  5\r\n");
     expect(plumbline(["format", file]).status).toBe(0);
     expect(readFileSync(file, "utf8")).toBe("| weight 5 t\r\n\r\n| weight  5\r\n");
@@ -346,10 +378,23 @@ describe("plumbline explain", () => {
   });
 });
 
+describe("plumbline explain without a code", () => {
+  it("lists every code with its title", () => {
+    const { status, stdout } = plumbline(["explain"]);
+    expect(status).toBe(0);
+    const lines = stdout.trimEnd().split("\n");
+    expect(lines.map((line) => line.split(/\s+/)[0])).toEqual(Object.keys(catalogue));
+    expect(lines).toContainEqual(expect.stringMatching(/^bank-over-limit +more bank than the limits allow$/));
+  });
+});
+
 describe("bad input ends with code 2 and one clear line", () => {
   it.each([
     [["check", "no-such-file.plumb"], /^plumbline: There is no file or folder no-such-file\.plumb\.\n$/],
     [["check", "--format", "yaml"], /Allowed choices are text, json, sarif/],
+    [["chek"], /^plumbline: There is no command and no .* chek; did you mean the command check\?\n$/],
+    [["check", "chek"], /^plumbline: There is no file or folder chek\.\n$/],
+    [["explain", "nowhere-near"], /^plumbline: There is no finding nowhere-near: `plumbline explain` lists/],
     [["--nonsense"], /unknown option '--nonsense'/],
     [["check", "demo", "--today", "2026-02-30"], /It is a day such as 2026-03-01/],
     [["check", "demo", "-o", "/no/such/folder/x"], /cannot be written/],

@@ -1,4 +1,4 @@
-import { expect, it } from "vitest";
+import { describe, expect, it } from "vitest";
 import type { ResultName } from "../../server/src/notation/vocabulary.ts";
 import { createFolder } from "../../server/src/plan/createFolder.ts";
 import { formatResult } from "../../server/src/plan/format.ts";
@@ -62,4 +62,52 @@ it("a greatest speed is said rounded down, a least one up", () => {
 it("a claim that a narrow `within` finds stale never reads as what it is now", () => {
   const { message } = evaluated("phase cruise; claim margin 1.89 within 0.0001");
   expect(message("claim-stale")).toMatch(/claims margin 1\.89 and it is 1\.89\d+ now/);
+});
+
+describe("a claim without figures", () => {
+  const found = (points: string) =>
+    createFolder({ today: "2026-12-01" })
+      .open("file:///n.plumb", `${card}\n${points}\n`, "plumb")
+      .findings()
+      .map(({ line, finding }) => `${line} ${finding.code}: ${finding.message}`)
+      .filter((one) => /claim|missing-unit/.test(one));
+
+  it("is left to what the point itself is told", () => {
+    expect(found("| phase cruise; weight 5; claim stall 90 kt")).toEqual([
+      "6 missing-unit: Weight 5 of what? Write 5 t, 5 kg or 5 lb.",
+    ]);
+  });
+
+  it("names the line that is to be mended where that is another", () => {
+    expect(found("| weight 5\n\n| phase cruise; claim stall 90 kt")[1]).toBe(
+      "8 claim-unchecked: The stall that is claimed cannot be checked, for it is not known here. Line 7 has to be mended first (missing-unit).",
+    );
+  });
+
+  it("that promises too much is told so, one that promises too little is not", () => {
+    expect(found("| phase cruise; claim vs1g 80 kt")[0]).toMatch(/kt now, so that it promises too much: /);
+    expect(found("| phase cruise; claim vs1g 95 kt")[0]).toMatch(/kt now: check/);
+  });
+});
+
+it("what nobody stated is told with what to write", () => {
+  const note = createFolder({ today: "2026-12-01" }).open(
+    "file:///n.plumb",
+    "| phase cruise; altitude FL100; speed 200 kt\n",
+    "plumb",
+  );
+  expect(note.findings().map(({ finding }) => finding.message)).toContain(
+    "This point needs an aeroplane, a weight and a configuration, and no line up to here states them: write `fly NAME`, `weight … t` and `config NAME` here, or in a setting before it.",
+  );
+});
+
+it("a reference speed without its configuration says how a card marks one", () => {
+  const note = createFolder({ today: "2026-12-01" }).open(
+    "file:///n.plumb",
+    `${card}\n| phase landing; altitude 500 ft; speed vref + 5 kt\n`,
+    "plumb",
+  );
+  expect(note.findings().map(({ finding }) => finding.message)).toContain(
+    "vref is not known in the configuration clean. The card marks no configuration landing. Mark the configuration in the card (`config NAME …, landing`), fly one that is, or state the speed in knots.",
+  );
 });
