@@ -2,8 +2,10 @@ import { readFileSync } from "node:fs";
 import { parse as parseToml } from "smol-toml";
 import { describe, expect, it } from "vitest";
 import { parse as parseYaml } from "yaml";
-import { vocabulary } from "../server/src/notation/vocabulary.ts";
+import { phases, results, subjects, vocabulary } from "../server/src/notation/vocabulary.ts";
+import { commonPracticeText } from "../server/src/plan/commonPractice.ts";
 import { createFolder } from "../server/src/plan/createFolder.ts";
+import { resultEntry } from "../server/src/plan/results.ts";
 
 const readme = readFileSync(new URL("../README.md", import.meta.url), "utf8");
 
@@ -16,10 +18,7 @@ describe("the README", () => {
   });
 
   it("lists every keyword as the vocabulary has it", () => {
-    const table = /<!-- keywords -->\n([\s\S]*?)\n<!-- \/keywords -->/
-      .exec(readme)?.[1]
-      ?.split("\n")
-      .slice(2);
+    const table = between("keywords")?.slice(2);
     const escaped = (text: string) => text.replaceAll("|", "\\|");
     expect(table).toEqual(
       vocabulary.map(
@@ -27,6 +26,29 @@ describe("the README", () => {
           `| \`${keyword}\` | ${escaped(pattern)} | ${escaped(documentation)} |`,
       ),
     );
+  });
+
+  const between = (mark: string) =>
+    new RegExp(`<!-- ${mark} -->\\n([\\s\\S]*?)\\n<!-- /${mark} -->`).exec(readme)?.[1]?.split("\n");
+
+  it("lists every result with its meaning and unit", () => {
+    expect(between("results")?.slice(2)).toEqual(
+      results.map((name) => {
+        const { label, unit } = resultEntry(name);
+        return `| \`${name}\` | ${label} | ${unit ?? ""} |`;
+      }),
+    );
+  });
+
+  it("lists every phase and every subject of a row", () => {
+    expect(readme).toContain(`and in rows: ${phases.map((phase) => `\`${phase}\``).join(", ")}.\n`);
+    const table = readme.split("| subject of a row | bounds |\n| --- | --- |\n")[1]?.split("\n\n")[0];
+    expect(table?.split("\n").map((row) => /^\| `(\w+)`/.exec(row)?.[1])).toEqual([...subjects]);
+  });
+
+  it("prints the built-in limits as they are held", () => {
+    const rows = commonPracticeText.split("\n").filter((line) => line.startsWith("|"));
+    expect(between("built-in")).toEqual(["```text", ...rows, "```"]);
   });
 
   it("has examples that are read without a finding", () => {
