@@ -6,8 +6,8 @@ import { formatBank, formatDistinct, formatRadius, formatResultValue, formatSpee
 import type { Row } from "./limits.ts";
 import type { HeldRow } from "./point.ts";
 import { ratioFix } from "./ratioFix.ts";
-import { holdRow, strictest } from "./rules.ts";
-import { rowsInForce } from "./selectRows.ts";
+import { holdRow, strictest, warningHasCome } from "./rules.ts";
+import { type RowGroup, rowsInForce } from "./selectRows.ts";
 import { oneStepLower } from "./site.ts";
 
 export interface RuleOutcome {
@@ -53,7 +53,7 @@ export function checkRules(checking: Checking): RuleOutcome {
       tellNotEvaluated(checking, row, why);
       continue;
     }
-    if (notApplicable(group.subject, flown)) continue;
+    if (notApplicable(group, flown)) continue;
     const held = strictest(group.rows.map((row) => holdRow(row, { corners: flown, vsFactor })));
     if (!held) continue;
     rows.push(held);
@@ -78,13 +78,11 @@ const resultOf: Readonly<Record<Subject, ResultName>> = {
 };
 
 /** Wings level there is no turn to be wide; without a load there is no stall to keep a margin to. */
-function notApplicable(subject: Subject, { nominal, all }: Corners): boolean {
-  if (subject === "radius") return all.every((one) => one.bank === 0);
-  if (subject === "margin") return nominal.stall === 0;
-  // Where the warning has come already there is no bank left to count: that is told as an error of its own.
-  return (
-    subject === "overshoot" && all.some((one) => one.cas <= one.warning && Number.isNaN(one.warningBank))
-  );
+function notApplicable({ subject, afterShear }: RowGroup, corners: Corners): boolean {
+  if (subject === "radius") return corners.all.every((one) => one.bank === 0);
+  if (subject === "margin") return corners.nominal.stall === 0;
+  // As flown, a warning that has come is told as an error of its own; after a shear the row alone tells it.
+  return subject === "overshoot" && !afterShear && warningHasCome(corners);
 }
 
 const codes: Readonly<Record<Subject, FindingCode>> = {
@@ -171,7 +169,7 @@ function message(checking: Checking, held: HeldRow, corners: Corners): string {
       const [left, least] = formatDistinct(figure, bound, (value, more) =>
         formatResultValue("overshoot", value, more),
       );
-      if (figure < 0)
+      if (!(0 <= figure))
         return `${lead}The warning comes before this bank is reached, and ${asks(`${least} of bank beyond it`)}: bank less or fly faster.`;
       return `${lead}Only ${left} of bank are left to the warning and ${asks(least)}: bank less or fly faster.`;
     }

@@ -24,7 +24,10 @@ export function holdRow(row: Row, situation: RowSituation): HeldRow {
   const bound = boundOf(row, situation);
   const figure = figureOf(row, situation);
   if (bound === null || figure === null) {
-    return { row, bound: bound?.value ?? Number.NaN, figure: null, holds: null, byRateOne: false };
+    // Once the warning has come no bank is left: that needs no figure to fall short of the row.
+    const short = bound !== null && row.subject === "overshoot" && warningHasCome(situation.corners);
+    const holds = short ? false : null;
+    return { row, bound: bound?.value ?? Number.NaN, figure: null, holds, byRateOne: false };
   }
   return {
     row,
@@ -33,6 +36,11 @@ export function holdRow(row: Row, situation: RowSituation): HeldRow {
     holds: keeps(row, bound.value, figure),
     byRateOne: bound.byRateOne,
   };
+}
+
+/** True where, at some corner, the warning has come already with the wings level, so that no bank is left to it. */
+export function warningHasCome({ all }: Corners): boolean {
+  return all.some((one) => one.cas <= one.warning && Number.isNaN(one.warningBank));
 }
 
 function keeps(row: Row, bound: number, figure: number): boolean {
