@@ -220,6 +220,25 @@ describe("the state that carries on", () => {
     });
   });
 
+  it("takes into the new sector what was stated after the landing, a clause in error among it", () => {
+    const landing = "| phase landing; config flaps-30; altitude 500 ft; speed 150 kt; engine-out left";
+    const takeoff = "| phase takeoff; config flaps-30; altitude 600 ft; speed 160 kt";
+    const between = (setting: string, second = "") =>
+      file("\n| must any bank 60", `${landing}\n\n${setting}\n\n${second}${takeoff}`);
+    const dirty = between("| weight 54 t; contamination 30 %");
+    expect(dirty.points[1]).toMatchObject({
+      mass_kg: expect.closeTo(54_000, 6),
+      lift_loss_percent: expect.closeTo(30, 9),
+      engine_out: null,
+    });
+    expect(dirty.findings.map((one) => one.code)).toContain("contaminated-takeoff");
+    const spoilt = between("| weight 54 t; contamination 30 kg");
+    expect(spoilt.points[1]).toMatchObject({ mass_kg: null, withheld: { line: 12 } });
+    const again = between("| weight 54 t; contamination 30 %", `${landing}\n\n`);
+    expect(again.points[2]).toMatchObject({ mass_kg: null, withheld: { code: "missing-value" } });
+    expect(between("| burn 2 t").points[1]).toMatchObject({ withheld: { code: "missing-value" } });
+  });
+
   it("starts afresh with another aeroplane; limits and rules go on", () => {
     const { points: all, findings } = file(
       "\n| must any bank 60",
