@@ -163,6 +163,19 @@ function speedOf(point: PointJson | undefined): { cas_kt: number; mach: number }
   return point?.speed as unknown as { cas_kt: number; mach: number };
 }
 
+describe("a tolerance", () => {
+  it.each(["deg", "%", "ft/min"])("of a path in %s that may climb or sink reaches level flight", (unit) => {
+    const scale = unit === "ft/min" ? 100 : 1;
+    const [point, level] = file(
+      "\n| must any bank 60",
+      `| phase cruise; bank 45; path ${-8 * scale} ${unit} +- ${15 * scale} ${unit}; aside\n\n| phase cruise; bank 45`,
+    ).points as [PointJson, PointJson];
+    expect(point.stall_high_kt).toBeCloseTo(level.stall_kt as number, 9);
+    expect(point.margin_low).toBeCloseTo(level.margin as number, 9);
+    expect(point.stall_high_kt).toBeGreaterThan(point.stall_kt as number);
+  });
+});
+
 describe("the state that carries on", () => {
   const points = (text: string) => file("\n| must any bank 60", text).points;
 

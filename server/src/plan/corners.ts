@@ -113,23 +113,25 @@ function nominalInput(inputs: PointInputs): CornerInput {
 type Vary = (input: CornerInput, value: number) => CornerInput;
 
 function cornerInputs(inputs: PointInputs): CornerInput[] {
-  const dimensions: [Spread, Vary][] = [];
-  const add = (spread: Spread, vary: Vary) => {
-    if (spread.low !== spread.high) dimensions.push([spread, vary]);
+  const dimensions: [readonly number[], Vary][] = [];
+  const add = ({ low, high }: Spread, vary: Vary, within: readonly number[] = []) => {
+    if (low !== high)
+      dimensions.push([[low, ...within.filter((one) => low < one && one < high), high], vary]);
   };
   add(inputs.mass, (input, mass) => ({ ...input, mass }));
   add(inputs.pressureAltitude, (input, pressureAltitude) => ({ ...input, pressureAltitude }));
   add(inputs.deviation, (input, deviation) => ({ ...input, deviation }));
   add(inputs.speed.value, (input, value) => ({ ...input, speed: { kind: input.speed.kind, value } }));
   if (inputs.bank !== "rate-one") add(inputs.bank, (input, bank) => ({ ...input, bank }));
-  add(inputs.path.value, (input, value) => ({ ...input, path: { kind: input.path.kind, value } }));
+  // Level flight needs the most lift: a path that may climb or sink passes it.
+  add(inputs.path.value, (input, value) => ({ ...input, path: { kind: input.path.kind, value } }), [0]);
   if (inputs.load) add(inputs.load, (input, load) => ({ ...input, load }));
   add(inputs.liftLoss, (input, liftLoss) => ({ ...input, liftLoss }));
   add(inputs.cgFactor, (input, cgFactor) => ({ ...input, cgFactor }));
   if (dimensions.length === 0) return [];
   let corners = [nominalInput(inputs)];
-  for (const [spread, vary] of dimensions) {
-    corners = corners.flatMap((input) => [vary(input, spread.low), vary(input, spread.high)]);
+  for (const [values, vary] of dimensions) {
+    corners = corners.flatMap((input) => values.map((value) => vary(input, value)));
   }
   return corners;
 }
