@@ -1,3 +1,4 @@
+import fc from "fast-check";
 import { describe, expect, it } from "vitest";
 import { createFolder } from "../../server/src/plan/createFolder.ts";
 import { fileJson, type PointJson } from "../../server/src/report/pointsJson.ts";
@@ -173,6 +174,80 @@ describe("a tolerance", () => {
     expect(point.stall_high_kt).toBeCloseTo(level.stall_kt as number, 9);
     expect(point.margin_low).toBeCloseTo(level.margin as number, 9);
     expect(point.stall_high_kt).toBeGreaterThan(point.stall_kt as number);
+  });
+});
+
+describe("every value inside a tolerance", () => {
+  // Tables that bend both ways, so that the extreme need not be at an end.
+  const bent = `| aircraft bent-1; basis vsr; reference 40 t; warning 1.05
+| config clean stall 120 kt
+| wing 100 m2, chord 3.5 m, slope 0.00 4.8, 0.40 5.2, 0.60 6.4, 0.90 3.5 per rad
+| lift-mach clean 0.25 1.00, 0.32 0.80, 0.40 0.86, 0.55 0.60, 0.70 0.68, 0.85 0.40
+| buffet clean 0.20 1.10, 0.35 0.80, 0.45 1.00, 0.85 0.40
+| cg-effect 14 % 1.000, 20 % 0.960, 34 % 0.985
+| ias clean 60 kt 70 kt, 110 kt 112 kt, 160 kt 150 kt, 210 kt 214 kt, 320 kt 318 kt
+`;
+  /** A value, half of its tolerance, and the clause with both; the second is empty at one value inside it. */
+  type Toleranced = readonly [number, number, (value: string, tolerance: (unit: string) => string) => string];
+  const speeds: readonly Toleranced[] = [
+    [190, 25, (value, within) => `speed ${value} kt${within("kt")}`],
+    [250, 30, (value, within) => `speed ${value} kt${within("kt")} tas`],
+    [200, 10, (value, within) => `speed ${value} kt${within("kt")} ias`],
+    [0.45, 0.1, (value, within) => `speed M ${value}${within("")}`],
+  ];
+  const others: readonly Toleranced[] = [
+    [36, 4, (value, within) => `weight ${value} t${within("t")}`],
+    [17_000, 4000, (value, within) => `altitude ${value} ft${within("ft")}`],
+    [16, 15, (value, within) => `isa +${value}${within("")}`],
+    [32, 12, (value, within) => `bank ${value}${within("")}`],
+    [-3, 8, (value, within) => `path ${value} deg${within("deg")}`],
+    [21, 4, (value, within) => `cg ${value} %${within("%")}`],
+  ];
+  const point = (clauses: readonly Toleranced[], share: readonly number[] | null) => {
+    const written = clauses.map(([value, half, clause], i) =>
+      share === null
+        ? clause(String(value), (unit) => ` +- ${half} ${unit}`)
+        : clause((value + half * (share[i] as number)).toFixed(6), () => ""),
+    );
+    return `| phase manoeuvre; aside; ${written.join("; ")}; gust 20 ft/s; shear 12 kt; decel 1 kt/s`;
+  };
+  const low = ["margin", "ratio", "stall_load", "buffet_load", "gust_load_down", "seconds_to_warning"];
+  const after = ["margin_after_shear", "ratio_after_shear", "seconds_to_stall"];
+  const banks = ["stall_bank_deg", "warning_bank_deg", "overshoot_deg", "buffet_bank_deg"];
+  const bounds: readonly (readonly [string, string, 1 | -1])[] = [
+    ...[...low, ...after].map((name) => [name, `${name}_low`, 1] as const),
+    ...banks.map((name) => [name, name.replace("_deg", "_low_deg"), 1] as const),
+    ["stall_kt", "stall_high_kt", -1],
+    ["vs1g_kt", "vs1g_high_kt", -1],
+    ["warning_kt", "warning_high_kt", -1],
+    ["gust_load", "gust_load_high", -1],
+    ["radius_nm", "radius_high_nm", -1],
+  ];
+
+  it("is no worse than the figures that are shown for it, whatever bends between its ends", () => {
+    const share = fc.double({ min: -1, max: 1, noNaN: true });
+    const drawn = fc.record({
+      speed: fc.constantFrom(...speeds),
+      varied: fc.subarray([...others], { maxLength: 3 }),
+      inside: fc.array(fc.array(share, { minLength: 7, maxLength: 7 }), { minLength: 12, maxLength: 12 }),
+    });
+    fc.assert(
+      fc.property(drawn, ({ speed, varied, inside }) => {
+        const clauses = [speed, ...varied];
+        const points = [null, ...inside].map((one) => point(clauses, one)).join("\n\n");
+        const start = "| fly bent-1; under own; weight 36 t; config clean; altitude 17000 ft; isa +4";
+        const [all, ...each] = file("\n| must any load 9", `${start}\n\n${points}`, `\n${bent}`).points;
+        expect(all?.withheld).toBeNull();
+        for (const one of each) {
+          for (const [name, bound, way] of bounds) {
+            const [figure, worst] = [one[name], all?.[bound]];
+            if (typeof figure !== "number" || typeof worst !== "number") continue;
+            expect(way * (figure - worst), `${name} of ${points}`).toBeGreaterThanOrEqual(-1e-5);
+          }
+        }
+      }),
+      { numRuns: 60 },
+    );
   });
 });
 
