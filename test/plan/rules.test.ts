@@ -149,6 +149,19 @@ describe("rows of limits", () => {
     expect(codes("1.29")).toEqual(["ratio-short"]);
   });
 
+  it("of a ratio to vs and one to vs1g the one that lacks more counts, and what is accepted is held against it", () => {
+    const rows = "\n| must any ratio 1.13, vs 1.2\n| must any ratio 1.15 above FL050";
+    // 1.10 times vs1g is 1.17 times vs: 97.5 % of the one bound and 95.7 % of the other.
+    const flown = "| phase cruise; speed 1.1 vs1g; accept ratio-short to 1.12";
+    const vs = `\n${card.replace("vsr", "vs 0.94").replace("testbed-1", "testbed-2")}`;
+    const start = "| fly testbed-2; weight 55 t; config clean; altitude FL100\n\n";
+    const findings = file(rows, `${start}${flown} because "a test"`, vs).findings;
+    expect(findings.find(({ code }) => code === "ratio-short")).toMatchObject({
+      severity: "error",
+      message: expect.stringMatching(/^The speed is 1\.10 times vs1g and own requires 1\.15 in cruise/),
+    });
+  });
+
   it("that take from one another in a circle are told, and hold nothing", () => {
     const findings = told(
       ", from base\n| must any bank 10",

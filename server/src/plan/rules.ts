@@ -95,7 +95,7 @@ function figureOf(row: Row, { corners, vsFactor }: RowSituation): number | null 
   }
 }
 
-/** The strictest of several rows of one subject: the first broken one, else the one with the tightest bound. */
+/** The strictest of several rows of one subject: the first broken one, else the one that is kept most narrowly. */
 export function strictest(rows: readonly HeldRow[]): HeldRow | null {
   let found: HeldRow | null = null;
   for (const one of rows) {
@@ -105,7 +105,9 @@ export function strictest(rows: readonly HeldRow[]): HeldRow | null {
 }
 
 function stricter(one: HeldRow, other: HeldRow): boolean {
-  // A ratio may be on the `vs` basis in one row and not in the other: what is broken counts first.
   if (one.holds !== other.holds) return one.holds === false || (one.holds === null && other.holds === true);
-  return atMost(one.row.subject) ? one.bound < other.bound : other.bound < one.bound;
+  if (atMost(one.row.subject)) return one.bound < other.bound;
+  // One row may ask a ratio to vs and another to vs1g: each figure is in the measure of its own bound.
+  const share = ({ figure, bound }: HeldRow) => (figure ?? 1) / bound;
+  return one.row.subject === "ratio" ? share(one) < share(other) : other.bound < one.bound;
 }
