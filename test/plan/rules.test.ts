@@ -391,6 +391,16 @@ describe("what cannot be checked does not pass for checked", () => {
     });
   });
 
+  it.each([
+    ["0 +- 0.5", "Under a negative load no stall speed is computed."],
+    ["0.3 +- 0.3", "Without load there is no stall."],
+  ])("a margin that is known at some of the loads alone: load %s", (load, why) => {
+    const { findings } = file("\n| must any margin 3", `| phase manoeuvre; load ${load}`);
+    const finding = findings.find(({ code }) => code === "not-evaluated");
+    expect(finding).toMatchObject({ severity: "error", message: expect.stringContaining(why) });
+    expect(told("\n| must any margin 3", "| phase manoeuvre; load 0")).not.toContain("not-evaluated error");
+  });
+
   it("a tolerance that leaves what a value can be gives no figures", () => {
     const result = file(
       "\n| must any bank 60",

@@ -80,7 +80,7 @@ const resultOf: Readonly<Record<Subject, ResultName>> = {
 /** Wings level there is no turn to be wide; without a load there is no stall to keep a margin to. */
 function notApplicable({ subject, afterShear }: RowGroup, corners: Corners): boolean {
   if (subject === "radius") return corners.all.every((one) => one.bank === 0);
-  if (subject === "margin") return corners.nominal.stall === 0;
+  if (subject === "margin") return corners.all.every((one) => one.stall === 0);
   // As flown, a warning that has come is told as an error of its own; after a shear the row alone tells it.
   return subject === "overshoot" && !afterShear && warningHasCome(corners);
 }
