@@ -322,7 +322,7 @@ function rowPlace({ row }: HeldRow, uri: string): string {
 }
 
 function heldText({ row, bound, figure, holds }: HeldRow): string {
-  if (figure === null) return `${plainMarkdown(row.text)}: not evaluated`;
+  if (figure === null) return `${plainMarkdown(row.text)}: ${holds === false ? "broken" : "not evaluated"}`;
   const show = (value: number, more: number) => {
     switch (row.subject) {
       case "bank":
