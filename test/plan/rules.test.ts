@@ -1,6 +1,7 @@
 import fc from "fast-check";
 import { describe, expect, it } from "vitest";
 import { createFolder } from "../../server/src/plan/createFolder.ts";
+import { passedJson } from "../../server/src/report/passed.ts";
 import { fileJson, type PointJson } from "../../server/src/report/pointsJson.ts";
 
 const card = `| aircraft testbed-1; basis vsr; reference 55 t; warning 1.03
@@ -399,6 +400,34 @@ describe("what cannot be checked does not pass for checked", () => {
     const finding = findings.find(({ code }) => code === "not-evaluated");
     expect(finding).toMatchObject({ severity: "error", message: expect.stringContaining(why) });
     expect(told("\n| must any margin 3", "| phase manoeuvre; load 0")).not.toContain("not-evaluated error");
+  });
+
+  const tables = `| aircraft tables-1; basis vsr; reference 55 t; warning 1.03
+| config clean stall 138 kt
+| wing 104 m2, chord 3.7 m, slope 0.00 5.1, 0.60 5.9 per rad
+| lift-mach clean 0.30 1.00, 0.60 0.85
+| buffet clean 0.40 1.25, 0.60 1.05
+`;
+  const lift = ["stalled", "warning-in-turn", "stall-before-warning", "no-level-flight", "buffet-in-turn"];
+
+  /** Card, clauses of the point, and the checks that are not held there. */
+  it.each([
+    [tables, "speed M 0.62; gust 30 ft/s", [...lift, "gust-over-stall"]],
+    [tables, "speed M 0.5; contamination 5 %; gust 30 ft/s", ["buffet-in-turn", "gust-over-stall"]],
+    [tables, "speed M 0.5; load -0.5", ["stalled", "warning-in-turn", "stall-before-warning"]],
+    [tables, "speed M 0.2", ["stalled", "warning-in-turn", "buffet-in-turn"]],
+    [tables.replace("; warning 1.03", ""), "speed M 0.5", ["warning-in-turn", "stall-before-warning"]],
+    [tables.replace(/\| wing.*\n/, ""), "speed M 0.5", ["buffet-in-turn"]],
+    [tables, "speed M 0.5; gust 30 ft/s", []],
+  ] as const)("a check that could not be made is none that was held %#", (definition, clauses, missed) => {
+    const text = `${definition}\n| limits own\n| must any load 9\n\n| fly tables-1; under own; weight 50 t; config clean; altitude FL200\n\n| phase cruise; ${clauses}\n`;
+    const note = createFolder({ today: "2026-12-01" }).open("file:///note.plumb", text, "plumb");
+    const held = passedJson(note).map(({ code }) => code);
+    expect(lift.concat("gust-over-stall").filter((code) => !held.includes(code as never))).toEqual(
+      [...lift, "gust-over-stall"].filter(
+        (code) => missed.includes(code as never) || (code === "gust-over-stall" && !clauses.includes("gust")),
+      ),
+    );
   });
 
   it("a tolerance that leaves what a value can be gives no figures", () => {

@@ -3,6 +3,7 @@ import { loadFactor } from "../flight/turn.ts";
 import type { ResultName } from "../notation/vocabulary.ts";
 import { type Checking, carriedFrom, clauseFor, exerciseSeverity, leastAt, tell } from "./checks.ts";
 import type { Corner } from "./corner.ts";
+import type { Evaluated } from "./evaluated.ts";
 import {
   formatBank,
   formatDistinct,
@@ -15,14 +16,32 @@ import type { NotEvaluated } from "./point.ts";
 import { ALLOWANCE } from "./rules.ts";
 import { findingAt } from "./site.ts";
 
-/** The wing's own limits: stall, warning and buffet, at the worst corner. */
+/** The wing's own limits: stall, warning and buffet, at the worst corner. What could not be held is given back. */
 export function checkSafety(checking: Checking): readonly NotEvaluated[] {
-  if (!checkLift(checking)) return [];
+  const { evaluated } = checking;
+  if (!checkLift(checking)) return notHeld(evaluated, everyCheck, "stall-load");
   const stalled = checkStalled(checking);
   if (!stalled) checkWarning(checking);
   checkStallBeforeWarning(checking);
   checkUnloading(checking);
-  return checkBuffet(checking);
+  return [...loadsUnknown(evaluated), ...checkBuffet(checking)];
+}
+
+const everyCheck = "no-level-flight, stalled, warning-in-turn, stall-before-warning, buffet-in-turn";
+
+function notHeld(evaluated: Evaluated, rule: string, result: ResultName): readonly NotEvaluated[] {
+  return [{ rule, why: evaluated.absent(result) ?? "It is not known here." }];
+}
+
+/** Pushed over, the wing may stall upside down, of which the card says nothing; nor is a stall speed computed then. */
+function loadsUnknown(evaluated: Evaluated): readonly NotEvaluated[] {
+  const { corners, ready } = evaluated;
+  const negative = corners.all.some((one) => one.load < 0);
+  const unwarned = ready.frame.warning !== null && corners.all.some((one) => Number.isNaN(one.warning));
+  return [
+    ...(negative ? notHeld(evaluated, "stalled", "stall") : []),
+    ...(unwarned ? notHeld(evaluated, "warning-in-turn, stall-before-warning", "warning") : []),
+  ];
 }
 
 /** False where the wing's lift is not known here, or carries the load at no speed. */
@@ -110,7 +129,7 @@ function isWarned(corner: Corner): boolean {
 function checkWarning(checking: Checking): void {
   const { point, evaluated } = checking;
   const { corners, ready } = evaluated;
-  if (ready.frame.warning === null || Number.isNaN(corners.nominal.warning)) return;
+  if (ready.frame.warning === null) return;
   const worst = leastAt(corners.all, (one) => one.cas - one.warning);
   if (!isWarned(worst)) return;
   const lead = isWarned(corners.nominal) ? "" : "With the tolerances, ";
