@@ -112,6 +112,16 @@ describe("a sweep", () => {
   });
 
   it.each([
+    // The bank is over its limit at every row, so that the first is shown; the worst is the last.
+    ["config flaps-30; speed 170 kt; weight 37 t to 54 t by 1 t", "vref", 108, 130],
+    ["weight 59 t to 30 t by 1 t", "va", 222, 158],
+  ])("at %s holds a claim of %s at its worst row, though it is nominal", (clauses, name, first, worst) => {
+    const point = `| phase cruise; bank 45; ${clauses}`;
+    expect(found(`${point}; claim ${name} ${first} kt`)).toContain("claim-stale");
+    expect(found(`${point}; claim ${name} ${worst} kt`)).not.toContain("claim-stale");
+  });
+
+  it.each([
     ["| phase cruise; bank 0 to 60 by 0.1", "601"],
     ["| phase cruise; bank 0 to 60 by 0", "step"],
     ["| phase cruise; bank 0 to 60 by -5", "step"],
