@@ -47,6 +47,13 @@ describe("the hover of a point", () => {
     );
   });
 
+  it("says of a claim the figure that it was held against, that of a sweep's worst row", () => {
+    // The row that is shown is the first that breaks a rule, with less load.
+    expect(shown(point("bank 0 to 60 by 15; cl$0aim load 2.00"))).toMatch(
+      /^\*\*load 2\.00 now: the claim holds\*\*/,
+    );
+  });
+
   it("lists rows that are switched off where no other row is left", () => {
     const text = shown(
       "| limits no-bank\n| must any bank none\n\n| fly brambling-37; under no-bank\n\n| pha$0se cruise; weight 55 t; config clean; altitude FL200; speed 250 kt",

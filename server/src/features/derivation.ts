@@ -22,6 +22,7 @@ import type { Limits } from "../plan/limits.ts";
 import type { Conditions, HeldRow, PointResult, SweepResult } from "../plan/point.ts";
 import { resultEntry, resultNames } from "../plan/results.ts";
 import { atMost } from "../plan/rules.ts";
+import { exactly } from "../plan/spread.ts";
 import {
   type FurtherRow,
   furtherRows,
@@ -166,12 +167,14 @@ function levelText({ pressureAltitude }: Conditions): string {
 }
 
 /** The figure as the finding of a stale claim says it. */
-function claimText({ claims, results }: PointResult, placed: PlacedClause): string {
+function claimText({ claims }: PointResult, placed: PlacedClause): string {
   const { body } = placed.clause;
   const claim = claims.find((one) => one.clause === placed);
-  const spread = claim && results?.[claim.name];
-  if (!spread || body?.kind !== "claim") return "This claim cannot be checked here.";
-  return `${claim.name} ${formatClaim(claim.name, spread, body.value)} now: the claim ${claim.holds ? "holds" : "is stale"}`;
+  if (!claim || claim.computed === null || body?.kind !== "claim")
+    return "This claim cannot be checked here.";
+  // What it was held against: in a sweep that is another row than the one that is shown.
+  const figure = formatClaim(claim.name, exactly(claim.computed), body.value);
+  return `${claim.name} ${figure} now: the claim ${claim.holds ? "holds" : "is stale"}`;
 }
 
 function resultsTable(point: PointResult): string {
