@@ -150,6 +150,23 @@ describe("rows of limits", () => {
     expect(codes("1.29")).toEqual(["ratio-short"]);
   });
 
+  it.each([
+    ["must any ratio 1.235", "speed 1.2 vs1g", "1.20 times vs1g and own requires 1.235 in"],
+    ["must any ratio 1.235", "speed 1.234 vs1g", "1.23 times vs1g and own requires 1.235 in"],
+    [
+      "should any overshoot 12.5",
+      "speed 1.3 vs1g; bank 45",
+      "Only 5° of bank are left to the warning and own advises 12.5°",
+    ],
+    ["must any load 1.333", "bank 45", "1.42 exceeds the 1.333"],
+    ["must any bank 27.5", "bank 45", "45° exceeds the 27.5°"],
+    ["must any bank 60 or rate-one", "speed 200 kt tas; bank 45", "45° exceeds the 28°"],
+    ["must any radius 3 km", "speed 300 kt; bank 10", " exceeds the 1.61 nm"],
+  ])("%s is told as it is written, and at %s never as less than it asks", (row, clauses, says) => {
+    const { findings } = file(`\n| ${row}`, `| phase cruise; ${clauses}`);
+    expect(findings.map(({ message }) => message).join()).toContain(says);
+  });
+
   it("of a ratio to vs and one to vs1g the one that lacks more counts, and what is accepted is held against it", () => {
     const rows = "\n| must any ratio 1.13, vs 1.2\n| must any ratio 1.15 above FL050";
     // 1.10 times vs1g is 1.17 times vs: 97.5 % of the one bound and 95.7 % of the other.

@@ -18,9 +18,10 @@ import {
   formatWritten,
 } from "../plan/format.ts";
 import type { FurtherFigures } from "../plan/further.ts";
-import type { Limits } from "../plan/limits.ts";
+import type { Limits, Row } from "../plan/limits.ts";
 import type { Conditions, HeldRow, PointResult, SweepResult } from "../plan/point.ts";
 import { resultEntry, resultNames } from "../plan/results.ts";
+import { boundOf } from "../plan/ruleChecks.ts";
 import { atMost } from "../plan/rules.ts";
 import { exactly } from "../plan/spread.ts";
 import {
@@ -338,11 +339,26 @@ function heldText({ row, bound, figure, holds }: HeldRow): string {
         return formatResultValue(row.subject, value, more);
     }
   };
-  const [has, asked] = holds
-    ? [show(figure, 0), show(bound, 0)]
-    : // What is broken never reads as kept.
-      formatDistinct(figure, bound, show);
-  return `${row.text}: ${has}, ${atMost(row.subject) ? "at most" : "at least"} ${asked}, ${holds ? "kept" : "broken"}`;
+  const asked = boundOf(row);
+  // What is broken never reads as kept, nor the other way round.
+  const [has, bounded] = holds
+    ? keptAs(row, figure, bound, show)
+    : formatDistinct(figure, bound, show, asked);
+  return `${row.text}: ${has}, ${atMost(row.subject) ? "at most" : "at least"} ${bounded}, ${holds ? "kept" : "broken"}`;
+}
+
+/** A figure with as many decimals more as its bound has, where it would read as beyond it without them. */
+function keptAs(
+  row: Row,
+  figure: number,
+  bound: number,
+  show: (value: number, more: number) => string,
+): readonly [string, string] {
+  const asked = boundOf(row)(bound, 0);
+  const way = atMost(row.subject) ? 1 : -1;
+  const reads = [0, 1, 2].map((more) => show(figure, more));
+  const kept = reads.find((one) => way * (Number.parseFloat(one) - Number.parseFloat(asked)) <= 0);
+  return [kept ?? show(figure, 0), asked];
 }
 
 function absentText(point: PointResult): string {

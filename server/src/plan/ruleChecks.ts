@@ -2,11 +2,19 @@ import type { ResultName, Subject } from "../notation/vocabulary.ts";
 import { type Checking, carriedFrom, clauseFor, tell } from "./checks.ts";
 import type { Corners } from "./corners.ts";
 import type { FindingCode } from "./findings.ts";
-import { formatBank, formatDistinct, formatRadius, formatResultValue, formatSpeed } from "./format.ts";
+import {
+  formatBank,
+  formatBound,
+  formatDistinct,
+  formatLoad,
+  formatRadius,
+  formatResultValue,
+  formatSpeed,
+} from "./format.ts";
 import type { Row } from "./limits.ts";
 import type { HeldRow } from "./point.ts";
 import { ratioFix } from "./ratioFix.ts";
-import { holdRow, strictest, warningHasCome } from "./rules.ts";
+import { atMost, holdRow, strictest, warningHasCome } from "./rules.ts";
 import { type RowGroup, rowsInForce } from "./selectRows.ts";
 import { oneStepLower } from "./site.ts";
 
@@ -138,48 +146,49 @@ function message(checking: Checking, held: HeldRow, corners: Corners): string {
   const lead = leadOf(checking, held, corners);
   switch (row.subject) {
     case "bank": {
-      const [flown, most] = formatDistinct(figure, bound, formatBank);
+      const [flown, most] = formatDistinct(figure, bound, formatBank, boundOf(row));
       const why = held.byRateOne ? ", the bank for rate one" : "";
       return `${lead}Bank ${flown} exceeds the ${most} that ${rule}${why}; ${warningAt(checking)}.`;
     }
     case "load": {
-      const [flown, most] = formatDistinct(figure, bound, (value, more) =>
-        formatResultValue("load", value, more),
-      );
+      const [flown, most] = formatDistinct(figure, bound, formatLoad, boundOf(row));
       return `${lead}The load factor ${flown} exceeds the ${most} that ${rule}: bank or pull less.`;
     }
     case "radius": {
-      const [flown, most] = formatDistinct(figure, bound, formatRadius);
+      const [flown, most] = formatDistinct(figure, bound, formatRadius, boundOf(row));
       return `${lead}The turn's radius ${flown} exceeds the ${most} that ${rule}: fly slower or bank more.`;
     }
     case "ratio": {
       const of = checking.evaluated.ready.card.basis?.value?.kind === "vs" && row.vs !== null ? "vs" : "vs1g";
-      const [flown, least] = formatDistinct(figure, bound, (value, more) =>
-        formatResultValue("ratio", value, more),
-      );
+      const [flown, least] = formatDistinct(figure, bound, left("ratio"), boundOf(row));
       return `${lead}The speed is ${flown} times ${of} and ${asks(least)}: fly ${knotsMissing(checking, held, corners)} faster, or lighter.`;
     }
     case "margin": {
-      const [flown, least] = formatDistinct(figure, bound, (value, more) =>
-        formatResultValue("margin", value, more),
-      );
+      const [flown, least] = formatDistinct(figure, bound, left("margin"), boundOf(row));
       return `${lead}The margin over the stall is ${flown} and ${asks(least)}: fly faster or bank less.`;
     }
     case "overshoot": {
-      const [left, least] = formatDistinct(figure, bound, (value, more) =>
-        formatResultValue("overshoot", value, more),
-      );
+      const [over, least] = formatDistinct(figure, bound, left("overshoot"), boundOf(row));
       if (!(0 <= figure))
         return `${lead}The warning comes before this bank is reached, and ${asks(`${least} of bank beyond it`)}: bank less or fly faster.`;
-      return `${lead}Only ${left} of bank are left to the warning and ${asks(least)}: bank less or fly faster.`;
+      return `${lead}Only ${over} of bank are left to the warning and ${asks(least)}: bank less or fly faster.`;
     }
     case "buffet": {
-      const [onset, least] = formatDistinct(figure, bound, (value, more) =>
-        formatResultValue("buffet-load", value, more),
-      );
+      const [onset, least] = formatDistinct(figure, bound, left("buffet-load"), boundOf(row));
       return `${lead}Buffet begins at a load factor of ${onset} and ${asks(least)}: fly lower or lighter.`;
     }
   }
+}
+
+/** Writes a figure of which less is worse: what is left is cut. */
+function left(name: ResultName): (value: number, more: number) => string {
+  return (value, more) => formatResultValue(name, value, more);
+}
+
+/** Writes the bound of a row. */
+export function boundOf({ subject }: Row): (bound: number, more: number) => string {
+  const name = subject === "buffet" ? "buffet-load" : subject;
+  return (bound, more) => formatBound(name, bound, atMost(subject) ? "down" : "up", more);
 }
 
 /** "After the shear of 10 kt, with the tolerances: ", where each applies. */
