@@ -213,6 +213,8 @@ describe("a hold", () => {
     ["altitude 14000 ft; speed 231 kt", ["over-holding-speed information"]],
     ["altitude 20000 ft; speed 240 kt", []],
     ["altitude 20000 ft; speed 241 kt", ["over-holding-speed information"]],
+    ["altitude 14200 ft; speed 235 kt", []],
+    ["altitude 14200 ft +- 300 ft; speed 235 kt", ["over-holding-speed information"]],
     ["altitude FL350; speed M 0.78", []],
   ];
 
