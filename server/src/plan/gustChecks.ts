@@ -20,7 +20,10 @@ export function checkGust(checking: Checking): readonly NotEvaluated[] {
     "stall-load",
     (one) => one.stallLoad,
     up,
-    "fly faster, lighter, or bank less",
+    (one) =>
+      one.carriesMoreSlower
+        ? "fly slower, lower, lighter, or bank less"
+        : "fly faster, lighter, or bank less",
   );
   againstLift(
     checking,
@@ -28,7 +31,7 @@ export function checkGust(checking: Checking): readonly NotEvaluated[] {
     "buffet-load",
     (one) => one.buffetLoad,
     up,
-    "fly lower, lighter, or bank less",
+    () => "fly lower, lighter, or bank less",
   );
   againstLimits(checking, up, (one) => one.load - one.gustLoad(gust.high));
   return liftUnknown(evaluated);
@@ -77,7 +80,7 @@ function againstLift(
   name: "stall-load" | "buffet-load",
   carried: (corner: Corner) => number,
   up: (corner: Corner) => number,
-  wayOut: string,
+  wayOut: (corner: Corner) => string,
 ): void {
   const { point, evaluated } = checking;
   const worst = leastAt(evaluated.corners.all, (one) => carried(one) - up(one));
@@ -92,7 +95,7 @@ function againstLift(
     checking,
     "gust-over-stall",
     clauseFor(point, "gust"),
-    `In the gust of ${strength(checking)} the load factor reaches ${load} and ${what} at ${onset}: ${wayOut}.`,
+    `In the gust of ${strength(checking)} the load factor reaches ${load} and ${what} at ${onset}: ${wayOut(worst)}.`,
     { related: carriedFrom(point, ["speed", "mass", "altitude"]) },
   );
 }

@@ -1,5 +1,5 @@
 import type { ResultName, Subject } from "../notation/vocabulary.ts";
-import { type Checking, carriedFrom, clauseFor, tell } from "./checks.ts";
+import { type Checking, carriedFrom, clauseFor, leastAt, tell } from "./checks.ts";
 import type { Corners } from "./corners.ts";
 import type { FindingCode } from "./findings.ts";
 import {
@@ -169,9 +169,12 @@ function message(checking: Checking, held: HeldRow, corners: Corners): string {
     }
     case "overshoot": {
       const [over, least] = formatDistinct(figure, bound, left("overshoot"), boundOf(row));
+      const way = leastAt(corners.all, (one) => one.overshoot).carriesMoreSlower
+        ? "slower or lower"
+        : "faster";
       if (!(0 <= figure))
-        return `${lead}The warning comes before this bank is reached, and ${asks(`${least} of bank beyond it`)}: bank less or fly faster.`;
-      return `${lead}Only ${over} of bank are left to the warning and ${asks(least)}: bank less or fly faster.`;
+        return `${lead}The warning comes before this bank is reached, and ${asks(`${least} of bank beyond it`)}: bank less or fly ${way}.`;
+      return `${lead}Only ${over} of bank are left to the warning and ${asks(least)}: bank less or fly ${way}.`;
     }
     case "buffet": {
       const [onset, least] = formatDistinct(figure, bound, left("buffet-load"), boundOf(row));

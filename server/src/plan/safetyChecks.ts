@@ -8,6 +8,7 @@ import {
   formatBank,
   formatDistinct,
   formatLoad,
+  formatMach,
   formatPercent,
   formatResultValue,
   formatSpeed,
@@ -105,15 +106,16 @@ function checkStalled(checking: Checking): boolean {
   if (!isStalled(worst)) return false;
   const lead = isStalled(corners.nominal) ? "Stalled: " : "Stalled at the worst of the tolerances: ";
   const [has, needs] = formatDistinct(worst.stallLoad, worst.load, result("stall-load"), formatLoad);
-  const speed =
-    Number.isNaN(worst.stall) || worst.stall === 0
-      ? ""
-      : `; the stall comes at ${formatResultValue("stall", worst.stall)}`;
+  const past = worst.carriesMoreSlower;
+  const stall = Number.isNaN(worst.stall) || worst.stall === 0 ? "" : formatResultValue("stall", worst.stall);
+  const speed = past
+    ? `, for at ${formatMach(worst.mach)} it carries less than slower`
+    : stall && `; the stall comes at ${stall}`;
   tell(
     checking,
     "stalled",
     clauseFor(point, "speed"),
-    `${lead}at ${formatSpeed(worst.cas)} the wing carries ${has} g and the point needs ${needs} g${speed}. Fly faster, bank less or fly lighter.`,
+    `${lead}at ${formatSpeed(worst.cas)} the wing carries ${has} g and the point needs ${needs} g${speed}. Fly ${past ? "slower or lower" : "faster"}, bank less or fly lighter.`,
     {
       severity: exerciseSeverity(point, "stalled"),
       related: carriedFrom(point, ["speed", "mass", "config"]),
