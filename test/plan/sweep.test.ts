@@ -95,6 +95,17 @@ describe("a sweep", () => {
     expect(rows.map((row) => row.split(",")[at])).toEqual(["0", "15", "30", "45", "60", ""]);
   });
 
+  it.each([
+    ["speed M 0.40 to 0.44 by 0.04", "speed M 0.40", "speed M 0.44"],
+    ["speed 200 kt to 240 kt by 40 kt tas", "speed 200 kt tas", "speed 240 kt tas"],
+    ["speed 1.4 to 1.6 by 0.2 vs1g", "speed 1.4 vs1g", "speed 1.6 vs1g"],
+    ["speed 200 kt to 240 kt by 40 kt", "speed 200 kt", "speed 240 kt"],
+  ])("%s says of its values what they are of", (clause, first, last) => {
+    const note = open(`| phase cruise; bank 45; ${clause}`);
+    expect(tableRows(note).map(([, phase]) => phase)).toEqual([`cruise (${first})`, `cruise (${last})`]);
+    expect(note.findings()[0]?.finding.message).toContain(`at ${first}: Bank 45°`);
+  });
+
   it("does not carry on, and what is assumed otherwise is not assumed then", () => {
     expect(found("| phase cruise; weight 40 t to 42 t by 1 t\n\n| phase cruise; bank 10")).toEqual([
       "missing-value",

@@ -15,7 +15,7 @@ import {
   formatResult,
   formatResultValue,
   formatSpeed,
-  formatWritten,
+  formatSpoken,
 } from "../plan/format.ts";
 import type { FurtherFigures } from "../plan/further.ts";
 import type { Limits, Row } from "../plan/limits.ts";
@@ -131,7 +131,7 @@ function sweepTable({ what, rows }: SweepResult): string {
     };
     const found = point.solved ? [plainMarkdown(solvedText(point.solved))] : [];
     const codes = point.findings.map((one) => one.code).join(", ");
-    return `| ${[formatWritten(written, what), ...found, figure("stall"), figure("margin"), figure("warning-bank"), codes].join(" | ")} |`;
+    return `| ${[formatSpoken(written, what), ...found, figure("stall"), figure("margin"), figure("warning-bank"), codes].join(" | ")} |`;
   });
   const head = [
     what,

@@ -197,7 +197,14 @@ export function writtenFigure({ what, worse, units, decimals }: FigureRule, si: 
   return withUnit(rounded(value, decimals, worse === "more" ? "up" : "down"), unit);
 }
 
-/** A value as an author writes it after its keyword: "41", "56.4 t", "M 0.742", "FL310", "+8". */
+/** A value as it is spoken of, with what its clause says besides: "41", "56.4 t", "M 0.742", "200 kt tas". */
+export function formatSpoken(written: Written, what: Keyword): string {
+  const text = formatWritten(written, what);
+  if (written.of === undefined) return text;
+  return written.of === "M" ? `M ${text}` : `${text} ${written.of}`;
+}
+
+/** A value as it is written in the place that is open: "41", "56.4 t", "0.742", "FL310", "+8". */
 export function formatWritten({ value, unit, decimals }: Written, what: Keyword): string {
   const figure = fixed(value, decimals);
   if (unit === "FL") return `FL${figure.padStart(3, "0")}`;
