@@ -47,6 +47,20 @@ describe("the hover of a point", () => {
     );
   });
 
+  it("says of a claim the figure that it was held against, that of a sweep's worst row", () => {
+    // The row that is shown is the first that breaks a rule, with less load.
+    expect(shown(point("bank 0 to 60 by 15; cl$0aim load 2.00"))).toMatch(
+      /^\*\*load 2\.00 now: the claim holds\*\*/,
+    );
+  });
+
+  it("says of a row that is kept its bound as it is written, and a figure that reads as kept", () => {
+    const text = shown(
+      "| limits fine\n| must any ratio 1.2345\n\n| fly brambling-37; under fine\n\n| pha$0se cruise; weight 55 t; config clean; altitude 0 ft; speed 1.237 vs1g",
+    );
+    expect(text).toContain("- must any ratio 1.2345: 1.237, at least 1.2345, kept");
+  });
+
   it("lists rows that are switched off where no other row is left", () => {
     const text = shown(
       "| limits no-bank\n| must any bank none\n\n| fly brambling-37; under no-bank\n\n| pha$0se cruise; weight 55 t; config clean; altitude FL200; speed 250 kt",

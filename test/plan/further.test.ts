@@ -92,6 +92,20 @@ describe("a sudden loss of airspeed", () => {
     );
   });
 
+  it("after which the warning has come leaves no bank to it, and breaks the row that asks for some", () => {
+    const rows = "\n| must landing overshoot 10 after shear";
+    const landing = "| phase landing; config flaps-30; altitude 0 ft; speed 118 kt";
+    expect(codes(`${landing}; shear 2 kt`, { rows })).toEqual([]);
+    expect(codes(`${landing}; shear 15 kt`, { rows })).toEqual(["overshoot-short error"]);
+    expect(file(`${landing}; shear 15 kt`, { rows }).findings[0]?.message).toMatch(
+      /^After the shear of 15 kt: The warning comes before this bank is reached, and own requires 10° of bank beyond it/,
+    );
+    const accepting = `${landing}; bank 20; shear 15 kt; accept overshoot-short to 0 because "an exercise"`;
+    expect(codes(accepting, { rows })).toEqual(["overshoot-short error"]);
+    const both = `${rows}\n| should landing overshoot 40`;
+    expect(codes(accepting, { rows: both })).toEqual(["overshoot-short error"]);
+  });
+
   it("that leaves no speed leaves its rows not evaluated", () => {
     const rows = "\n| must landing margin 1.10 after shear";
     expect(
@@ -199,6 +213,8 @@ describe("a hold", () => {
     ["altitude 14000 ft; speed 231 kt", ["over-holding-speed information"]],
     ["altitude 20000 ft; speed 240 kt", []],
     ["altitude 20000 ft; speed 241 kt", ["over-holding-speed information"]],
+    ["altitude 14200 ft; speed 235 kt", []],
+    ["altitude 14200 ft +- 300 ft; speed 235 kt", ["over-holding-speed information"]],
     ["altitude FL350; speed M 0.78", []],
   ];
 

@@ -10,12 +10,8 @@ const card = `| aircraft wheatear-9; basis vsr; reference 9 t; mass 5 t to 9 t; 
 | fly wheatear-9; weight 8 t; config clean; altitude FL100; speed 170 kt
 `;
 
-function evaluated(point: string) {
-  const note = createFolder({ today: "2026-12-01" }).open(
-    "file:///n.plumb",
-    `${card}\n| ${point}\n`,
-    "plumb",
-  );
+function evaluated(point: string, own = card) {
+  const note = createFolder({ today: "2026-12-01" }).open("file:///n.plumb", `${own}\n| ${point}\n`, "plumb");
   const result = note.results().at(-1);
   if (result?.kind !== "point" || !result.point.results) throw new Error("the point has no figures");
   const { results } = result.point;
@@ -110,4 +106,21 @@ it("a reference speed without its configuration says how a card marks one", () =
   expect(note.findings().map(({ finding }) => finding.message)).toContain(
     "vref is not known in the configuration clean. The card marks no configuration landing. Mark the configuration in the card (`config NAME …, landing`), fly one that is, or state the speed in knots.",
   );
+});
+
+it("a message tells nobody to fly faster where the wing carries less then", () => {
+  const steep = card
+    .replace("| wing", "| lift-mach clean 0.30 1.00, 0.60 0.50, 0.79 0.20\n| wing")
+    .replace(/; buffet.*; mmo 0.70/, ", chord 2 m, slope 0.00 5, 0.80 6 per rad");
+  const { message } = evaluated("phase cruise; altitude FL250; speed M 0.77; bank 70", steep);
+  expect(message("stalled")).toMatch(
+    /^Stalled: at 324 kt the wing carries 2\.77 g and the point needs 2\.93 g, for at M 0\.770 it carries less than slower\. Fly slower or lower, bank less/,
+  );
+  const near = evaluated("phase cruise; altitude FL250; speed M 0.74; bank 10; gust 60 ft/s", steep);
+  expect(near.message("gust-over-stall")).toContain("fly slower, lower, lighter, or bank less");
+  const rated = evaluated("phase cruise; altitude FL250; speed M 0.77; bank 62", steep);
+  expect(rated.message("overshoot-short")).toContain("bank less or fly slower or lower");
+  const slow = evaluated("phase cruise; altitude FL250; speed 95 kt; bank 30; gust 30 ft/s", steep);
+  expect(slow.message("stalled")).toContain("Fly faster, bank less");
+  expect(slow.message("gust-over-stall")).toContain("fly faster, lighter");
 });

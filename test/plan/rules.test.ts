@@ -1,6 +1,8 @@
+import fc from "fast-check";
 import { describe, expect, it } from "vitest";
 import { phases } from "../../server/src/notation/vocabulary.ts";
 import { createFolder } from "../../server/src/plan/createFolder.ts";
+import { passedJson } from "../../server/src/report/passed.ts";
 import { fileJson, type PointJson } from "../../server/src/report/pointsJson.ts";
 
 const card = `| aircraft testbed-1; basis vsr; reference 55 t; warning 1.03
@@ -9,7 +11,7 @@ const card = `| aircraft testbed-1; basis vsr; reference 55 t; warning 1.03
 `;
 
 /** The limits leave the other subject open, and say so. */
-const open = "\n| should any bank none\n| should any margin none";
+const open = "; should any bank none; should any margin none";
 
 function file(rows: string, points: string, more = "") {
   const folder = createFolder({ today: "2026-12-01" });
@@ -152,6 +154,36 @@ describe("rows of limits", () => {
     expect(codes("1.29")).toEqual(["ratio-short"]);
   });
 
+  it.each([
+    ["must any ratio 1.235", "speed 1.2 vs1g", "1.20 times vs1g and own requires 1.235 in"],
+    ["must any ratio 1.235", "speed 1.234 vs1g", "1.23 times vs1g and own requires 1.235 in"],
+    [
+      "should any overshoot 12.5",
+      "speed 1.3 vs1g; bank 45",
+      "Only 5° of bank are left to the warning and own advises 12.5°",
+    ],
+    ["must any load 1.333", "bank 45", "1.42 exceeds the 1.333"],
+    ["must any bank 27.5", "bank 45", "45° exceeds the 27.5°"],
+    ["must any bank 60 or rate-one", "speed 200 kt tas; bank 45", "45° exceeds the 28°"],
+    ["must any radius 3 km", "speed 300 kt; bank 10", " exceeds the 1.61 nm"],
+  ])("%s is told as it is written, and at %s never as less than it asks", (row, clauses, says) => {
+    const { findings } = file(`\n| ${row}`, `| phase cruise; ${clauses}`);
+    expect(findings.map(({ message }) => message).join()).toContain(says);
+  });
+
+  it("of a ratio to vs and one to vs1g the one that lacks more counts, and what is accepted is held against it", () => {
+    const rows = "\n| must any ratio 1.13, vs 1.2\n| must any ratio 1.15 above FL050";
+    // 1.10 times vs1g is 1.17 times vs: 97.5 % of the one bound and 95.7 % of the other.
+    const flown = "| phase cruise; speed 1.1 vs1g; accept ratio-short to 1.12";
+    const vs = `\n${card.replace("vsr", "vs 0.94").replace("testbed-1", "testbed-2")}`;
+    const start = "| fly testbed-2; weight 55 t; config clean; altitude FL100\n\n";
+    const findings = file(rows, `${start}${flown} because "a test"`, vs).findings;
+    expect(findings.find(({ code }) => code === "ratio-short")).toMatchObject({
+      severity: "error",
+      message: expect.stringMatching(/^The speed is 1\.10 times vs1g and own requires 1\.15 in cruise/),
+    });
+  });
+
   it("that take from one another in a circle are told, and hold nothing", () => {
     const findings = told(
       ", from base\n| must any bank 10",
@@ -166,6 +198,93 @@ describe("rows of limits", () => {
 function speedOf(point: PointJson | undefined): { cas_kt: number; mach: number } {
   return point?.speed as unknown as { cas_kt: number; mach: number };
 }
+
+describe("a tolerance", () => {
+  it.each(["deg", "%", "ft/min"])("of a path in %s that may climb or sink reaches level flight", (unit) => {
+    const scale = unit === "ft/min" ? 100 : 1;
+    const [point, level] = file(
+      "\n| must any bank 60",
+      `| phase cruise; bank 45; path ${-8 * scale} ${unit} +- ${15 * scale} ${unit}; aside\n\n| phase cruise; bank 45`,
+    ).points as [PointJson, PointJson];
+    expect(point.stall_high_kt).toBeCloseTo(level.stall_kt as number, 9);
+    expect(point.margin_low).toBeCloseTo(level.margin as number, 9);
+    expect(point.stall_high_kt).toBeGreaterThan(point.stall_kt as number);
+  });
+});
+
+describe("every value inside a tolerance", () => {
+  // Tables that bend both ways, so that the extreme need not be at an end.
+  const bent = `| aircraft bent-1; basis vsr; reference 40 t; warning 1.05
+| config clean stall 120 kt
+| wing 100 m2, chord 3.5 m, slope 0.00 4.8, 0.40 5.2, 0.60 6.4, 0.90 3.5 per rad
+| lift-mach clean 0.25 1.00, 0.32 0.80, 0.40 0.86, 0.55 0.60, 0.70 0.68, 0.85 0.40
+| buffet clean 0.20 1.10, 0.35 0.80, 0.45 1.00, 0.85 0.40
+| cg-effect 14 % 1.000, 20 % 0.960, 34 % 0.985
+| ias clean 60 kt 70 kt, 110 kt 112 kt, 160 kt 150 kt, 210 kt 214 kt, 320 kt 318 kt
+`;
+  /** A value, half of its tolerance, and the clause with both; the second is empty at one value inside it. */
+  type Toleranced = readonly [number, number, (value: string, tolerance: (unit: string) => string) => string];
+  const speeds: readonly Toleranced[] = [
+    [190, 25, (value, within) => `speed ${value} kt${within("kt")}`],
+    [250, 30, (value, within) => `speed ${value} kt${within("kt")} tas`],
+    [200, 10, (value, within) => `speed ${value} kt${within("kt")} ias`],
+    [0.45, 0.1, (value, within) => `speed M ${value}${within("")}`],
+  ];
+  const others: readonly Toleranced[] = [
+    [36, 4, (value, within) => `weight ${value} t${within("t")}`],
+    [17_000, 4000, (value, within) => `altitude ${value} ft${within("ft")}`],
+    [16, 15, (value, within) => `isa +${value}${within("")}`],
+    [32, 12, (value, within) => `bank ${value}${within("")}`],
+    [-3, 8, (value, within) => `path ${value} deg${within("deg")}`],
+    [21, 4, (value, within) => `cg ${value} %${within("%")}`],
+  ];
+  const point = (clauses: readonly Toleranced[], share: readonly number[] | null) => {
+    const written = clauses.map(([value, half, clause], i) =>
+      share === null
+        ? clause(String(value), (unit) => ` +- ${half} ${unit}`)
+        : clause((value + half * (share[i] as number)).toFixed(6), () => ""),
+    );
+    return `| phase manoeuvre; aside; ${written.join("; ")}; gust 20 ft/s; shear 12 kt; decel 1 kt/s`;
+  };
+  const low = ["margin", "ratio", "stall_load", "buffet_load", "gust_load_down", "seconds_to_warning"];
+  const after = ["margin_after_shear", "ratio_after_shear", "seconds_to_stall"];
+  const banks = ["stall_bank_deg", "warning_bank_deg", "overshoot_deg", "buffet_bank_deg"];
+  const bounds: readonly (readonly [string, string, 1 | -1])[] = [
+    ...[...low, ...after].map((name) => [name, `${name}_low`, 1] as const),
+    ...banks.map((name) => [name, name.replace("_deg", "_low_deg"), 1] as const),
+    ["stall_kt", "stall_high_kt", -1],
+    ["vs1g_kt", "vs1g_high_kt", -1],
+    ["warning_kt", "warning_high_kt", -1],
+    ["gust_load", "gust_load_high", -1],
+    ["radius_nm", "radius_high_nm", -1],
+  ];
+
+  it("is no worse than the figures that are shown for it, whatever bends between its ends", () => {
+    const share = fc.double({ min: -1, max: 1, noNaN: true });
+    const drawn = fc.record({
+      speed: fc.constantFrom(...speeds),
+      varied: fc.subarray([...others], { maxLength: 3 }),
+      inside: fc.array(fc.array(share, { minLength: 7, maxLength: 7 }), { minLength: 12, maxLength: 12 }),
+    });
+    fc.assert(
+      fc.property(drawn, ({ speed, varied, inside }) => {
+        const clauses = [speed, ...varied];
+        const points = [null, ...inside].map((one) => point(clauses, one)).join("\n\n");
+        const start = "| fly bent-1; under own; weight 36 t; config clean; altitude 17000 ft; isa +4";
+        const [all, ...each] = file("\n| must any load 9", `${start}\n\n${points}`, `\n${bent}`).points;
+        expect(all?.withheld).toBeNull();
+        for (const one of each) {
+          for (const [name, bound, way] of bounds) {
+            const [figure, worst] = [one[name], all?.[bound]];
+            if (typeof figure !== "number" || typeof worst !== "number") continue;
+            expect(way * (figure - worst), `${name} of ${points}`).toBeGreaterThanOrEqual(-1e-5);
+          }
+        }
+      }),
+      { numRuns: 60 },
+    );
+  });
+});
 
 describe("the state that carries on", () => {
   const points = (text: string) => file("\n| must any bank 60", text).points;
@@ -224,6 +343,25 @@ describe("the state that carries on", () => {
     });
   });
 
+  it("takes into the new sector what was stated after the landing, a clause in error among it", () => {
+    const landing = "| phase landing; config flaps-30; altitude 500 ft; speed 150 kt; engine-out left";
+    const takeoff = "| phase takeoff; config flaps-30; altitude 600 ft; speed 160 kt";
+    const between = (setting: string, second = "") =>
+      file("\n| must any bank 60", `${landing}\n\n${setting}\n\n${second}${takeoff}`);
+    const dirty = between("| weight 54 t; contamination 30 %");
+    expect(dirty.points[1]).toMatchObject({
+      mass_kg: expect.closeTo(54_000, 6),
+      lift_loss_percent: expect.closeTo(30, 9),
+      engine_out: null,
+    });
+    expect(dirty.findings.map((one) => one.code)).toContain("contaminated-takeoff");
+    const spoilt = between("| weight 54 t; contamination 30 kg");
+    expect(spoilt.points[1]).toMatchObject({ mass_kg: null, withheld: { line: 12 } });
+    const again = between("| weight 54 t; contamination 30 %", `${landing}\n\n`);
+    expect(again.points[2]).toMatchObject({ mass_kg: null, withheld: { code: "missing-value" } });
+    expect(between("| burn 2 t").points[1]).toMatchObject({ withheld: { code: "missing-value" } });
+  });
+
   it("starts afresh with another aeroplane; limits and rules go on", () => {
     const { points: all, findings } = file(
       "\n| must any bank 60",
@@ -273,6 +411,44 @@ describe("what cannot be checked does not pass for checked", () => {
       rule: "must any bank 2O",
       why: "The row is in error, so it is not held.",
     });
+  });
+
+  it.each([
+    ["0 +- 0.5", "Under a negative load no stall speed is computed."],
+    ["0.3 +- 0.3", "Without load there is no stall."],
+  ])("a margin that is known at some of the loads alone: load %s", (load, why) => {
+    const { findings } = file("\n| must any margin 3", `| phase manoeuvre; load ${load}`);
+    const finding = findings.find(({ code }) => code === "not-evaluated");
+    expect(finding).toMatchObject({ severity: "error", message: expect.stringContaining(why) });
+    expect(told("\n| must any margin 3", "| phase manoeuvre; load 0")).not.toContain("not-evaluated error");
+  });
+
+  const tables = `| aircraft tables-1; basis vsr; reference 55 t; warning 1.03
+| config clean stall 138 kt
+| wing 104 m2, chord 3.7 m, slope 0.00 5.1, 0.60 5.9 per rad
+| lift-mach clean 0.30 1.00, 0.60 0.85
+| buffet clean 0.40 1.25, 0.60 1.05
+`;
+  const lift = ["stalled", "warning-in-turn", "stall-before-warning", "no-level-flight", "buffet-in-turn"];
+
+  /** Card, clauses of the point, and the checks that are not held there. */
+  it.each([
+    [tables, "speed M 0.62; gust 30 ft/s", [...lift, "gust-over-stall"]],
+    [tables, "speed M 0.5; contamination 5 %; gust 30 ft/s", ["buffet-in-turn", "gust-over-stall"]],
+    [tables, "speed M 0.5; load -0.5", ["stalled", "warning-in-turn", "stall-before-warning"]],
+    [tables, "speed M 0.2", ["stalled", "warning-in-turn", "buffet-in-turn"]],
+    [tables.replace("; warning 1.03", ""), "speed M 0.5", ["warning-in-turn", "stall-before-warning"]],
+    [tables.replace(/\| wing.*\n/, ""), "speed M 0.5", ["buffet-in-turn"]],
+    [tables, "speed M 0.5; gust 30 ft/s", []],
+  ] as const)("a check that could not be made is none that was held %#", (definition, clauses, missed) => {
+    const text = `${definition}\n| limits own\n| must any load 9\n\n| fly tables-1; under own; weight 50 t; config clean; altitude FL200\n\n| phase cruise; ${clauses}\n`;
+    const note = createFolder({ today: "2026-12-01" }).open("file:///note.plumb", text, "plumb");
+    const held = passedJson(note).map(({ code }) => code);
+    expect(lift.concat("gust-over-stall").filter((code) => !held.includes(code as never))).toEqual(
+      [...lift, "gust-over-stall"].filter(
+        (code) => missed.includes(code as never) || (code === "gust-over-stall" && !clauses.includes("gust")),
+      ),
+    );
   });
 
   it("a tolerance that leaves what a value can be gives no figures", () => {

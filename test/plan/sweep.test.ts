@@ -96,6 +96,17 @@ describe("a sweep", () => {
     expect(rows.map((row) => row.split(",")[at])).toEqual(["0", "15", "30", "45", "60", ""]);
   });
 
+  it.each([
+    ["speed M 0.40 to 0.44 by 0.04", "speed M 0.40", "speed M 0.44"],
+    ["speed 200 kt to 240 kt by 40 kt tas", "speed 200 kt tas", "speed 240 kt tas"],
+    ["speed 1.4 to 1.6 by 0.2 vs1g", "speed 1.4 vs1g", "speed 1.6 vs1g"],
+    ["speed 200 kt to 240 kt by 40 kt", "speed 200 kt", "speed 240 kt"],
+  ])("%s says of its values what they are of", (clause, first, last) => {
+    const note = open(`| phase cruise; bank 45; ${clause}`);
+    expect(tableRows(note).map(([, phase]) => phase)).toEqual([`cruise (${first})`, `cruise (${last})`]);
+    expect(note.findings()[0]?.finding.message).toContain(`at ${first}: Bank 45°`);
+  });
+
   it("does not carry on, and what is assumed otherwise is not assumed then", () => {
     expect(found("| phase cruise; weight 40 t to 42 t by 1 t\n\n| phase cruise; bank 10")).toEqual([
       "missing-value",
@@ -110,6 +121,16 @@ describe("a sweep", () => {
   it("holds a claim at its worst row", () => {
     expect(found("| phase cruise; bank 0 to 40 by 10; claim load 1.31")).toEqual([]);
     expect(found("| phase cruise; bank 0 to 40 by 10; claim load 1.16")).toEqual(["claim-stale"]);
+  });
+
+  it.each([
+    // The bank is over its limit at every row, so that the first is shown; the worst is the last.
+    ["config flaps-30; speed 170 kt; weight 37 t to 54 t by 1 t", "vref", 108, 130],
+    ["weight 59 t to 30 t by 1 t", "va", 222, 158],
+  ])("at %s holds a claim of %s at its worst row, though it is nominal", (clauses, name, first, worst) => {
+    const point = `| phase cruise; bank 45; ${clauses}`;
+    expect(found(`${point}; claim ${name} ${first} kt`)).toContain("claim-stale");
+    expect(found(`${point}; claim ${name} ${worst} kt`)).not.toContain("claim-stale");
   });
 
   it.each([

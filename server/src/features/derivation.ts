@@ -15,13 +15,15 @@ import {
   formatResult,
   formatResultValue,
   formatSpeed,
-  formatWritten,
+  formatSpoken,
 } from "../plan/format.ts";
 import type { FurtherFigures } from "../plan/further.ts";
-import type { Limits } from "../plan/limits.ts";
+import type { Limits, Row } from "../plan/limits.ts";
 import type { Conditions, HeldRow, PointResult, SweepResult } from "../plan/point.ts";
 import { resultEntry, resultNames } from "../plan/results.ts";
+import { boundOf } from "../plan/ruleChecks.ts";
 import { atMost } from "../plan/rules.ts";
+import { exactly } from "../plan/spread.ts";
 import {
   type FurtherRow,
   furtherRows,
@@ -129,7 +131,7 @@ function sweepTable({ what, rows }: SweepResult): string {
     };
     const found = point.solved ? [plainMarkdown(solvedText(point.solved))] : [];
     const codes = point.findings.map((one) => one.code).join(", ");
-    return `| ${[formatWritten(written, what), ...found, figure("stall"), figure("margin"), figure("warning-bank"), codes].join(" | ")} |`;
+    return `| ${[formatSpoken(written, what), ...found, figure("stall"), figure("margin"), figure("warning-bank"), codes].join(" | ")} |`;
   });
   const head = [
     what,
@@ -166,12 +168,14 @@ function levelText({ pressureAltitude }: Conditions): string {
 }
 
 /** The figure as the finding of a stale claim says it. */
-function claimText({ claims, results }: PointResult, placed: PlacedClause): string {
+function claimText({ claims }: PointResult, placed: PlacedClause): string {
   const { body } = placed.clause;
   const claim = claims.find((one) => one.clause === placed);
-  const spread = claim && results?.[claim.name];
-  if (!spread || body?.kind !== "claim") return "This claim cannot be checked here.";
-  return `${claim.name} ${formatClaim(claim.name, spread, body.value)} now: the claim ${claim.holds ? "holds" : "is stale"}`;
+  if (!claim || claim.computed === null || body?.kind !== "claim")
+    return "This claim cannot be checked here.";
+  // What it was held against: in a sweep that is another row than the one that is shown.
+  const figure = formatClaim(claim.name, exactly(claim.computed), body.value);
+  return `${claim.name} ${figure} now: the claim ${claim.holds ? "holds" : "is stale"}`;
 }
 
 function resultsTable(point: PointResult): string {
@@ -322,7 +326,7 @@ function rowPlace({ row }: HeldRow, uri: string): string {
 }
 
 function heldText({ row, bound, figure, holds }: HeldRow): string {
-  if (figure === null) return `${plainMarkdown(row.text)}: not evaluated`;
+  if (figure === null) return `${plainMarkdown(row.text)}: ${holds === false ? "broken" : "not evaluated"}`;
   const show = (value: number, more: number) => {
     switch (row.subject) {
       case "bank":
@@ -335,11 +339,26 @@ function heldText({ row, bound, figure, holds }: HeldRow): string {
         return formatResultValue(row.subject, value, more);
     }
   };
-  const [has, asked] = holds
-    ? [show(figure, 0), show(bound, 0)]
-    : // What is broken never reads as kept.
-      formatDistinct(figure, bound, show);
-  return `${row.text}: ${has}, ${atMost(row.subject) ? "at most" : "at least"} ${asked}, ${holds ? "kept" : "broken"}`;
+  const asked = boundOf(row);
+  // What is broken never reads as kept, nor the other way round.
+  const [has, bounded] = holds
+    ? keptAs(row, figure, bound, show)
+    : formatDistinct(figure, bound, show, asked);
+  return `${row.text}: ${has}, ${atMost(row.subject) ? "at most" : "at least"} ${bounded}, ${holds ? "kept" : "broken"}`;
+}
+
+/** A figure with as many decimals more as its bound has, where it would read as beyond it without them. */
+function keptAs(
+  row: Row,
+  figure: number,
+  bound: number,
+  show: (value: number, more: number) => string,
+): readonly [string, string] {
+  const asked = boundOf(row)(bound, 0);
+  const way = atMost(row.subject) ? 1 : -1;
+  const reads = [0, 1, 2].map((more) => show(figure, more));
+  const kept = reads.find((one) => way * (Number.parseFloat(one) - Number.parseFloat(asked)) <= 0);
+  return [kept ?? show(figure, 0), asked];
 }
 
 function absentText(point: PointResult): string {

@@ -2,7 +2,7 @@ import type { PlacedClause } from "../notation/block.ts";
 import type { Unknown, Value } from "../notation/tree.ts";
 import type { ResultName } from "../notation/vocabulary.ts";
 import type { Card } from "../plan/card.ts";
-import { formatFlightLevel, formatMass, formatResult, formatSpeed, formatWritten } from "../plan/format.ts";
+import { formatFlightLevel, formatMass, formatResult, formatSpeed, formatSpoken } from "../plan/format.ts";
 import type { FurtherFigures } from "../plan/further.ts";
 import type { BlockResult, Note } from "../plan/note.ts";
 import { lineOf, type Origin } from "../plan/origin.ts";
@@ -176,7 +176,7 @@ function openParts(point: PointResult, placed: PlacedClause, level: "full" | "br
   const { solved, sweep } = point;
   if (sweep?.open.placed === placed) {
     const row = sweep.rows[sweep.shown];
-    const tooltip = `The figures shown at this point are those at ${sweep.what} ${row ? formatWritten(row.written, sweep.what) : ""}; the table of points has every row.`;
+    const tooltip = `The figures shown at this point are those at ${sweep.what} ${row ? formatSpoken(row.written, sweep.what) : ""}; the table of points has every row.`;
     return [{ text: sweepText(sweep), tooltip, origin: null }];
   }
   if (!solved) return [];
@@ -229,7 +229,7 @@ function phaseParts(point: PointResult, level: "full" | "brief"): readonly HintP
     sweep && row
       ? [
           {
-            text: `at ${sweep.what} ${formatWritten(row.written, sweep.what)}`,
+            text: `at ${sweep.what} ${formatSpoken(row.written, sweep.what)}`,
             tooltip: "One value of the sweep.",
             origin: null,
           },

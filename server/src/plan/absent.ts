@@ -35,7 +35,7 @@ export function whyAbsent(evaluated: Evaluated, name: ResultName | "ias"): strin
     case "load":
       return "It is not known here.";
     case "margin":
-      if (results.stall?.nominal === 0) return "Without load there is no stall.";
+      if (results.stall?.low === 0) return "Without load there is no stall.";
       return liftUnknown(evaluated);
     case "stall-bank":
       if (results["stall-load"]) return "Wings level the aeroplane is already stalled.";

@@ -29,8 +29,10 @@ function findAbsent(card: Card, configuration: Configuration): readonly Skipped[
     ["over-ceiling", "ceiling", card.ceiling],
     ["below-vmca", "vmca", card.vmca],
     ["over-load-limit", `load for ${name}`, configuration.load],
-    ["warning-in-turn", "warning", card.warning],
+    ["warning-in-turn, stall-before-warning", "warning", card.warning],
     ["buffet-in-turn", `buffet for ${name}`, configuration.buffet],
+    // The lift coefficients of a buffet table give a load only with the wing's area.
+    ...(configuration.buffet?.value ? [["buffet-in-turn", "wing", card.wing] as const] : []),
   ];
   return checks.flatMap(([rule, what, stated]): Skipped[] => {
     if (!stated) return [{ rule, why: `The card ${card.name} states no ${what}.` }];

@@ -26,6 +26,8 @@ import {
 export interface Applied {
   readonly carried: CarriedState;
   readonly landed: boolean;
+  /** What was stated after the landing, this block's own clauses among it. */
+  readonly sinceLanding: readonly CarriedKey[];
   /** True where a takeoff began a new sector. */
   readonly newSector: boolean;
   /** True where what was told as missing before no longer counts: a new sector, or another aeroplane. */
@@ -52,8 +54,7 @@ export function applyClauses(site: Site, clauses: Clauses, definitions: Definiti
   const applying: Applying = { site, clauses, definitions, phase, draft, findings: [] };
   const newSector = before.landed && phase === "takeoff";
   if (newSector) {
-    for (const key of ["mass", "config", "altitude", "speed", "contamination", "engineOut"] as const)
-      draft[key] = undefined;
+    for (const key of ofOneSector) if (!before.sinceLanding.includes(key)) draft[key] = undefined;
   }
   const another = applyAircraft(applying);
   if (clauses.under) set(applying, "limits", clauses.under.placed, underLimits(applying, clauses.under));
@@ -71,7 +72,28 @@ export function applyClauses(site: Site, clauses: Clauses, definitions: Definiti
   if (clauses.engineOut) set(applying, "engineOut", clauses.engineOut.placed, clauses.engineOut.body.engine);
   spoil(applying);
   const landed = before.landed && !newSector && !another;
-  return { carried: draft, landed, newSector, afresh: newSector || another, findings: applying.findings };
+  return {
+    carried: draft,
+    landed,
+    sinceLanding: landed ? statedSince(before, clauses) : [],
+    newSector,
+    afresh: newSector || another,
+    findings: applying.findings,
+  };
+}
+
+/** What a takeoff after a landing does not take over. */
+const ofOneSector = ["mass", "config", "altitude", "speed", "contamination", "engineOut"] as const;
+
+/** A clause in error counts too: what it should have stated is unknown in the next sector as well. */
+function statedSince({ sinceLanding }: State, clauses: Clauses): readonly CarriedKey[] {
+  const spoiled = clauses.spoiled.map((placed) => intendedKeyword(placed));
+  const stated = ofOneSector.filter((key) => {
+    // A burn starts from the weight of the sector before.
+    const slot = key === "mass" ? "weight" : key;
+    return clauses[slot] !== null || spoiled.includes(keywordOf[key]);
+  });
+  return stated.length === 0 ? sinceLanding : [...new Set([...sinceLanding, ...stated])].sort();
 }
 
 function set<K extends CarriedKey>(

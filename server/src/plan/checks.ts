@@ -29,7 +29,7 @@ export function checkPoint(point: Point, evaluated: Evaluated | null, findings: 
   const checking: Checking = { point, evaluated, findings };
   const skipped = checkAirframeLimits(checking);
   skipped.push(...checkSafety(checking));
-  checkGust(checking);
+  skipped.push(...checkGust(checking));
   checkDeceleration(checking);
   checkHolding(checking);
   const rules = checkRules(checking);
@@ -92,10 +92,12 @@ export function exerciseSeverity(point: Point, code: FindingCode): Severity {
   return point.phase === "manoeuvre" ? oneStepLower(severity) : severity;
 }
 
-/** The corner where a figure is least. */
+/** The corner where a figure is least, among those where it is known. */
 export function leastAt(corners: readonly Corner[], figure: (corner: Corner) => number): Corner {
   let found = corners[0] as Corner;
-  for (const one of corners) if (figure(one) < figure(found)) found = one;
+  for (const one of corners) {
+    if (figure(one) < figure(found) || Number.isNaN(figure(found))) found = one;
+  }
   return found;
 }
 

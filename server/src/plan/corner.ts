@@ -185,6 +185,12 @@ export class Corner {
     return this.#stallLoad;
   }
 
+  /** True beyond the maximum of V² f(M), where the wing carries the more the slower it flies. */
+  get carriesMoreSlower(): boolean {
+    const slower = loadAtStall(this.#frame.lift, this.#lift, this.eas * 0.99, this.air);
+    return slower !== null && this.stallLoad < slower;
+  }
+
   get stallBank(): number {
     return stallBank(this.stallLoad, this.path) ?? Number.NaN;
   }

@@ -1,9 +1,8 @@
-import { casFromMach, easFromMach, impactPressureOfCas, tasFromMach } from "../flight/airspeed.ts";
-import { type Atmosphere, altitudeOfPressure, atmosphere } from "../flight/atmosphere.ts";
-import { A0, P0 } from "../flight/constants.ts";
+import type { Atmosphere } from "../flight/atmosphere.ts";
+import { bends, type Edge, type Varied } from "./bends.ts";
 import type { PathInput, SpeedInput } from "./corner.ts";
 import { type Airframe, type Corner, type CornerInput, type CornerProblem, corner } from "./corner.ts";
-import { exactly, type Spread } from "./spread.ts";
+import type { Spread } from "./spread.ts";
 
 /** The inputs of a point with their tolerances, SI. */
 export interface PointInputs {
@@ -18,6 +17,8 @@ export interface PointInputs {
   readonly load: Spread | null;
   readonly liftLoss: Spread;
   readonly cgFactor: Spread;
+  /** A sudden loss of airspeed, m/s CAS, after which the corners are looked at too. */
+  readonly shear: number | null;
 }
 
 /** The nominal corner and all corners, the nominal one among them. */
@@ -27,39 +28,29 @@ export interface Corners {
 }
 
 /**
- * Evaluates the point at its nominal inputs and at every corner of its tolerances. Where a table
- * against Mach number bends between the corners, the bends count as corners too, since the load
- * factor at the stall and at buffet onset need not be monotonic there.
+ * Evaluates the point at its nominal inputs and at every corner of its tolerances. Where a table bends
+ * between two corners, the bend counts as a corner too.
  */
 export function evaluateCorners(frame: Airframe, inputs: PointInputs): Corners | CornerProblem {
   const nominal = corner(frame, nominalInput(inputs), inputs.air);
   if (typeof nominal === "string") return nominal;
-  const varied = cornerInputs(inputs);
-  if (varied.length === 0) return { nominal, all: [nominal] };
-  const all: Corner[] = [nominal];
-  for (const input of varied) {
+  const dimensions = dimensionsOf(inputs);
+  if (dimensions.length === 0) return { nominal, all: [nominal] };
+  const ends: Corner[] = [];
+  for (const input of cornerInputs(nominal.input, dimensions)) {
     const one = corner(frame, input, inputs.air);
     if (typeof one === "string") return one;
-    all.push(one);
+    ends.push(one);
   }
-  for (const input of bends(frame, inputs, varied)) {
-    const one = corner(frame, input);
-    // A bend lies between corners that were evaluated; one that cannot be is no corner.
-    if (typeof one !== "string") all.push(one);
-  }
-  return { nominal, all };
+  const between = edges(ends, dimensions).flatMap((edge) => bends(frame, edge, inputs.shear));
+  return { nominal, all: [nominal, ...ends, ...between] };
 }
 
 /**
  * The same corners after a sudden loss of airspeed, m/s CAS: bank, path and load stay as they were flown.
  * Null where nothing is left of a speed.
  */
-export function slowed(
-  frame: Airframe,
-  inputs: PointInputs,
-  corners: Corners,
-  loss: number,
-): Corners | CornerProblem {
+export function slowed(frame: Airframe, corners: Corners, loss: number): Corners | CornerProblem {
   const slow = (one: Corner): Corner | CornerProblem => {
     if (one.cas <= loss) return "speed";
     const input: CornerInput = {
@@ -73,25 +64,10 @@ export function slowed(
   const nominal = slow(corners.nominal);
   if (typeof nominal === "string") return nominal;
   const all: Corner[] = [];
-  const flown = corners.all.map(slow);
-  for (const one of flown) {
+  for (const flown of corners.all) {
+    const one = slow(flown);
     if (typeof one === "string") return one;
     all.push(one);
-  }
-  // The tables may bend elsewhere between the slower corners.
-  const slowest = all.map((one) => one.input);
-  const { value } = inputs.speed;
-  const spread = {
-    low: Math.min(...all.map((one) => one.cas)),
-    high: Math.max(...all.map((one) => one.cas)),
-  };
-  const speed = {
-    kind: "cas",
-    value: value.low < value.high ? { ...value, ...spread } : exactly(nominal.cas),
-  } as const;
-  for (const input of bends(frame, { ...inputs, speed }, slowest)) {
-    const one = corner(frame, input);
-    if (typeof one !== "string") all.push(one);
   }
   return { nominal, all };
 }
@@ -112,93 +88,53 @@ function nominalInput(inputs: PointInputs): CornerInput {
 
 type Vary = (input: CornerInput, value: number) => CornerInput;
 
-function cornerInputs(inputs: PointInputs): CornerInput[] {
-  const dimensions: [Spread, Vary][] = [];
-  const add = (spread: Spread, vary: Vary) => {
-    if (spread.low !== spread.high) dimensions.push([spread, vary]);
+/** An input with a tolerance: its ends, and what lies between them and is a corner by itself. */
+interface Dimension {
+  readonly varied: Varied;
+  readonly values: readonly number[];
+  readonly vary: Vary;
+}
+
+function dimensionsOf(inputs: PointInputs): readonly Dimension[] {
+  const dimensions: Dimension[] = [];
+  const add = (varied: Varied, { low, high }: Spread, vary: Vary, within: readonly number[] = []) => {
+    if (low === high) return;
+    const values = [low, ...within.filter((one) => low < one && one < high), high];
+    dimensions.push({ varied, values, vary });
   };
-  add(inputs.mass, (input, mass) => ({ ...input, mass }));
-  add(inputs.pressureAltitude, (input, pressureAltitude) => ({ ...input, pressureAltitude }));
-  add(inputs.deviation, (input, deviation) => ({ ...input, deviation }));
-  add(inputs.speed.value, (input, value) => ({ ...input, speed: { kind: input.speed.kind, value } }));
-  if (inputs.bank !== "rate-one") add(inputs.bank, (input, bank) => ({ ...input, bank }));
-  add(inputs.path.value, (input, value) => ({ ...input, path: { kind: input.path.kind, value } }));
-  if (inputs.load) add(inputs.load, (input, load) => ({ ...input, load }));
-  add(inputs.liftLoss, (input, liftLoss) => ({ ...input, liftLoss }));
-  add(inputs.cgFactor, (input, cgFactor) => ({ ...input, cgFactor }));
-  if (dimensions.length === 0) return [];
-  let corners = [nominalInput(inputs)];
-  for (const [spread, vary] of dimensions) {
-    corners = corners.flatMap((input) => [vary(input, spread.low), vary(input, spread.high)]);
-  }
-  return corners;
+  add("mass", inputs.mass, (input, mass) => ({ ...input, mass }));
+  add("altitude", inputs.pressureAltitude, (input, pressureAltitude) => ({ ...input, pressureAltitude }));
+  add("deviation", inputs.deviation, (input, deviation) => ({ ...input, deviation }));
+  add("speed", inputs.speed.value, (input, value) => ({ ...input, speed: { ...input.speed, value } }));
+  if (inputs.bank !== "rate-one") add("turn", inputs.bank, (input, bank) => ({ ...input, bank }));
+  // Level flight needs the most lift: a path that may climb or sink passes it.
+  add("turn", inputs.path.value, (input, value) => ({ ...input, path: { ...input.path, value } }), [0]);
+  if (inputs.load) add("turn", inputs.load, (input, load) => ({ ...input, load }));
+  add("wing", inputs.liftLoss, (input, liftLoss) => ({ ...input, liftLoss }));
+  add("wing", inputs.cgFactor, (input, cgFactor) => ({ ...input, cgFactor }));
+  return dimensions;
 }
 
-/** The corners at which a Mach table bends: reached by the speed at each altitude, and by the altitude at each speed. */
-function bends(frame: Airframe, inputs: PointInputs, corners: readonly CornerInput[]): CornerInput[] {
-  const machs = [...(frame.lift.liftMach?.arguments ?? []), ...(frame.buffet?.table.arguments ?? [])];
-  if (machs.length === 0) return [];
-  const { speed, pressureAltitude } = inputs;
-  const found: CornerInput[] = [];
-  for (const input of corners) {
-    for (const mach of machs) {
-      if (speed.value.low < speed.value.high && input.speed.value === speed.value.low) {
-        const value = speedAtMach(input, mach);
-        if (value !== null && speed.value.low < value && value < speed.value.high) {
-          found.push({ ...input, speed: { kind: speed.kind, value } });
-        }
-      }
-      if (pressureAltitude.low < pressureAltitude.high && input.pressureAltitude === pressureAltitude.low) {
-        for (const altitude of [flownAltitudeAt(frame, input, mach), stallAltitudeAt(frame, input, mach)]) {
-          if (altitude !== null && pressureAltitude.low < altitude && altitude < pressureAltitude.high) {
-            found.push({ ...input, pressureAltitude: altitude });
-          }
-        }
-      }
-    }
-  }
-  return found;
+function cornerInputs(start: CornerInput, dimensions: readonly Dimension[]): readonly CornerInput[] {
+  return dimensions.reduce<readonly CornerInput[]>(
+    (corners, { values, vary }) => corners.flatMap((input) => values.map((value) => vary(input, value))),
+    [start],
+  );
 }
 
-function speedAtMach(input: CornerInput, mach: number): number | null {
-  const air = atmosphere(input.pressureAltitude, input.deviation);
-  if (!air) return null;
-  switch (input.speed.kind) {
-    case "cas":
-      return casFromMach(mach, air);
-    case "eas":
-      return easFromMach(mach, air);
-    case "tas":
-      return tasFromMach(mach, air);
-    case "mach":
-      return mach;
-    case "ias":
-      return null;
-  }
-}
-
-/** The pressure altitude at which a constant calibrated speed is this Mach number. */
-function flownAltitudeAt(frame: Airframe, input: CornerInput, mach: number): number | null {
-  const one = corner(frame, input);
-  if (typeof one === "string") return null;
-  const impact = impactPressureOfCas(one.cas);
-  if (impact === null) return null;
-  return altitudeOfPressure(impact / ((1 + 0.2 * mach * mach) ** 3.5 - 1));
-}
-
-/** The pressure altitude at which the stall comes at this Mach number. */
-function stallAltitudeAt(frame: Airframe, input: CornerInput, mach: number): number | null {
-  const table = frame.lift.liftMach;
-  const index = table ? table.arguments.indexOf(mach) : -1;
-  const factor = table?.values[index];
-  const one = corner(frame, input);
-  if (factor === undefined || typeof one === "string" || one.load <= 0) return null;
-  const { mass, liftLoss, cgFactor } = input;
-  const eas =
-    frame.lift.stallSpeed *
-    cgFactor *
-    Math.sqrt((one.load * mass) / frame.lift.referenceMass / (1 - liftLoss) / factor);
-  return altitudeOfPressure(P0 * (eas / (A0 * mach)) ** 2);
+/** Every stretch between two neighbouring corners, which stand in the order of {@link cornerInputs}. */
+function edges(corners: readonly Corner[], dimensions: readonly Dimension[]): readonly Edge[] {
+  let stride = corners.length;
+  return dimensions.flatMap(({ varied, values, vary }) => {
+    stride /= values.length;
+    return corners.flatMap((first, i): Edge[] => {
+      const at = Math.floor(i / stride) % values.length;
+      const [from, to] = [values[at], values[at + 1]];
+      const last = corners[i + stride];
+      if (from === undefined || to === undefined || !last) return [];
+      return [{ varied, from, to, first, last, at: (value) => vary(first.input, value) }];
+    });
+  });
 }
 
 /** The extremes of one figure over the corners; null where any corner cannot give it. */

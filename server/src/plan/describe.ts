@@ -139,6 +139,8 @@ class DescribedPoint implements PointResult {
     if (!this.#ready) return [];
     const missed = new Set(this.notEvaluated.flatMap(({ rule }) => rule.split(", ")));
     const found = new Set<string>(this.findings.map(({ code }) => code));
+    // Past the stall nobody asks for its warning any more.
+    if (found.has("stalled")) found.add("warning-in-turn");
     return checksMade(this.#point, this.#ready).filter((code) => !missed.has(code) && !found.has(code));
   }
   get further() {

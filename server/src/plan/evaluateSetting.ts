@@ -28,7 +28,12 @@ export function evaluateSetting(
   }
   const carried = clauses.speed ? withSpeed(site, clauses, applied.carried, findings) : applied.carried;
   return {
-    after: { carried, landed: applied.landed, told: applied.afresh ? {} : before.told },
+    after: {
+      carried,
+      landed: applied.landed,
+      sinceLanding: applied.sinceLanding,
+      told: applied.afresh ? {} : before.told,
+    },
     findings,
   };
 }

@@ -315,7 +315,9 @@ function stateAfter(
     carried = { ...carried, speed };
   }
   const landed = phase === "landing" || (phase !== "takeoff" && before.landed);
-  return { carried, landed, told };
+  // What a landing itself states is of the sector that ends there.
+  const sinceLanding = landed && phase !== "landing" ? applied.sinceLanding : [];
+  return { carried, landed, sinceLanding, told };
 }
 
 function flownSpeed(speed: ResolvedSpeed | null, evaluated: Evaluated | null): FlownSpeed | null {

@@ -61,7 +61,7 @@ class EvaluatedPoint implements Evaluated {
   #slowed(): Corners | null {
     const { frame, extras } = this.ready;
     if (extras.shear === null) return null;
-    const found = slowed(frame, pointInputs(this.ready), this.corners, extras.shear);
+    const found = slowed(frame, this.corners, extras.shear);
     return typeof found === "string" ? null : found;
   }
 
@@ -83,5 +83,6 @@ export function pointInputs(ready: Ready): PointInputs {
     load: ready.turn.load,
     liftLoss: ready.liftLoss,
     cgFactor: ready.cgFactor,
+    shear: ready.extras.shear,
   };
 }

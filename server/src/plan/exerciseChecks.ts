@@ -27,19 +27,24 @@ export function checkDeceleration(checking: Checking): void {
 export function checkHolding(checking: Checking): void {
   const { point, evaluated } = checking;
   if (point.phase !== "hold") return;
-  const { altitude } = evaluated.conditions;
+  const { nominal, low, high } = evaluated.conditions.altitude;
   const category = approachCategories(evaluated.ready.card, evaluated.ready.configuration)?.icao ?? null;
-  const over = [
-    tooFast(checking, greatestHoldingIcao(altitude.nominal, category), "ICAO Doc 8168"),
-    tooFast(checking, greatestHoldingFaa(altitude.nominal), "the FAA's AIM, 5-3-8"),
-  ].filter((one) => one !== null);
+  const overAt = (altitude: number) =>
+    [
+      tooFast(checking, greatestHoldingIcao(altitude, category), "ICAO Doc 8168"),
+      tooFast(checking, greatestHoldingFaa(altitude), "the FAA's AIM, 5-3-8"),
+    ].filter((one) => one !== null);
+  // Each band of altitudes has its own, and a tolerance may reach into the next: most is told first.
+  const [altitude, over] = [nominal, low, high]
+    .map((at) => [at, overAt(at)] as const)
+    .reduce((most, other) => (most[1].length < other[1].length ? other : most));
   if (over.length === 0) return;
   const bounds = over.map(({ bound, source }) => `${bound} (${source})`);
   tell(
     checking,
     "over-holding-speed",
     clauseFor(point, "speed"),
-    `The speed ${over[0]?.flown} is over the greatest holding speed at ${formatAltitude(altitude.nominal)}, ${listed(bounds)}: slow down, or ask for a hold that allows it.`,
+    `The speed ${over[0]?.flown} is over the greatest holding speed at ${formatAltitude(altitude)}, ${listed(bounds)}: slow down, or ask for a hold that allows it.`,
     { related: carriedFrom(point, ["speed", "altitude"]) },
   );
 }

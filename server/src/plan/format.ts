@@ -5,6 +5,7 @@ import type { FigureRule } from "./figureRules.ts";
 import type { Written } from "./openClause.ts";
 import { inShownUnit, type Rounding, results } from "./results.ts";
 import { MOST_DECIMALS, roundShown } from "./roundShown.ts";
+import { ALLOWANCE } from "./rules.ts";
 import type { Spread } from "./spread.ts";
 
 /**
@@ -106,6 +107,24 @@ export function formatClaimNumber(name: ResultName, spread: Spread, claimed: Qua
   return fixed(shownClaim(name, spread, { ...claimed, decimals }), decimals);
 }
 
+/** What a row holds against its bound, beside the bank that is flown. */
+type Bounded = "bank" | "load" | "radius" | "ratio" | "margin" | "overshoot" | "buffet-load";
+
+/**
+ * The bound of a row, in SI: as it was written, or to the strict side where that is no round figure. Cut
+ * as results are, "at least 12.5°" would read as less than it asks.
+ */
+export function formatBound(name: Bounded, si: number, strict: "up" | "down", more = 0): string {
+  const { unit, decimals } = results[name === "bank" ? "overshoot" : name];
+  const shown = unit === null ? si : fromSI(si, unit);
+  const written = [0, 1, 2].find((own) => isRound(shown, decimals + own)) ?? 0;
+  return withUnit(rounded(shown, decimals + Math.max(more, written), strict), unit);
+}
+
+function isRound(value: number, decimals: number): boolean {
+  return Math.abs(roundShown(value, decimals, "nearest") - value) <= Math.abs(value) * ALLOWANCE;
+}
+
 /** A load factor that is flown or needed: "1.11". What is left of it is a result, and is cut. */
 export function formatLoad(load: number, more = 0): string {
   return formatResultValue("load", load, more);
@@ -178,7 +197,14 @@ export function writtenFigure({ what, worse, units, decimals }: FigureRule, si: 
   return withUnit(rounded(value, decimals, worse === "more" ? "up" : "down"), unit);
 }
 
-/** A value as an author writes it after its keyword: "41", "56.4 t", "M 0.742", "FL310", "+8". */
+/** A value as it is spoken of, with what its clause says besides: "41", "56.4 t", "M 0.742", "200 kt tas". */
+export function formatSpoken(written: Written, what: Keyword): string {
+  const text = formatWritten(written, what);
+  if (written.of === undefined) return text;
+  return written.of === "M" ? `M ${text}` : `${text} ${written.of}`;
+}
+
+/** A value as it is written in the place that is open: "41", "56.4 t", "0.742", "FL310", "+8". */
 export function formatWritten({ value, unit, decimals }: Written, what: Keyword): string {
   const figure = fixed(value, decimals);
   if (unit === "FL") return `FL${figure.padStart(3, "0")}`;

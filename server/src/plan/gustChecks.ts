@@ -1,16 +1,17 @@
 import { type Checking, carriedFrom, clauseFor, leastAt, tell } from "./checks.ts";
 import type { Corner } from "./corner.ts";
+import type { Evaluated } from "./evaluated.ts";
 import { formatDistinct, formatGust, formatLoad, formatResultValue } from "./format.ts";
+import type { NotEvaluated } from "./point.ts";
 import { ALLOWANCE } from "./rules.ts";
 
-/** The load factors in a stated gust against the stall, buffet onset and the limit load factors. */
-export function checkGust(checking: Checking): void {
+/** The load factors in a stated gust against the stall, buffet onset and the limit load factors; what could not be held. */
+export function checkGust(checking: Checking): readonly NotEvaluated[] {
   const { point, evaluated } = checking;
   const { gust } = evaluated.ready.extras;
-  if (!gust || !point.clauses.gust) return;
+  if (!gust || !point.clauses.gust) return [];
   if (evaluated.corners.all.some((one) => Number.isNaN(one.gustLoad(gust.high)))) {
-    gustUnknown(checking);
-    return;
+    return [{ rule: "gust-over-stall", why: gustUnknown(checking) }];
   }
   const up = (one: Corner) => one.load + one.gustLoad(gust.high);
   againstLift(
@@ -19,7 +20,10 @@ export function checkGust(checking: Checking): void {
     "stall-load",
     (one) => one.stallLoad,
     up,
-    "fly faster, lighter, or bank less",
+    (one) =>
+      one.carriesMoreSlower
+        ? "fly slower, lower, lighter, or bank less"
+        : "fly faster, lighter, or bank less",
   );
   againstLift(
     checking,
@@ -27,13 +31,25 @@ export function checkGust(checking: Checking): void {
     "buffet-load",
     (one) => one.buffetLoad,
     up,
-    "fly lower, lighter, or bank less",
+    () => "fly lower, lighter, or bank less",
   );
   againstLimits(checking, up, (one) => one.load - one.gustLoad(gust.high));
+  return liftUnknown(evaluated);
 }
 
-/** A gust is asked for, so that what it needs is missing here. */
-function gustUnknown(checking: Checking): void {
+/** Where the wing stalls or buffets is not known at every corner, so that the gust is held against a part of it. */
+function liftUnknown(evaluated: Evaluated): readonly NotEvaluated[] {
+  const { corners, ready } = evaluated;
+  const lacks = (figure: (corner: Corner) => number) => corners.all.some((one) => Number.isNaN(figure(one)));
+  const stall = lacks((one) => one.stallLoad);
+  const buffet = ready.frame.buffet !== null && lacks((one) => one.buffetLoad);
+  if (!stall && !buffet) return [];
+  const why = evaluated.absent(stall ? "stall-load" : "buffet-load") ?? "It is not known here.";
+  return [{ rule: "gust-over-stall", why }];
+}
+
+/** A gust is asked for, so that what it needs is missing here. Gives the reason back. */
+function gustUnknown(checking: Checking): string {
   const { point, evaluated } = checking;
   const { card, configuration, frame } = evaluated.ready;
   const at = clauseFor(point, "gust");
@@ -41,24 +57,21 @@ function gustUnknown(checking: Checking): void {
     const why = card.wing
       ? "states no chord or lift-curve slope with its `wing`"
       : "states no `wing` (area, chord and lift-curve slope)";
-    tell(checking, "missing-value", at, `The load in a gust is not known: the card ${card.name} ${why}.`, {
+    const message = `The load in a gust is not known: the card ${card.name} ${why}.`;
+    tell(checking, "missing-value", at, message, {
       related: [{ origin: card.wing?.origin ?? card.origin, message: `The card ${card.name}.` }],
     });
-    return;
+    return message;
   }
   const why =
     typeof frame.wing.slope === "number"
       ? "one lift-curve slope holds up to M 0.4: give a table of it against Mach number"
       : "the table of the lift-curve slope does not reach this Mach number, and it is never extrapolated";
-  tell(
-    checking,
-    "outside-table",
-    at,
-    `The load in a gust is not known in ${configuration.name} here: ${why}.`,
-    {
-      related: card.wing ? [{ origin: card.wing.origin, message: "The card states the wing here." }] : [],
-    },
-  );
+  const message = `The load in a gust is not known in ${configuration.name} here: ${why}.`;
+  tell(checking, "outside-table", at, message, {
+    related: card.wing ? [{ origin: card.wing.origin, message: "The card states the wing here." }] : [],
+  });
+  return message;
 }
 
 function againstLift(
@@ -67,7 +80,7 @@ function againstLift(
   name: "stall-load" | "buffet-load",
   carried: (corner: Corner) => number,
   up: (corner: Corner) => number,
-  wayOut: string,
+  wayOut: (corner: Corner) => string,
 ): void {
   const { point, evaluated } = checking;
   const worst = leastAt(evaluated.corners.all, (one) => carried(one) - up(one));
@@ -82,7 +95,7 @@ function againstLift(
     checking,
     "gust-over-stall",
     clauseFor(point, "gust"),
-    `In the gust of ${strength(checking)} the load factor reaches ${load} and ${what} at ${onset}: ${wayOut}.`,
+    `In the gust of ${strength(checking)} the load factor reaches ${load} and ${what} at ${onset}: ${wayOut(worst)}.`,
     { related: carriedFrom(point, ["speed", "mass", "altitude"]) },
   );
 }

@@ -32,8 +32,9 @@ export function onePerCode(findings: readonly Finding[]): readonly Finding[] {
 /** Two findings of one code as one: as grave as the graver, with the worse figure. */
 export function together(one: Finding, other: Finding, message: string): Finding {
   const figure = worse(one, other);
+  const { figure: _, ...first } = one;
   return {
-    ...one,
+    ...first,
     severity: gravest.find((level) => level === one.severity || level === other.severity) ?? one.severity,
     message,
     related: [...one.related, ...other.related],
@@ -43,7 +44,8 @@ export function together(one: Finding, other: Finding, message: string): Finding
 }
 
 function worse(one: Finding, other: Finding): number | undefined {
-  if (one.figure === undefined || other.figure === undefined) return one.figure ?? other.figure;
+  // A case without a figure is worse than any that has one: no `to` may cover it.
+  if (one.figure === undefined || other.figure === undefined) return undefined;
   const rule = figureRules[one.code];
   return rule?.worse === "less" ? Math.min(one.figure, other.figure) : Math.max(one.figure, other.figure);
 }

@@ -63,6 +63,23 @@ export interface Written {
   readonly value: number;
   readonly unit: Unit | null;
   readonly decimals: number;
+  /** What a speed is that its figure and unit do not say: "M", "tas", "vs1g". */
+  readonly of?: string | undefined;
+}
+
+/** What the figure of an open speed is of; undefined for a calibrated speed, and for what is none. */
+export function figureOf({ body }: OpenClause): string | undefined {
+  if (body.kind !== "speed") return undefined;
+  switch (body.speed.kind) {
+    case "mach":
+      return "M";
+    case "airspeed":
+      return body.speed.type === "cas" ? undefined : body.speed.type;
+    case "multiple":
+      return body.speed.of;
+    default:
+      return undefined;
+  }
 }
 
 /** The same clauses with a value where one was open, as if the author had written it. */
@@ -70,7 +87,9 @@ export function closed(clauses: Clauses, open: OpenClause, written: Written): Cl
   const { placed, slot, body, value } = open;
   const quantity: Quantity = {
     kind: "quantity",
-    ...written,
+    value: written.value,
+    unit: written.unit,
+    decimals: written.decimals,
     signed: false,
     span: value.span,
     numberSpan: value.span,

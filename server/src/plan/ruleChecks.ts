@@ -1,14 +1,22 @@
 import type { ResultName, Subject } from "../notation/vocabulary.ts";
 import { checkBounds } from "./boundChecks.ts";
-import { type Checking, carriedFrom, clauseFor, tell } from "./checks.ts";
+import { type Checking, carriedFrom, clauseFor, leastAt, tell } from "./checks.ts";
 import type { Corners } from "./corners.ts";
 import type { FindingCode } from "./findings.ts";
-import { formatBank, formatDistinct, formatRadius, formatResultValue, formatSpeed } from "./format.ts";
+import {
+  formatBank,
+  formatBound,
+  formatDistinct,
+  formatLoad,
+  formatRadius,
+  formatResultValue,
+  formatSpeed,
+} from "./format.ts";
 import type { Row } from "./limits.ts";
 import type { HeldRow } from "./point.ts";
 import { ratioFix } from "./ratioFix.ts";
-import { holdRow, strictest } from "./rules.ts";
-import { rowsInForce } from "./selectRows.ts";
+import { atMost, holdRow, strictest, warningHasCome } from "./rules.ts";
+import { type RowGroup, rowsInForce } from "./selectRows.ts";
 import { oneStepLower } from "./site.ts";
 
 export interface RuleOutcome {
@@ -54,7 +62,7 @@ export function checkRules(checking: Checking): RuleOutcome {
       tellNotEvaluated(checking, row, why);
       continue;
     }
-    if (notApplicable(group.subject, flown)) continue;
+    if (notApplicable(group, flown)) continue;
     const one = strictest(group.rows.map((row) => holdRow(row, { corners: flown, vsFactor })));
     if (one) held.push({ ...one, corners: flown });
   }
@@ -91,13 +99,11 @@ const resultOf: Readonly<Record<Subject, ResultName>> = {
 };
 
 /** Wings level there is no turn to be wide; without a load there is no stall to keep a margin to. */
-function notApplicable(subject: Subject, { nominal, all }: Corners): boolean {
-  if (subject === "radius") return all.every((one) => one.bank === 0);
-  if (subject === "margin") return nominal.stall === 0;
-  // Where the warning has come already there is no bank left to count: that is told as an error of its own.
-  return (
-    subject === "overshoot" && all.some((one) => one.cas <= one.warning && Number.isNaN(one.warningBank))
-  );
+function notApplicable({ subject, afterShear }: RowGroup, corners: Corners): boolean {
+  if (subject === "radius") return corners.all.every((one) => one.bank === 0);
+  if (subject === "margin") return corners.all.every((one) => one.stall === 0);
+  // As flown, a warning that has come is told as an error of its own; after a shear the row alone tells it.
+  return subject === "overshoot" && !afterShear && warningHasCome(corners);
 }
 
 const codes: Readonly<Record<Subject, FindingCode>> = {
@@ -153,9 +159,9 @@ function message(checking: Checking, held: Held, advice: Held | null): string {
   const lead = leadOf(checking, held, corners);
   switch (row.subject) {
     case "bank": {
-      const [flown, most] = formatDistinct(figure, bound, formatBank);
+      const [flown, most] = formatDistinct(figure, bound, formatBank, boundOf(row));
       const why = held.byRateOne ? ", the bank for rate one" : "";
-      const advised = advice ? formatBank(advice.bound) : null;
+      const advised = advice ? boundOf(advice.row)(advice.bound, 0) : null;
       const too = advised ? ` and the ${advised} that it advises` : "";
       // With a tolerance of its own the bank to write is less than the bound.
       const varies = corners.all.some((one) => one.bank !== corners.nominal.bank);
@@ -163,43 +169,47 @@ function message(checking: Checking, held: Held, advice: Held | null): string {
       return `${lead}Bank ${flown} exceeds the ${most} that ${rule}${why}${too}: ${way}${warningAt(checking)}.`;
     }
     case "load": {
-      const [flown, most] = formatDistinct(figure, bound, (value, more) =>
-        formatResultValue("load", value, more),
-      );
+      const [flown, most] = formatDistinct(figure, bound, formatLoad, boundOf(row));
       return `${lead}The load factor ${flown} exceeds the ${most} that ${rule}: bank or pull less.`;
     }
     case "radius": {
-      const [flown, most] = formatDistinct(figure, bound, formatRadius);
+      const [flown, most] = formatDistinct(figure, bound, formatRadius, boundOf(row));
       return `${lead}The turn's radius ${flown} exceeds the ${most} that ${rule}: fly slower or bank more.`;
     }
     case "ratio": {
       const of = checking.evaluated.ready.card.basis?.value?.kind === "vs" && row.vs !== null ? "vs" : "vs1g";
-      const [flown, least] = formatDistinct(figure, bound, (value, more) =>
-        formatResultValue("ratio", value, more),
-      );
+      const [flown, least] = formatDistinct(figure, bound, left("ratio"), boundOf(row));
       return `${lead}The speed is ${flown} times ${of} and ${asks(least)}: fly ${knotsMissing(checking, held, corners)} faster, or lighter.`;
     }
     case "margin": {
-      const [flown, least] = formatDistinct(figure, bound, (value, more) =>
-        formatResultValue("margin", value, more),
-      );
+      const [flown, least] = formatDistinct(figure, bound, left("margin"), boundOf(row));
       return `${lead}The margin over the stall is ${flown} and ${asks(least)}: fly faster or bank less.`;
     }
     case "overshoot": {
-      const [left, least] = formatDistinct(figure, bound, (value, more) =>
-        formatResultValue("overshoot", value, more),
-      );
-      if (figure < 0)
-        return `${lead}The warning comes before this bank is reached, and ${asks(`${least} of bank beyond it`)}: bank less or fly faster.`;
-      return `${lead}Only ${left} of bank are left to the warning and ${asks(least)}: bank less or fly faster.`;
+      const [over, least] = formatDistinct(figure, bound, left("overshoot"), boundOf(row));
+      const way = leastAt(corners.all, (one) => one.overshoot).carriesMoreSlower
+        ? "slower or lower"
+        : "faster";
+      if (!(0 <= figure))
+        return `${lead}The warning comes before this bank is reached, and ${asks(`${least} of bank beyond it`)}: bank less or fly ${way}.`;
+      return `${lead}Only ${over} of bank are left to the warning and ${asks(least)}: bank less or fly ${way}.`;
     }
     case "buffet": {
-      const [onset, least] = formatDistinct(figure, bound, (value, more) =>
-        formatResultValue("buffet-load", value, more),
-      );
+      const [onset, least] = formatDistinct(figure, bound, left("buffet-load"), boundOf(row));
       return `${lead}Buffet begins at a load factor of ${onset} and ${asks(least)}: fly lower or lighter.`;
     }
   }
+}
+
+/** Writes a figure of which less is worse: what is left is cut. */
+function left(name: ResultName): (value: number, more: number) => string {
+  return (value, more) => formatResultValue(name, value, more);
+}
+
+/** Writes the bound of a row. */
+export function boundOf({ subject }: Row): (bound: number, more: number) => string {
+  const name = subject === "buffet" ? "buffet-load" : subject;
+  return (bound, more) => formatBound(name, bound, atMost(subject) ? "down" : "up", more);
 }
 
 /** "After the shear of 10 kt, with the tolerances: ", where each applies. */

@@ -24,7 +24,10 @@ export function holdRow(row: Row, situation: RowSituation): HeldRow {
   const bound = boundOf(row, situation);
   const figure = figureOf(row, situation);
   if (bound === null || figure === null) {
-    return { row, bound: bound?.value ?? Number.NaN, figure: null, holds: null, byRateOne: false };
+    // Once the warning has come no bank is left: that needs no figure to fall short of the row.
+    const short = bound !== null && row.subject === "overshoot" && warningHasCome(situation.corners);
+    const holds = short ? false : null;
+    return { row, bound: bound?.value ?? Number.NaN, figure: null, holds, byRateOne: false };
   }
   return {
     row,
@@ -33,6 +36,11 @@ export function holdRow(row: Row, situation: RowSituation): HeldRow {
     holds: keeps(row, bound.value, figure),
     byRateOne: bound.byRateOne,
   };
+}
+
+/** True where, at some corner, the warning has come already with the wings level, so that no bank is left to it. */
+export function warningHasCome({ all }: Corners): boolean {
+  return all.some((one) => one.cas <= one.warning && Number.isNaN(one.warningBank));
 }
 
 function keeps(row: Row, bound: number, figure: number): boolean {
@@ -87,7 +95,7 @@ function figureOf(row: Row, { corners, vsFactor }: RowSituation): number | null 
   }
 }
 
-/** The strictest of several rows of one subject: the first broken one, else the one with the tightest bound. */
+/** The strictest of several rows of one subject: the first broken one, else the one that is kept most narrowly. */
 export function strictest(rows: readonly HeldRow[]): HeldRow | null {
   let found: HeldRow | null = null;
   for (const one of rows) {
@@ -97,7 +105,9 @@ export function strictest(rows: readonly HeldRow[]): HeldRow | null {
 }
 
 function stricter(one: HeldRow, other: HeldRow): boolean {
-  // A ratio may be on the `vs` basis in one row and not in the other: what is broken counts first.
   if (one.holds !== other.holds) return one.holds === false || (one.holds === null && other.holds === true);
-  return atMost(one.row.subject) ? one.bound < other.bound : other.bound < one.bound;
+  if (atMost(one.row.subject)) return one.bound < other.bound;
+  // One row may ask a ratio to vs and another to vs1g: each figure is in the measure of its own bound.
+  const share = ({ figure, bound }: HeldRow) => (figure ?? 1) / bound;
+  return one.row.subject === "ratio" ? share(one) < share(other) : other.bound < one.bound;
 }

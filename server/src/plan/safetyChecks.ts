@@ -3,10 +3,12 @@ import { loadFactor } from "../flight/turn.ts";
 import type { ResultName } from "../notation/vocabulary.ts";
 import { type Checking, carriedFrom, clauseFor, exerciseSeverity, leastAt, tell } from "./checks.ts";
 import type { Corner } from "./corner.ts";
+import type { Evaluated } from "./evaluated.ts";
 import {
   formatBank,
   formatDistinct,
   formatLoad,
+  formatMach,
   formatPercent,
   formatResultValue,
   formatSpeed,
@@ -15,14 +17,32 @@ import type { NotEvaluated } from "./point.ts";
 import { ALLOWANCE } from "./rules.ts";
 import { findingAt } from "./site.ts";
 
-/** The wing's own limits: stall, warning and buffet, at the worst corner. */
+/** The wing's own limits: stall, warning and buffet, at the worst corner. What could not be held is given back. */
 export function checkSafety(checking: Checking): readonly NotEvaluated[] {
-  if (!checkLift(checking)) return [];
+  const { evaluated } = checking;
+  if (!checkLift(checking)) return notHeld(evaluated, everyCheck, "stall-load");
   const stalled = checkStalled(checking);
   if (!stalled) checkWarning(checking);
   checkStallBeforeWarning(checking);
   checkUnloading(checking);
-  return checkBuffet(checking);
+  return [...loadsUnknown(evaluated), ...checkBuffet(checking)];
+}
+
+const everyCheck = "no-level-flight, stalled, warning-in-turn, stall-before-warning, buffet-in-turn";
+
+function notHeld(evaluated: Evaluated, rule: string, result: ResultName): readonly NotEvaluated[] {
+  return [{ rule, why: evaluated.absent(result) ?? "It is not known here." }];
+}
+
+/** Pushed over, the wing may stall upside down, of which the card says nothing; nor is a stall speed computed then. */
+function loadsUnknown(evaluated: Evaluated): readonly NotEvaluated[] {
+  const { corners, ready } = evaluated;
+  const negative = corners.all.some((one) => one.load < 0);
+  const unwarned = ready.frame.warning !== null && corners.all.some((one) => Number.isNaN(one.warning));
+  return [
+    ...(negative ? notHeld(evaluated, "stalled", "stall") : []),
+    ...(unwarned ? notHeld(evaluated, "warning-in-turn, stall-before-warning", "warning") : []),
+  ];
 }
 
 /** False where the wing's lift is not known here, or carries the load at no speed. */
@@ -86,15 +106,16 @@ function checkStalled(checking: Checking): boolean {
   if (!isStalled(worst)) return false;
   const lead = isStalled(corners.nominal) ? "Stalled: " : "Stalled at the worst of the tolerances: ";
   const [has, needs] = formatDistinct(worst.stallLoad, worst.load, result("stall-load"), formatLoad);
-  const speed =
-    Number.isNaN(worst.stall) || worst.stall === 0
-      ? ""
-      : `; the stall comes at ${formatResultValue("stall", worst.stall)}`;
+  const past = worst.carriesMoreSlower;
+  const stall = Number.isNaN(worst.stall) || worst.stall === 0 ? "" : formatResultValue("stall", worst.stall);
+  const speed = past
+    ? `, for at ${formatMach(worst.mach)} it carries less than slower`
+    : stall && `; the stall comes at ${stall}`;
   tell(
     checking,
     "stalled",
     clauseFor(point, "speed"),
-    `${lead}at ${formatSpeed(worst.cas)} the wing carries ${has} g and the point needs ${needs} g${speed}. Fly faster, bank less or fly lighter.`,
+    `${lead}at ${formatSpeed(worst.cas)} the wing carries ${has} g and the point needs ${needs} g${speed}. Fly ${past ? "slower or lower" : "faster"}, bank less or fly lighter.`,
     {
       severity: exerciseSeverity(point, "stalled"),
       related: carriedFrom(point, ["speed", "mass", "config"]),
@@ -110,7 +131,7 @@ function isWarned(corner: Corner): boolean {
 function checkWarning(checking: Checking): void {
   const { point, evaluated } = checking;
   const { corners, ready } = evaluated;
-  if (ready.frame.warning === null || Number.isNaN(corners.nominal.warning)) return;
+  if (ready.frame.warning === null) return;
   const worst = leastAt(corners.all, (one) => one.cas - one.warning);
   if (!isWarned(worst)) return;
   const lead = isWarned(corners.nominal) ? "" : "With the tolerances, ";

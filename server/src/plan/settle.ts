@@ -6,6 +6,7 @@ import type { StatedPoint } from "./evaluateStated.ts";
 import type { Finding } from "./finding.ts";
 import { lineOf } from "./origin.ts";
 import type { PointResult } from "./point.ts";
+import { resultEntry } from "./results.ts";
 import { review } from "./review.ts";
 import type { Spread } from "./spread.ts";
 
@@ -36,12 +37,15 @@ function whyNoFigures({ point, withheld }: StatedPoint): string | null {
 function spreadOver(evaluated: Evaluated | null, { sweep }: Open, name: ResultName): Spread | null {
   const own = evaluated?.results[name] ?? null;
   if (!sweep || !own) return own;
-  let { low, high } = own;
+  let { nominal, low, high } = own;
+  // A figure that is nominal by definition has no corners, but it has a worst row.
+  const worse = resultEntry(name).unsafeWhenClaimed === "lower" ? Math.max : Math.min;
   for (const { point } of sweep.rows) {
     const spread = point.results?.[name];
     if (!spread) return null;
+    nominal = worse(nominal, spread.nominal);
     low = Math.min(low, spread.low);
     high = Math.max(high, spread.high);
   }
-  return { nominal: own.nominal, low, high };
+  return { nominal, low, high };
 }

@@ -4,7 +4,7 @@ import { blocks } from "./blocking.ts";
 import type { Clauses } from "./clauses.ts";
 import { evaluateStated, type Setting, type StatedPoint } from "./evaluateStated.ts";
 import type { Finding } from "./finding.ts";
-import { formatWritten } from "./format.ts";
+import { formatSpoken } from "./format.ts";
 import { closed, type OpenClause, type Written } from "./openClause.ts";
 import type { Solved, SolvedEnd } from "./point.ts";
 import { findingAt, listed, originOf } from "./site.ts";
@@ -175,7 +175,7 @@ function unsolved(seeker: Seeker): SolvedPoint {
   const { grid, least } = seeker;
   // Without figures anywhere something else is in the way, which is told as it is for any point.
   if (!least) return { stated: seeker.stated(grid.written(grid.to)), solved: null };
-  const at = `${grid.what} ${formatWritten(grid.written(least.at), grid.keyword)}`;
+  const at = `${grid.what} ${formatSpoken(grid.written(least.at), grid.keyword)}`;
   return withoutSolution(
     seeker,
     seeker.stated(grid.written(least.at)),

@@ -60,7 +60,7 @@ function grid({ what, shownUnit, unit, from, to, decimals = 0, size = 10 ** -dec
     to,
     step: from < to ? 1 : -1,
     value,
-    written: (index) => ({ value: value(index), unit, decimals }),
+    written: (index) => ({ value: value(index), unit, decimals, of: shownUnit === "M" ? "M" : undefined }),
   };
 }
 

@@ -72,6 +72,8 @@ export interface State {
   readonly carried: CarriedState;
   /** True after a landing, so that a takeoff begins a new sector. */
   readonly landed: boolean;
+  /** What was stated after that landing, and so is already of the next sector. */
+  readonly sinceLanding: readonly CarriedKey[];
   /** What was already told as missing, and where, so that it is told once. */
   readonly told: { readonly [K in CarriedKey]?: Origin };
 }
@@ -92,7 +94,7 @@ const nothingStated: CarriedState = {
   speed: undefined,
 };
 
-export const startState: State = { carried: nothingStated, landed: false, told: {} };
+export const startState: State = { carried: nothingStated, landed: false, sinceLanding: [], told: {} };
 
 /** The keyword that a reader knows each carried value by. */
 export const keywordOf: Readonly<Record<CarriedKey, Keyword>> = {
@@ -116,7 +118,7 @@ const keys = Object.keys(keywordOf) as CarriedKey[];
 /** True where nothing that is evaluated from `a` could differ when evaluated from `b`. */
 export function sameState(a: State, b: State): boolean {
   if (a === b) return true;
-  if (a.landed !== b.landed) return false;
+  if (a.landed !== b.landed || a.sinceLanding.join() !== b.sinceLanding.join()) return false;
   for (const key of keys) {
     if (!sameCarried(a.carried[key], b.carried[key])) return false;
     const toldA = a.told[key];

@@ -7,9 +7,9 @@ import type { Clauses } from "./clauses.ts";
 import { describePoint } from "./describe.ts";
 import { evaluateStated, type Setting, type StatedPoint } from "./evaluateStated.ts";
 import type { Finding } from "./finding.ts";
-import { formatWritten } from "./format.ts";
+import { formatSpoken } from "./format.ts";
 import { together, toldApart } from "./onePerCode.ts";
-import { closed, type OpenClause, type Written } from "./openClause.ts";
+import { closed, figureOf, type OpenClause, type Written } from "./openClause.ts";
 import type { PointResult, Solved, SweepRow } from "./point.ts";
 import { review } from "./review.ts";
 import { settle } from "./settle.ts";
@@ -33,7 +33,7 @@ export function evaluateSweep(
   clauses: Clauses,
   open: OpenClause,
 ): { readonly point: PointResult; readonly after: State } {
-  const values = sweepValues(open.value as Sweep);
+  const values = sweepValues(open.value as Sweep, figureOf(open));
   if (typeof values === "string") return withoutValues(setting, clauses, open, values);
   const rows = values.map((written) => evaluateRow(setting, closed(clauses, open, written), written));
   const what = open.placed.clause.keyword as Keyword;
@@ -112,17 +112,17 @@ function atSome(message: string, values: readonly Written[], rows: readonly Row[
   const lead = `At ${valueText(first, what)}: ${message}`;
   if (others.length === 0) return lead;
   if (others.length <= 3)
-    return `${lead} So it is at ${listed(others.map((one) => formatWritten(one, what)))} too.`;
+    return `${lead} So it is at ${listed(others.map((one) => formatSpoken(one, what)))} too.`;
   return `${lead} So it is at ${values.length} of the ${rows.length} values.`;
 }
 
-/** "bank 45", "weight 56.4 t". */
+/** "bank 45", "weight 56.4 t", "speed M 0.74". */
 export function valueText(written: Written, what: Keyword): string {
-  return `${what} ${formatWritten(written, what)}`;
+  return `${what} ${formatSpoken(written, what)}`;
 }
 
 /** The values, the end always among them; or what is wrong, as a sentence. */
-function sweepValues({ from, to, by }: Sweep): readonly Written[] | string {
+function sweepValues({ from, to, by }: Sweep, of: string | undefined): readonly Written[] | string {
   const decimals = Math.max(...[from, to, by].map((one) => one.decimals));
   const end = inUnitOf(from, to);
   const step = inUnitOf(from, by);
@@ -140,7 +140,7 @@ function sweepValues({ from, to, by }: Sweep): readonly Written[] | string {
     Number(value.toFixed(Math.min(decimals + (from.unit === to.unit ? 0 : 6), 12)));
   for (let i = 0; i <= count; i++) values.push(tidy(from.value + i * size));
   if (values[values.length - 1] !== tidy(end)) values.push(tidy(end));
-  return values.map((value) => ({ value, unit: from.unit, decimals }));
+  return values.map((value) => ({ value, unit: from.unit, decimals, of }));
 }
 
 function inUnitOf(from: Quantity, other: Quantity): number | null {

@@ -6,7 +6,7 @@ import {
   formatMass,
   formatResult,
   formatSpeed,
-  formatWritten,
+  formatSpoken,
 } from "../plan/format.ts";
 import type { Note } from "../plan/note.ts";
 import { lineOf } from "../plan/origin.ts";
@@ -52,7 +52,7 @@ export function pointRows(point: PointResult): readonly TableRow[] {
   const { sweep } = point;
   if (!sweep) return [row(point, point.solved)];
   return sweep.rows.map((one) =>
-    row(one.point, one.point.solved, `${sweep.what} ${formatWritten(one.written, sweep.what)}`),
+    row(one.point, one.point.solved, `${sweep.what} ${formatSpoken(one.written, sweep.what)}`),
   );
 }
 
@@ -60,7 +60,7 @@ function row(point: PointResult, solved: Solved | null, varied = ""): TableRow {
   const line = String(point.block.start + 1);
   const marks = [
     varied,
-    solved?.written ? `${solved.what} ${formatWritten(solved.written, solved.what)} found` : "",
+    solved?.written ? `${solved.what} ${formatSpoken(solved.written, solved.what)} found` : "",
     point.aside ? "aside" : "",
   ].filter(Boolean);
   const phase = [

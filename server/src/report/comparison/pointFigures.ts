@@ -9,7 +9,7 @@ import {
   formatPercent,
   formatResult,
   formatSpeed,
-  formatWritten,
+  formatSpoken,
 } from "../../plan/format.ts";
 import { lineOf } from "../../plan/origin.ts";
 import type { Conditions, PointResult } from "../../plan/point.ts";
@@ -164,7 +164,7 @@ function sweepFigures({ sweep }: PointResult, json: PointJson): readonly Figure[
     });
     const codes = [...(withheld ? [withheld.code] : []), ...findings.map(({ code }) => code)];
     return {
-      name: `${sweep.what} ${formatWritten(written, sweep.what)}`,
+      name: `${sweep.what} ${formatSpoken(written, sweep.what)}`,
       shown: [...shown, ...new Set(codes)].join(", ") || "-",
       value: rows[i] ?? null,
     };
