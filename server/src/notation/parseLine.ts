@@ -200,14 +200,15 @@ function guessKeyword(typed: string): Keyword | null {
   return begun.length > 0 ? (begun[0] as Keyword) : null;
 }
 
-/** Behind a word that no keyword is close to, a phase alone makes it `phase`, one with a subject a row of limits. */
+/** Behind a word that no keyword is close to, one phase alone makes it `phase`, phases and a subject a row of limits. */
 function guessByWhatFollows(rest: string): "phase" | "row" | null {
-  const words = rest.toLowerCase().match(/[\p{L}-]+/gu) ?? [];
   const isPhase = (word: string) => (rowPhases as readonly string[]).includes(synonyms[word] ?? word);
-  const other = words.findIndex((word) => !isPhase(word));
-  if (other === 0 || words.length === 0) return null;
-  if (other > 0 && (subjects as readonly string[]).includes(words[other] as string)) return "row";
-  return words[0] === "any" || words[0] === "emergency" ? null : "phase";
+  const words = rest.toLowerCase().match(/[\p{L}-]+/gu) ?? [];
+  const subject = words.findIndex((word) => !isPhase(word));
+  if (0 < subject && (subjects as readonly string[]).includes(words[subject] as string)) return "row";
+  const alone = /^\s*([\p{L}-]+)\s*(?:$|["“„«(])/u.exec(rest.toLowerCase())?.[1];
+  if (alone === undefined || alone === "any" || alone === "emergency") return null;
+  return isPhase(alone) ? "phase" : null;
 }
 
 function rowMessage(typed: string): string {
