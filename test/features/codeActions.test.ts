@@ -93,3 +93,19 @@ describe("taking a finding", () => {
     },
   );
 });
+
+describe("taking a finding", () => {
+  const card =
+    "| aircraft a-1; basis vsr; reference 55 t; warning 1.03\n| config flaps stall 106 kt, landing\n\n| limits own\n| must landing overshoot 30 after shear\n\n| fly a-1; under own; weight 55 t; config flaps; altitude 0 ft; speed 118 kt\n\n";
+
+  it.each([
+    ["shear 5 kt; bank 15", ["accept overshoot-short to 6"]],
+    // The warning has come: there is no figure that a clause could take it up to.
+    ["shear 15 kt; bank 15", []],
+  ])("is offered where it has a figure: %s", (clauses, wanted) => {
+    const note = open(`${card}| phase landing; ${clauses}\n`);
+    expect(count(note, "overshoot-short")).toBe(1);
+    const review = codeActions(note, 0, Number.MAX_SAFE_INTEGER).filter(({ kind }) => kind === "review");
+    expect(review.map(({ edits }) => edits[0]?.newText.replace(/^\n\| | because.*$/g, ""))).toEqual(wanted);
+  });
+});

@@ -114,6 +114,20 @@ describe("a sudden loss of airspeed", () => {
   });
 });
 
+describe("buffet at the worst corner", () => {
+  const clauses = "| phase cruise; altitude FL300; bank 15; speed M 0.74";
+
+  it("is what the heaviest and the steepest give: the Mach numbers close in, the altitude comes down", () => {
+    const within = point(`${clauses}; weight 50 t +- 2 t`);
+    const [nominal, heavy] = [point(`${clauses}; weight 50 t`), point(`${clauses}; weight 52 t`)];
+    expect(within.low_buffet_mach).toBe(nominal.low_buffet_mach);
+    expect(within.low_buffet_mach_high).toBe(heavy.low_buffet_mach);
+    expect(within.high_buffet_mach_low).toBe(heavy.high_buffet_mach);
+    expect(within.buffet_altitude_ft).toBe(nominal.buffet_altitude_ft);
+    expect(within.buffet_altitude_low_ft).toBe(heavy.buffet_altitude_ft);
+  });
+});
+
 describe("buffet", () => {
   it("ends at the Mach numbers and the altitude where the table carries just the load, worked by hand", () => {
     const {

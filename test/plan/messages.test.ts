@@ -44,6 +44,28 @@ it("a message says the warning as every table does", () => {
   expect(message("stall-before-warning")).toContain("stall comes at 97 kt and the warning at 95 kt");
 });
 
+it.each([
+  // 91.51 kt to the nearest is 91.5 kt and 91.46 kt rounded up is too: another decimal more tells them apart.
+  ["1.00", "", /^The stall and its warning both come at 90 kt, too late/],
+  [
+    "1.0005",
+    "; contamination 0.11 %",
+    /^With 0\.1 % of the maximum lift lost, the stall comes at (89\.\d+) kt and the warning at/,
+  ],
+  ["1.02", "; contamination 4 %", /stall comes at 91\.51 kt and the warning at 91\.46 kt/],
+])(
+  "a warning of %s times the stall that comes no sooner never reads as sooner%s",
+  (factor, clauses, says) => {
+    const text = evaluated(
+      `phase cruise${clauses}`,
+      card.replace("warning 1.05", `warning ${factor}`),
+    ).message("stall-before-warning");
+    expect(text).toMatch(says);
+    const [stall, warning] = (text?.match(/[\d.]+(?= kt)/g) ?? []).map(Number);
+    expect(warning ?? 0).toBeLessThanOrEqual(stall ?? 0);
+  },
+);
+
 it("a greatest speed is said rounded down, a least one up", () => {
   // 331.6 km/h is 179.05 kt, 199 km/h is 107.45 kt.
   expect(evaluated("phase cruise; speed 190 kt").message("over-vfe")).toContain(

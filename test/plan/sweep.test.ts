@@ -38,6 +38,12 @@ describe("a sweep", () => {
     ],
     ["altitude 2000 ft to 5000 ft by 2000 ft", ["altitude 2000 ft", "altitude 4000 ft", "altitude 5000 ft"]],
     ["altitude FL250 to FL270 by 1000 ft", ["altitude FL250", "altitude FL260", "altitude FL270"]],
+    [
+      "weight 40 t to 41 t by 250 kg",
+      ["weight 40 t", "weight 40250 kg", "weight 40500 kg", "weight 40750 kg", "weight 41 t"],
+    ],
+    ["altitude FL100 to FL102 by 150 ft", ["altitude FL100", "altitude 10150 ft", "altitude FL102"]],
+    ["speed 360 km/h to 200 kt by 5 kt", ["speed 360 km/h", "speed 369.26 km/h", "speed 370.4 km/h"]],
     ["speed 180 kt to 200 kt by 10 kt tas", ["speed 180 kt tas", "speed 190 kt tas", "speed 200 kt tas"]],
     ["speed M 0.40 to 0.44 by 0.02", ["speed M 0.40", "speed M 0.42", "speed M 0.44"]],
     ["speed 1.2 to 1.4 by 0.1 vs1g", ["speed 1.2 vs1g", "speed 1.3 vs1g", "speed 1.4 vs1g"]],
@@ -105,6 +111,11 @@ describe("a sweep", () => {
     const note = open(`| phase cruise; bank 45; ${clause}`);
     expect(tableRows(note).map(([, phase]) => phase)).toEqual([`cruise (${first})`, `cruise (${last})`]);
     expect(note.findings()[0]?.finding.message).toContain(`at ${first}: Bank 45°`);
+  });
+
+  it("says a value as it is, where its step is in another unit", () => {
+    const phases = tableRows(open("| phase cruise; weight 40 t to 41 t by 250 kg")).map(([, phase]) => phase);
+    expect(phases).toEqual(["40", "40.25", "40.5", "40.75", "41"].map((one) => `cruise (weight ${one} t)`));
   });
 
   it("does not carry on, and what is assumed otherwise is not assumed then", () => {

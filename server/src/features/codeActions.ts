@@ -110,8 +110,10 @@ function reviewActions(
       preferred: false,
     });
     const isTold = finding.severity === "error" || finding.severity === "warning";
+    // Where no figure is known no `to` can be written, and without one nothing is accepted.
+    const hasFigure = finding.figure !== undefined || !figureRules[finding.code];
     return [
-      ...(isTold && isAcceptable(finding.code, point.phase)
+      ...(isTold && hasFigure && isAcceptable(finding.code, point.phase)
         ? [action(`Accept ${finding.code}, with a reason`, acceptClause(finding))]
         : []),
       ...(point.phase === "manoeuvre" && canCome(finding.code)

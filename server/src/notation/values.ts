@@ -36,8 +36,23 @@ export function readValue(cursor: Cursor, kind: QuantityKind): Value | Range | n
   const tolerance = atTolerance(cursor) ? readTolerance(cursor, kind) : null;
   const own = first.unit ? first : needUnit(cursor, kind, first, tolerance ? [tolerance.unit] : []);
   if (tolerance && !tolerance.unit && own.unit === "FL") levelTolerance(cursor, tolerance);
+  if (tolerance) sameMeasure(cursor, own, tolerance);
   const span = tolerance ? { start: own.span.start, end: tolerance.span.end } : own.span;
   return { kind: "scalar", quantity: own, tolerance, span };
+}
+
+/** Units of a path that measure the same: an angle, a gradient, a vertical speed. */
+const slopes: readonly (readonly (Unit | null)[])[] = [["deg"], ["%", "ft/nm"], ["ft/min"]];
+
+/** An angle, a gradient and a vertical speed cannot be added, so every part of a path is in one of them. */
+function sameMeasure(cursor: Cursor, { unit }: Quantity, other: Quantity | Tolerance): void {
+  const own = slopes.find((units) => units.includes(unit));
+  if (!own || other.unit === null || own.includes(other.unit)) return;
+  cursor.report(
+    "wrong-unit",
+    other.span,
+    `This path is in ${unit} and a part of it in ${other.unit}, which cannot be added: write both in ${unit}.`,
+  );
 }
 
 /** A flight level counts hundreds of feet, so a bare tolerance on one may mean either. */
@@ -94,6 +109,7 @@ function readSweep(cursor: Cursor, kind: QuantityKind, from: Quantity): Sweep | 
   const units = [from.unit, to.unit, by?.unit ?? null];
   const low = needUnit(cursor, kind, from, units);
   const high = needUnit(cursor, kind, to, units);
+  for (const other of by ? [high, by] : [high]) sameMeasure(cursor, low, other);
   const span = { start: low.span.start, end: cursor.lastEnd };
   if (!by) return { kind: "range", from: low, to: high, span };
   return { kind: "sweep", from: low, to: high, by: needUnit(cursor, kind, by, units), span };

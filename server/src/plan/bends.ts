@@ -32,12 +32,12 @@ interface Entry {
 export function bends(frame: Airframe, edge: Edge, loss: number | null): readonly Corner[] {
   const { first, last } = edge;
   const found: Corner[] = [];
-  const seen = new Set<number>();
+  const seen = new Set<string>();
   for (const entry of entriesAlong(frame, edge, loss)) {
     const [a, b] = [entry.of(first), entry.of(last)];
     // The stall and the 1-g stall are one in level flight, and so are those of a clean wing.
-    if (seen.has(a)) continue;
-    seen.add(a);
+    if (seen.has(`${a} ${b}`)) continue;
+    seen.add(`${a} ${b}`);
     for (const argument of entry.arguments) {
       if (!(Math.min(a, b) < argument && argument < Math.max(a, b))) continue;
       const one = cornerWhere(frame, edge, (at) => entry.of(at) - argument);

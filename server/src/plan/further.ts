@@ -11,11 +11,11 @@ import type { Spread } from "./spread.ts";
 
 /** Figures beside the results that a claim can name, SI; null where they are not asked for or not known. */
 export interface FurtherFigures {
-  /** Between these Mach numbers the load flown gives no buffet. */
-  readonly lowBuffetMach: number | null;
-  readonly highBuffetMach: number | null;
-  /** Up to this pressure altitude, wings level, `buffetLoadKept` is carried without buffet. */
-  readonly buffetAltitude: number | null;
+  /** Between these Mach numbers the load flown gives no buffet. An end is NaN where a corner has none. */
+  readonly lowBuffetMach: Spread | null;
+  readonly highBuffetMach: Spread | null;
+  /** Up to this pressure altitude, wings level, `buffetLoadKept` is carried without buffet. Ends as above. */
+  readonly buffetAltitude: Spread | null;
   readonly buffetLoadKept: number;
   /** Load factor in the gust upwards and downwards. */
   readonly gustUp: Spread | null;
@@ -62,20 +62,29 @@ function buffetLoadKept(rows: readonly HeldRow[]): number {
 
 function buffetEnds({ ready, corners }: Evaluated, kept: number) {
   const { buffet } = ready.frame;
-  const { nominal } = corners;
   const unknown = { lowBuffetMach: null, highBuffetMach: null, buffetAltitude: null, buffetLoadKept: kept };
-  if (!buffet || 0 < ready.liftLoss.high || !(0 < nominal.load)) return unknown;
+  if (!buffet || 0 < ready.liftLoss.high || corners.all.some((one) => !(0 < one.load))) return unknown;
   const { table, wingArea } = buffet;
-  const { mass } = nominal.input;
-  const { low, high } = buffetMachs(table, mass, wingArea, nominal.load, nominal.air);
-  const highest = buffetAltitude(table, mass, wingArea, nominal.mach, kept);
-  const ceiling = ready.card.ceiling?.value ?? null;
+  const ceiling = ready.card.ceiling?.value ?? Number.POSITIVE_INFINITY;
+  const machs = (one: Corner) => buffetMachs(table, one.input.mass, wingArea, one.load, one.air);
+  const highest = (one: Corner) => buffetAltitude(table, one.input.mass, wingArea, one.mach, kept);
   return {
-    lowBuffetMach: low,
-    highBuffetMach: high,
-    buffetAltitude: highest !== null && ceiling !== null ? Math.min(highest, ceiling) : highest,
+    lowBuffetMach: ends(corners, (one) => machs(one).low),
+    highBuffetMach: ends(corners, (one) => machs(one).high),
+    buffetAltitude: ends(corners, (one) => {
+      const altitude = highest(one);
+      return altitude === null ? null : Math.min(altitude, ceiling);
+    }),
     buffetLoadKept: kept,
   };
+}
+
+/** A figure with its ends, which are NaN where a corner lacks it: its nominal value is then all that is known. */
+function ends(corners: Corners, figure: (corner: Corner) => number | null): Spread | null {
+  const nominal = figure(corners.nominal);
+  if (nominal === null) return null;
+  const all = corners.all.map((one) => figure(one) ?? Number.NaN);
+  return { nominal, low: Math.min(...all), high: Math.max(...all) };
 }
 
 /** The load factor in a gust; a gust with a tolerance is strongest at its high end. */

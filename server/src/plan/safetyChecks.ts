@@ -159,14 +159,25 @@ function checkStallBeforeWarning(checking: Checking): void {
   const { corners } = evaluated;
   const worst = leastAt(corners.all, (one) => one.warning - one.stall);
   if (!(worst.warning <= worst.stall * (1 + ALLOWANCE)) || worst.stall === 0) return;
-  const [stall, warning] = formatDistinct(worst.stall, worst.warning, result("stall"), result("warning"));
+  const { liftLoss } = worst.input;
+  const lead = 0 < liftLoss ? `With ${formatPercent(liftLoss)} of the maximum lift lost, the` : "The";
   tell(
     checking,
     "stall-before-warning",
     clauseFor(point, "contamination"),
-    `With ${formatPercent(worst.input.liftLoss)} of the maximum lift lost, the stall comes at ${stall} and the warning at ${warning}, too late: do not rely on the warning, and fly faster.`,
+    `${lead} ${bothSpeeds(worst.stall, worst.warning)}: do not rely on the warning, and fly faster.`,
     { related: carriedFrom(point, ["contamination"]) },
   );
+}
+
+/** A warning that comes no sooner than the stall never reads as coming sooner, which it may where it is rounded up. */
+function bothSpeeds(stall: number, warning: number): string {
+  const rounded = formatDistinct(stall, warning, result("stall"), result("warning"));
+  const flips = Number.parseFloat(rounded[0]) < Number.parseFloat(rounded[1]);
+  const [one, other] = flips ? formatDistinct(stall, warning, result("stall")) : rounded;
+  return one === other
+    ? `stall and its warning both come at ${formatSpeed(stall)}, too late`
+    : `stall comes at ${one} and the warning at ${other}, too late`;
 }
 
 function checkBuffet(checking: Checking): readonly NotEvaluated[] {

@@ -136,11 +136,22 @@ function sweepValues({ from, to, by }: Sweep, of: string | undefined): readonly 
   const values: number[] = [];
   if (MOST_VALUES < count + 1)
     return `A sweep has at most ${MOST_VALUES} values and this one has ${count + 1}: take a larger step.`;
-  const tidy = (value: number) =>
-    Number(value.toFixed(Math.min(decimals + (from.unit === to.unit ? 0 : 6), 12)));
+  // A step or an end in another unit is seldom a round figure in that of the first value.
+  const more = from.unit === to.unit && from.unit === by.unit ? 0 : 6;
+  const tidy = (value: number) => Number(value.toFixed(Math.min(decimals + more, 12)));
   for (let i = 0; i <= count; i++) values.push(tidy(from.value + i * size));
   if (values[values.length - 1] !== tidy(end)) values.push(tidy(end));
-  return values.map((value) => ({ value, unit: from.unit, decimals, of }));
+  return values.map((value) => ({
+    value,
+    unit: from.unit,
+    decimals: more === 0 ? decimals : Math.max(decimals, decimalsOf(value)),
+    of,
+  }));
+}
+
+/** How many decimals it takes to write a value that {@link sweepValues} has rounded. */
+function decimalsOf(value: number): number {
+  return String(value).split(".")[1]?.length ?? 0;
 }
 
 function inUnitOf(from: Quantity, other: Quantity): number | null {

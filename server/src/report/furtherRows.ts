@@ -86,36 +86,37 @@ export function powerRows({ powerOnStall }: FurtherFigures): readonly FurtherRow
 
 function buffetRows(further: FurtherFigures, { configuration }: PointResult): readonly FurtherRow[] {
   const cg = configuration?.buffet?.cg === null ? "; buffet table: cg not stated" : "";
-  const { lowBuffetMach: low, highBuffetMach: high, buffetAltitude } = further;
+  const { lowBuffetMach, highBuffetMach, buffetAltitude, buffetLoadKept } = further;
   return [
-    ...(low === null
-      ? []
-      : [
-          {
-            name: "low buffet Mach",
-            text: formatMach(low, 0, "up"),
-            about: `slower, the load flown buffets${cg}`,
-          },
-        ]),
-    ...(high === null
-      ? []
-      : [
-          {
-            name: "high buffet Mach",
-            text: formatMach(high, 0, "down"),
-            about: `faster, the load flown buffets${cg}`,
-          },
-        ]),
-    ...(buffetAltitude === null
-      ? []
-      : [
-          {
-            name: "buffet altitude",
-            text: formatFlightLevel(buffetAltitude),
-            about: `up to here ${formatLoad(further.buffetLoadKept)} is free of buffet at this Mach number, wings level${cg}`,
-          },
-        ]),
+    ...buffetRow(
+      "low buffet Mach",
+      lowBuffetMach?.high,
+      (mach) => formatMach(mach, 0, "up"),
+      `slower, the load flown buffets${cg}`,
+    ),
+    ...buffetRow(
+      "high buffet Mach",
+      highBuffetMach?.low,
+      (mach) => formatMach(mach, 0, "down"),
+      `faster, the load flown buffets${cg}`,
+    ),
+    ...buffetRow(
+      "buffet altitude",
+      buffetAltitude?.low,
+      formatFlightLevel,
+      `up to here ${formatResultValue("buffet-load", buffetLoadKept)} is free of buffet at this Mach number, wings level${cg}`,
+    ),
   ];
+}
+
+/** The worst end, as every figure of a point is shown; nothing where a corner has none. */
+function buffetRow(
+  name: string,
+  worst: number | undefined,
+  format: (figure: number) => string,
+  about: string,
+): readonly FurtherRow[] {
+  return worst === undefined || Number.isNaN(worst) ? [] : [{ name, text: format(worst), about }];
 }
 
 function categoryRows({ categories }: FurtherFigures, { card }: PointResult): readonly FurtherRow[] {
