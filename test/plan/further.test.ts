@@ -101,16 +101,31 @@ describe("a sudden loss of airspeed", () => {
       /^After the shear of 15 kt: The warning comes before this bank is reached, and own requires 10° of bank beyond it/,
     );
     const accepting = `${landing}; bank 20; shear 15 kt; accept overshoot-short to 0 because "an exercise"`;
-    expect(codes(accepting, { rows })).toEqual(["overshoot-short error"]);
+    expect(codes(accepting, { rows })).toEqual(["overshoot-short error", "stalled warning"]);
     const both = `${rows}\n| should landing overshoot 40`;
-    expect(codes(accepting, { rows: both })).toEqual(["overshoot-short error"]);
+    expect(codes(accepting, { rows: both })).toEqual(["overshoot-short error", "stalled warning"]);
   });
 
   it("that leaves no speed leaves its rows not evaluated", () => {
     const rows = "\n| must landing margin 1.10 after shear";
     expect(
       codes("| phase landing; config flaps-30; altitude 0 ft; speed 135 kt; shear 140 kt", { rows }),
-    ).toEqual(["not-evaluated error"]);
+    ).toEqual(["not-evaluated error", "stalled warning"]);
+  });
+
+  it("that stalls the aeroplane is told without a row too, one step lower than a stall as it is flown", () => {
+    const at = (shear: number, phase = "landing") =>
+      `| phase ${phase}; config flaps-30; altitude 0 ft; speed 135 kt; shear ${shear} kt`;
+    // vs1g of flaps-30 at 50 t, by hand: 106 kt * sqrt(50 / 55) = 101.07 kt.
+    expect(codes(at(33))).toEqual([]);
+    expect(codes(at(34))).toEqual(["stalled warning"]);
+    expect(codes(at(34, "manoeuvre"))).toEqual(["stalled information"]);
+    expect(file(at(45)).findings[0]?.message).toBe(
+      "After the shear of 45 kt it is stalled: at 90 kt the wing carries 0.79 g and the point needs 1.00 g: fly faster, bank less or fly lighter.",
+    );
+    expect(file(at(140)).findings[0]?.message).toMatch(/^After the shear of 140 kt no airspeed is left/);
+    const sought = point("| phase landing; config flaps-30; altitude 0 ft; speed ?; shear 40 kt");
+    expect(sought.solved).toMatchObject({ value: 142, boundBy: "stalled" });
   });
 });
 

@@ -173,3 +173,15 @@ describe("a sweep", () => {
     expect(short.findings[0]?.message).toContain("accepted to 50 only, and it is 60 now");
   });
 });
+
+it("a value that is sought at every value of a sweep, with many tolerances, is refused before an editor stands still", () => {
+  const heavy = (more: string) =>
+    open(`| phase cruise; weight 33 t to 58.9 t by 0.1 t; altitude ? +- 100 ft; speed 90 kt +- 2 kt${more}`)
+      .findings()
+      .map(({ finding }) => finding.message);
+  expect(heavy("; bank 20 +- 2; isa +2 +- 3; cg 20 % +- 2 %")).toContainEqual(
+    expect.stringMatching(
+      /^With these tolerances a value cannot be sought at every value of the sweep: after \d+ /,
+    ),
+  );
+}, 60_000);

@@ -73,7 +73,7 @@ export function findMissing(
   const where = sweep
     ? `for of the values that are swept on line ${lineOf(sweep.origin) + 1} none goes on: write ${clausesToWrite} here`
     : applied.newSector
-      ? `and a new sector begins here, so that nothing is carried into it: write ${clausesToWrite} here`
+      ? `and a new sector begins here, so that nothing from before the landing is carried into it: write ${clausesToWrite} here`
       : `and no line up to here states ${missing.length === 1 ? "it" : "them"}: write ${clausesToWrite} here, or in a setting before it`;
   findings.push(
     findingAt("missing-value", phaseClause, `This point needs ${names}, ${where}.`, {

@@ -15,14 +15,17 @@ import {
 } from "./format.ts";
 import type { NotEvaluated } from "./point.ts";
 import { ALLOWANCE } from "./rules.ts";
-import { findingAt } from "./site.ts";
+import { findingAt, oneStepLower } from "./site.ts";
 
 /** The wing's own limits: stall, warning and buffet, at the worst corner. What could not be held is given back. */
 export function checkSafety(checking: Checking): readonly NotEvaluated[] {
   const { evaluated } = checking;
   if (!checkLift(checking)) return notHeld(evaluated, everyCheck, "stall-load");
   const stalled = checkStalled(checking);
-  if (!stalled) checkWarning(checking);
+  if (!stalled) {
+    checkWarning(checking);
+    checkStalledAfterShear(checking);
+  }
   checkStallBeforeWarning(checking);
   checkUnloading(checking);
   return [...loadsUnknown(evaluated), ...checkBuffet(checking)];
@@ -122,6 +125,34 @@ function checkStalled(checking: Checking): boolean {
     },
   );
   return true;
+}
+
+/** The shear is what may come, not what is flown: one step lower than a stall in the state that is. */
+function checkStalledAfterShear(checking: Checking): void {
+  const { point, evaluated } = checking;
+  const { shear } = evaluated.ready.extras;
+  if (shear === null) return;
+  const lost = formatSpeed(shear);
+  const at = point.clauses.shear?.placed ?? point.phaseClause;
+  const details = {
+    severity: oneStepLower(exerciseSeverity(point, "stalled")),
+    related: carriedFrom(point, ["speed", "mass", "config"]),
+  };
+  const way = "fly faster, bank less or fly lighter.";
+  if (!evaluated.sheared) {
+    tell(checking, "stalled", at, `After the shear of ${lost} no airspeed is left: ${way}`, details);
+    return;
+  }
+  const worst = leastAt(evaluated.sheared.all, (one) => one.stallLoad - one.load);
+  if (!isStalled(worst)) return;
+  const [has, needs] = formatDistinct(worst.stallLoad, worst.load, result("stall-load"), formatLoad);
+  tell(
+    checking,
+    "stalled",
+    at,
+    `After the shear of ${lost} it is stalled: at ${formatSpeed(worst.cas)} the wing carries ${has} g and the point needs ${needs} g: ${way}`,
+    details,
+  );
 }
 
 function isWarned(corner: Corner): boolean {

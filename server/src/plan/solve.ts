@@ -18,6 +18,11 @@ export interface SolvedPoint {
   readonly solved: Solved | null;
 }
 
+/** How much may still be worked out, in corners of trials. A sweep that would go beyond it is refused. */
+export interface Work {
+  left: number;
+}
+
 /** Bisection ends where the bracket is this narrow, relative to the value. */
 const PRECISION = 1e-6;
 
@@ -28,8 +33,13 @@ const PRECISION = 1e-6;
  * the exact bound is then bisected. Every trial is the point as it would read with the value written
  * in, so that the fix changes nothing.
  */
-export function solve(setting: Setting, clauses: Clauses, open: OpenClause): SolvedPoint {
-  const seeker = new Seeker(setting, clauses, open);
+export function solve(
+  setting: Setting,
+  clauses: Clauses,
+  open: OpenClause,
+  work: Work | null = null,
+): SolvedPoint {
+  const seeker = new Seeker(setting, clauses, open, work);
   const best = seeker.best();
   if (best === null) return unsolved(seeker);
   if (seeker.isUnbounded(best)) return unbounded(seeker, best);
@@ -49,9 +59,11 @@ class Seeker {
   readonly setting: Setting;
   readonly open: OpenClause;
   readonly #clauses: Clauses;
+  readonly #work: Work | null;
   least: { readonly at: number; readonly trial: Trial } | null = null;
 
-  constructor(setting: Setting, clauses: Clauses, open: OpenClause) {
+  constructor(setting: Setting, clauses: Clauses, open: OpenClause, work: Work | null) {
+    this.#work = work;
     this.setting = setting;
     this.open = open;
     this.#clauses = clauses;
@@ -65,6 +77,7 @@ class Seeker {
   try(value: number): Trial {
     const { unit, decimals } = this.grid;
     const { point, findings, evaluated, withheld } = this.stated({ value, unit, decimals });
+    if (this.#work) this.#work.left -= evaluated?.corners.all.length ?? 1;
     const broken = applyAccepts(point, findings, evaluated !== null).findings.filter(blocks);
     if (!evaluated) return { keeps: false, broken: [withheld?.code ?? "missing-value"], figures: false };
     return { keeps: broken.length === 0, broken: byGravity(broken).map(label), figures: true };
@@ -74,7 +87,10 @@ class Seeker {
   best(): number | null {
     const { step } = this.grid;
     const { from, to } = this.#searched();
-    for (let i = from; step < 0 ? to <= i : i <= to; i += step) if (this.#keepsAt(i)) return i;
+    for (let i = from; step < 0 ? to <= i : i <= to; i += step) {
+      if (this.#work && this.#work.left < 0) return null;
+      if (this.#keepsAt(i)) return i;
+    }
     return null;
   }
 

@@ -14,12 +14,18 @@ import type { PointResult, Solved, SweepRow } from "./point.ts";
 import { review } from "./review.ts";
 import { settle } from "./settle.ts";
 import { findingAt, listed, originOf } from "./site.ts";
-import { solve } from "./solve.ts";
+import { solve, type Work } from "./solve.ts";
 import type { State } from "./state.ts";
 import { withUnknown } from "./unknownState.ts";
 
 /** The most values of a sweep. */
 const MOST_VALUES = 500;
+
+/**
+ * The most corners of trials that the `?` of one point's rows may take, a few seconds' work: an editor must
+ * not stand still for a table that nobody asked to be this large.
+ */
+const MOST_WORK = 200_000;
 
 interface Row {
   readonly written: Written;
@@ -35,7 +41,13 @@ export function evaluateSweep(
 ): { readonly point: PointResult; readonly after: State } {
   const values = sweepValues(open.value as Sweep, figureOf(open));
   if (typeof values === "string") return withoutValues(setting, clauses, open, values);
-  const rows = values.map((written) => evaluateRow(setting, closed(clauses, open, written), written));
+  const work: Work = { left: MOST_WORK };
+  const rows: Row[] = [];
+  for (const written of values) {
+    rows.push(evaluateRow(setting, closed(clauses, open, written), written, work));
+    if (work.left < 0)
+      return withoutValues(setting, closed(clauses, open, written), open, tooMuch(rows.length));
+  }
   const what = open.placed.clause.keyword as Keyword;
   const breaking = rows.findIndex(({ stated }) => breaksSomething(stated));
   const shown = breaking < 0 ? tightest(rows) : breaking;
@@ -48,9 +60,13 @@ export function evaluateSweep(
   return { point, after: clauses.aside ? setting.before : withoutSwept(stated.after, setting, open) };
 }
 
-function evaluateRow(setting: Setting, clauses: Clauses, written: Written): Row {
+function tooMuch(values: number): string {
+  return `With these tolerances a value cannot be sought at every value of the sweep: after ${values} it would take too long. Take a larger step, or leave tolerances out.`;
+}
+
+function evaluateRow(setting: Setting, clauses: Clauses, written: Written, work: Work): Row {
   if (!clauses.unknown) return { written, stated: evaluateStated(setting, clauses), solved: null };
-  return { written, ...solve(setting, clauses, clauses.unknown) };
+  return { written, ...solve(setting, clauses, clauses.unknown, work) };
 }
 
 function describedRow({ written, stated, solved }: Row): SweepRow {

@@ -64,6 +64,7 @@ function sweepJson({ what, rows }: SweepResult): readonly PointJson[] {
     what,
     value: written.value,
     unit: written.unit,
+    of: written.of ?? null,
     ...computedJson(point),
     codes: point.findings.map(({ code }) => code),
   }));

@@ -154,7 +154,7 @@ export const planFindings = {
   stalled: entry(
     "error",
     "stalled",
-    "At this speed the wing does not carry the load factor that the point needs: it stalls first. Fly faster, bank less, fly lighter or take a configuration that stalls later. In `manoeuvre` it is one step lower, since the stall may be the exercise.",
+    "At this speed the wing does not carry the load factor that the point needs: it stalls first. Fly faster, bank less, fly lighter or take a configuration that stalls later. After a stated `shear` it is one step lower, and in `manoeuvre`, since the stall may be the exercise.",
     flown("| phase departure; speed 85 kt"),
     flown("| phase departure; speed 150 kt"),
   ),
