@@ -352,6 +352,7 @@ describe("bad input ends with code 2 and one clear line", () => {
     [["check", "--format", "yaml"], /Allowed choices are text, json, sarif/],
     [["--nonsense"], /unknown option '--nonsense'/],
     [["check", "demo", "--today", "2026-02-30"], /It is a day such as 2026-03-01/],
+    [["check", "demo", "--today", "2026-13-01"], /It is a day such as 2026-03-01/],
     [["check", "demo", "-o", "/no/such/folder/x"], /cannot be written/],
   ])("%j", (args, message) => {
     const { status, stderr } = plumbline(args as string[]);
