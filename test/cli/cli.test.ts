@@ -1,5 +1,5 @@
 import { spawnSync } from "node:child_process";
-import { mkdirSync, mkdtempSync, readFileSync, rmSync, writeFileSync } from "node:fs";
+import { lstatSync, mkdirSync, mkdtempSync, readFileSync, rmSync, symlinkSync, writeFileSync } from "node:fs";
 import { tmpdir } from "node:os";
 import { join } from "node:path";
 import { fileURLToPath } from "node:url";
@@ -328,6 +328,17 @@ describe("plumbline format", () => {
     expect(plumbline(["format", file]).status).toBe(0);
     expect(readFileSync(file, "utf8")).toBe("| weight 5 t\r\n\r\n| weight  5\r\n");
     expect(plumbline(["format", file, "--check"]).status).toBe(0);
+  });
+
+  it("lays out what a link points to, and leaves the link one", () => {
+    const file = join(folder, "linked.plumb");
+    const link = join(folder, "link.plumb");
+    writeFileSync(file, "|isa+3\n");
+    symlinkSync(file, link);
+    expect(plumbline(["format", link]).status).toBe(0);
+    expect(readFileSync(file, "utf8")).toBe("| isa +3\n");
+    expect(lstatSync(link).isSymbolicLink()).toBe(true);
+    rmSync(link);
   });
 
   it("reads standard input and writes standard output", () => {

@@ -1,4 +1,4 @@
-import { rename, stat, writeFile } from "node:fs/promises";
+import { realpath, rename, stat, writeFile } from "node:fs/promises";
 import { resolve } from "node:path";
 import type { Document } from "../notation/document.ts";
 import { layout } from "../notation/layout.ts";
@@ -40,10 +40,14 @@ function applied(document: Document, edits: ReturnType<typeof layout>): string {
   return document.text();
 }
 
-/** Written beside the file and moved over it, so that a stop in between loses nothing. */
+/**
+ * Written beside the file and moved over it, so that a stop in between loses nothing. What a link points
+ * to is replaced, never the link: it would become a second note that nobody knows of.
+ */
 async function replaceFile(path: string, text: string): Promise<void> {
-  const { mode } = await stat(path);
-  const beside = `${path}.plumbline-${process.pid}`;
+  const file = await realpath(path);
+  const { mode } = await stat(file);
+  const beside = `${file}.plumbline-${process.pid}`;
   await writeFile(beside, text, { mode });
-  await rename(beside, path);
+  await rename(beside, file);
 }
