@@ -365,6 +365,7 @@ describe("bad input ends with code 2 and one clear line", () => {
     [["check", "demo", "--today", "2026-02-30"], /It is a day such as 2026-03-01/],
     [["check", "demo", "--today", "2026-13-01"], /It is a day such as 2026-03-01/],
     [["check", "demo", "-o", "/no/such/folder/x"], /cannot be written/],
+    [["format", "demo", "-o", "x"], /-o is for what is laid out from standard input alone/],
   ])("%j", (args, message) => {
     const { status, stderr } = plumbline(args as string[]);
     expect(stderr).toMatch(message as RegExp);
@@ -387,6 +388,24 @@ describe("bad input ends with code 2 and one clear line", () => {
       stderr: expect.stringContaining("not UTF-8"),
     });
     rmSync(empty, { recursive: true });
+  });
+
+  it("never writes a result over a note that it read, by whatever name", () => {
+    const place = mkdtempSync(join(tmpdir(), "plumbline-over-"));
+    const note = join(place, "note.plumb");
+    writeFileSync(note, `${card}\n${point}`);
+    symlinkSync(note, join(place, "out.txt"));
+    for (const args of [
+      ["check", "note.plumb", "-o", "note.plumb"],
+      ["points", "-", "-o", "./note.plumb"],
+      ["compare", "-", "note.plumb", "-o", "out.txt"],
+    ]) {
+      const { status, stderr } = plumbline(args, { cwd: place, input: point });
+      expect(stderr).toContain("is a note that is read here, so it is not written over: name another file.");
+      expect(status).toBe(2);
+      expect(readFileSync(note, "utf8")).toBe(`${card}\n${point}`);
+    }
+    rmSync(place, { recursive: true });
   });
 
   it("a million characters on one line are a finding, not a crash", () => {
