@@ -32,6 +32,7 @@ export function onePerCode(findings: readonly Finding[]): readonly Finding[] {
 /** Two findings of one code as one: as grave as the graver, with the worse figure. */
 export function together(one: Finding, other: Finding, message: string): Finding {
   const figure = worse(one, other);
+  const mentions = [...(one.mentions ?? []), ...(other.mentions ?? [])];
   return {
     ...one,
     severity: gravest.find((level) => level === one.severity || level === other.severity) ?? one.severity,
@@ -39,6 +40,7 @@ export function together(one: Finding, other: Finding, message: string): Finding
     related: [...one.related, ...other.related],
     fixes: [...one.fixes, ...other.fixes],
     ...(figure === undefined ? {} : { figure }),
+    ...(mentions.length === 0 ? {} : { mentions }),
   };
 }
 
