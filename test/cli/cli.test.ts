@@ -1,5 +1,5 @@
 import { spawnSync } from "node:child_process";
-import { mkdirSync, mkdtempSync, readFileSync, rmSync, writeFileSync } from "node:fs";
+import { lstatSync, mkdirSync, mkdtempSync, readFileSync, rmSync, symlinkSync, writeFileSync } from "node:fs";
 import { tmpdir } from "node:os";
 import { join } from "node:path";
 import { fileURLToPath } from "node:url";
@@ -362,6 +362,17 @@ describe("plumbline format", () => {
     expect(plumbline(["format", file, "--check"]).status).toBe(0);
   });
 
+  it("lays out what a link points to, and leaves the link one", () => {
+    const file = join(folder, "linked.plumb");
+    const link = join(folder, "link.plumb");
+    writeFileSync(file, "|isa+3\n");
+    symlinkSync(file, link);
+    expect(plumbline(["format", link]).status).toBe(0);
+    expect(readFileSync(file, "utf8")).toBe("| isa +3\n");
+    expect(lstatSync(link).isSymbolicLink()).toBe(true);
+    rmSync(link);
+  });
+
   it("reads standard input and writes standard output", () => {
     expect(plumbline(["format", "-"], { input: "|isa+3;", cwd: folder }).stdout).toBe("| isa +3");
   });
@@ -397,7 +408,9 @@ describe("bad input ends with code 2 and one clear line", () => {
     [["explain", "nowhere-near"], /^plumbline: There is no finding nowhere-near: `plumbline explain` lists/],
     [["--nonsense"], /unknown option '--nonsense'/],
     [["check", "demo", "--today", "2026-02-30"], /It is a day such as 2026-03-01/],
+    [["check", "demo", "--today", "2026-13-01"], /It is a day such as 2026-03-01/],
     [["check", "demo", "-o", "/no/such/folder/x"], /cannot be written/],
+    [["format", "demo", "-o", "x"], /-o is for what is laid out from standard input alone/],
   ])("%j", (args, message) => {
     const { status, stderr } = plumbline(args as string[]);
     expect(stderr).toMatch(message as RegExp);
@@ -420,6 +433,24 @@ describe("bad input ends with code 2 and one clear line", () => {
       stderr: expect.stringContaining("not UTF-8"),
     });
     rmSync(empty, { recursive: true });
+  });
+
+  it("never writes a result over a note that it read, by whatever name", () => {
+    const place = mkdtempSync(join(tmpdir(), "plumbline-over-"));
+    const note = join(place, "note.plumb");
+    writeFileSync(note, `${card}\n${point}`);
+    symlinkSync(note, join(place, "out.txt"));
+    for (const args of [
+      ["check", "note.plumb", "-o", "note.plumb"],
+      ["points", "-", "-o", "./note.plumb"],
+      ["compare", "-", "note.plumb", "-o", "out.txt"],
+    ]) {
+      const { status, stderr } = plumbline(args, { cwd: place, input: point });
+      expect(stderr).toContain("is a note that is read here, so it is not written over: name another file.");
+      expect(status).toBe(2);
+      expect(readFileSync(note, "utf8")).toBe(`${card}\n${point}`);
+    }
+    rmSync(place, { recursive: true });
   });
 
   it("a million characters on one line are a finding, not a crash", () => {

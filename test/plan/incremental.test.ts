@@ -78,6 +78,51 @@ describe("an edited note", () => {
     );
   });
 
+  const card = "| aircraft wheatear-9; basis vsr; reference 9 t\n| config clean stall 90 kt\n";
+  const start = "| fly wheatear-9; weight 8 t; config clean; altitude FL100; speed 150 kt\n\n";
+  const low = "| phase cruise; altitude FL110\n\n| phase landing";
+  it.each([
+    ["a value that is carried over", `${card}\n${start}${low}`, "carried-over"],
+    ["one that is accepted", `${card}\n${start}${low}; accept carried-over because "x"`, "carried-over"],
+    ["one that is expected", `${card}\n${start}${low}; expect carried-over`, "carried-over"],
+    ["one that is not", `${card}\n${start}${low}; expect not carried-over`, "not-as-expected"],
+    [
+      "a sweep",
+      `${card}\n${start}| phase cruise; speed 130 kt to 150 kt by 5 kt\n\n| phase cruise`,
+      "missing-value",
+    ],
+    ["a card in error below", `${start}Prose.\n\n${card.replace("90 kt", "90")}`, "broken-definition"],
+    [
+      "limits in error below",
+      "| under own\n\nProse.\n\n| limits own\n| must any bnk 20\n",
+      "broken-definition",
+    ],
+    ["a card of nearly that name", `${start.replace("r-9", "r-8")}Prose.\n\n${card}`, "unknown-aircraft"],
+  ])("names in its messages the line where %s stands now", (_, text, code) => {
+    for (const line of [0, text.split("\n").indexOf("Prose.")].filter((one) => 0 <= one)) {
+      const folder = createFolder({ today: "2026-12-01" });
+      const note = folder.open(uri, `Before.\n\n${text}\n`, "plumb");
+      expect(note.findings().map(({ finding }) => finding.code)).toContain(code);
+      note.edit({ line, character: 0 }, { line, character: 0 }, "One more line.\n");
+      const anew = createFolder({ today: "2026-12-01" }).open(uri, note.document.text(), "plumb");
+      expect(fileJson(note, "note")).toEqual(fileJson(anew, "note"));
+    }
+  });
+
+  it("names the line of a card in another note where it stands now", () => {
+    const folder = createFolder({ today: "2026-12-01" });
+    const cards = folder.open(
+      "file:///demo/cards.plumb",
+      `Prose.\n\n${card.replace("90 kt", "90")}`,
+      "plumb",
+    );
+    const note = folder.open(uri, start, "plumb");
+    const told = () => note.findings().map(({ finding }) => finding.message);
+    expect(told()).toContainEqual(expect.stringContaining("has an error on line 4"));
+    cards.edit({ line: 0, character: 0 }, { line: 0, character: 0 }, "More.\n");
+    expect(told()).toContainEqual(expect.stringContaining("has an error on line 5"));
+  });
+
   it("shows no figure that is not a number, whatever it says", () => {
     const line = fc.oneof(
       { weight: 3, arbitrary: fc.constantFrom(...pieces) },

@@ -1,10 +1,11 @@
-import { rename, stat, writeFile } from "node:fs/promises";
+import { realpath, rename, stat, writeFile } from "node:fs/promises";
 import { resolve } from "node:path";
 import type { Document } from "../notation/document.ts";
 import { layout } from "../notation/layout.ts";
 import { load } from "./load.ts";
 import { emit } from "./output.ts";
 import type { Common } from "./run.ts";
+import { UsageError } from "./usageError.ts";
 
 export interface FormatOptions extends Common {
   readonly check: boolean;
@@ -12,7 +13,14 @@ export interface FormatOptions extends Common {
 
 /** `plumbline format`: lays out the bar lines of the files in place, or only tells which would change. */
 export async function format(paths: readonly string[], options: FormatOptions): Promise<number> {
-  const notes = await load(paths, options);
+  if (options.output !== undefined && (options.check || paths.length !== 1 || paths[0] !== "-")) {
+    throw new UsageError(
+      "-o is for what is laid out from standard input alone: files are laid out in place.",
+    );
+  }
+  // A note that comes from standard input may well go back to its own place.
+  const { output: _, ...reading } = options;
+  const notes = await load(paths, reading);
   let changed = 0;
   for (const { path, note } of notes) {
     const edits = layout(note.document);
@@ -48,10 +56,14 @@ function applied(document: Document, edits: ReturnType<typeof layout>): string {
   return document.text();
 }
 
-/** Written beside the file and moved over it, so that a stop in between loses nothing. */
+/**
+ * Written beside the file and moved over it, so that a stop in between loses nothing. What a link points
+ * to is replaced, never the link: it would become a second note that nobody knows of.
+ */
 async function replaceFile(path: string, text: string): Promise<void> {
-  const { mode } = await stat(path);
-  const beside = `${path}.plumbline-${process.pid}`;
+  const file = await realpath(path);
+  const { mode } = await stat(file);
+  const beside = `${file}.plumbline-${process.pid}`;
   await writeFile(beside, text, { mode });
-  await rename(beside, path);
+  await rename(beside, file);
 }

@@ -1,3 +1,4 @@
+import { realpath } from "node:fs/promises";
 import { relative, resolve, sep } from "node:path";
 import { pathToFileURL } from "node:url";
 import { discover } from "../disk/discover.ts";
@@ -28,6 +29,8 @@ export interface LoadOptions {
   readonly stdinPath: string;
   /** The files that they are looked for in, instead of those under the root. */
   readonly besides?: readonly string[];
+  /** Where the result goes; never over a note that it is made from. */
+  readonly output?: string;
   /** Shows no progress. */
   readonly quiet?: boolean;
 }
@@ -69,6 +72,7 @@ export function createLoader(options: LoadOptions): Loader {
         held.set(file, text);
         folder.open(uriOf(file), text, flavourOf(file));
       }
+      await keepFromOverwriting(options.output, cwd, (file) => isNote(folder.note(uriOf(file)), file));
       const loaded = wanted
         .filter((file) => isNote(folder.note(uriOf(file)), file))
         .map((file) => ({ path: shortPath(file, cwd), note: folder.note(uriOf(file)) as Note }));
@@ -121,6 +125,21 @@ async function readTexts(
   shown.end();
   if (problems.length > 0) throw new UsageError(problems.join("\n"));
   return { wanted: wanted.files, texts };
+}
+
+/** The result in the place of a note would be the note's end: nobody wants that, a slip of the hand does it. */
+async function keepFromOverwriting(
+  output: string | undefined,
+  cwd: string,
+  isRead: (file: string) => boolean,
+): Promise<void> {
+  if (output === undefined) return;
+  const file = resolve(cwd, output);
+  const behind = await realpath(file).catch(() => file);
+  if (isRead(file) || isRead(behind))
+    throw new UsageError(
+      `${output} is a note that is read here, so it is not written over: name another file.`,
+    );
 }
 
 /** A folder that is checked from outside may have a configuration of its own, which somebody may think holds. */

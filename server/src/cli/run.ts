@@ -166,9 +166,10 @@ function overNotes(command: Command): Command {
 }
 
 function day(text: string): string {
-  const real =
-    /^\d{4}-\d{2}-\d{2}$/.test(text) && new Date(`${text}T00:00:00Z`).toISOString().slice(0, 10) === text;
-  if (!real) throw new InvalidArgumentError("It is a day such as 2026-03-01.");
+  const time = /^\d{4}-\d{2}-\d{2}$/.test(text) ? Date.parse(`${text}T00:00:00Z`) : Number.NaN;
+  // A 30th of February is read as a day of March.
+  if (Number.isNaN(time) || new Date(time).toISOString().slice(0, 10) !== text)
+    throw new InvalidArgumentError("It is a day such as 2026-03-01.");
   return text;
 }
 

@@ -4,6 +4,7 @@ import type { ResultName } from "../notation/vocabulary.ts";
 import type { Read } from "./clauses.ts";
 import type { Finding } from "./finding.ts";
 import { formatClaim, formatClaimNumber, formatDistinct, shownClaim } from "./format.ts";
+import type { Origin } from "./origin.ts";
 import type { ClaimResult } from "./point.ts";
 import { fromShownUnit, resultEntry, results } from "./results.ts";
 import { MOST_DECIMALS } from "./roundShown.ts";
@@ -19,6 +20,8 @@ export interface ClaimedFigures {
   spread(name: ResultName): Spread | null;
   /** Why it is not known, as a sentence; null where that was told in this point already. */
   why(name: ResultName): string | null;
+  /** Where the line stands that the reason names. */
+  readonly mentions: readonly Origin[];
 }
 
 /** Holds every figure that the author wrote down against the one that is computed. */
@@ -38,6 +41,7 @@ export function checkClaims(
             "claim-unchecked",
             placed,
             `The ${body.result} that is claimed cannot be checked, for it is not known here. ${why}`,
+            { mentions: figures.mentions },
           ),
         );
       return { clause: placed, name: body.result, claimed, computed: null, holds: null };

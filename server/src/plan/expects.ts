@@ -29,7 +29,11 @@ export function applyExpects(point: Point, found: readonly Finding[], hasFigures
   const told: Finding[] = [];
   const expected = expects.map(({ placed, body }): Expectation => {
     const code = body.code as FindingCode;
-    const fail = (message: string) => told.push(findingAt("not-as-expected", placed, message));
+    const fail = (message: string, of?: Finding) =>
+      told.push({
+        ...findingAt("not-as-expected", placed, message),
+        ...(of?.mentions ? { mentions: of.mentions } : {}),
+      });
     if (!body.not && !canCome(code)) {
       fail(
         `\`${code}\` cannot be expected, for it says that the note or the point was not checked: take the clause out and mend what it tells of.`,
@@ -51,7 +55,7 @@ export function applyExpects(point: Point, found: readonly Finding[], hasFigures
         `Expected here is ${code}, and it does not come: change the point so that it does, or take the clause out.`,
       );
     } else if (finding) {
-      fail(`Expected here is no ${code}, and it comes: ${finding.message}`);
+      fail(`Expected here is no ${code}, and it comes: ${finding.message}`, finding);
     }
     return { code, not: body.not, came: finding !== undefined };
   });

@@ -10,6 +10,12 @@ export interface Related {
   readonly message: string;
 }
 
+/** A place that a message names by its line, from 0: lines above come and go, and then it has to be written anew. */
+export interface Mention {
+  readonly origin: Origin;
+  readonly line: number;
+}
+
 /** A finding of a block; `line` counts from the block's first line (from the document's where it has none). */
 export interface Finding {
   readonly code: FindingCode;
@@ -22,6 +28,8 @@ export interface Finding {
   readonly fixes: readonly Fix[];
   /** What was held against a bound, at its worst corner, SI, where the code has a figure that can be accepted. */
   readonly figure?: number;
+  /** The lines that the message names, each as it was when the message was written. */
+  readonly mentions?: readonly Mention[];
   /** The row that is broken, as it is written. */
   readonly rule?: string;
   /** Who took it, and why; null or absent where nobody did. */

@@ -77,6 +77,7 @@ export function findMissing(
       : `and no line up to here states ${missing.length === 1 ? "it" : "them"}: write ${clausesToWrite} here, or in a setting before it`;
   findings.push(
     findingAt("missing-value", phaseClause, `This point needs ${names}, ${where}.`, {
+      ...(sweep ? { mentions: [sweep.origin] } : {}),
       fixes: missing.map((key) => stateFix(site.block, keywordOf[key], `Write ${keywordOf[key]}`)),
     }),
   );

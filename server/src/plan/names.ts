@@ -39,6 +39,7 @@ export function flyCard(
       : "no card is there yet; a card begins with `aircraft`.";
   findings.push(
     findingAt("unknown-aircraft", fly.placed, `No card in this folder is called ${name.text}; ${hint}`, {
+      ...(nearest ? { mentions: [nearest.origin] } : {}),
       span: name.span,
       fixes: nearest
         ? [
@@ -81,6 +82,7 @@ export function underLimits(
       under.placed,
       `No limits in this folder are called ${name.text}, so no rule is held; ${hint}`,
       {
+        ...(nearest ? { mentions: [nearest.origin] } : {}),
         span: name.span,
         fixes: nearest
           ? [
@@ -107,7 +109,7 @@ function brokenDefinition(
   const withheld = definition.withheld !== null;
   const first = firstError(definition);
   if (!first && !withheld) return null;
-  const line = origin.block.start + (first?.line ?? 0) + 1;
+  const mended: Origin = first ? { ...origin, line: first.line, span: first.span } : origin;
   const cost =
     what === "limits"
       ? withheld
@@ -119,13 +121,13 @@ function brokenDefinition(
   // What is then not computed or not held at all must not pass for checked.
   const grave = withheld || ("lost" in definition && definition.lost.length > 0);
   const related: Related[] = first
-    ? [{ origin: { ...origin, line: first.line, span: first.span }, message: first.message }]
+    ? [{ origin: mended, message: first.message }]
     : [{ origin, message: `${name.text} is defined here.` }];
   return findingAt(
     "broken-definition",
     placed,
-    `The ${what} ${name.text} ${what === "card" ? "has" : "have"} an error on line ${line}, and ${cost}: mend it there.`,
-    { span: name.span, related, ...(grave ? { severity: "error" } : {}) },
+    `The ${what} ${name.text} ${what === "card" ? "has" : "have"} an error on line ${lineOf(mended) + 1}, and ${cost}: mend it there.`,
+    { span: name.span, related, mentions: [mended], ...(grave ? { severity: "error" } : {}) },
   );
 }
 

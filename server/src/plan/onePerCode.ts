@@ -33,6 +33,7 @@ export function onePerCode(findings: readonly Finding[]): readonly Finding[] {
 export function together(one: Finding, other: Finding, message: string): Finding {
   const figure = worse(one, other);
   const { figure: _, ...first } = one;
+  const mentions = [...(one.mentions ?? []), ...(other.mentions ?? [])];
   return {
     ...first,
     severity: gravest.find((level) => level === one.severity || level === other.severity) ?? one.severity,
@@ -40,6 +41,7 @@ export function together(one: Finding, other: Finding, message: string): Finding
     related: [...one.related, ...other.related],
     fixes: [...one.fixes, ...other.fixes],
     ...(figure === undefined ? {} : { figure }),
+    ...(mentions.length === 0 ? {} : { mentions }),
   };
 }
 

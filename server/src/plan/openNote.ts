@@ -11,7 +11,7 @@ import type { Limits } from "./limits.ts";
 import { lowerCard } from "./lowerCard.ts";
 import { type LimitsDraft, lowerLimits } from "./lowerLimits.ts";
 import type { BlockResult, Note, PlacedFinding } from "./note.ts";
-import type { Anchor } from "./origin.ts";
+import { type Anchor, lineOf } from "./origin.ts";
 import { type Severities, withSeverity } from "./severities.ts";
 import type { PlanSite } from "./site.ts";
 import { type State, sameState, startState } from "./state.ts";
@@ -125,6 +125,7 @@ class OpenNote implements FolderNote {
 
   findings(): readonly PlacedFinding[] {
     this.#evaluate();
+    this.#nameLinesAnew();
     const placed: PlacedFinding[] = [];
     for (const finding of this.document.findings) {
       const severity = catalogue[finding.code].severity;
@@ -148,6 +149,15 @@ class OpenNote implements FolderNote {
     const { severities } = this.#around;
     if (Object.keys(severities).length === 0) return placed;
     return placed.map(({ line, finding }) => ({ line, finding: withSeverity(finding, severities) }));
+  }
+
+  /** Evaluates again, from the state it knew, what names a line that is another one now. */
+  #nameLinesAnew(): void {
+    const outdated = this.#tellingEntries().filter(namesAnOldLine);
+    for (const entry of outdated) {
+      this.#evaluateEntry(entry, this.#around.definitions(), entry.before ?? startState);
+      this.#results[indexOfBlock(this.#results, entry.block.start)] = entry.result as BlockResult;
+    }
   }
 
   /** Found anew only when an entry that told something, or does now, was evaluated again. */
@@ -264,6 +274,13 @@ class OpenNote implements FolderNote {
 function tells({ block, result }: Entry): boolean {
   if (block.kind === "card" || block.kind === "limits") return true;
   return result !== null && (result.findings.length > 0 || usesBuiltIn(result));
+}
+
+function namesAnOldLine({ result }: Entry): boolean {
+  return (
+    result?.findings.some(({ mentions }) => mentions?.some(({ origin, line }) => lineOf(origin) !== line)) ??
+    false
+  );
 }
 
 function usesBuiltIn(result: BlockResult): boolean {

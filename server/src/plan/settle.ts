@@ -19,6 +19,7 @@ export function settle(stated: StatedPoint, open: Open): PointResult {
     {
       spread: (name) => spreadOver(evaluated, open, name),
       why: (name) => (evaluated ? (evaluated.absent(name) ?? "") : whyNoFigures(stated)),
+      mentions: !evaluated && stated.withheld ? [stated.withheld.origin] : [],
     },
     findings,
   );

@@ -3,7 +3,7 @@ import type { Fix } from "../notation/finding.ts";
 import type { Span } from "../notation/span.ts";
 import type { Finding, Related, Severity } from "./finding.ts";
 import { catalogue, type FindingCode } from "./findings.ts";
-import type { Anchor, Origin } from "./origin.ts";
+import { type Anchor, lineOf, type Origin } from "./origin.ts";
 
 /** The block that is being evaluated, and where it stands. */
 export interface Site {
@@ -30,6 +30,8 @@ export interface Details {
   readonly fixes?: readonly Fix[];
   readonly figure?: number;
   readonly rule?: string;
+  /** Every place whose line the message names. */
+  readonly mentions?: readonly Origin[];
 }
 
 /** A finding at a clause, with the catalogue's severity unless the situation says otherwise. */
@@ -49,6 +51,9 @@ export function findingAt(
     fixes: details.fixes ?? [],
     ...(details.figure === undefined ? {} : { figure: details.figure }),
     ...(details.rule === undefined ? {} : { rule: details.rule }),
+    ...(details.mentions
+      ? { mentions: details.mentions.map((origin) => ({ origin, line: lineOf(origin) })) }
+      : {}),
   };
 }
 

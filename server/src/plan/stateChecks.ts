@@ -37,6 +37,7 @@ function checkCarriedOver(point: Point, findings: Finding[]): void {
       `This ${phase} takes over ${listed(parts)}: state ${keys.length === 1 ? "it" : "them"} here, for it seldom is the same.`,
       {
         related: carriedFrom(point, keys),
+        mentions: keys.flatMap((key) => applied.carried[key]?.origin ?? []),
         fixes: keys.map((key) => stateFix(site.block, keywordOf[key], `Write ${keywordOf[key]}`)),
       },
     ),
