@@ -97,6 +97,11 @@ describe("an edited note", () => {
       "| under own\n\nProse.\n\n| limits own\n| must any bnk 20\n",
       "broken-definition",
     ],
+    [
+      "a line that a claim waits for",
+      `${card}\n${start.replace("8 t", "8")}Prose.\n\n| phase cruise; claim stall 90 kt`,
+      "claim-unchecked",
+    ],
     ["a card of nearly that name", `${start.replace("r-9", "r-8")}Prose.\n\n${card}`, "unknown-aircraft"],
   ])("names in its messages the line where %s stands now", (_, text, code) => {
     for (const line of [0, text.split("\n").indexOf("Prose.")].filter((one) => 0 <= one)) {
@@ -109,7 +114,7 @@ describe("an edited note", () => {
     }
   });
 
-  it("names the line of a card in another note where it stands now", () => {
+  it("names another note by its file, for its lines move without this one being told", () => {
     const folder = createFolder({ today: "2026-12-01" });
     const cards = folder.open(
       "file:///demo/cards.plumb",
@@ -118,9 +123,9 @@ describe("an edited note", () => {
     );
     const note = folder.open(uri, start, "plumb");
     const told = () => note.findings().map(({ finding }) => finding.message);
-    expect(told()).toContainEqual(expect.stringContaining("has an error on line 4"));
+    expect(told()).toContainEqual(expect.stringContaining("has an error in cards.plumb, and"));
     cards.edit({ line: 0, character: 0 }, { line: 0, character: 0 }, "More.\n");
-    expect(told()).toContainEqual(expect.stringContaining("has an error on line 5"));
+    expect(told()).toContainEqual(expect.stringContaining("has an error in cards.plumb, and"));
   });
 
   it("shows no figure that is not a number, whatever it says", () => {

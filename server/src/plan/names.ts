@@ -22,7 +22,7 @@ export function flyCard(
   const found = definitions.card(name.text);
   if (found.kind === "found") {
     const card = found.definition;
-    const broken = brokenDefinition(fly.placed, name, "card", card);
+    const broken = brokenDefinition(site.uri, fly.placed, name, "card", card);
     if (broken) findings.push(broken);
     return { value: { name: card.name, card }, code: card.withheld ? "broken-definition" : null };
   }
@@ -64,7 +64,7 @@ export function underLimits(
   const found = definitions.limitsNamed(name.text);
   if (found.kind === "found") {
     const limits = found.definition;
-    const broken = brokenDefinition(under.placed, name, "limits", limits);
+    const broken = brokenDefinition(site.uri, under.placed, name, "limits", limits);
     if (broken) findings.push(broken);
     return { name: limits.name, limits: limits.withheld ? null : limits };
   }
@@ -100,6 +100,7 @@ export function underLimits(
 }
 
 function brokenDefinition(
+  uri: string,
   placed: PlacedClause,
   name: Name,
   what: "card" | "limits",
@@ -126,7 +127,7 @@ function brokenDefinition(
   return findingAt(
     "broken-definition",
     placed,
-    `The ${what} ${name.text} ${what === "card" ? "has" : "have"} an error on line ${lineOf(mended) + 1}, and ${cost}: mend it there.`,
+    `The ${what} ${name.text} ${what === "card" ? "has" : "have"} an error ${place(mended, uri)}, and ${cost}: mend it there.`,
     { span: name.span, related, mentions: [mended], ...(grave ? { severity: "error" } : {}) },
   );
 }
@@ -233,8 +234,7 @@ export function unknownConfiguration(card: Card, placed: PlacedClause, name: str
   );
 }
 
+/** Another note by its file alone: lines above move there without this one being told anew. */
 function place(origin: Origin, uri: string): string {
-  const line = `line ${lineOf(origin) + 1}`;
-  if (origin.uri === uri) return line;
-  return `${fileName(origin.uri)}, ${line}`;
+  return origin.uri === uri ? `on line ${lineOf(origin) + 1}` : `in ${fileName(origin.uri)}`;
 }
