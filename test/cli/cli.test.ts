@@ -406,6 +406,7 @@ describe("bad input ends with code 2 and one clear line", () => {
     [["chek"], /^plumbline: There is no command and no .* chek; did you mean the command check\?\n$/],
     [["check", "chek"], /^plumbline: There is no file or folder chek\.\n$/],
     [["explain", "nowhere-near"], /^plumbline: There is no finding nowhere-near: `plumbline explain` lists/],
+    [["check", ""], /^plumbline: An empty path names no file and no folder/],
     [["--nonsense"], /unknown option '--nonsense'/],
     [["check", "demo", "--today", "2026-02-30"], /It is a day such as 2026-03-01/],
     [["check", "demo", "--today", "2026-13-01"], /It is a day such as 2026-03-01/],
@@ -451,6 +452,19 @@ describe("bad input ends with code 2 and one clear line", () => {
       expect(readFileSync(note, "utf8")).toBe(`${card}\n${point}`);
     }
     rmSync(place, { recursive: true });
+  });
+
+  it("no control character of a note or a file's name reaches the terminal", () => {
+    const odd = mkdtempSync(join(tmpdir(), "plumbline-odd-"));
+    const name = "a\u001b[31mb.plumb";
+    writeFileSync(join(odd, name), `${card}\n${point}\n| phase climb "x\u001b[2Jy"; bank 40\n\n|isa +3\n`);
+    const runs = [["check"], ["points"], ["points", "--format", "markdown"], ["check", "--format", "github"]];
+    for (const args of [...runs, ["format", "--check"], ["compare", name, name], ["check", `${name}x`]]) {
+      const { stdout, stderr } = plumbline(args, { cwd: odd });
+      expect(stdout + stderr).toContain("\ufffd");
+      expect(stdout + stderr).not.toContain("\u001b");
+    }
+    rmSync(odd, { recursive: true });
   });
 
   it("a million characters on one line are a finding, not a crash", () => {

@@ -189,6 +189,10 @@ describe("findings stand where the slip is", () => {
     "| weight 5 t; bank 30; qqq\n                       ^^^ unknown-keyword",
     "| phase hold; claim 1.2; claim 106 kt\n                    ^ missing-argument\n                               ^^^ missing-argument",
     "| aircraft a; mass 4000 kg - 6200 kg\n                           ^^^^^^^^^ unexpected-text",
+    '| phase hold "a\u001b[2Jb"\n               ^ unexpected-text',
+    "| isa +3 (a\u202eb)\n           ^ unexpected-text",
+    // Joiners belong to emoji and to some scripts.
+    '| phase hold "👩\u200d✈️"',
     "| phase hold; bank -20\n                   ^^^ bad-quantity",
     '| source "x\n  ^^^^^^^^^ misplaced-clause\n         ^^ unclosed-title',
     "| qnh 1013 hPa (x\n               ^^ unclosed-remark",

@@ -4,6 +4,7 @@ import { findingsText, soughtText, summarize, summaryText } from "../report/find
 import { githubCommands } from "../report/github.ts";
 import { junitPoints, junitXml } from "../report/junit.ts";
 import { passedJson } from "../report/passed.ts";
+import { printable } from "../report/printable.ts";
 import { type CheckedFile, sarifLog } from "../report/sarif.ts";
 import { createLoader, type LoadedNote, type Loader } from "./load.ts";
 import { emit, painter } from "./output.ts";
@@ -69,7 +70,9 @@ function headline(changes: readonly Change[]): string {
   const time = new Date().toTimeString().slice(0, 8);
   const named = changes.slice(0, NAMED).map(({ path, how }) => `${path} ${how}`);
   const more = changes.length > NAMED ? ` and ${changes.length - NAMED} more` : "";
-  return `\n${time}  ${changes.length === 0 ? "watching; Ctrl+C ends it" : named.join(", ") + more}\n`;
+  return printable(
+    `\n${time}  ${changes.length === 0 ? "watching; Ctrl+C ends it" : named.join(", ") + more}\n`,
+  );
 }
 
 function failOnOf({ failOn }: CheckOptions, { configuration }: Loader): FailOn {

@@ -7,6 +7,7 @@ import { compare as compareRevisions, type Revision } from "../report/compare.ts
 import { comparisonJson } from "../report/comparisonJson.ts";
 import { comparisonText } from "../report/comparisonText.ts";
 import { findingsJson } from "../report/findingsJson.ts";
+import { printable } from "../report/printable.ts";
 import { exitCode, type FailOn } from "./check.ts";
 import { load } from "./load.ts";
 import { emit } from "./output.ts";
@@ -43,7 +44,7 @@ export async function compare(before: string, now: string, options: CompareOptio
   const text =
     options.format === "json"
       ? `${JSON.stringify(comparisonJson(comparison), null, 2)}\n`
-      : comparisonText(comparison, options.format);
+      : printable(comparisonText(comparison, options.format));
   await emit(text, options);
   return exitCode([{ path: newer.path, findings: findingsJson(newer.note) }], options.failOn);
 }

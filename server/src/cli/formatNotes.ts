@@ -2,6 +2,7 @@ import { realpath, rename, stat, writeFile } from "node:fs/promises";
 import { resolve } from "node:path";
 import type { Document } from "../notation/document.ts";
 import { layout } from "../notation/layout.ts";
+import { printable } from "../report/printable.ts";
 import { load } from "./load.ts";
 import { emit } from "./output.ts";
 import type { Common } from "./run.ts";
@@ -46,7 +47,7 @@ function wouldBe(
   path: string,
   { line, newText }: { readonly line: number; readonly newText: string },
 ): string {
-  return `${path}:${line + 1}  ${newText}\n`;
+  return printable(`${path}:${line + 1}  ${newText}\n`);
 }
 
 function applied(document: Document, edits: ReturnType<typeof layout>): string {

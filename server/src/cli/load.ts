@@ -58,6 +58,10 @@ export function createLoader(options: LoadOptions): Loader {
     async load(paths) {
       const cwd = process.cwd();
       const named = paths.length === 0 ? ["."] : paths;
+      if (named.includes(""))
+        throw new UsageError(
+          "An empty path names no file and no folder: leave it out for the current folder, or write `.`.",
+        );
       configuration = await configurationOf(options.root);
       folder.severities = configuration.severity;
       const { wanted, texts } = await readTexts(named, options, configuration, cwd);

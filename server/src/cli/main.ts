@@ -1,4 +1,5 @@
 import "./smallYoungSpace.ts";
+import { printable } from "../report/printable.ts";
 import { run } from "./run.ts";
 
 // A reader that closes the pipe early (`| head`) has seen enough: that is no failure.
@@ -13,7 +14,7 @@ run(process.argv).then(
     process.exitCode = code;
   },
   (error: unknown) => {
-    process.stderr.write(`plumbline: ${error instanceof Error ? error.message : String(error)}\n`);
+    process.stderr.write(`plumbline: ${printable(error instanceof Error ? error.message : String(error))}\n`);
     process.exitCode = 2;
   },
 );

@@ -2,6 +2,7 @@ import { caution } from "../plan/caution.ts";
 import { pointsCsv } from "../report/csv.ts";
 import { fileJson } from "../report/pointsJson.ts";
 import { markdownTable, plainTable, pointsTable } from "../report/pointsTable.ts";
+import { printable } from "../report/printable.ts";
 import { type LoadedNote, load } from "./load.ts";
 import { emit } from "./output.ts";
 import type { Common } from "./run.ts";
@@ -25,9 +26,9 @@ function written(notes: readonly LoadedNote[], { format }: PointsOptions): strin
     case "csv":
       return pointsCsv(files(), caution);
     case "table":
-      return `${tables(notes, ({ path }) => `${path}\n`, plainTable)}${caution}\n`;
+      return printable(`${tables(notes, ({ path }) => `${path}\n`, plainTable)}${caution}\n`);
     case "markdown":
-      return `${tables(notes, ({ path }) => `## ${path}\n\n`, markdownTable)}${caution}\n`;
+      return printable(`${tables(notes, ({ path }) => `## ${path}\n\n`, markdownTable)}${caution}\n`);
   }
 }
 

@@ -3,6 +3,7 @@ import { withHints } from "../features/valuedLines.ts";
 import { caution } from "../plan/caution.ts";
 import { findingsJson } from "../report/findingsJson.ts";
 import { findingsText, summaryText } from "../report/findingsText.ts";
+import { printable } from "../report/printable.ts";
 import { load } from "./load.ts";
 import { emit, painter } from "./output.ts";
 import type { Common } from "./run.ts";
@@ -15,11 +16,11 @@ export async function tour(folder: string, options: Common): Promise<number> {
   let text = "";
   for (const { path, note } of notes) {
     const { document } = note;
-    text += `\n${path}\n${"-".repeat(path.length)}\n`;
+    text += `\n${printable(path)}\n${"-".repeat(path.length)}\n`;
     const hints = inlayHints(note, 0, document.lineCount - 1, "full");
     for (let line = 0; line < document.lineCount; line++) {
       const own = hints.filter((one) => one.line === line);
-      const shown = withHints(document.lineText(line), own, dim);
+      const shown = withHints(printable(document.lineText(line)), own, dim);
       text += `${String(line + 1).padStart(4)}  ${shown}\n`;
     }
   }

@@ -43,6 +43,16 @@ export function isInvisible(code: number): boolean {
   );
 }
 
+/** A character that no title or remark is written with: one that controls a terminal, or turns the direction of reading. */
+export function isControl(code: number): boolean {
+  return (
+    (code < 32 && !isBlank(code)) ||
+    (0x7f <= code && code <= 0x9f && code !== 0x85) ||
+    (0x202a <= code && code <= 0x202e) ||
+    (0x2066 <= code && code <= 0x2069)
+  );
+}
+
 /** `-`, the minus sign and the en dash. */
 export function isMinus(code: number): boolean {
   return code === 45 || code === 0x2212 || code === 0x2013;

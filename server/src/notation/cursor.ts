@@ -1,4 +1,4 @@
-import { isBlank, isInvisible, isNameCharacter } from "./characters.ts";
+import { isBlank, isControl, isInvisible, isNameCharacter } from "./characters.ts";
 import type { Fix, TextCode, TextFinding } from "./finding.ts";
 import type { Span } from "./span.ts";
 import type { Token, TokenKind } from "./token.ts";
@@ -88,7 +88,19 @@ export class Cursor {
   }
 
   #invisible(): void {
-    const span = this.take(this.at + 1, "unread");
+    this.#tellInvisible(this.take(this.at + 1, "unread"));
+  }
+
+  /** Tells the first character of a title or a remark that hides what else stands there. */
+  tellControl({ start, end }: Span): void {
+    for (let i = start; i < end; i++) {
+      if (!isControl(this.text.charCodeAt(i))) continue;
+      this.#tellInvisible({ start: i, end: i + 1 });
+      return;
+    }
+  }
+
+  #tellInvisible(span: Span): void {
     const code = this.text.charCodeAt(span.start).toString(16).toUpperCase().padStart(4, "0");
     this.report(
       "unexpected-text",
@@ -113,6 +125,7 @@ export class Cursor {
       if (code === 40) depth++;
       else if (code === 41 && --depth === 0) {
         const span = this.take(i + 1, "remark");
+        this.tellControl(span);
         this.#speedKindInRemark(span);
         return;
       }

@@ -27,6 +27,7 @@ export function readTitle(cursor: Cursor): Title | null {
   for (let i = at + 1; i < text.length; i++) {
     if (marks.includes(text.charAt(i))) {
       const span = cursor.take(i + 1, "title");
+      cursor.tellControl(span);
       return { text: text.slice(at + 1, i), span };
     }
   }

@@ -1,4 +1,5 @@
 import type { Severity } from "../plan/finding.ts";
+import { printable } from "./printable.ts";
 import type { CheckedFile } from "./sarif.ts";
 
 /** How many findings there are of each severity. */
@@ -19,7 +20,7 @@ export function findingsText(files: readonly CheckedFile[], paint: Paint): strin
   for (const { path, findings } of files) {
     for (const one of findings) {
       const severity = one.severity as Severity;
-      text += `${path}:${one.line}:${one.column}  ${paint(severity, severity)}  ${one.message}  [${one.code}]\n`;
+      text += `${printable(path)}:${one.line}:${one.column}  ${paint(severity, severity)}  ${printable(one.message)}  [${one.code}]\n`;
     }
   }
   return text;

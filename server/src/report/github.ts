@@ -1,4 +1,5 @@
 import type { Severity } from "../plan/finding.ts";
+import { printable } from "./printable.ts";
 import type { CheckedFile } from "./sarif.ts";
 
 const levels: Readonly<Record<Severity, "error" | "warning" | "notice">> = {
@@ -24,7 +25,7 @@ export function githubCommands(files: readonly CheckedFile[]): string {
 }
 
 function data(text: string): string {
-  return text.replaceAll("%", "%25").replaceAll("\r", "%0D").replaceAll("\n", "%0A");
+  return printable(text).replaceAll("%", "%25").replaceAll("\r", "%0D").replaceAll("\n", "%0A");
 }
 
 function property(text: string): string {
