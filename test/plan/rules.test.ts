@@ -559,4 +559,9 @@ it("a bank over its limit is not told to be over the advice too", () => {
   expect(findings[0]?.message).toBe(
     "Bank 35° exceeds the 30° that own allows in cruise and the 25° that it advises: bank 25° or less; at 220 kt the warning would come at 65°.",
   );
+  // Advice that is wider than the limit is no way out.
+  const wider = file("\n| must any bank 15\n| should any bank 25", "| phase cruise; bank 35").findings;
+  expect(wider.map(({ message }) => message)).toEqual([
+    "Bank 35° exceeds the 15° that own allows in cruise: bank 15° or less; at 220 kt the warning would come at 65°.",
+  ]);
 });

@@ -161,7 +161,8 @@ function message(checking: Checking, held: Held, advice: Held | null): string {
     case "bank": {
       const [flown, most] = formatDistinct(figure, bound, formatBank, boundOf(row));
       const why = held.byRateOne ? ", the bank for rate one" : "";
-      const advised = advice ? boundOf(advice.row)(advice.bound, 0) : null;
+      // Advice that allows more than the limit has nothing to add.
+      const advised = advice && advice.bound < bound ? boundOf(advice.row)(advice.bound, 0) : null;
       const too = advised ? ` and the ${advised} that it advises` : "";
       // With a tolerance of its own the bank to write is less than the bound.
       const varies = corners.all.some((one) => one.bank !== corners.nominal.bank);
