@@ -13,6 +13,7 @@ import {
   keywordEntry,
   keywordOf,
   keywords,
+  phases,
   strangers,
   subjects,
   synonyms,
@@ -165,12 +166,19 @@ function unreadable(cursor: Cursor, start: number): Clause {
       ? "A `|` begins a line and means nothing inside it; if this is a Markdown table, leave a blank line above it and make its second line `| --- | --- |`."
       : "A clause begins with a keyword: write one, or `;` and the next clause.",
   );
-  return { span, keywordSpan: { start, end: start }, keyword: null, meant: null, faulty: true, body: null };
+  return unread(span, { start, end: start }, null);
 }
 
 function unknownKeyword(cursor: Cursor, start: number, end: number): Clause {
-  const typed = cursor.text.slice(start, end);
+  const { text } = cursor;
+  const typed = text.slice(start, end);
   const keywordSpan = cursor.take(end, "unread");
+  const home = partOf[typed.toLowerCase()];
+  const inCard = /\bconfig\b.*\bstall\b/i.test(text.slice(0, start));
+  const figure = /^\s*[-+\d.]/.test(text.slice(end));
+  const isPhase = !figure && (phases as readonly string[]).includes(typed.toLowerCase());
+  if (home && (inCard || !isPhase)) return partAlone(cursor, keywordSpan, home);
+  if (isPhase) return phaseAlone(cursor, keywordSpan);
   const stranger = strangers[typed.toLowerCase()] ?? null;
   const guess = stranger ?? guessKeyword(typed);
   const span = takeRest(cursor);
@@ -183,14 +191,70 @@ function unknownKeyword(cursor: Cursor, start: number, end: number): Clause {
       ? writeOne(["must", "should"], keywordSpan)
       : keywordFixes(typed, keywordSpan, guess ?? follows),
   );
-  return {
-    span: { start, end: Math.max(span.end, end) },
+  return unread(
+    { start, end: Math.max(span.end, end) },
     keywordSpan,
-    keyword: null,
-    meant: guess ?? (follows === "phase" ? follows : null),
-    faulty: true,
-    body: null,
-  };
+    guess ?? (follows === "phase" ? follows : null),
+  );
+}
+
+/** Words that begin no clause but stand within one, with an example of where. */
+const partOf: Readonly<Record<string, string>> = {
+  stall: "config flaps-5 stall 127 kt",
+  vfe: "config flaps-5 stall 127 kt, vfe 228 kt",
+  takeoff: "config flaps-15 stall 117 kt, takeoff",
+  landing: "config flaps-30 stall 106 kt, landing",
+  chord: "wing 104 m2, chord 3.7 m",
+  issue: 'source "operations manual" issue 3',
+  from: "limits own-rules, from common-practice",
+  within: "claim margin 1.34 within 0.02",
+  because: 'accept bank-over-limit to 35 because "terrain"',
+  by: 'accept bank-over-limit to 35 because "terrain" by "J. Lund"',
+  until: 'accept bank-over-limit to 35 because "terrain" until 2027-03-31',
+};
+
+/** `landing` for `phase landing`. */
+function phaseAlone(cursor: Cursor, keywordSpan: Span): Clause {
+  const { start, end } = keywordSpan;
+  const typed = cursor.text.slice(start, end);
+  const span = takeRest(cursor);
+  cursor.report("unknown-keyword", keywordSpan, `\`${typed}\` is a phase: write \`phase ${typed}\`.`, [
+    {
+      title: `Write phase ${typed}`,
+      preferred: true,
+      edits: [{ line: 0, start, end: start, newText: "phase " }],
+    },
+  ]);
+  return unread({ start, end: Math.max(span.end, end) }, keywordSpan, "phase");
+}
+
+/** A clause of which nothing is read. */
+function unread(span: Span, keywordSpan: Span, meant: Keyword | null): Clause {
+  return { span, keywordSpan, keyword: null, meant, faulty: true, body: null };
+}
+
+/** A part of a clause that a `;` has cut off, or that begins a line. */
+function partAlone(cursor: Cursor, keywordSpan: Span, example: string): Clause {
+  const { text } = cursor;
+  const typed = text.slice(keywordSpan.start, keywordSpan.end);
+  const span = takeRest(cursor);
+  const before = text.slice(0, keywordSpan.start).trimEnd();
+  const comma = example.includes(`, ${typed.toLowerCase()}`);
+  const cut = before.endsWith(";") ? { start: before.length - 1, end: before.length } : null;
+  cursor.report(
+    "unknown-keyword",
+    keywordSpan,
+    `\`${typed}\` begins no clause, it is a part of one, as in \`${example}\`: write it there.`,
+    cut
+      ? [
+          {
+            title: comma ? "Write a comma before it" : "Join it to the clause before it",
+            edits: [{ line: 0, ...cut, newText: comma ? "," : "" }],
+          },
+        ]
+      : [],
+  );
+  return unread({ start: keywordSpan.start, end: Math.max(span.end, keywordSpan.end) }, keywordSpan, null);
 }
 
 function guessKeyword(typed: string): Keyword | null {

@@ -4,7 +4,7 @@ import { groupedNumber, type ReadNumber, readNumber, replace } from "./numbers.t
 import type { Span } from "./span.ts";
 import type { Quantity } from "./tree.ts";
 import { missingUnit, unknownUnit, unknownUnitFixes, wrongUnit, wrongUnitFixes } from "./unitFindings.ts";
-import { type QuantityKind, unitOf, unitRule } from "./units.ts";
+import { type QuantityKind, unitInWords, unitOf, unitRule } from "./units.ts";
 import { keywordOf, type Unit } from "./vocabulary.ts";
 
 /** The end of the run of characters that may spell a unit. */
@@ -86,7 +86,7 @@ export function readQuantity(
   if (
     !unit &&
     word &&
-    !rule.optional &&
+    (!rule.optional || unitInWords(word, kind)) &&
     !keywordOf(cursor.text.slice(cursor.at, cursor.nameEnd())) &&
     !isDueWord(cursor)
   ) {

@@ -1,6 +1,7 @@
 import type { Cursor } from "./cursor.ts";
 import type { Fix } from "./finding.ts";
 import { type ReadNumber, replace } from "./numbers.ts";
+import { orListed } from "./orListed.ts";
 import type { Span } from "./span.ts";
 import { type QuantityKind, unitInWords, unitRule } from "./units.ts";
 import type { Unit } from "./vocabulary.ts";
@@ -17,7 +18,7 @@ export function wrongUnit(kind: QuantityKind, word: string, unit: Unit): string 
   if (unit === "FL") return "A flight level is written FL and three digits, such as FL350.";
   const { units, noun } = unitRule(kind);
   if (units.length === 0) return `${word} does not belong here: this is a plain number.`;
-  return `${word} is no unit of ${noun}: write ${orList(choicesOf(kind))}.`;
+  return `${word} is no unit of ${noun}: write ${orListed(choicesOf(kind))}.`;
 }
 
 export function unknownUnit(kind: QuantityKind, word: string): string {
@@ -27,7 +28,7 @@ export function unknownUnit(kind: QuantityKind, word: string): string {
   const unit = unitInWords(word, kind);
   if (unit) return `A unit is written short: write ${unit} instead of ${word}.`;
   const { noun } = unitRule(kind);
-  return `${word} is no unit of ${noun}: write ${orList(choicesOf(kind))}.`;
+  return `${word} is no unit of ${noun}: write ${orListed(choicesOf(kind))}.`;
 }
 
 /** A word that can mean one unit only has one way out; that a ton is one is the author's to say. */
@@ -58,7 +59,7 @@ export function missingUnit(cursor: Cursor, kind: QuantityKind, number: ReadNumb
   cursor.report(
     "missing-unit",
     number.span,
-    `${name} ${written} of what? Write ${orList(readings)}.`,
+    `${name} ${written} of what? Write ${orListed(readings)}.`,
     choices.map(
       (unit): Fix => ({
         title: `Write ${written} ${unit}`,
@@ -66,10 +67,4 @@ export function missingUnit(cursor: Cursor, kind: QuantityKind, number: ReadNumb
       }),
     ),
   );
-}
-
-function orList(items: readonly string[]): string {
-  return items.length < 2
-    ? (items[0] ?? "")
-    : `${items.slice(0, -1).join(", ")} or ${items[items.length - 1]}`;
 }
