@@ -42,3 +42,18 @@ it("all units are spelt at once by who asks for it, and never among the quick fi
   expect(await ask(["source.fixAll"])).toEqual([]);
   expect(await client.stop()).toBe(0);
 });
+
+it.each(["\n", "\r\n", "\r"])("a line that is added ends as the note's own do: %j", async (lineEnd) => {
+  const client = await startClient();
+  client.open(uri, ["| phase hold", "| phase climb", ""].join(lineEnd));
+  const offered = await client.request<CodeAction[]>("textDocument/codeAction", {
+    textDocument: { uri },
+    range: { start: at(1, 0), end: at(1, 0) },
+    context: { diagnostics: [] },
+  });
+  const apart = offered.find(({ title }) => title === "Leave a blank line before it");
+  expect(apart?.edit?.changes?.[uri]).toEqual([
+    { range: { start: at(1, 0), end: at(1, 0) }, newText: lineEnd },
+  ]);
+  expect(await client.stop()).toBe(0);
+});

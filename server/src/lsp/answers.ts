@@ -165,7 +165,7 @@ export function answerRequests(
       if (!note) return [];
       const spelling = asksFor(FIX_ALL, context.only ?? []) ? unitSpelling(note) : [];
       const actions = codeActions(note, range.start.line, range.end.line)
-        .map((action) => codeActionOf(action, uri, context.diagnostics))
+        .map((action) => codeActionOf(action, uri, note.document.lineEnd, context.diagnostics))
         .filter(({ kind }) => !context.only || asksFor(kind ?? "", context.only));
       return [...actions, ...(spelling.length > 0 ? [fixAllOf(spelling, uri)] : [])];
     }),

@@ -186,9 +186,11 @@ export function textEditOf({ line, start, end, newText, wholeLine }: Edit): Text
   return { range, newText };
 }
 
+/** @param lineEnd how the note's lines end: many a client inserts what it is given as it is */
 export function codeActionOf(
   action: CodeAction,
   uri: string,
+  lineEnd: string,
   diagnostics: readonly Diagnostic[],
 ): LspCodeAction {
   const { finding, findingLine } = action;
@@ -204,7 +206,14 @@ export function codeActionOf(
     kind: action.kind === "rewrite" ? CodeActionKind.RefactorRewrite : CodeActionKind.QuickFix,
     ...(own.length > 0 ? { diagnostics: own } : {}),
     ...(action.preferred ? { isPreferred: true } : {}),
-    edit: { changes: { [uri]: action.edits.map(textEditOf) } },
+    edit: {
+      changes: {
+        [uri]: action.edits.map(textEditOf).map((one) => ({
+          ...one,
+          newText: one.newText.replaceAll("\n", lineEnd),
+        })),
+      },
+    },
   };
 }
 

@@ -22,6 +22,8 @@ export interface Position {
 export interface Document {
   readonly flavour: Flavour;
   readonly lineCount: number;
+  /** How the first line ends, for lines that are added; "\n" where no line has ended yet. */
+  readonly lineEnd: string;
   /** Without the line's end. */
   lineText(line: number): string;
   /** What the line is, for folding and completion; "plumb-fence" are the fence's own two lines. */

@@ -39,6 +39,10 @@ class OpenDocument implements Document {
     return this.#lines.length;
   }
 
+  get lineEnd(): string {
+    return this.#lines[0]?.end || "\n";
+  }
+
   lineText(line: number): string {
     return this.#lines[line]?.text ?? "";
   }
